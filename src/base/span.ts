@@ -1,0 +1,44 @@
+/** A place in a source text: offsets in UTF-16 units, end exclusive. */
+export interface Span {
+  readonly start: number
+  readonly end: number
+}
+
+/** A source text and the way from its offsets to lines and columns. */
+export interface Source {
+  readonly path: string
+  readonly text: string
+  /** Offset of the first character of each line. */
+  readonly lineStarts: readonly number[]
+}
+
+export function sourceOf(path: string, text: string): Source {
+  const lineStarts = [0]
+  for (let i = text.indexOf('\n'); i !== -1; i = text.indexOf('\n', i + 1)) lineStarts.push(i + 1)
+  return { path, text, lineStarts }
+}
+
+/** Line of an offset, from 1. */
+export function lineOf({ lineStarts }: Source, offset: number): number {
+  let low = 0
+  let high = lineStarts.length - 1
+  while (low < high) {
+    const middle = (low + high + 1) >> 1
+    if ((lineStarts[middle] ?? 0) <= offset) low = middle
+    else high = middle - 1
+  }
+  return low + 1
+}
+
+/** Line and column of an offset, both from 1. */
+export function positionOf(source: Source, offset: number): { readonly line: number; readonly column: number } {
+  const line = lineOf(source, offset)
+  return { line, column: offset - (source.lineStarts[line - 1] ?? 0) + 1 }
+}
+
+/** The text of a line, from 1, without its ending. */
+export function lineText({ text, lineStarts }: Source, line: number): string {
+  const start = lineStarts[line - 1] ?? text.length
+  const next = lineStarts[line]
+  return text.slice(start, next === undefined ? text.length : next - 1).replace(/\r$/, '')
+}
