@@ -1,0 +1,54 @@
+/** Diagnostics as text: the long form for a reader, the one-line form for lists and editors. */
+import type { Diagnostic, Label } from './diagnostic.ts'
+import { lineText, positionOf, type Source } from './span.ts'
+
+/** `workshop.md:31:8 error[wall-outside-level] wall W7 …` */
+export function oneLine(source: Source, { rule, severity, message, at }: Diagnostic): string {
+  const { line, column } = positionOf(source, at.span.start)
+  return `${source.path}:${line}:${column} ${severity}[${rule}] ${message}`
+}
+
+/** The place, the lines with marks under the cause and the other places, and what to do. */
+export function longForm(source: Source, diagnostic: Diagnostic): string {
+  const { rule, severity, message, at, also, help } = diagnostic
+  const { line, column } = positionOf(source, at.span.start)
+  const marks = [{ ...at, sign: '^' }, ...also.map(label => ({ ...label, sign: '-' }))]
+    .sort((a, b) => a.span.start - b.span.start)
+    .slice(0, 12)
+  const width = Math.max(...marks.map(({ span }) => String(positionOf(source, span.start).line).length)) + 1
+  return [
+    `${severity}[${rule}]: ${message}`,
+    `  ${source.path}:${line}:${column}`,
+    ...marks.flatMap(mark => markedLine(source, mark, width)),
+    ...help
+      .split('\n')
+      .filter(sentence => sentence !== '')
+      .map(sentence => `  ${sentence}`),
+  ].join('\n')
+}
+
+const WIDEST = 100
+
+function markedLine(
+  source: Source,
+  { span, text, sign }: Label & { readonly sign: string },
+  width: number,
+): readonly string[] {
+  const { line, column } = positionOf(source, span.start)
+  const whole = lineText(source, line).replaceAll('\t', ' ')
+  const from = whole.length > WIDEST ? Math.max(0, column - 1 - WIDEST / 2) : 0
+  const shown = whole.slice(from, from + WIDEST)
+  const start = column - 1 - from
+  const length = Math.max(1, Math.min(span.end - span.start, shown.length - start))
+  return [
+    `  ${String(line).padStart(width)} | ${shown}`,
+    `  ${' '.repeat(width)} | ${' '.repeat(start)}${sign.repeat(length)}${text === '' ? '' : ` ${text}`}`,
+  ]
+}
+
+/** In the order of the page, each once. */
+export function sorted(diagnostics: Iterable<Diagnostic>): readonly Diagnostic[] {
+  return [...new Set(diagnostics)].sort(
+    (a, b) => a.at.span.start - b.at.span.start || (a.rule < b.rule ? -1 : a.rule > b.rule ? 1 : 0),
+  )
+}
