@@ -30,11 +30,26 @@ export class Ledger {
       if (result) return result
       const first = this.underWay.indexOf(task)
       if (first !== -1) return bad([ring(this.underWay.slice(first))])
+      if (this.underWay.length >= DEEPEST) return bad([tooDeep(task)])
       this.underWay.push(task)
       result = work()
       this.underWay.pop()
       return result
     }
+  }
+}
+
+/** A longer chain of definitions would exhaust the machine before it told the reader anything. */
+const DEEPEST = 1000
+
+function tooDeep({ name, at }: Task): Diagnostic {
+  return {
+    rule: 'definitions-too-deep',
+    severity: 'error',
+    message: `${name} stands at the end of more than ${DEEPEST} definitions that each wait for the next`,
+    at: { span: at, text: '' },
+    also: [],
+    help: 'Put definitions before their use, or state an intermediate value as a number.',
   }
 }
 

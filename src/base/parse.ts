@@ -60,7 +60,9 @@ class Stop extends Error {
 }
 
 const NUMBER = /(?:\d+(?:\.\d*)?|\.\d+)(?:[eE][+-]?\d+)?/y
-const NAME = /[\p{L}_][\p{L}\p{N}_]*(?:'[\p{L}\p{N}_]+)?(?:\.[\p{L}\p{N}_][\p{L}\p{N}_+-]*(?:'[\p{L}\p{N}_]+)?)*/uy
+/** A part of a dotted name may be a load case, whose sign belongs to it: `roof.wall.W1.V.EX+`. */
+const NAME =
+  /[\p{L}_][\p{L}\p{N}_]*(?:'[\p{L}\p{N}_]+)?(?:\.(?:[EW][XY]\d*[+-](?![\p{L}\p{N}(.])|[\p{L}\p{N}_]+(?:'[\p{L}\p{N}_]+)?))*/uy
 const UNIT_NAME = /[\p{L}°]+|%/uy
 /** The inches of feet and inches, after the foot mark or `ft`. */
 const INCHES = /(?:-|\s+)?(\d+(?:\.\d+)?)(?:\s+(\d+)\/(\d+))?\s*(?:"|″|'')/y

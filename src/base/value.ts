@@ -21,6 +21,8 @@ export type Origin =
   | { readonly kind: 'given'; readonly span: Span }
   /** `span` is set where the engineer wrote the formula. */
   | { readonly kind: 'worked'; readonly step: Step; readonly span?: Span }
+  /** Measured from the plan as drawn: a corner of a part that is cut, the length of an outline. */
+  | { readonly kind: 'measured'; readonly what: string; readonly spans: readonly Span[] }
   /** Taken because the document does not say; `assumption` is printed in the list of assumptions. */
   | { readonly kind: 'default'; readonly assumption: string }
 
@@ -53,8 +55,10 @@ export const shown = ({ si, unit, rounding }: Value): number => (Math.abs(si) < 
 
 /** The number as it prints: a typed one with all its digits, a worked one rounded. */
 export function printedNumeral(value: Value, extra = 0): Numeral {
-  return value.origin.kind === 'worked' ? rounded(shown(value), extra) : asTyped(shown(value))
+  return typed(value.origin) ? asTyped(shown(value)) : rounded(shown(value), extra)
 }
+
+const typed = ({ kind }: Origin): boolean => kind === 'given' || kind === 'default'
 
 /** Such as `13,625 kip/in`. */
 export function printed(value: Value, language: Language): string {
@@ -81,6 +85,8 @@ export function spansOf(value: Value): readonly Span[] {
       return [origin.span]
     case 'default':
       return []
+    case 'measured':
+      return origin.spans
     case 'worked': {
       const own = origin.span ? [origin.span] : []
       return [

@@ -1,0 +1,52 @@
+/** How far the centre of mass and the corners of the plan move in a case. */
+import { formula, sym } from '../base/formula.ts'
+import type { Display } from '../base/kind.ts'
+import { Tabulation } from '../base/tabulation.ts'
+import type { Value } from '../base/value.ts'
+import type { CaseResult } from './distribution.ts'
+import type { Plan } from './plan.ts'
+import type { Rigidity } from './rigidity.ts'
+import { phi, u0, v0, x, xr, y, yr } from './symbols.ts'
+
+const dx = sym('delta_x', '\\delta_x', 'displacement')
+const dy = sym('delta_y', '\\delta_y', 'displacement')
+
+const RIGID = 'small rotation of a rigid diaphragm about its centre of rigidity'
+
+export const displacement = {
+  x: formula({ gives: dx, body: 'u_0 - phi*(y - y_r)', of: [u0, phi, y, yr], source: RIGID }),
+  y: formula({ gives: dy, body: 'v_0 + phi*(x - x_r)', of: [v0, phi, x, xr], source: RIGID }),
+}
+
+export interface Displacement {
+  readonly result: CaseResult
+  /** The centre of mass, then the corners of the plan. */
+  readonly points: Tabulation
+  /** The largest displacement along the force, at a corner. */
+  readonly governing: { readonly corner: string; readonly value: Value }
+}
+
+export const CENTRE_OF_MASS = 'CM'
+
+export function workDisplacement(
+  { corners }: Plan,
+  mass: { readonly x: Value; readonly y: Value },
+  rigidity: Rigidity,
+  result: CaseResult,
+  display: Display,
+): Displacement {
+  const { level } = rigidity
+  const { axis, name } = result.case
+  const id = (row: string, key: string) => `${level}.displacement.${row}.${key}`
+  const points = new Tabulation([CENTRE_OF_MASS, ...corners.map(({ name }) => name)], id, display)
+    .take(x, [mass.x, ...corners.map(({ x }) => x)])
+    .take(y, [mass.y, ...corners.map(({ y }) => y)])
+    .work(displacement.x, { u_0: result.u, phi: result.phi, y: 'y', y_r: rigidity.y }, `x.${name}`)
+    .work(displacement.y, { v_0: result.v, phi: result.phi, x: 'x', x_r: rigidity.x }, `y.${name}`)
+  const { numbers, cell } = points.column(`delta_${axis}`)
+  let at = 1
+  numbers.forEach((value, i) => {
+    if (i > 0 && Math.abs(value) > Math.abs(numbers[at] ?? 0) * (1 + 1e-12)) at = i
+  })
+  return { result, points, governing: { corner: points.rows[at] ?? '', value: cell(at) } }
+}

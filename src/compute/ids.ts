@@ -1,0 +1,239 @@
+/** Finds the value that a dotted name asks for. The manual lists these names; keep it in step. */
+import type { Result } from '../base/ledger.ts'
+import { bad, good } from '../base/outcome.ts'
+import type { Tabulation } from '../base/tabulation.ts'
+import type { Value, Word } from '../base/value.ts'
+import type { Construction } from '../model/construction.ts'
+import type { Distribution } from './distribution.ts'
+import type { LevelWork } from './level.ts'
+import type { Moduli } from './stiffness.ts'
+
+type Found = Result<Value | Word> | undefined
+
+/** A value out of a stage's result; undefined when the stage has no such value. */
+function from<T>(result: Result<T>, pick: (value: T) => Value | Word | undefined): Found {
+  if (!result.ok) return result
+  const value = pick(result.value)
+  return value && good(value)
+}
+
+const axisOf = <T>(pair: { readonly x?: T; readonly y?: T }, axis: string | undefined): T | undefined =>
+  axis === 'x' || axis === 'y' ? pair[axis] : undefined
+
+function cellOf(table: Tabulation | undefined, row: string | undefined, keys: readonly string[]): Value | undefined {
+  const at = table?.rows.indexOf(row ?? '') ?? -1
+  const column = table?.columns.find(({ sym }) => keys.includes(sym.name))
+  return at === -1 ? undefined : column?.cell(at)
+}
+
+export function levelValue(level: LevelWork, path: readonly string[]): Found {
+  const [head, ...rest] = path
+  const [a, b, c] = rest
+  if (rest.length > 3) return undefined
+  switch (head) {
+    case 'area':
+    case 'perimeter':
+      return rest.length === 0 ? from(level.plan(), plan => plan[head]) : undefined
+    case 'size':
+      return from(level.plan(), ({ size }) => axisOf(size, a))
+    case 'corner':
+      return from(level.plan(), ({ corners }) => axisOf(corners.find(({ name }) => name === a) ?? {}, b))
+    case 'areas':
+      return areaValue(level, a, b)
+    case 'lines':
+    case 'points':
+      return from(level.mass(), mass => cellOf(mass[head], a, [b ?? '']) ?? momentOf(mass.parts, a, b))
+    case 'W':
+      return rest.length === 0 ? from(level.mass(), ({ W }) => W) : undefined
+    case 'I_p':
+      return rest.length === 0 ? from(level.mass(), ({ Ip }) => Ip) : undefined
+    case 'CM':
+      return from(level.mass(), mass => axisOf(mass, a))
+    case 'K':
+      return from(level.rigidity(), ({ K }) => (a === 'xx' || a === 'yy' || a === 'xy' ? K[a] : undefined))
+    case 'J':
+      return rest.length === 0 ? from(level.rigidity(), ({ J }) => J) : undefined
+    case 'D':
+      return rest.length === 0 ? from(level.rigidity(), ({ D }) => D) : undefined
+    case 'alpha':
+      return rest.length === 0 ? from(level.rigidity(), ({ angle }) => angle) : undefined
+    case 'CR':
+      return from(level.rigidity(), rigidity => axisOf(rigidity, a))
+    case 'e':
+      return from(level.eccentricity(), e => axisOf(e, a))
+    case 'ea':
+      return from(level.acting(), ({ arm }) => axisOf(arm, a))
+    case 'force':
+      return from(level.forces(), forces => axisOf(forces ?? {}, a))
+    case 'accidental':
+      return rest.length === 0 ? from(level.forces(), forces => forces?.accidental) : undefined
+    case 'storey':
+      return from(level.distribution(), ({ storey }) => axisOf(storey, a))
+    case 'wall':
+      return wallValue(level, a ?? '', b, c)
+    case 'T':
+    case 'u':
+    case 'v':
+    case 'phi':
+      return caseValue(level, head, a)
+    case 'residual':
+      return from(level.distribution(), ({ cases }) => {
+        const residual = cases.find(each => each.case.name === b)?.residual
+        return a === 'x' || a === 'y' || a === 'M' || a === 'ratio' ? residual?.[a] : undefined
+      })
+    case 'displacement':
+      return from(level.displacements(), all =>
+        cellOf(all.find(({ result }) => result.case.name === c)?.points, a, [`delta_${b}`]),
+      )
+    case 'drift':
+      return from(level.displacements(), all => all.find(({ result }) => result.case.name === a)?.governing.value)
+    case 'governing':
+      return from(level.distribution(), distribution => governing(level.name, distribution, a))
+    case 'sum':
+      return (
+        from(level.mass(), ({ sums }) => (a === 'Wx' || a === 'Wy' ? sums[a] : undefined)) ??
+        from(level.rigidity(), ({ sums }) => sums.find(({ id }) => id === `${level.name}.sum.${a}`))
+      )
+    default:
+      return undefined
+  }
+}
+
+function areaValue(level: LevelWork, name: string | undefined, key: string | undefined): Found {
+  const part = from(level.plan(), ({ parts }) => {
+    const found = parts.find(part => part.name === name)
+    return key === 'A' || key === 'x' || key === 'y' ? found?.[key] : key === 'I_p' ? found?.Ip : undefined
+  })
+  return part ?? from(level.mass(), mass => cellOf(mass.areas, name, [key ?? '']) ?? momentOf(mass.parts, name, key))
+}
+
+const momentOf = (parts: Tabulation, row: string | undefined, key: string | undefined): Value | undefined =>
+  key === 'Wx' || key === 'Wy'
+    ? cellOf(parts, row, [key.replace('W', 'W_')])
+    : key === 'I'
+      ? cellOf(parts, row, ['I'])
+      : undefined
+
+function caseValue(level: LevelWork, what: 'T' | 'u' | 'v' | 'phi', name: string | undefined): Found {
+  return from(level.distribution(), ({ cases }) => {
+    const found = cases.find(each => each.case.name === name)
+    return what === 'T' ? found?.moment : found?.[what]
+  })
+}
+
+function wallValue(level: LevelWork, wall: string, key: string | undefined, caseName: string | undefined): Found {
+  const walls = level.walls()
+  if (!walls.ok) return walls
+  const given = walls.value.find(({ name }) => name === wall)
+  if (!given) return undefined
+  switch (key) {
+    case 'k':
+      return level.stiffness(wall)
+    case 'h':
+      return given.height && good(given.height)
+    case 'L':
+    case 'x':
+    case 'y':
+    case 'c':
+    case 's': {
+      const line = level.line(wall)
+      return line?.ok ? good(line.value[key]) : line
+    }
+    case 'rho':
+      return from(level.rigidity(), ({ walls }) => cellOf(walls, wall, ['rho']))
+    case 'v':
+      return from(level.distribution(), ({ design }) => cellOf(design, wall, ['v']))
+    case 'case':
+      return from(level.distribution(), ({ design, governingCase }) => governingCase(design.rows.indexOf(wall)))
+    case 'V':
+      if (caseName === undefined) return from(level.distribution(), ({ design }) => cellOf(design, wall, ['V']))
+      return shearValue(level, wall, 'V', caseName)
+    case 'Vd':
+    case 'Vt':
+      return shearValue(level, wall, key.replace('V', 'V_'), caseName ?? '')
+    default:
+      return undefined
+  }
+}
+
+function shearValue(level: LevelWork, wall: string, key: string, caseName: string): Found {
+  return from(level.distribution(), ({ cases }) =>
+    cellOf(cases.find(each => each.case.name === caseName)?.walls, wall, [key]),
+  )
+}
+
+function governing(
+  level: string,
+  { design, governingWall, governingCase }: Distribution,
+  key: string | undefined,
+): Value | Word | undefined {
+  const wall = design.rows[governingWall] ?? ''
+  switch (key) {
+    case 'wall':
+      return { id: `${level}.governing.wall`, text: wall, because: 'the wall of the largest shear per length' }
+    case 'case':
+      return governingCase(governingWall)
+    case 'V':
+    case 'v':
+      return cellOf(design, wall, [key])
+    default:
+      return undefined
+  }
+}
+
+/** A construction's own value. */
+export function constructionValue(read: () => Result<Construction>, moduli: Result<Moduli>, key: string): Found {
+  const construction = read()
+  if (!construction.ok) return construction
+  const { t, nu, strength } = construction.value
+  switch (key) {
+    case 't':
+      return good(t)
+    case 'nu':
+      return nu && good(nu)
+    case "f'c":
+    case "f'm":
+      return strength?.id.endsWith(key) ? good(strength) : undefined
+    case 'E':
+    case 'G':
+      return moduli.ok ? good(moduli.value[key]) : bad(moduli.because)
+    default:
+      return undefined
+  }
+}
+
+/** Ids of a level, to offer near names: those that need no work to list. */
+export function levelIds({ name, walls }: LevelWork): readonly string[] {
+  const given = walls()
+  const own = [
+    'area',
+    'perimeter',
+    'W',
+    'CM.x',
+    'CM.y',
+    'CR.x',
+    'CR.y',
+    'e.x',
+    'e.y',
+    'K.xx',
+    'K.xy',
+    'K.yy',
+    'J',
+    'force.x',
+    'force.y',
+    'storey.x',
+    'storey.y',
+    'size.x',
+    'size.y',
+    'governing.wall',
+    'governing.case',
+    'governing.V',
+    'governing.v',
+  ]
+  const ofWalls = given.ok
+    ? given.value
+        .slice(0, 200)
+        .flatMap(({ name }) => ['k', 'L', 'h', 'V', 'v', 'case'].map(key => `wall.${name}.${key}`))
+    : []
+  return [...own, ...ofWalls].map(id => `${name}.${id}`)
+}

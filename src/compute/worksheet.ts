@@ -1,0 +1,191 @@
+/** The whole building at work: every value by its id, each worked when it is first asked for. */
+import type { Diagnostic } from '../base/diagnostic.ts'
+import { namesIn } from '../base/expr.ts'
+import { Ledger, type Result } from '../base/ledger.ts'
+import { bad, good } from '../base/outcome.ts'
+import type { Value, Word } from '../base/value.ts'
+import { duplicates } from '../model/columns.ts'
+import { type Construction, readConstruction } from '../model/construction.ts'
+import { type Equation, readEquations, workEquation } from '../model/equations.ts'
+import type { Choices } from '../model/front.ts'
+import type { Givens } from '../model/givens.ts'
+import { type Grid, readGrid } from '../model/grid.ts'
+import { type LevelLine, readLevels } from '../model/levels.ts'
+import type { Assumption, Scope } from '../model/scope.ts'
+import type { Block } from '../read/block.ts'
+import type { Text } from '../read/text.ts'
+import { constructionValue, levelIds, levelValue } from './ids.ts'
+import { type LevelWork, levelWork } from './level.ts'
+
+export interface Worksheet {
+  readonly scope: Scope
+  readonly grid: () => Result<Grid>
+  readonly levels: readonly LevelWork[]
+  readonly levelLines: () => Result<readonly LevelLine[]>
+  readonly constructions: ReadonlyMap<string, () => Result<Construction>>
+  /** The value of each line of the equation blocks, by its place. */
+  readonly equation: (line: Text) => Result<Value>
+  readonly equationLines: readonly Text[]
+  readonly assumptions: () => readonly Assumption[]
+  readonly warnings: () => readonly Diagnostic[]
+  /** Reads every given block, whether or not a working asks for it, and returns its faults. */
+  readonly readAll: () => readonly Diagnostic[]
+}
+
+export function worksheet(givens: Givens, { system, assumptions: chosen }: Choices): Worksheet {
+  const ledger = new Ledger()
+  const warnings: Diagnostic[] = []
+  const assumptions = new Map(chosen.map(assumption => [assumption.text, assumption]))
+  const scope: Scope = {
+    ledger,
+    display: { system, relative: false },
+    lookup: id => lookup(id),
+    ids: () => [...equations.keys(), ...levels.flatMap(levelIds)],
+    warn: fault => warnings.push(fault),
+    assume: assumption => assumptions.set(assumption.text, assumption),
+  }
+  const nowhere = { start: 0, end: 0 }
+  const grid = ledger.once('grid', givens.grid[0]?.info ?? nowhere, () => readGrid(givens.grid, scope))
+  const onlyName = givens.levels[0]?.name ?? ''
+  const levelLines = ledger.once('levels', givens.levelTable[0]?.info ?? nowhere, () =>
+    readLevels(givens.levelTable, onlyName, scope),
+  )
+  const constructions = constructionsOf(givens.constructions, scope)
+  const repeated = duplicates(
+    givens.constructions.flatMap(({ about }) => about ?? []),
+    'construction',
+  )
+
+  const levels: readonly LevelWork[] = givens.levels.map(level =>
+    levelWork(level, {
+      scope,
+      grid,
+      construction: name => constructions.get(name),
+      constructionNames: [...constructions.keys()],
+      forceTables: givens.forceTables,
+      above: () => {
+        const lines = levelLines()
+        if (!lines.ok) return lines
+        const mine = lines.value.findIndex(({ name }) => name === level.name)
+        const names = lines.value.slice(0, Math.max(0, mine)).map(({ name }) => name)
+        return good(names.flatMap(name => levels.find(other => other.name === name) ?? []))
+      },
+    }),
+  )
+
+  const lines = readEquations(givens.equations)
+  const equations = new Map<string, () => Result<Value>>()
+  const bodies = new Map<string, Equation>()
+  for (const read of lines.values()) {
+    if (!read.ok) continue
+    const { name, span } = read.value
+    bodies.set(name.text, read.value)
+    equations.set(
+      name.text,
+      ledger.once(name.text, span, () => workEquation(read.value, scope)),
+    )
+  }
+
+  /** Works what an equation rests on first, so that a long chain does not nest. */
+  function workInOrder(name: string): Result<Value> | undefined {
+    const waiting = [name]
+    const seen = new Set<string>()
+    const order: string[] = []
+    for (let next = waiting.at(-1); next !== undefined; next = waiting.at(-1)) {
+      const body = bodies.get(next)
+      const rest =
+        body && !seen.has(next)
+          ? [...namesIn(body.body).keys()].filter(other => bodies.has(other) && !seen.has(other))
+          : []
+      seen.add(next)
+      if (rest.length === 0) order.push(waiting.pop() ?? '')
+      else waiting.push(...rest)
+    }
+    for (const earlier of order) equations.get(earlier)?.()
+    return equations.get(name)?.()
+  }
+
+  function lookup(id: string): Result<Value | Word> | undefined {
+    const [head = '', ...path] = id.split('.')
+    if (path.length === 0) return equations.has(id) ? workInOrder(id) : undefined
+    const level = levels.find(({ name }) => name === head)
+    const [first = '', second = ''] = path
+    if (level) {
+      const found = levelValue(level, path)
+      if (found) return found
+    }
+    if (head === 'grid' && path.length === 1) return gridValue(first)
+    if (head === 'constructions' && path.length === 2) {
+      const construction = constructions.get(first)
+      const user = levels[0]
+      return construction && user ? constructionValue(construction, user.moduli(first), second) : undefined
+    }
+    return undefined
+  }
+
+  function gridValue(name: string): Result<Value> | undefined {
+    const read = grid()
+    if (!read.ok) return read
+    const line = [...read.value.x, ...read.value.y].find(other => other.name === name)
+    return line && good(line.at)
+  }
+
+  return {
+    scope,
+    grid,
+    levels,
+    levelLines,
+    constructions,
+    equationLines: [...lines.keys()],
+    equation: line => {
+      const read = lines.get(line)
+      if (!read) return bad([])
+      return read.ok ? (workInOrder(read.value.name.text) ?? bad([])) : read
+    },
+    assumptions: () => [...assumptions.values()],
+    warnings: () => warnings,
+    readAll: () => [
+      ...givens.faults,
+      ...repeated,
+      ...faultsOf([...readers(), ...[...lines.keys()].map(line => () => equationFaults(line))]),
+    ],
+  }
+
+  function equationFaults(line: Text): Result<unknown> {
+    const read = lines.get(line)
+    return read?.ok ? (workInOrder(read.value.name.text) ?? bad([])) : (read ?? bad([]))
+  }
+
+  function readers(): readonly (() => Result<unknown>)[] {
+    return [
+      grid,
+      levelLines,
+      ...constructions.values(),
+      ...levels.flatMap(({ givens, areas, mass, walls, springs, forces }) => [
+        ...(givens.areas.length > 0 ? [areas, mass] : []),
+        ...(givens.walls.length > 0 ? [walls, springs] : []),
+        forces,
+      ]),
+    ]
+  }
+}
+
+function faultsOf(parts: readonly (() => Result<unknown>)[]): readonly Diagnostic[] {
+  return parts.flatMap(part => {
+    const result = part()
+    return result.ok ? [] : result.because
+  })
+}
+
+function constructionsOf(blocks: readonly Block[], scope: Scope): ReadonlyMap<string, () => Result<Construction>> {
+  const found = new Map<string, () => Result<Construction>>()
+  for (const block of blocks) {
+    const name = block.about?.text ?? ''
+    if (!found.has(name))
+      found.set(
+        name,
+        scope.ledger.once(`constructions.${name}`, block.info, () => readConstruction(block, scope)),
+      )
+  }
+  return found
+}

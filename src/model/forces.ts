@@ -1,0 +1,143 @@
+/** Stated storey forces: what acts at each level, and how far it may be off the centre of mass. */
+import { sym } from '../base/formula.ts'
+import { unitOfKind } from '../base/kind.ts'
+import { all, type Result } from '../base/ledger.ts'
+import { bad, good } from '../base/outcome.ts'
+import type { Unit } from '../base/unit.ts'
+import type { Value } from '../base/value.ts'
+import { texAbout } from '../base/work.ts'
+import type { Block } from '../read/block.ts'
+import { diagnose, type Text } from '../read/text.ts'
+import { quantity } from './cell.ts'
+import { filled, recordsOf, settingOf, strangeLines, strangeSettings } from './columns.ts'
+import type { Scope } from './scope.ts'
+
+export interface Forces {
+  /** Absent when no force is stated along the axis. */
+  readonly x?: Value
+  readonly y?: Value
+  /** Share of the plan's size across the force by which the mass may be off. */
+  readonly accidental: Value
+}
+
+const force = { x: sym('F_x', 'F_x', 'force'), y: sym('F_y', 'F_y', 'force') }
+const share = sym('a', '\\alpha', 'share')
+
+/** The share that most standards ask for; ASCE 7-16 12.8.4.2 and EN 1998-1 4.3.2 both have 5 %. */
+const COMMON_SHARE = 0.05
+
+interface Stated {
+  readonly x?: Text
+  readonly y?: Text
+  readonly unitX?: Unit
+  readonly unitY?: Unit
+  readonly accidental?: Text
+}
+
+export function readForces(
+  blocks: readonly Block[],
+  tables: readonly Block[],
+  level: string,
+  scope: Scope,
+): Result<Forces | undefined> {
+  const [block, second] = blocks
+  const rows = all(tables.map(table => rowFor(table, level)))
+  if (!rows.ok) return rows
+  const found = rows.value.filter(row => row !== undefined)
+  const [row] = found
+  const again = second ?? (row ? block : undefined)
+  if (again)
+    return bad([
+      diagnose('error', 'forces-repeated', again.info, `the forces of ${level} are given twice`, 'Keep one of them.'),
+    ])
+  if (row) return readStated(row, level, scope)
+  if (!block) return good(undefined)
+  const faults = [...block.faults, ...strangeSettings(block, ['x', 'y', 'accidental']), ...strangeLines(block)]
+  if (faults.length > 0) return bad(faults)
+  const [x, y, accidental] = ['x', 'y', 'accidental'].map(name => settingOf(block, name))
+  if (!x && !y)
+    return bad([
+      diagnose(
+        'error',
+        'forces-missing',
+        block.info,
+        `the forces of ${level} are not stated`,
+        'Write x: 42 kip, y: 42 kip, or one of them.',
+      ),
+    ])
+  return readStated({ ...(x ? { x } : {}), ...(y ? { y } : {}), ...(accidental ? { accidental } : {}) }, level, scope)
+}
+
+function rowFor(table: Block, level: string): Result<Stated | undefined> {
+  const records = recordsOf(table, { needed: ['level'], optional: ['x', 'y'] })
+  const faults = [...strangeSettings(table, ['accidental']), ...strangeLines(table)]
+  if (!records.ok || faults.length > 0) return bad([...faults, ...(records.ok ? [] : records.because)])
+  const record = records.value.find(record => record.cell('level')?.text === level)
+  if (!record) return good(undefined)
+  const name = filled(record, 'level')
+  if (!name.ok) return name
+  const [x, y, unitX, unitY] = [record.cell('x'), record.cell('y'), record.unit('x'), record.unit('y')]
+  const accidental = settingOf(table, 'accidental')
+  return good({
+    ...(x ? { x } : {}),
+    ...(y ? { y } : {}),
+    ...(unitX ? { unitX } : {}),
+    ...(unitY ? { unitY } : {}),
+    ...(accidental ? { accidental } : {}),
+  })
+}
+
+function readStated({ x, y, unitX, unitY, accidental }: Stated, level: string, scope: Scope): Result<Forces> {
+  const along = (axis: 'x' | 'y', cell: Text | undefined, unit: Unit | undefined) =>
+    cell &&
+    quantity(
+      cell,
+      {
+        id: `${level}.force.${axis}`,
+        what: `the force along ${axis}`,
+        sym: force[axis],
+        tex: texAbout(`F_{${axis}}`, level),
+        ...(unit ? { unit } : {}),
+      },
+      scope,
+    )
+  const [inX, inY] = [along('x', x, unitX), along('y', y, unitY)]
+  const off = accidental ? readShare(accidental, level, scope) : good(commonShare(level, scope))
+  const read = all<unknown>([...(inX ? [inX] : []), ...(inY ? [inY] : []), off])
+  if (!read.ok) return read
+  if (!off.ok) return off
+  return good({ ...(inX?.ok ? { x: inX.value } : {}), ...(inY?.ok ? { y: inY.value } : {}), accidental: off.value })
+}
+
+function readShare(cell: Text, level: string, scope: Scope): Result<Value> {
+  const value = quantity(
+    cell,
+    { id: `${level}.accidental`, what: 'accidental', sym: share, tex: texAbout('\\alpha', level) },
+    scope,
+  )
+  if (!value.ok || (value.value.si >= 0 && value.value.si <= 0.5)) return value
+  return bad([
+    diagnose(
+      'error',
+      'accidental-out-of-range',
+      cell.span,
+      `accidental is ${cell.text}; it is a share of the plan, from 0% to 50%`,
+      'Most standards ask for 5%.',
+    ),
+  ])
+}
+
+function commonShare(level: string, scope: Scope): Value {
+  const text = `The force at ${level} may act off the centre of mass by 5% of the plan across it, to either side.`
+  scope.assume({ text, because: 'accidental is not stated; 5% as in ASCE 7-16 12.8.4.2 and EN 1998-1 4.3.2' })
+  return {
+    id: `${level}.accidental`,
+    tex: texAbout('\\alpha', level),
+    si: COMMON_SHARE,
+    unit: shareUnit(scope),
+    rounding: 0,
+    origin: { kind: 'default', assumption: text },
+  }
+}
+
+const shareUnit = (scope: Scope): Unit => unitOfKind('share', scope.display)

@@ -1,0 +1,168 @@
+/** Walls of a level: where they stand, how high they are, and what gives them their stiffness. */
+import { isNumber } from '../base/dimension.ts'
+import { sym } from '../base/formula.ts'
+import { all, type Result } from '../base/ledger.ts'
+import { bad, good } from '../base/outcome.ts'
+import { parseExpr } from '../base/parse.ts'
+import type { Span } from '../base/span.ts'
+import { NO_UNIT, type Unit } from '../base/unit.ts'
+import type { Value } from '../base/value.ts'
+import { texAbout } from '../base/work.ts'
+import type { Block } from '../read/block.ts'
+import { diagnose, type Text } from '../read/text.ts'
+import { aboveZero, exprDiagnostic, quantity, stated, workExpr } from './cell.ts'
+import { duplicates, filled, nameIn, type RowOf, recordsOf, strangeLines, strangeSettings } from './columns.ts'
+import { type Corner, type Grid, readPoint } from './grid.ts'
+import type { Scope } from './scope.ts'
+
+interface Placed {
+  readonly name: string
+  readonly from: Corner
+  readonly to: Corner
+  readonly span: Span
+}
+
+/** A wall whose stiffness follows from its construction and height. */
+export interface BuiltWall extends Placed {
+  readonly kind: 'built'
+  readonly construction: Text
+  readonly height: Value
+}
+
+/** A wall of stated stiffness; the number may be relative to the other walls. */
+export interface StatedWall extends Placed {
+  readonly kind: 'stated'
+  readonly k: { readonly cell: Text; readonly unit?: Unit }
+  readonly height?: Value
+}
+
+export type Wall = BuiltWall | StatedWall
+
+const height = sym('h', 'h', 'length')
+export const stiffness = sym('k', 'k', 'stiffness')
+
+export function readWalls(blocks: readonly Block[], level: string, grid: Grid, scope: Scope): Result<readonly Wall[]> {
+  const names: Text[] = []
+  const parts = blocks.flatMap((block): readonly Result<Wall>[] => {
+    const records = recordsOf(block, {
+      needed: ['wall', 'from', 'to'],
+      optional: ['height', 'construction', 'k', 'note'],
+    })
+    const faults = [...strangeSettings(block, []), ...strangeLines(block)]
+    if (!records.ok || faults.length > 0) return [bad([...faults, ...(records.ok ? [] : records.because)])]
+    return records.value.map(record => readWall(record, level, grid, scope, names))
+  })
+  const repeated = duplicates(names, 'wall')
+  const read = all(parts)
+  return repeated.length > 0 ? bad([...repeated, ...(read.ok ? [] : read.because)]) : read
+}
+
+function readWall(record: RowOf, level: string, grid: Grid, scope: Scope, names: Text[]): Result<Wall> {
+  const name = nameIn(record, 'wall')
+  if (!name.ok) return name
+  names.push(name.value)
+  const placed = readPlace(record, name.value.text, level, grid, scope)
+  if (!placed.ok) return placed
+  const [k, construction] = [record.cell('k'), record.cell('construction')]
+  if (k && construction)
+    return bad([
+      diagnose(
+        'error',
+        'stiffness-twice',
+        k.span,
+        `wall ${name.value.text} has both a stated k and a construction`,
+        'Keep one of them.',
+        { also: [{ span: construction.span, text: 'construction' }] },
+      ),
+    ])
+  const unit = record.unit('k')
+  if (k) {
+    const high = record.cell('height') ? readHeight(record, name.value.text, level, scope) : undefined
+    if (high && !high.ok) return high
+    return good({
+      ...placed.value,
+      kind: 'stated',
+      k: { cell: k, ...(unit ? { unit } : {}) },
+      ...(high ? { height: high.value } : {}),
+    })
+  }
+  if (!construction)
+    return bad([
+      diagnose(
+        'error',
+        'stiffness-missing',
+        record.line.span,
+        `wall ${name.value.text} has neither a construction nor a stated k`,
+        'Name its construction, or state k in a column of its own.',
+      ),
+    ])
+  const high = readHeight(record, name.value.text, level, scope)
+  return high.ok ? good({ ...placed.value, kind: 'built', construction, height: high.value }) : high
+}
+
+function readPlace(record: RowOf, name: string, level: string, grid: Grid, scope: Scope): Result<Placed> {
+  const [from, to] = [filled(record, 'from'), filled(record, 'to')]
+  if (!from.ok) return from
+  if (!to.ok) return to
+  const want = { id: `${level}.wall.${name}`, about: [name] }
+  const a = readPoint(from.value, { ...want, mark: '1' }, grid, scope)
+  const b = readPoint(to.value, { ...want, mark: '2' }, grid, scope)
+  if (!a.ok || !b.ok) return bad([...(a.ok ? [] : a.because), ...(b.ok ? [] : b.because)])
+  const length = Math.hypot(b.value.x.si - a.value.x.si, b.value.y.si - a.value.y.si)
+  // A wall shorter than a tenth of a millimetre is two spellings of one point.
+  if (length < 1e-4)
+    return bad([
+      diagnose(
+        'error',
+        'wall-without-length',
+        { start: from.value.span.start, end: to.value.span.end },
+        `wall ${name} has no length`,
+        'Its two ends are the same point.',
+      ),
+    ])
+  return good({ name, ...directed(a.value, b.value), span: record.line.span })
+}
+
+/**
+ * A wall's own direction has a positive x part, or points up when it is parallel
+ * to y, whichever end was written first: the sign of its shear follows from it.
+ */
+function directed(a: Corner, b: Corner): { readonly from: Corner; readonly to: Corner } {
+  const forward = b.x.si > a.x.si || (b.x.si === a.x.si && b.y.si > a.y.si)
+  return forward ? { from: a, to: b } : { from: b, to: a }
+}
+
+function readHeight(record: RowOf, name: string, level: string, scope: Scope): Result<Value> {
+  const cell = filled(record, 'height')
+  if (!cell.ok) return cell
+  const unit = record.unit('height')
+  const value = quantity(
+    cell.value,
+    { id: `${level}.wall.${name}.h`, what: 'height', sym: height, tex: texAbout('h', name), ...(unit ? { unit } : {}) },
+    scope,
+  )
+  return aboveZero(value, cell.value.span, `the height of wall ${name}`)
+}
+
+/** The stated stiffness: with a unit, or a pure number that is relative to the other walls. */
+export function readStiffness({ name, k }: StatedWall, level: string, scope: Scope): Result<Value> {
+  const parsed = parseExpr(k.cell.text, k.cell.span.start)
+  if (!parsed.ok) return bad([exprDiagnostic(parsed.because)])
+  const id = `${level}.wall.${name}.k`
+  const worked = workExpr(parsed.value, k.cell.span, scope)
+  if (!worked.ok) return worked
+  const tex = texAbout('k', name)
+  if (!isNumber(worked.value.dimension) || k.unit) {
+    const value = quantity(k.cell, { id, what: 'k', sym: stiffness, tex, ...(k.unit ? { unit: k.unit } : {}) }, scope)
+    return aboveZero(value, k.cell.span, `the stiffness of wall ${name}`)
+  }
+  const origin =
+    worked.value.inputs.size === 0
+      ? ({ kind: 'given', span: k.cell.span } as const)
+      : stated(parsed.value, k.cell.span, stiffness, worked.value.inputs)
+  return aboveZero(
+    good({ id, tex, si: worked.value.si, unit: NO_UNIT, rounding: 1e-12, origin }),
+    k.cell.span,
+    `the stiffness of wall ${name}`,
+  )
+}

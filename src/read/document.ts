@@ -1,0 +1,168 @@
+/**
+ * Markdown to prose and blocks with their places. The tree stays as remark made it; blocks and quotes
+ * are found in it.
+ */
+import type { Code, Html, Node, Root, Text as TextNode, Yaml } from 'mdast'
+import type { Diagnostic } from '../base/diagnostic.ts'
+import { nearNames } from '../base/near.ts'
+import { lineOf, lineText, type Source } from '../base/span.ts'
+import { type Block, readBlock } from './block.ts'
+import { type FrontMatter, noFrontMatter, readFront } from './front.ts'
+import { diagnose, type Text } from './text.ts'
+import { isTopic, laterTopics, topics } from './topics.ts'
+
+/** A `{{id}}` in prose, or `{{id | unit}}`. */
+export interface QuoteMark {
+  readonly node: TextNode
+  readonly id: Text
+  readonly options: Text
+  /** Offsets of the whole mark within the text of its node. */
+  readonly within: { readonly start: number; readonly end: number }
+}
+
+export interface Document {
+  readonly source: Source
+  readonly tree: Root
+  readonly front: FrontMatter
+  readonly blocks: ReadonlyMap<Code, Block>
+  readonly quotes: readonly QuoteMark[]
+  readonly faults: readonly Diagnostic[]
+}
+
+export function readDocument(tree: Root, source: Source): Document {
+  const faults: Diagnostic[] = []
+  const blocks = new Map<Code, Block>()
+  const quotes: QuoteMark[] = []
+  let front = noFrontMatter
+  visit(tree, node => {
+    if (isYaml(node) && front === noFrontMatter) front = readFront(yamlText(node))
+    else if (isCode(node)) {
+      const block = blockOf(node, source, faults)
+      if (block) blocks.set(node, block)
+    } else if (isHtml(node)) faults.push(...htmlLeftOut(node))
+    else if (isText(node)) quotes.push(...quotesIn(node, source))
+  })
+  return { source, tree, front, blocks, quotes, faults }
+}
+
+const isYaml = (node: Node): node is Yaml => node.type === 'yaml'
+const isCode = (node: Node): node is Code => node.type === 'code'
+const isHtml = (node: Node): node is Html => node.type === 'html'
+const isText = (node: Node): node is TextNode => node.type === 'text'
+
+function visit(tree: Root, see: (node: Node) => void): void {
+  const waiting: Node[] = [tree]
+  for (let node = waiting.pop(); node; node = waiting.pop()) {
+    see(node)
+    // Every parent of an mdast tree holds its children under this name.
+    const children = 'children' in node ? (node.children as readonly Node[]) : []
+    for (let i = children.length - 1; i >= 0; i--) {
+      const child = children[i]
+      if (child) waiting.push(child)
+    }
+  }
+}
+
+const startOf = (node: Node): number => node.position?.start.offset ?? 0
+const endOf = (node: Node): number => node.position?.end.offset ?? 0
+
+function yamlText(node: Yaml): Text {
+  const start = startOf(node) + 4
+  return { text: node.value, span: { start, end: start + node.value.length } }
+}
+
+function blockOf(node: Code, source: Source, faults: Diagnostic[]): Block | undefined {
+  const word = node.lang ?? ''
+  if (!isTopic(word)) {
+    const fault = strangeTopic(node, word)
+    if (fault) faults.push(fault)
+    return undefined
+  }
+  return readBlock(infoText(node, source), contentLines(node, source))
+}
+
+function strangeTopic(node: Code, word: string): Diagnostic | undefined {
+  const start = startOf(node)
+  const span = { start, end: Math.min(endOf(node), start + 3 + word.length) }
+  if (laterTopics.includes(word))
+    return diagnose(
+      'error',
+      'topic-not-worked',
+      span,
+      `${word} is not worked by this version`,
+      'State what follows from it, such as the forces, or leave the block out.',
+    )
+  const near =
+    word.length >= 4 && !/^[A-Z]/.test(word)
+      ? nearNames(word, topics).filter(name => Math.abs(name.length - word.length) < 2)
+      : []
+  if (near.length === 0) return undefined
+  return diagnose(
+    'warning',
+    'topic-near-miss',
+    span,
+    `a block ${word} is not read`,
+    `Did you mean ${near.join(' or ')}?`,
+  )
+}
+
+/** The fence's first line after its marks, wherever the fence stands. */
+function infoText(node: Code, source: Source): Text {
+  const start = startOf(node)
+  const line = source.text.slice(start, lineEnd(source, start))
+  const marks = /^[`~]+\s*/.exec(line)?.[0].length ?? 0
+  const text = line.slice(marks).trimEnd()
+  return { text, span: { start: start + marks, end: start + marks + text.length } }
+}
+
+function lineEnd({ text }: Source, from: number): number {
+  const end = text.indexOf('\n', from)
+  return end === -1 ? text.length : end
+}
+
+/** Each line of the fence with its place, found from the right so that lists and quotations may indent it. */
+function contentLines(node: Code, source: Source): readonly Text[] {
+  if (node.value === '') return []
+  const first = lineOf(source, startOf(node)) + 1
+  return node.value.split('\n').map((raw, i) => {
+    const text = raw.replace(/\r$/, '')
+    const line = first + i
+    const lineStart = source.lineStarts[line - 1] ?? source.text.length
+    const start = lineStart + Math.max(0, lineText(source, line).length - text.length)
+    return { text, span: { start, end: start + text.length } }
+  })
+}
+
+function htmlLeftOut(node: Html): readonly Diagnostic[] {
+  if (/^<!--[\s\S]*-->$/.test(node.value.trim())) return []
+  const start = startOf(node)
+  return [
+    diagnose(
+      'warning',
+      'html-left-out',
+      { start, end: Math.min(endOf(node), start + 40) },
+      'raw HTML is left out of the page',
+      'Write it in Markdown.',
+    ),
+  ]
+}
+
+const QUOTE = /\{\{\s*([^{}|]*?)\s*(?:\|\s*([^{}]*?)\s*)?\}\}/g
+
+function quotesIn(node: TextNode, source: Source): readonly QuoteMark[] {
+  if (!node.value.includes('{{')) return []
+  let from = startOf(node)
+  return [...node.value.matchAll(QUOTE)].map(found => {
+    const [whole, id = '', options = ''] = found
+    const at = Math.max(0, source.text.indexOf(whole, from))
+    from = at + whole.length
+    return {
+      node,
+      id: placed(id, at + whole.indexOf(id)),
+      options: placed(options, at + whole.lastIndexOf(options)),
+      within: { start: found.index, end: found.index + whole.length },
+    }
+  })
+}
+
+const placed = (text: string, start: number): Text => ({ text, span: { start, end: start + text.length } })

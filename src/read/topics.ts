@@ -1,0 +1,20 @@
+/** The first words of the fences that are ours. */
+export const topics = [
+  'grid',
+  'levels',
+  'areas',
+  'line-loads',
+  'point-loads',
+  'construction',
+  'walls',
+  'forces',
+  'equations',
+  'working',
+] as const
+
+export type Topic = (typeof topics)[number]
+
+/** Words of the language that this version does not work: said, never passed over. */
+export const laterTopics: readonly string[] = ['openings', 'diaphragm', 'seismic', 'wind']
+
+export const isTopic = (word: string): word is Topic => topics.some(topic => topic === word)
