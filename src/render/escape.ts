@@ -1,0 +1,35 @@
+/** Text made safe to stand in HTML, in an attribute, in an anchor and in a CSS string. */
+
+const entities: Readonly<Record<string, string>> = {
+  '&': '&amp;',
+  '<': '&lt;',
+  '>': '&gt;',
+  '"': '&quot;',
+  "'": '&#39;',
+}
+
+/** For text and for quoted attribute values alike. */
+export const escapeHtml = (text: string): string => text.replace(/[&<>"']/g, mark => entities[mark] ?? mark)
+
+const lowered: Readonly<Record<string, string>> = Object.fromEntries(
+  Array.from('⁰¹²³⁴⁵⁶⁷⁸⁹⁻', (mark, i) => [mark, '0123456789−'.charAt(i)]),
+)
+
+/**
+ * Printed text as HTML. The page's faces hold only the raised digits 1, 2 and 3,
+ * so a run with any other is set as a superscript.
+ */
+export function pageText(text: string): string {
+  return escapeHtml(text).replace(/[⁰¹²³⁴⁵⁶⁷⁸⁹⁻]+/g, run =>
+    /^[¹²³]$/.test(run) ? run : `<sup>${Array.from(run, mark => lowered[mark] ?? mark).join('')}</sup>`,
+  )
+}
+
+/** The attribute value that leads to an element of this id on the same page. */
+export const fragment = (id: string): string => `#${escapeHtml(id.replace(/%/g, '%25').replace(/ /g, '%20'))}`
+
+/** A quoted CSS string; every character that is not plain goes in by number, so that `</style>` cannot come about. */
+export function cssString(text: string): string {
+  const safe = text.replace(/[^A-Za-z0-9 .,;:()-]/gu, mark => `\\${mark.codePointAt(0)?.toString(16) ?? '20'} `)
+  return `"${safe}"`
+}

@@ -1,0 +1,58 @@
+/** Each piece of the calculation as HTML. Pieces only set; they compute nothing that is printed. */
+import type { Figure, Heading, Note, Piece, Register } from '../explain/sheet.ts'
+import { escapeHtml, pageText } from './escape.ts'
+import { checkHtml } from './html-check.ts'
+import { equationHtml } from './html-equation.ts'
+import { faultHtml } from './html-fault.ts'
+import { idAttribute, type Setting, titleHtml } from './html-parts.ts'
+import { tableHtml } from './html-table.ts'
+
+export function pieceHtml(piece: Piece, setting: Setting): string {
+  switch (piece.kind) {
+    case 'equation':
+      return equationHtml(piece, setting)
+    case 'table':
+      return tableHtml(piece, setting)
+    case 'figure':
+      return figureHtml(piece)
+    case 'check':
+      return checkHtml(piece)
+    case 'note':
+      return noteHtml(piece)
+    case 'heading':
+      return headingHtml(piece, setting)
+    case 'register':
+      return registerHtml(piece, setting)
+    case 'fault':
+      return faultHtml(piece, setting)
+  }
+}
+
+const figureHtml = ({
+  id,
+  number,
+  caption,
+  svg,
+  alternative,
+}: Figure): string => `<figure class="plan"${idAttribute(id)}>
+<div class="drawing" role="img" aria-label="${escapeHtml(alternative)}">${svg}</div>
+<figcaption>${titleHtml('Figure', number)}${pageText(caption)}</figcaption>
+</figure>`
+
+const noteHtml = ({ text }: Note): string => `<p class="note">${pageText(text)}</p>`
+
+const headingHtml = ({ text }: Heading, { level }: Setting): string =>
+  `<h${level} class="part">${pageText(text)}</h${level}>`
+
+function registerHtml({ id, title, items }: Register, { level }: Setting): string {
+  const list = items.map(
+    ({ text, detail }) =>
+      `<li>${pageText(text)}${detail === '' ? '' : ` <span class="detail">${pageText(detail)}</span>`}</li>`,
+  )
+  return `<section class="register"${idAttribute(id)}>
+<h${level} class="part">${pageText(title)}</h${level}>
+<ol>
+${list.join('\n')}
+</ol>
+</section>`
+}

@@ -1,0 +1,44 @@
+/** The page's own style sheet: only the faces and rules that this page uses. */
+import type { Sheet } from '../explain/sheet.ts'
+import type { BodyPart } from './body.ts'
+import { cssString } from './escape.ts'
+import { type Face, facesFor, needsOf } from './faces.ts'
+import { CAUTION, draftWords, markOf } from './imprint.ts'
+import { mathFaces, mathRules } from './math-faces.ts'
+
+export interface Styled {
+  readonly sheet: Sheet
+  readonly body: readonly BodyPart[]
+  /** Text of a prepared asset, such as `sheet.css`. */
+  readonly asset: (name: string) => string
+}
+
+export function styleOf({ sheet, body, asset }: Styled, classes: ReadonlySet<string>): string {
+  const text = facesFor(JSON.parse(asset('faces.json')) as readonly Face[], needsOf(sheet, body)).map(
+    ({ name }) => name,
+  )
+  // KaTeX's roman also stands in for signs that the text faces lack, such as ≤ or →.
+  const math = new Set([
+    ...mathFaces(classes),
+    'KaTeX_Main-Regular',
+    ...(hasCode(body) ? ['KaTeX_Typewriter-Regular'] : []),
+  ])
+  const faces = [...text, ...[...math].sort()].map(name => asset(`faces/${name}.css`))
+  return [...faces, mathRules(asset('katex.css'), classes), asset('sheet.css'), paperRules(sheet)].join('\n')
+}
+
+const hasCode = (body: readonly BodyPart[]): boolean =>
+  body.some(part => part.kind === 'fault' || (part.kind === 'prose' && /<(?:code|pre|kbd|samp)[\s>]/.test(part.html)))
+
+/** What each printed sheet carries in its margins. The first sheet has the plate, and does without a head. */
+function paperRules(sheet: Sheet): string {
+  const { titleBlock, language } = sheet
+  const head = [titleBlock.project, titleBlock.title].filter(part => part !== '').join(', ')
+  const tail = [titleBlock.number, titleBlock.revision === '' ? '' : `Rev. ${titleBlock.revision}`]
+    .filter(part => part !== '')
+    .join(' · ')
+  const draft = sheet.draft
+    ? `@page{@top-center{content:${cssString(`DRAFT · ${draftWords(sheet)}`)};box-sizing:border-box;width:76mm;height:7mm;margin:9mm auto 5mm;padding:0;border:1pt solid #000;vertical-align:middle;text-align:center;font-weight:600}}`
+    : ''
+  return `@page{size:${language === 'en-US' ? 'letter' : 'A4'};@top-left{content:${cssString(head)}}@top-right{content:${cssString(tail)}}@bottom-left{content:${cssString(markOf(sheet))}}@bottom-center{content:${cssString(CAUTION)}}}@page:first{@top-left{content:none}@top-right{content:none}}${draft}`
+}

@@ -1,0 +1,58 @@
+/** A table of the calculation, with the formulas of its columns below it. */
+
+import { joinTex } from '../base/tex.ts'
+import { unitOnPage } from '../base/unit.ts'
+import type { Column, ColumnFormula, Row, Table } from '../explain/sheet.ts'
+import { escapeHtml, pageText } from './escape.ts'
+import { idAttribute, inlineMath, type Setting, sourceHtml, titleHtml } from './html-parts.ts'
+import { fitFactor, tableWidth } from './measure.ts'
+
+/** Room across a sheet of paper, in em of the table's type, and across a phone. */
+const ROOM_PAPER = 54
+const ROOM_PHONE = 26
+
+/** Smallest type of a table on paper, as a share of its usual size. */
+const LEAST = 0.6
+
+/** A table of so few rows is kept on one sheet. */
+const SHORT = 12
+
+export function tableHtml(table: Table, setting: Setting): string {
+  const { id, number, caption, columns, rows, foot, formulas, sourceLines } = table
+  const width = tableWidth(table)
+  const fit = fitFactor(width, ROOM_PAPER, LEAST)
+  // A box that may scroll sideways must be reached by keyboard; one that fits would only be a stop on the way.
+  const reach =
+    width > ROOM_PHONE ? ` tabindex="0" role="region" aria-label="${escapeHtml(`Table ${number}`.trim())}"` : ''
+  return `<div class="tbl${rows.length <= SHORT ? ' short' : ''}"${idAttribute(id)}${fit < 1 ? ` style="--fit:${fit.toFixed(2)}"` : ''}>
+<div class="scroll"${reach}><table>
+<caption><span>${titleHtml('Table', number)}${pageText(caption)} ${sourceHtml(sourceLines)}</span></caption>
+<thead><tr>${columns.map(column => headHtml(column, setting)).join('')}</tr></thead>
+<tbody>
+${rows.map(row => rowHtml(row, columns)).join('\n')}
+</tbody>${foot === undefined ? '' : `\n<tfoot>${rowHtml(foot, columns)}</tfoot>`}
+</table></div>
+${formulas.length === 0 ? '' : `<ul class="how">${formulas.map(formula => formulaHtml(formula, setting)).join('')}</ul>\n`}</div>`
+}
+
+function headHtml({ head, unit, align }: Column, setting: Setting): string {
+  const title = typeof head === 'string' ? pageText(head) : inlineMath(head, setting)
+  const below = unit === '' ? '' : `<span class="u">${pageText(unitOnPage(unit))}</span>`
+  return `<th scope="col"${side(align)}>${title}${below}</th>`
+}
+
+const side = (align: Column['align']): string => (align === 'right' ? ' class="r"' : '')
+
+function rowHtml({ cells, governs }: Row, columns: readonly Column[]): string {
+  const set = columns.map(({ align }, i) => {
+    const text = pageText(cells[i] ?? '')
+    if (i > 0) return `<td${side(align)}>${text}</td>`
+    return `<th scope="row"${side(align)}>${text}${governs ? ' <span class="mark">governs</span>' : ''}</th>`
+  })
+  return `<tr${governs ? ' class="governs"' : ''}>${set.join('')}</tr>`
+}
+
+function formulaHtml({ symbol, formula, reference }: ColumnFormula, setting: Setting): string {
+  const from = reference === '' ? '' : `<span class="ref">${pageText(reference)}</span>`
+  return `<li>${inlineMath(joinTex(symbol, '=', formula), setting)}${from}</li>`
+}

@@ -1,0 +1,46 @@
+/** The page: one HTML file that needs nothing beside it. */
+import type { Source } from '../base/span.ts'
+import type { TitleBlock } from '../explain/sheet.ts'
+import { escapeHtml } from './escape.ts'
+import { bodyHtml } from './html-body.ts'
+import { bannerHtml, plateHtml } from './html-plate.ts'
+import { type Styled, styleOf } from './html-style.ts'
+import { CAUTION, markOf } from './imprint.ts'
+import { createTypesetter, type ShapeCache } from './typeset.ts'
+
+export interface Page extends Styled {
+  /** The text that diagnostics point into. */
+  readonly source: Source
+  /** Shapes set by earlier pages; without it every shape is set afresh. */
+  readonly shapes?: ShapeCache
+}
+
+export function renderHtml(page: Page): string {
+  const { sheet, asset } = page
+  const { titleBlock, language } = sheet
+  const typesetter = createTypesetter(page.shapes)
+  const body = bodyHtml(page.body, { typesetter, source: page.source, level: 2 })
+  return fillTemplate(asset('sheet.html'), {
+    language,
+    title: escapeHtml(documentTitle(titleBlock)),
+    generator: escapeHtml(`Platemark ${sheet.version}`),
+    style: styleOf(page, typesetter.classes()),
+    banner: bannerHtml(sheet),
+    plate: plateHtml(titleBlock),
+    body,
+    mark: escapeHtml(markOf(sheet)),
+    caution: CAUTION,
+  })
+}
+
+/** Puts the fields in place in one pass, so that nothing put in is read as a field again. */
+function fillTemplate(template: string, fields: Readonly<Record<string, string>>): string {
+  return template.replace(/\{\{(\w+)\}\}/g, (_, name: string) => {
+    const value = fields[name]
+    if (value === undefined) throw new Error(`the template asks for an unknown field: ${name}`)
+    return value
+  })
+}
+
+const documentTitle = ({ title, project, number }: TitleBlock): string =>
+  [title, project, number].filter(part => part !== '').join(' – ') || 'Calculation'

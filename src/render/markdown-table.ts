@@ -1,0 +1,74 @@
+/** A table of the calculation as a GFM table. */
+import type { List, ListItem, PhrasingContent, RootContent, TableCell, TableRow } from 'mdast'
+import { joinTex } from '../base/tex.ts'
+import { unitOnPage } from '../base/unit.ts'
+import type { Column, ColumnFormula, Row, Table } from '../explain/sheet.ts'
+import { linesInWords } from './body.ts'
+import { paragraph, strong, text } from './markdown-parts.ts'
+import { inlineMath } from './math-nodes.ts'
+
+export function tableNodes({
+  number,
+  caption,
+  columns,
+  rows,
+  foot,
+  formulas,
+  sourceLines,
+}: Table): readonly RootContent[] {
+  const lines = linesInWords(sourceLines)
+  const title = [number === '' ? '' : `Table ${number}.`, caption].filter(part => part !== '').join(' ')
+  const below = [...(title === '' ? [] : [strong(title)]), ...(lines === '' ? [] : [text(` ${lines}`)])]
+  const body = rows.map(row => rowNode(row, columns.length))
+  return [
+    ...(below.length === 0 ? [] : [paragraph(...below)]),
+    {
+      type: 'table',
+      align: columns.map(({ align }) => align),
+      children: [headNode(columns), ...body, ...(foot === undefined ? [] : [sumNode(foot, columns.length)])],
+    },
+    ...(formulas.length === 0 ? [] : [formulaList(formulas)]),
+  ]
+}
+
+const headNode = (columns: readonly Column[]): TableRow => rowOf(columns.map(headCell))
+
+function headCell({ head, unit }: Column): PhrasingContent[] {
+  const title = typeof head === 'string' ? text(head) : inlineMath(head)
+  return unit === '' ? [title] : [title, text(` (${unitOnPage(unit)})`)]
+}
+
+/** The governing row says so, since Markdown cannot shade it. */
+function rowNode({ cells, governs }: Row, width: number): TableRow {
+  return rowOf(
+    padded(cells, width).map((cell, i) => {
+      if (!governs) return [text(cell)]
+      return i === 0 ? [strong(cell), text(' (governs)')] : boldCell(cell)
+    }),
+  )
+}
+
+const sumNode = ({ cells }: Row, width: number): TableRow => rowOf(padded(cells, width).map(boldCell))
+
+/** An empty cell stays empty: two pairs of stars with nothing between them would print as stars. */
+const boldCell = (cell: string): PhrasingContent[] => (cell.trim() === '' ? [] : [strong(cell)])
+
+const padded = (cells: readonly string[], width: number): readonly string[] =>
+  Array.from({ length: width }, (_, i) => cells[i] ?? '')
+
+const rowOf = (cells: readonly PhrasingContent[][]): TableRow => ({
+  type: 'tableRow',
+  children: cells.map((children): TableCell => ({ type: 'tableCell', children })),
+})
+
+function formulaList(formulas: readonly ColumnFormula[]): List {
+  const children = formulas.map(({ symbol, formula, reference }): ListItem => {
+    const from = reference === '' ? [] : [text(` — ${reference}`)]
+    return {
+      type: 'listItem',
+      spread: false,
+      children: [paragraph(inlineMath(joinTex(symbol, '=', formula)), ...from)],
+    }
+  })
+  return { type: 'list', ordered: false, spread: false, children }
+}
