@@ -26,6 +26,8 @@ export interface Formula {
   /** Clause, publication or derivation, with `unchecked` where it was not in hand. */
   readonly source: string
   readonly assumes: readonly string[]
+  /** The right side in TeX where the expression is too long to set: Σ of a column that stands in a table. */
+  readonly inShort?: string
 }
 
 /**

@@ -23,6 +23,8 @@ const units = (US: string, SI: string) => ({ US: unit(US), SI: unit(SI) })
 
 const kinds = {
   number: { US: NO_UNIT, SI: NO_UNIT },
+  /** A pure number that is worth printing however small, such as a residual. */
+  residual: { US: NO_UNIT, SI: NO_UNIT },
   share: both('%'),
   angle: both('deg'),
   rotation: { ...both('rad'), relative: units('kip/ft', 'kN/m') },
@@ -77,6 +79,8 @@ export function roundingOfKind(kind: Kind): number {
     case 'force':
     case 'moment':
       return 1e-5
+    case 'residual':
+      return 0
     default:
       return 1e-12
   }

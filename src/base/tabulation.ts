@@ -70,22 +70,30 @@ export class Tabulation {
     return [...this.held.values()]
   }
 
+  /** True when a cell of the table has this id. */
+  has(id: string): boolean {
+    return this.rows.some((_, rowIdx) => this.columns.some(({ cell }) => cell(rowIdx).id === id))
+  }
+
   /** The sum of a column, as a value that later formulas use by the symbol `of`. */
   sum(name: string, of: Sym, id: string): Value {
-    const { numbers, cell } = this.column(name)
+    const { numbers, cell, sym: column } = this.column(name)
     let si = 0
     for (const one of numbers) si += one
     const rows = this.rows.length
+    let origin: Value['origin'] | undefined
     return {
       id,
       tex: of.tex,
       si,
       ...shownAs(of, this.display),
       get origin() {
-        return sumOrigin(
+        origin ??= sumOrigin(
           of,
+          column,
           Array.from({ length: rows }, (_, rowIdx) => cell(rowIdx)),
         )
+        return origin
       },
     }
   }
@@ -114,16 +122,22 @@ export class Tabulation {
 
 const nowhere = { start: 0, end: 0 }
 
-function sumOrigin(of: Sym, cells: readonly Value[]): Value['origin'] {
-  const args = cells.map(({ id }) => ({ kind: 'name', name: id, span: nowhere }) as const)
+function sumOrigin(of: Sym, column: Sym, cells: readonly Value[]): Value['origin'] {
+  const named = cells.map((cell, rowIdx) => ({ name: `${column.name}_${rowIdx + 1}`, cell }))
   const formula: Formula = {
     gives: of,
-    body: { kind: 'call', fn: 'sum', args, span: nowhere },
-    symbols: new Map(cells.map(({ id, tex }) => [id, { name: id, tex, kind: of.kind }])),
+    body: {
+      kind: 'call',
+      fn: 'sum',
+      args: named.map(({ name }) => ({ kind: 'name', name, span: nowhere })),
+      span: nowhere,
+    },
+    symbols: new Map(named.map(({ name, cell }) => [name, { name, tex: cell.tex, kind: of.kind }])),
     source: 'sum of the column',
     assumes: [],
+    inShort: `\\sum ${column.tex}`,
   }
-  return { kind: 'worked', step: { formula, inputs: new Map(cells.map(cell => [cell.id, cell])) } }
+  return { kind: 'worked', step: { formula, inputs: new Map(named.map(({ name, cell }) => [name, cell])) } }
 }
 
 function required<T>(value: T | undefined): T {

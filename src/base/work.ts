@@ -8,8 +8,8 @@ import type { Value } from './value.ts'
 export function texAbout(tex: string, ...about: readonly string[]): string {
   if (about.length === 0) return tex
   const words = about.map(texWords).join('{,}')
-  const below = /^(.*)_\{(.*)\}$/s.exec(tex)
-  return below ? `${below[1]}_{${below[2]}{,}${words}}` : `${tex}_{${words}}`
+  const below = /^(.*)_(?:\{(.*)\}|(\w))$/s.exec(tex)
+  return below ? `${below[1]}_{${below[2] ?? below[3]}{,}${words}}` : `${tex}_{${words}}`
 }
 
 /**
@@ -24,7 +24,13 @@ export function work(
   about: readonly string[] = [],
 ): Value {
   const numbers: Record<string, number> = {}
-  for (const name of formula.symbols.keys()) numbers[name] = inputs[name]?.si ?? Number.NaN
+  const used = new Map<string, Value>()
+  for (const name of formula.symbols.keys()) {
+    const input = inputs[name]
+    if (!input) throw new Error(`${id} has no ${name} to work with`)
+    numbers[name] = input.si
+    used.set(name, input)
+  }
   const si = run(formula, numbers)
   if (typeof si !== 'number') throw new Error(`${id} came out as a column`)
   return {
@@ -32,7 +38,7 @@ export function work(
     tex: texAbout(formula.gives.tex, ...about),
     si,
     ...shownAs(formula.gives, display),
-    origin: { kind: 'worked', step: { formula, inputs: new Map(Object.entries(inputs)) } },
+    origin: { kind: 'worked', step: { formula, inputs: used } },
   }
 }
 

@@ -14,6 +14,9 @@ export interface Residual {
   readonly M: Value
   /** The largest of them over the storey shear. */
   readonly ratio: Value
+  /** What the walls resist, along x, along y and about the origin. */
+  readonly resisted: { readonly x: Value; readonly y: Value; readonly M: Value }
+  readonly appliedMoment: Value
 }
 
 const Vc = sym('V_c', 'V\\,c', 'force')
@@ -26,7 +29,7 @@ const sumVr = sym('sum_Vr', '\\sum V\\,r', 'moment')
 const Rx = sym('R_x', 'R_x', 'force')
 const Ry = sym('R_y', 'R_y', 'force')
 const RM = sym('R_M', 'R_M', 'moment')
-const ratio = sym('R', 'R', 'number')
+const ratio = sym('R', 'R', 'residual')
 const span = sym('l', '\\ell', 'length')
 
 const EQUILIBRIUM = 'equilibrium about the origin'
@@ -56,8 +59,7 @@ const balance = {
 
 /**
  * The wall shears against the forces as they act on the plan, about the origin: a check that does not lean
- * on the centre of rigidity. A zero storey shear leaves no scale, and its ratio is then not finite.
- */
+ * on the centre of rigidity. */
 export function residualOf(
   level: string,
   each: Case,
@@ -68,9 +70,9 @@ export function residualOf(
 ): Residual {
   const { axis, name } = each
   walls
-    .work(balance.Vc, { V: 'V', c: 'c' })
-    .work(balance.Vs, { V: 'V', s: 's' })
-    .work(balance.Vr, { V: 'V', x: 'x', s: 's', y: 'y', c: 'c' })
+    .work(balance.Vc, { V: 'V', c: 'c' }, `Vc.${name}`)
+    .work(balance.Vs, { V: 'V', s: 's' }, `Vs.${name}`)
+    .work(balance.Vr, { V: 'V', x: 'x', s: 's', y: 'y', c: 'c' }, `Vr.${name}`)
   const id = `${level}.residual`
   const sums = {
     sum_Vc: walls.sum('V_c', sumVc, `${level}.sum.Vc.${name}`),
@@ -85,13 +87,8 @@ export function residualOf(
     axis === 'y'
       ? work(`${id}.y.${name}`, balance.alongY, { sum_Vs: sums.sum_Vs, V_y: shear }, display, [name])
       : work(`${id}.y.${name}`, balance.noneY, sums, display, [name])
-  const M = work(
-    `${id}.M.${name}`,
-    balance.moment,
-    { sum_Vr: sums.sum_Vr, M_o: appliedMoment(level, each, acting, display) },
-    display,
-    [name],
-  )
+  const applied = appliedMoment(level, each, acting, display)
+  const M = work(`${id}.M.${name}`, balance.moment, { sum_Vr: sums.sum_Vr, M_o: applied }, display, [name])
   const l = longestArm(walls)
   const inputs = { R_x: x, R_y: y, R_M: M, l, [axis === 'x' ? 'V_x' : 'V_y']: shear }
   return {
@@ -99,6 +96,8 @@ export function residualOf(
     y,
     M,
     ratio: work(`${id}.ratio.${name}`, axis === 'x' ? balance.ratioX : balance.ratioY, inputs, display, [name]),
+    resisted: { x: sums.sum_Vc, y: sums.sum_Vs, M: sums.sum_Vr },
+    appliedMoment: applied,
   }
 }
 

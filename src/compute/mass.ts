@@ -25,7 +25,7 @@ export interface Mass {
   readonly areas?: Tabulation
   readonly lines?: Tabulation
   readonly points?: Tabulation
-  /** Every part once: W, x, y, W x, W y, and I about the centre of mass. */
+  /** Every part once: W, x, y, W x, W y, and I about the centre of mass; A and w too where all are areas. */
   readonly parts: Tabulation
   readonly sums: { readonly Wx: Value; readonly Wy: Value }
 }
@@ -220,6 +220,7 @@ function workCentre(level: string, tables: Tables, display: Display): Mass {
     x: work(`${level}.CM.x`, centreOfMass.x, { sum_Wx: sums.Wx, sum_W: total }, display),
     y: work(`${level}.CM.y`, centreOfMass.y, { sum_Wy: sums.Wy, sum_W: total }, display),
   }
+  if (tables.areas && !tables.lines && !tables.points) parts.take(A, gathered('A')).take(areaLoad, gathered('w'))
   parts.work(moments.polar, { I_o: 'I_o', W: 'W', x: 'x', y: 'y', x_m: centre.x, y_m: centre.y })
   return { level, W: total, ...centre, Ip: parts.sum('I', polar, `${level}.I_p`), ...tables, parts, sums }
 }

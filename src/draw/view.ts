@@ -61,5 +61,10 @@ export interface PlanView {
   /** Metres in one unit of the scale bar, and that unit's name. */
   readonly scaleUnit: { readonly metres: number; readonly name: string }
   /** Words of the legend, such as `design shear of a wall, kip`. */
-  readonly legend: { readonly shear: string; readonly centreOfMass: string; readonly centreOfRigidity: string; readonly force: string }
+  readonly legend: {
+    readonly shear: string
+    readonly centreOfMass: string
+    readonly centreOfRigidity: string
+    readonly force: string
+  }
 }

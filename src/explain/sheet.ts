@@ -82,6 +82,8 @@ export interface Check {
   readonly what: string
   readonly demand: string
   readonly capacity: string
+  /** Both as numbers, in one unit in its plain spelling. */
+  readonly numbers: { readonly demand: number; readonly capacity: number; readonly unit: string }
   /** Demand over capacity. */
   readonly ratio: number
   readonly ratioPrinted: string

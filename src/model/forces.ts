@@ -101,12 +101,20 @@ function readStated({ x, y, unitX, unitY, accidental }: Stated, level: string, s
       },
       scope,
     )
-  const [inX, inY] = [along('x', x, unitX), along('y', y, unitY)]
+  const [inX, inY] = [notZero(along('x', x, unitX), x), notZero(along('y', y, unitY), y)]
   const off = accidental ? readShare(accidental, level, scope) : good(commonShare(level, scope))
   const read = all<unknown>([...(inX ? [inX] : []), ...(inY ? [inY] : []), off])
   if (!read.ok) return read
   if (!off.ok) return off
   return good({ ...(inX?.ok ? { x: inX.value } : {}), ...(inY?.ok ? { y: inY.value } : {}), accidental: off.value })
+}
+
+/** A case without a force has nothing to share out. */
+function notZero(value: Result<Value> | undefined, cell: Text | undefined): Result<Value> | undefined {
+  if (!value?.ok || !cell || value.value.si !== 0) return value
+  return bad([
+    diagnose('error', 'force-zero', cell.span, 'this force is zero', 'Leave it out where nothing acts along an axis.'),
+  ])
 }
 
 function readShare(cell: Text, level: string, scope: Scope): Result<Value> {

@@ -40,6 +40,7 @@ export function readDocument(tree: Root, source: Source): Document {
       const block = blockOf(node, source, faults)
       if (block) blocks.set(node, block)
     } else if (isHtml(node)) faults.push(...htmlLeftOut(node))
+    else if (node.type === 'image' || node.type === 'imageReference') faults.push(imageLeftOut(node))
     else if (isText(node)) quotes.push(...quotesIn(node, source))
   })
   return { source, tree, front, blocks, quotes, faults }
@@ -145,6 +146,16 @@ function htmlLeftOut(node: Html): readonly Diagnostic[] {
       'Write it in Markdown.',
     ),
   ]
+}
+
+function imageLeftOut(node: Node): Diagnostic {
+  return diagnose(
+    'warning',
+    'image-left-out',
+    { start: startOf(node), end: endOf(node) },
+    'pictures are not set by this version',
+    'The page shows its description in place of it.',
+  )
 }
 
 const QUOTE = /\{\{\s*([^{}|]*?)\s*(?:\|\s*([^{}]*?)\s*)?\}\}/g

@@ -41,8 +41,11 @@ const figureHtml = ({
 
 const noteHtml = ({ text }: Note): string => `<p class="note">${pageText(text)}</p>`
 
-const headingHtml = ({ text }: Heading, { level }: Setting): string =>
-  `<h${level} class="part">${pageText(text)}</h${level}>`
+function headingHtml({ text }: Heading, { level }: Setting): string {
+  const number = /^\d+(?:\.\d+)*(?=\s)/.exec(text)?.[0] ?? ''
+  const marked = number === '' ? '' : `<span class="hn">${number}</span>`
+  return `<h${level} class="part">${marked}${pageText(text.slice(number.length))}</h${level}>`
+}
 
 function registerHtml({ id, title, items }: Register, { level }: Setting): string {
   const list = items.map(

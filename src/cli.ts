@@ -1,0 +1,169 @@
+/** Arguments, files and exit codes. */
+import { createHash } from 'node:crypto'
+import { readFileSync } from 'node:fs'
+import { basename, dirname, extname, join, relative, resolve } from 'node:path'
+import { parseArgs } from 'node:util'
+import { inWords, suggestion } from './base/near.ts'
+import { longForm, oneLine } from './base/report.ts'
+import { sourceOf } from './base/span.ts'
+import type { Compiled } from './compile.ts'
+import { compileText } from './compile.ts'
+import { documentsIn, readText, writeWhole } from './files.ts'
+import { help, helpFor } from './help.ts'
+import { type Format, type Host, publish } from './publish.ts'
+
+declare const PLATEMARK_VERSION: string
+
+const DONE = 0
+const ERRORS = 1
+const WRONG_USAGE = 2
+
+const formats: readonly string[] = ['html', 'md', 'json'] satisfies readonly Format[]
+const isFormat = (word: string): word is Format => formats.includes(word)
+
+const host: Host = {
+  version: PLATEMARK_VERSION,
+  asset: name => readFileSync(join(__dirname, 'assets', name), 'utf8'),
+  sha256: text => createHash('sha256').update(text).digest('hex'),
+}
+
+const commands = ['build', 'check'] as const
+type Command = (typeof commands)[number]
+
+interface Settings {
+  readonly command: Command
+  readonly documents: readonly string[]
+  readonly to: readonly Format[]
+  readonly out: string | undefined
+  readonly draft: boolean
+  readonly oneLine: boolean
+}
+
+/** @returns the exit code */
+export function run(args: readonly string[]): number {
+  const settings = readArguments(args)
+  if (typeof settings === 'number') return settings
+  const codes = settings.documents.map(path =>
+    settings.command === 'build' ? build(path, settings) : check(path, settings),
+  )
+  return Math.max(DONE, ...codes)
+}
+
+function readArguments(args: readonly string[]): Settings | number {
+  const [word, ...rest] = args
+  if (word === '--version') return say(host.version)
+  if (word === undefined) return misuse('A command is missing.')
+  if (word === '--help' || word === 'help') return say(help)
+  const command = commands.find(command => command === word)
+  if (!command) return misuse(`There is no command ${word}. ${suggestion(word, commands, 'command')}`)
+  if (rest.includes('--help')) return say(helpFor(command))
+  return readOptions(command, rest)
+}
+
+const options = {
+  build: { to: { type: 'string' }, out: { type: 'string' }, draft: { type: 'boolean' }, list: { type: 'boolean' } },
+  check: { list: { type: 'boolean' } },
+} as const
+
+function readOptions(command: Command, args: readonly string[]): Settings | number {
+  let parsed: {
+    readonly values: Readonly<Record<string, unknown>>
+    readonly positionals: readonly string[]
+  }
+  try {
+    parsed = parseArgs({ args: [...args], options: options[command], allowPositionals: true })
+  } catch (error) {
+    return misuse(`${error instanceof Error ? (error.message.split('. ')[0] ?? '') : ''}.`)
+  }
+  const { values, positionals } = parsed
+  if (positionals.length === 0) return misuse('Name a Markdown file, or a folder of them.')
+  const to = (typeof values.to === 'string' ? values.to : 'html')
+    .split(',')
+    .map(word => word.trim())
+  const strange = to.find(word => !isFormat(word))
+  if (strange !== undefined) return misuse(`There is no format ${strange}. Formats are ${inWords(formats, 'and')}.`)
+  const found = positionals.map(path => documentsIn(path))
+  const missing = found.flatMap(each => (each.ok ? [] : [each.because]))
+  if (missing.length > 0) return fail(missing.join('\n'))
+  return {
+    command,
+    documents: [...new Set(found.flatMap(each => (each.ok ? each.value : [])))],
+    to: to.filter(isFormat),
+    out: typeof values.out === 'string' ? values.out : undefined,
+    draft: values.draft === true,
+    oneLine: values.list === true,
+  }
+}
+
+function compileFile(path: string): Compiled | undefined {
+  const read = readText(path)
+  if (read.ok) return compileText(shownPath(path), read.value)
+  const source = sourceOf(shownPath(path), '')
+  process.stderr.write(
+    `${longForm(source, { severity: 'error', at: { span: { start: 0, end: 1 }, text: '' }, also: [], ...read.because })}\n\n`,
+  )
+  return undefined
+}
+
+const shownPath = (path: string): string => relative(process.cwd(), resolve(path)).replaceAll('\\', '/')
+
+/** Pages are written by a sound build, or as a draft; results always are. */
+function build(path: string, settings: Settings): number {
+  const compiled = compileFile(path)
+  if (!compiled) return ERRORS
+  const errors = tell(compiled, settings)
+  const folder = settings.out ?? dirname(path)
+  const stem =
+    basename(path, extname(path)) + (settings.out === undefined && settings.to.includes('md') ? '.worked' : '')
+  const wanted = settings.to.filter(format => format === 'json' || errors === 0 || settings.draft)
+  const files = wanted.flatMap(format => publish(compiled, stem, format, settings.draft && errors > 0, host))
+  const written = writeWhole(folder, files)
+  if (!written.ok) return fail(written.because)
+  for (const { name } of files) process.stdout.write(`${shownPath(join(folder, name))}\n`)
+  sayChecks(compiled)
+  return errors > 0 ? ERRORS : DONE
+}
+
+function check(path: string, settings: Settings): number {
+  const compiled = compileFile(path)
+  if (!compiled) return ERRORS
+  const errors = tell(compiled, settings)
+  return errors > 0 || sayChecks(compiled) > 0 ? ERRORS : DONE
+}
+
+/** Prints every diagnostic and a closing count. @returns the number of errors */
+function tell({ source, diagnostics }: Compiled, settings: Settings): number {
+  for (const diagnostic of diagnostics)
+    process.stderr.write(settings.oneLine ? `${oneLine(source, diagnostic)}\n` : `${longForm(source, diagnostic)}\n\n`)
+  const errors = diagnostics.filter(({ severity }) => severity === 'error').length
+  const warnings = diagnostics.length - errors
+  if (diagnostics.length > 0)
+    process.stderr.write(`${source.path}: ${count(errors, 'error')}, ${count(warnings, 'warning')}\n`)
+  return errors
+}
+
+function sayChecks({ source, checks }: Compiled): number {
+  const failed = checks.filter(({ ok }) => !ok)
+  for (const { what, demand, capacity, ratioPrinted, ok } of checks)
+    process.stdout.write(
+      `${source.path}: ${what}: ${demand} ${ok ? '≤' : '>'} ${capacity}, ratio ${ratioPrinted}, ${ok ? 'OK' : 'NG'}\n`,
+    )
+  return failed.length
+}
+
+const count = (n: number, noun: string): string => `${n} ${noun}${n === 1 ? '' : 's'}`
+
+function say(text: string): number {
+  process.stdout.write(`${text}\n`)
+  return DONE
+}
+
+function misuse(text: string): number {
+  process.stderr.write(`${text}\nSee platemark --help.\n`)
+  return WRONG_USAGE
+}
+
+function fail(text: string): number {
+  process.stderr.write(`${text}\n`)
+  return ERRORS
+}

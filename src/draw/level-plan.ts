@@ -1,0 +1,116 @@
+/** The view of a level: what of the building and its results a plan sketch shows. */
+import { inLanguage, type Language } from '../base/language.ts'
+import { asTyped, columnDecimals, fixed, numeralOnPage } from '../base/numeral.ts'
+import { unit, unitOnPage, unitText } from '../base/unit.ts'
+import { onPage, printed, shown, type Value } from '../base/value.ts'
+import type { CaseResult, Distribution } from '../compute/distribution.ts'
+import type { Mass } from '../compute/mass.ts'
+import type { Plan } from '../compute/plan.ts'
+import type { Rigidity } from '../compute/rigidity.ts'
+import type { Corner, Grid } from '../model/grid.ts'
+import type { Wall } from '../model/walls.ts'
+import type { PlanPoint, PlanView, PlanWall } from './view.ts'
+
+export interface LevelPicture {
+  readonly level: string
+  readonly language: Language
+  readonly system: 'US' | 'SI'
+  readonly grid: Grid
+  readonly plan: Plan
+  readonly walls: readonly Wall[]
+  readonly mass?: Mass
+  readonly rigidity?: Rigidity
+  readonly distribution?: Distribution
+  /** Draws the shears of one case; the design shears when left out. */
+  readonly caseName?: string
+}
+
+const point = ({ x, y }: Corner): PlanPoint => ({ x: x.si, y: y.si })
+
+export function planView(picture: LevelPicture): PlanView {
+  const { level, language, system, grid, plan, mass, rigidity, distribution, caseName } = picture
+  const words = (text: string) => inLanguage(text, language)
+  const drawn = distribution?.cases.find(each => each.case.name === caseName)
+  const scale = system === 'US' ? unit('ft') : unit('m')
+  const unitOfShear = distribution ? unitOnPage(unitText(distribution.design.column('V').cell(0).unit)) : ''
+  const loads = new Map(
+    mass?.areas?.rows.map((row, i) => [row, printed(required(mass.areas?.column('w').cell(i)), language)]) ?? [],
+  )
+  return {
+    title: words(`Plan of ${level}`),
+    description: words(describe(picture)),
+    language,
+    areas: plan.areas.map(({ name, outline }) => ({ name, outline: outline.map(point), load: loads.get(name) ?? '' })),
+    openings: plan.openings.map(({ name, outline }) => ({ name, outline: outline.map(point) })),
+    walls: wallsOf(picture, drawn),
+    gridX: grid.x.map(({ name, at }) => ({ name, at: at.si })),
+    gridY: grid.y.map(({ name, at }) => ({ name, at: at.si })),
+    ...(mass ? { centreOfMass: { at: point(mass), printed: pair(mass, language) } } : {}),
+    ...(rigidity ? { centreOfRigidity: { at: point(rigidity), printed: pair(rigidity, language) } } : {}),
+    ...(drawn && mass ? { force: forceOf(drawn, distribution, mass, language) } : {}),
+    ...(grid.north ? { north: grid.north.si } : {}),
+    dimension: metres => onPage(asTyped(metres / scale.scale), scale, language),
+    scaleUnit: { metres: scale.scale, name: system === 'US' ? 'ft' : 'm' },
+    legend: {
+      shear: drawn ? `shear of a wall in ${drawn.case.name}, ${unitOfShear}` : `design shear of a wall, ${unitOfShear}`,
+      centreOfMass: words('centre of mass'),
+      centreOfRigidity: words('centre of rigidity'),
+      force: words('storey force'),
+    },
+  }
+}
+
+/** Both coordinates with one unit: `23.89, 15.76 ft`. */
+function pair({ x, y }: Corner, language: Language): string {
+  const decimals = columnDecimals([shown(x), shown(y)])
+  const print = (value: Value) => numeralOnPage(fixed(shown(value), decimals), language)
+  return `${print(x)}, ${print(y)} ${unitOnPage(unitText(x.unit))}`
+}
+
+function wallsOf({ walls, distribution, language }: LevelPicture, drawn: CaseResult | undefined): readonly PlanWall[] {
+  const column = drawn?.walls.column('V') ?? distribution?.design.column('V')
+  const decimals =
+    column && distribution ? columnDecimals(distribution.design.rows.map((_, i) => shown(column.cell(i)))) : 0
+  return walls.map(({ name, from, to }, i): PlanWall => {
+    const placed = { name, from: point(from), to: point(to), governs: distribution?.governingWall === i }
+    if (!column) return placed
+    const value = column.cell(i)
+    return {
+      ...placed,
+      shear: {
+        value: value.si,
+        printed: numeralOnPage(fixed(Math.abs(shown(value)), Math.min(decimals, 1)), language),
+      },
+    }
+  })
+}
+
+/** The force of a case where it acts: at the centre of mass, moved across by the accidental arm. */
+function forceOf(
+  { case: { axis, moved }, shear }: CaseResult,
+  distribution: Distribution | undefined,
+  mass: Mass,
+  language: Language,
+) {
+  const arm = distribution?.acting.at(-1)?.arm
+  const at = {
+    x: mass.x.si + (axis === 'y' ? moved * (arm?.x.si ?? 0) : 0),
+    y: mass.y.si + (axis === 'x' ? moved * (arm?.y.si ?? 0) : 0),
+  }
+  return { at, x: axis === 'x' ? shear.si : 0, y: axis === 'y' ? shear.si : 0, printed: printed(shear, language) }
+}
+
+function describe({ level, language, plan, walls, mass, rigidity, distribution }: LevelPicture): string {
+  const parts = [
+    `Plan of ${level} with ${plan.areas.length} areas, ${plan.openings.length} openings and ${walls.length} walls.`,
+  ]
+  if (mass) parts.push(`The centre of mass is at ${pair(mass, language)}.`)
+  if (rigidity) parts.push(`The centre of rigidity is at ${pair(rigidity, language)}.`)
+  if (distribution) parts.push(`Wall ${distribution.design.rows[distribution.governingWall] ?? ''} governs.`)
+  return parts.join(' ')
+}
+
+function required<T>(value: T | undefined): T {
+  if (value === undefined) throw new Error('a row of the areas has no load')
+  return value
+}

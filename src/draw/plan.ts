@@ -1,0 +1,146 @@
+/**
+ * The plan sketch of a level, as one self-contained element of SVG.
+ *
+ * Lines are drawn first and take their place in the field; then every label looks for
+ * a place of its own, the most important first.
+ */
+import { areaPlacing, openingPlacing } from './arealabels.ts'
+import type { AxisLayout } from './axis.ts'
+import { drawCentres } from './centres.ts'
+import { drawAxis, leftEdge, topEdge } from './dimensions.ts'
+import { Field } from './field.ts'
+import { drawFooter, legendOf, notesOf } from './footer.ts'
+import { besideSheet, type Frame } from './frame.ts'
+import { type Bounds, box } from './geometry.ts'
+import { layOut } from './layout.ts'
+import { centresOf, patchesOf } from './onsheet.ts'
+import { type Placing, place, placePair, type Sheet } from './placement.ts'
+import { element, layer, type SceneNode, serialise, words } from './scene.ts'
+import { drawOpenings, drawSlab, groundOf } from './slab.ts'
+import { rootClass, stylesheet } from './style.ts'
+import { northPoint, northReach } from './symbols.ts'
+import type { PlanView } from './view.ts'
+import { namePlacing, shearPlacing } from './walllabels.ts'
+import { drawWalls, lookOf, type WallLine, type WallLook, wallLines } from './walls.ts'
+
+/** More walls than this and a label that finds no place beside its wall is left out, with a note; the governing wall's never is. */
+const manyWalls = 120
+/** Leaders as long as this always find free ground, above the plan or below it. */
+const farthest = 6000
+
+/** @returns the whole `<svg>` element; the same view gives the same bytes */
+export function drawPlan(view: PlanView): string {
+  const { frame, top, left } = layOut(view)
+  const field = new Field(besideSheet / 2, frame.width - besideSheet / 2)
+  const patches = patchesOf(view, frame)
+  const sheet: Sheet = {
+    field,
+    groundAt: groundOf(patches.areas, patches.openings),
+    farthest,
+  }
+  const look = lookOf(view.walls, frame.scale)
+  const lines = wallLines(view.walls, frame.toSheet, look)
+  const { centres, beyond } = centresOf(view, frame)
+
+  const slab = [...drawSlab(patches.areas, field), ...drawOpenings(patches.openings, field)]
+  const axes = [...drawAxis(top, topEdge(frame.plan), field), ...drawAxis(left, leftEdge(frame.plan), field)]
+  const north = drawNorth(view, frame, top, field)
+  const walls = drawWalls(lines, look, field)
+  const marks = drawCentres(centres, field)
+  const governing = lines.filter(({ wall }) => wall.governs)
+
+  const thorough = setAll(sheet, [
+    ...marks.labels.map(label => [label]),
+    ...governing.map(line => placingsOf(line, look, sheet)),
+  ])
+  const others = setAll({ ...sheet, farthest: view.walls.length > manyWalls ? 0 : farthest }, [
+    ...lines.filter(({ wall }) => !wall.governs).map(line => placingsOf(line, look, sheet)),
+    ...patches.openings.map(opening => [openingPlacing(opening)]),
+    ...patches.areas.map(area => [areaPlacing(area, patches.openings)]),
+  ])
+
+  const notes = [
+    ...beyond,
+    ...notesOf(view, thorough.leftOut + others.leftOut, top.unnamed.length + left.unnamed.length),
+  ]
+  const footer = drawFooter(
+    view,
+    frame,
+    field,
+    legendOf(view, centres, { legs: marks.legs, shears: thorough.shears || others.shears }),
+    notes,
+  )
+  const drawn = [
+    ...layer('pm-slab', slab),
+    ...layer('pm-axes', axes),
+    ...layer('pm-walls', walls),
+    ...layer('pm-centres', marks.nodes),
+    ...layer('pm-labels', [...thorough.nodes, ...others.nodes]),
+    ...north,
+    ...layer('pm-footer', footer.nodes),
+  ]
+  return serialise(root(view, drawn, { x0: 0, y0: footer.top, x1: frame.width, y1: footer.bottom }))
+}
+
+function drawNorth(view: PlanView, { width }: Frame, top: AxisLayout, field: Field): readonly SceneNode[] {
+  if (view.north === undefined) return []
+  const at = { x: width - besideSheet / 2 - northReach, y: Math.min(-northReach, -top.out.end + northReach) }
+  field.addText(box(at, 2 * northReach, 2 * northReach))
+  return northPoint(at, -view.north)
+}
+
+/** What is set together: of a wall its name and, once worked, its shear. */
+function placingsOf(line: WallLine, look: WallLook, sheet: Sheet): readonly Placing[] {
+  const shear = shearPlacing(line, look, sheet)
+  return shear === undefined ? [namePlacing(line, sheet)] : [namePlacing(line, sheet), shear]
+}
+
+interface Labels {
+  readonly nodes: readonly SceneNode[]
+  readonly leftOut: number
+  readonly shears: boolean
+}
+
+function setAll(sheet: Sheet, groups: readonly (readonly Placing[])[]): Labels {
+  const set = groups.flatMap(group => {
+    const [first, second] = group
+    const placed = first && second ? placePair(sheet, first, second) : group.map(each => place(sheet, each))
+    return placed.map((nodes, idx) => ({ nodes, shows: group[idx]?.shows }))
+  })
+  return {
+    nodes: set.flatMap(({ nodes }) => nodes ?? []),
+    leftOut: set.filter(({ nodes }) => nodes === undefined).length,
+    shears: set.some(({ nodes, shows }) => nodes !== undefined && shows === 'shear'),
+  }
+}
+
+function root(view: PlanView, drawn: readonly SceneNode[], { x0, y0, x1, y1 }: Bounds): SceneNode {
+  const id = `${rootClass}-${hash(`${view.title}\n${view.description}`)}`
+  const size = { width: x1 - x0, height: y1 - y0 }
+  return element(
+    'svg',
+    {
+      xmlns: 'http://www.w3.org/2000/svg',
+      class: rootClass,
+      viewBox: words(x0, y0, size.width, size.height),
+      ...size,
+      role: 'img',
+      lang: view.language,
+      'aria-labelledby': `${id}-title ${id}-desc`,
+    },
+    [
+      element('title', { id: `${id}-title` }, [view.title]),
+      element('desc', { id: `${id}-desc` }, [view.description]),
+      element('style', {}, [stylesheet]),
+      element('rect', { class: 'pm-sheet', x: x0, y: y0, ...size }),
+      ...drawn,
+    ],
+  )
+}
+
+/** FNV-1a: short, the same everywhere, and used for nothing but telling sketches on one page apart. */
+function hash(text: string): string {
+  let sum = 0x811c9dc5
+  for (const sign of text) sum = Math.imul(sum ^ (sign.codePointAt(0) ?? 0), 0x01000193)
+  return (sum >>> 0).toString(16).padStart(8, '0')
+}

@@ -1,0 +1,96 @@
+/** How the sketch looks. Every selector starts from the class of its root, so a page can hold it inline. */
+import type { TextStyle } from './textwidth.ts'
+
+export const rootClass = 'pm-plan'
+
+/** Sizes of the texts, in drawing units; none is below 11. */
+export const textStyles = {
+  wall: { size: 12.5, weight: 'bold' },
+  figure: { size: 12, weight: 'plain' },
+  governing: { size: 12, weight: 'bold' },
+  bubble: { size: 12.5, weight: 'bold' },
+  dimension: { size: 11.5, weight: 'plain' },
+  centre: { size: 12, weight: 'plain' },
+  force: { size: 12.5, weight: 'bold' },
+  area: { size: 11.5, weight: 'plain' },
+  legend: { size: 12, weight: 'plain' },
+  scale: { size: 11.5, weight: 'plain' },
+  north: { size: 13, weight: 'bold' },
+} as const satisfies Record<string, TextStyle>
+
+export type TextRole = keyof typeof textStyles
+
+/** The same colours as the page; on its own the file falls back on the light ones. */
+const colours = {
+  ink: 'var(--ink,#1d1c1a)',
+  soft: 'var(--soft,#6b675f)',
+  paper: 'var(--paper,#fffdf8)',
+  copper: 'var(--copper,#99491b)',
+  wash: 'var(--wash,#f5efe3)',
+} as const
+
+const textColours: Record<TextRole, string> = {
+  wall: colours.ink,
+  figure: colours.copper,
+  governing: colours.copper,
+  bubble: colours.ink,
+  dimension: colours.soft,
+  centre: colours.ink,
+  force: colours.copper,
+  area: colours.soft,
+  legend: colours.soft,
+  scale: colours.soft,
+  north: colours.ink,
+}
+
+const { ink, soft, paper, copper, wash } = colours
+
+const rules: readonly (readonly [string, string])[] = [
+  // A name may run from right to left; set about its middle it needs no other care.
+  [
+    'text',
+    `font-family:Label,"Source Sans 3","Segoe UI",Arial,sans-serif;text-anchor:middle;unicode-bidi:plaintext;font-variant-numeric:tabular-nums lining-nums`,
+  ],
+  ['text.pm-start', 'text-anchor:start'],
+  ['text.pm-end', 'text-anchor:end'],
+  ['.pm-t-governing', 'text-decoration:underline;text-underline-offset:2.5px;text-decoration-thickness:1.4px'],
+  ['.pm-over', `paint-order:stroke;stroke:${paper};stroke-width:3.5;stroke-linejoin:round`],
+  ['.pm-over-wash', `paint-order:stroke;stroke:${wash};stroke-width:3.5;stroke-linejoin:round`],
+  ['.pm-sheet', `fill:${paper}`],
+  ['.pm-wash', `fill:${wash};stroke:none`],
+  ['.pm-edge', `fill:none;stroke:${soft};stroke-width:1;stroke-linecap:square`],
+  ['.pm-seam', `fill:none;stroke:${soft};stroke-width:.45`],
+  ['.pm-opening', `fill:${paper};stroke:${soft};stroke-width:.9`],
+  ['.pm-crossed', `fill:none;stroke:${soft};stroke-width:.6`],
+  ['.pm-gridline', `fill:none;stroke:${soft};stroke-width:.6;stroke-dasharray:12 3 2 3`],
+  ['.pm-bubble', `fill:${paper};stroke:${ink};stroke-width:1`],
+  ['.pm-dimension', `fill:none;stroke:${soft};stroke-width:.7`],
+  ['.pm-tick', `fill:none;stroke:${ink};stroke-width:1.2`],
+  ['.pm-wall', `fill:none;stroke:${ink}`],
+  ['.pm-governs', `fill:none;stroke:${ink};stroke-width:1`],
+  ['.pm-shear', `fill:none;stroke:${copper};stroke-width:1.5`],
+  ['.pm-force', `fill:${paper};stroke:${copper};stroke-width:1.8;stroke-linejoin:miter`],
+  ['.pm-leader', `fill:none;stroke:${soft};stroke-width:.6`],
+  ['.pm-leader-end', `fill:${soft};stroke:none`],
+  ['.pm-mark', `fill:${paper};stroke:${ink};stroke-width:1.4`],
+  ['.pm-mark-open', `fill:none;stroke:${ink};stroke-width:1.4`],
+  ['.pm-mark-casing', `fill:none;stroke:${paper};stroke-width:2.6`],
+  ['.pm-mark-full', `fill:${ink};stroke:none`],
+  ['.pm-mark-ring', `fill:${ink};stroke:${paper};stroke-width:1.2`],
+  ['.pm-legs', `fill:none;stroke:${ink};stroke-width:1.1;stroke-dasharray:1.6 2.4`],
+  ['.pm-scale', `fill:${ink};stroke:${ink};stroke-width:.8`],
+  ['.pm-scale-open', `fill:${paper};stroke:${ink};stroke-width:.8`],
+  ['.pm-north', `fill:none;stroke:${ink};stroke-width:1.2`],
+]
+
+const textRules = (Object.keys(textStyles) as TextRole[]).map(role => {
+  const { size, weight } = textStyles[role]
+  return [
+    `.pm-t-${role}`,
+    `font-size:${size}px;font-weight:${weight === 'bold' ? 650 : 400};fill:${textColours[role]}`,
+  ] as const
+})
+
+export const stylesheet = [...rules, ...textRules]
+  .map(([selector, body]) => `.${rootClass} ${selector}{${body}}`)
+  .join('')

@@ -1,0 +1,60 @@
+/** What explaining a working needs besides the results themselves. */
+import type { Formula } from '../base/formula.ts'
+import type { Language } from '../base/language.ts'
+import { inLanguage } from '../base/language.ts'
+import type { Result } from '../base/ledger.ts'
+import { lineOf, type Source, type Span } from '../base/span.ts'
+import type { Tabulation } from '../base/tabulation.ts'
+import type { Value } from '../base/value.ts'
+import type { LevelWork } from '../compute/level.ts'
+import type { Check, Figure } from './sheet.ts'
+
+/** Draws a level's plan; `caseName` asks for the shears of one case in place of the design shears. */
+export type Sketch = (level: LevelWork, caseName: string | undefined) => Result<Pick<Figure, 'svg' | 'alternative'>>
+
+/** Gathers, over the whole document, what its lists and its JSON are made of. */
+export class Context {
+  readonly language: Language
+  readonly source: Source
+  readonly sketch: Sketch
+  /** Every value that was printed: the roots of the trace. */
+  readonly roots = new Map<string, Value>()
+  /** Every formula that was printed, in order. */
+  readonly formulas = new Set<Formula>()
+  readonly checks: Check[] = []
+  private readonly anchors = new Map<string, number>()
+  private readonly tables: { readonly anchor: string; readonly table: Tabulation }[] = []
+
+  constructor(language: Language, source: Source, sketch: Sketch) {
+    this.language = language
+    this.source = source
+    this.sketch = sketch
+  }
+
+  /** Our own words in the document's spelling. */
+  words(text: string): string {
+    return inLanguage(text, this.language)
+  }
+
+  /** An anchor for a value; a second printing of the same value gets a number after it. */
+  anchor(id: string): string {
+    const times = (this.anchors.get(id) ?? 0) + 1
+    this.anchors.set(id, times)
+    return times === 1 ? id : `${id}-${times}`
+  }
+
+  tabled(anchor: string, table: Tabulation): void {
+    this.tables.push({ anchor, table })
+  }
+
+  /** Where a value is printed, or undefined when it is not. */
+  placeOf(id: string): string | undefined {
+    if (this.anchors.has(id)) return id
+    return this.tables.find(({ table }) => table.has(id))?.anchor
+  }
+
+  /** Source lines of some places, each once, ascending. */
+  lines(spans: Iterable<Span>): readonly number[] {
+    return [...new Set([...spans].map(({ start }) => lineOf(this.source, start)))].sort((a, b) => a - b)
+  }
+}

@@ -1,0 +1,66 @@
+/** A given block as the page shows it: what the engineer stated, as stated. */
+import type { Block } from '../read/block.ts'
+import type { Context } from './context.ts'
+import type { Piece, Row, Table } from './sheet.ts'
+
+const titles: Readonly<Record<string, string>> = {
+  grid: 'Grid',
+  levels: 'Levels',
+  areas: 'Areas',
+  'line-loads': 'Line loads',
+  'point-loads': 'Point loads',
+  construction: 'Construction',
+  walls: 'Walls',
+  forces: 'Forces',
+}
+
+export function explainGiven(block: Block, context: Context): readonly Piece[] {
+  const { topic, about, table, settings, options } = block
+  const title = `${titles[topic] ?? topic}${about ? ` ${about.text}` : ''}, as given`
+  const stated = [...settings, ...options]
+  const id = context.anchor(`given.${topic}${about ? `.${about.text}` : ''}`)
+  const lines = context.lines([block.info])
+  const pieces: Piece[] = []
+  if (table) {
+    const columns = table.header.map(({ name, unit }, i) => ({
+      key: name.text,
+      head: name.text,
+      unit: unit?.text ?? '',
+      align:
+        i === 0 || !numeric(table.rows.map(({ cells }) => cells[i]?.text ?? ''))
+          ? ('left' as const)
+          : ('right' as const),
+    }))
+    const rows = table.rows.map(({ cells }): Row => ({ cells: cells.map(({ text }) => text), governs: false }))
+    pieces.push(given(id, title, columns, rows, lines))
+  }
+  if (stated.length > 0) {
+    const columns = [
+      { key: 'what', head: table ? 'Setting' : title.replace(', as given', ''), unit: '', align: 'left' as const },
+      { key: 'value', head: 'Value', unit: '', align: 'left' as const },
+    ]
+    const rows = stated.map(({ name, value }): Row => ({ cells: [name.text, value.text], governs: false }))
+    pieces.push(given(table ? context.anchor(`${id}.settings`) : id, title, columns, rows, lines))
+  }
+  return pieces
+}
+
+const numeric = (cells: readonly string[]): boolean =>
+  cells.every(text => text === '' || /^[-−]?\d/.test(text)) && !cells.some(text => text.includes(','))
+
+const given = (
+  id: string,
+  caption: string,
+  columns: Table['columns'],
+  rows: readonly Row[],
+  sourceLines: readonly number[],
+): Table => ({
+  kind: 'table',
+  id,
+  number: '',
+  caption,
+  columns,
+  rows,
+  formulas: [],
+  sourceLines,
+})

@@ -1,0 +1,120 @@
+/** What a working asks for: words, a level, and options. */
+import type { Diagnostic } from '../base/diagnostic.ts'
+import { toBritish } from '../base/language.ts'
+import type { Result } from '../base/ledger.ts'
+import { suggestion } from '../base/near.ts'
+import { bad, good } from '../base/outcome.ts'
+import { settingOf, strangeSettings } from '../model/columns.ts'
+import type { Block } from '../read/block.ts'
+import { diagnose, splitAt, type Text } from '../read/text.ts'
+
+export const wants = [
+  'plan',
+  'centre of mass',
+  'polar moment',
+  'wall stiffness',
+  'centre of rigidity',
+  'eccentricity',
+  'torsion',
+  'wall shears',
+  'design shears',
+  'displacement',
+  'equilibrium',
+] as const
+
+export type Want = (typeof wants)[number]
+
+/** Lists of the whole document rather than of a level. */
+export const documentWants = ['assumptions', 'references', 'checks'] as const
+export type DocumentWant = (typeof documentWants)[number]
+
+/** All of a level in order. */
+const WHOLE = 'whole calculation'
+
+const details = ['full', 'table', 'result'] as const
+export type Detail = (typeof details)[number]
+
+export interface Request {
+  readonly wants: readonly (Want | DocumentWant)[]
+  /** True when the parts need headings to tell them apart. */
+  readonly whole: boolean
+  readonly detail: Detail
+  /** Walls to work in full; the governing one when left out. */
+  readonly walls: readonly Text[]
+  readonly caseName?: Text
+  readonly at: Block['info']
+}
+
+export function readRequest(block: Block): Result<Request> {
+  if (block.faults.length > 0) return bad(block.faults)
+  const faults: Diagnostic[] = [...strangeSettings(block, ['detail', 'walls', 'case'])]
+  const found = block.lines.flatMap(line => splitAt(line, /[,;]/)).map(line => wantOf(line, faults))
+  if (block.lines.length === 0)
+    faults.push(
+      diagnose(
+        'error',
+        'working-empty',
+        block.info,
+        'this working asks for nothing',
+        `Name what it shows: ${[WHOLE, ...wants, ...documentWants].join(', ')}.`,
+      ),
+    )
+  if (block.table)
+    faults.push(
+      diagnose(
+        'error',
+        'working-table',
+        block.table.headerLine.span,
+        'a working holds no table',
+        'Put it in a given block.',
+      ),
+    )
+  const detail = readDetail(settingOf(block, 'detail'), faults)
+  const walls = settingOf(block, 'walls')
+  const caseName = settingOf(block, 'case')
+  if (faults.length > 0) return bad(faults)
+  return good({
+    wants: found.flat(),
+    whole: found.some(({ length }) => length > 1),
+    detail,
+    walls: walls ? splitAt(walls, /,/).filter(({ text }) => text !== '') : [],
+    ...(caseName ? { caseName } : {}),
+    at: block.info,
+  })
+}
+
+function wantOf(line: Text, faults: Diagnostic[]): readonly (Want | DocumentWant)[] {
+  const words = toBritish(line.text.toLowerCase()).replace(/\s+/g, ' ')
+  if (words === WHOLE) return wants
+  const known = [...wants, ...documentWants].find(want => want === words)
+  if (known) return [known]
+  faults.push(
+    diagnose(
+      'error',
+      'unknown-working',
+      line.span,
+      `${line.text} is not something that can be shown`,
+      suggestion(words, [WHOLE, ...wants, ...documentWants], 'working'),
+    ),
+  )
+  return []
+}
+
+function readDetail(setting: Text | undefined, faults: Diagnostic[]): Detail {
+  if (!setting) return 'full'
+  const found = details.find(detail => detail === setting.text)
+  if (!found)
+    faults.push(
+      diagnose(
+        'error',
+        'unknown-detail',
+        setting.span,
+        `detail cannot be ${setting.text}`,
+        `Write detail: ${details.join(' or detail: ')}.`,
+      ),
+    )
+  return found ?? 'full'
+}
+
+export const isDocumentWant = (want: Want | DocumentWant): want is DocumentWant =>
+  documentWants.some(other => other === want)

@@ -1,0 +1,156 @@
+/** Wall stiffness, centre of rigidity and eccentricity. */
+import { sym } from '../base/formula.ts'
+import type { Result } from '../base/ledger.ts'
+import { Tabulation } from '../base/tabulation.ts'
+import type { Value } from '../base/value.ts'
+import type { LevelWork } from '../compute/level.ts'
+import type { Rigidity, Spring } from '../compute/rigidity.ts'
+import type { Acting, Eccentricity } from '../compute/storey.ts'
+import { k, L } from '../compute/symbols.ts'
+import type { Wall } from '../model/walls.ts'
+import type { Context } from './context.ts'
+import { explainValue } from './equation.ts'
+import type { Detail } from './request.ts'
+import type { Piece } from './sheet.ts'
+import { explainTable } from './table.ts'
+
+const h = sym('h', 'h', 'length')
+
+/** One wall or more worked in full, and all in a table. */
+export function explainStiffness(
+  level: LevelWork,
+  springs: readonly Spring[],
+  walls: readonly Wall[],
+  shown: readonly string[],
+  detail: Detail,
+  context: Context,
+): readonly Piece[] {
+  const worked = shown.flatMap(name => stiffnessSteps(level, name, springs, walls, detail, context))
+  if (detail === 'result') return worked
+  const heights = walls.flatMap(({ height }) => height ?? [])
+  const table = new Tabulation(
+    springs.map(({ name }) => name),
+    (row, key) => `${level.name}.wall.${row}.${key}`,
+    displayOf(level),
+  )
+    .take(
+      L,
+      springs.map(({ L }) => L),
+    )
+    .take(
+      k,
+      springs.map(({ k }) => k),
+    )
+  const high = heights.length === walls.length
+  if (high) table.take(h, heights)
+  const made = walls.map(wall => (wall.kind === 'built' ? wall.construction.text : 'stated'))
+  const want = {
+    id: `${level.name}.stiffness`,
+    caption: `Stiffness of the walls of ${level.name}.`,
+    rowHead: 'Wall',
+    columns: high ? ['L', 'h', 'k'] : ['L', 'k'],
+    words: [{ head: 'Construction', cells: made }],
+  }
+  return [...(detail === 'full' ? worked : []), explainTable(table, want, context)]
+}
+
+function displayOf(level: LevelWork) {
+  const display = level.display()
+  if (!display.ok) throw new Error('a level with springs has a display')
+  return display.value
+}
+
+function stiffnessSteps(
+  level: LevelWork,
+  name: string,
+  springs: readonly Spring[],
+  walls: readonly Wall[],
+  detail: Detail,
+  context: Context,
+): readonly Piece[] {
+  const spring = springs.find(spring => spring.name === name)
+  const wall = walls.find(wall => wall.name === name)
+  if (!spring || !wall) return []
+  if (detail === 'result' || wall.kind === 'stated') return [explainValue(spring.k, context)]
+  return [spring.L, ...moduliOf(level.moduli(wall.construction.text)), spring.k].map(value =>
+    explainValue(value, context),
+  )
+}
+
+/** The moduli that were worked; stated ones stand in their given block. */
+function moduliOf(
+  moduli: Result<{ readonly E: Value; readonly G: Value; readonly commonShear: boolean }>,
+): readonly Value[] {
+  if (!moduli.ok) return []
+  const { E, G, commonShear } = moduli.value
+  return [E, ...(commonShear ? [] : [G])].filter(({ origin }) => origin.kind === 'worked')
+}
+
+export function explainRigidity(rigidity: Rigidity, detail: Detail, context: Context): readonly Piece[] {
+  const { level, orthogonal, K, D, x, y, J, angle, walls, sums } = rigidity
+  const say = (...values: readonly (Value | undefined)[]) =>
+    values.flatMap(value => (value ? [explainValue(value, context)] : []))
+  if (detail === 'result') return say(x, y, J)
+  const [first, second] = sums
+  const tables = orthogonal
+    ? [
+        explainTable(
+          walls,
+          {
+            id: `${level}.rigidity`,
+            caption: `Stiffness of the walls of ${level} along x and y; every wall lies along an axis.`,
+            rowHead: 'Wall',
+            columns: ['k', 'c', 's', 'k_x', 'k_y', 'x', 'y', 'k_y_x', 'k_x_y'],
+            sums: sumsOf({ k_x: K.xx, k_y: K.yy, k_y_x: second, k_x_y: first }),
+          },
+          context,
+        ),
+      ]
+    : [
+        explainTable(
+          walls,
+          {
+            id: `${level}.lines`,
+            caption: `Walls of ${level}: stiffness, direction cosine and sine, midpoint, and arm about the origin.`,
+            rowHead: 'Wall',
+            columns: ['k', 'c', 's', 'x', 'y', 'r'],
+          },
+          context,
+        ),
+        explainTable(
+          walls,
+          {
+            id: `${level}.rigidity`,
+            caption: `Plan stiffness of the walls of ${level}.`,
+            rowHead: 'Wall',
+            columns: ['k_x', 'k_y', 'k_xy', 'k_xr', 'k_yr'],
+            sums: sumsOf({ k_x: K.xx, k_y: K.yy, k_xy: K.xy, k_xr: first, k_yr: second }),
+          },
+          context,
+        ),
+      ]
+  const arms = explainTable(
+    walls,
+    {
+      id: `${level}.arms`,
+      caption: `Arm of each wall about the centre of rigidity, positive where its shear turns ${level} counter-clockwise.`,
+      rowHead: 'Wall',
+      columns: ['k', 'rho', 'k_rho2'],
+      sums: { k_rho2: J },
+    },
+    context,
+  )
+  if (detail === 'table') return [...tables, ...say(x, y), arms, ...say(J)]
+  return [...tables, ...say(K.xx, K.yy, K.xy, ...(orthogonal ? [] : sums), D, x, y, angle), arms, ...say(J)]
+}
+
+const sumsOf = (sums: Readonly<Record<string, Value | undefined>>): Readonly<Record<string, Value>> =>
+  Object.fromEntries(Object.entries(sums).flatMap(([name, value]) => (value ? [[name, value]] : [])))
+
+export function explainEccentricity(
+  { x, y }: Eccentricity,
+  acting: Acting | undefined,
+  context: Context,
+): readonly Piece[] {
+  return [x, y, ...(acting ? [acting.arm.x, acting.arm.y] : [])].map(value => explainValue(value, context))
+}

@@ -1,0 +1,266 @@
+/** Torsion, wall shears, design shears, displacement and equilibrium. */
+import { sym } from '../base/formula.ts'
+import type { Display } from '../base/kind.ts'
+import { numeralOnPage, rounded } from '../base/numeral.ts'
+import { Tabulation } from '../base/tabulation.ts'
+import { printed, type Value } from '../base/value.ts'
+import type { Displacement } from '../compute/displacement.ts'
+import type { CaseResult, Distribution } from '../compute/distribution.ts'
+import { T, V } from '../compute/symbols.ts'
+import type { Context } from './context.ts'
+import { explainValue } from './equation.ts'
+import type { Detail } from './request.ts'
+import type { Check, Piece } from './sheet.ts'
+import { explainTable } from './table.ts'
+
+const caseTable = (cases: readonly CaseResult[], display: Display): Tabulation =>
+  new Tabulation(
+    cases.map(each => each.case.name),
+    (row, key) => `${key}.${row}`,
+    display,
+  )
+
+export function explainTorsion(
+  distribution: Distribution,
+  shown: CaseResult,
+  detail: Detail,
+  display: Display,
+  context: Context,
+): readonly Piece[] {
+  const { level, cases } = distribution
+  const result = explainValue(shown.moment, context)
+  if (detail === 'result') return [result]
+  const table = caseTable(cases, display)
+    .take(
+      V,
+      cases.map(({ shear }) => shear),
+    )
+    .take(
+      T,
+      cases.map(({ moment }) => moment),
+    )
+  const several = shown.moments
+    ? [
+        explainTable(
+          shown.moments,
+          {
+            id: `${level}.moments`,
+            caption: `Moment of each level's force about the centre of rigidity of ${level}, case ${shown.case.name}.`,
+            rowHead: 'Level',
+            columns: shown.moments.columns.map(({ sym }) => sym.name),
+            sums: { T: shown.moment },
+          },
+          context,
+        ),
+      ]
+    : []
+  const all = explainTable(
+    table,
+    {
+      id: `${level}.torsion`,
+      caption: `Storey shear and its moment about the centre of rigidity of ${level}, counter-clockwise positive. In EX+ the mass is moved toward positive y, in EY+ toward positive x.`,
+      rowHead: 'Case',
+      columns: ['V', 'T'],
+    },
+    context,
+  )
+  return detail === 'table' ? [all] : [...several, result, all]
+}
+
+export function explainWallShears(
+  { level, cases }: Distribution,
+  shown: readonly CaseResult[],
+  walls: readonly string[],
+  detail: Detail,
+  context: Context,
+): readonly Piece[] {
+  return shown.flatMap((each): readonly Piece[] => {
+    const steps = walls.flatMap(wall => shearSteps(each, wall, detail).map(value => explainValue(value, context)))
+    if (detail === 'result') return steps
+    const caption = `Direct and torsional shear of the walls of ${level} in case ${each.case.name}${cases.length > shown.length ? '; the other cases are worked in the same way' : ''}.`
+    const table = explainTable(
+      each.walls,
+      {
+        id: `${level}.shears.${each.case.name}`,
+        caption,
+        rowHead: 'Wall',
+        columns: ['k', 'c', 's', 'rho', 'V_d', 'V_t', 'V'],
+      },
+      context,
+    )
+    const moved = isSkewed(each) ? [each.u, each.v].map(value => explainValue(value, context)) : []
+    return detail === 'table' ? [table] : [...moved, ...steps, table]
+  })
+}
+
+/** Skewed walls share direct shear through the displacement of the centre of rigidity. */
+const isSkewed = ({ walls }: CaseResult): boolean => walls.column('V_d').formula?.symbols.has('u_0') ?? false
+
+function shearSteps({ walls }: CaseResult, wall: string, detail: Detail): readonly Value[] {
+  const at = walls.rows.indexOf(wall)
+  if (at === -1) return []
+  return (detail === 'result' ? ['V'] : ['V_d', 'V_t', 'V']).map(name => walls.column(name).cell(at))
+}
+
+export function explainDesignShears(
+  { level, design, governingCase, governingWall }: Distribution,
+  walls: readonly string[],
+  detail: Detail,
+  context: Context,
+): readonly Piece[] {
+  const steps = walls.flatMap(wall => {
+    const at = design.rows.indexOf(wall)
+    return at === -1 ? [] : ['V', 'v'].map(name => explainValue(design.column(name).cell(at), context))
+  })
+  if (detail === 'result') return steps
+  const columns = design.columns.map(({ sym }) => sym.name).filter(name => name !== 'L' && name !== 'v')
+  const cases = design.rows.map((_, i) => governingCase(i).text)
+  const table = explainTable(
+    design,
+    {
+      id: `${level}.design`,
+      caption: `Shear of each wall of ${level} in every case, and its design shear. ${design.rows[governingWall] ?? ''} has the largest shear per length and governs.`,
+      rowHead: 'Wall',
+      columns: [...columns, 'L', 'v'],
+      governs: governingWall,
+      words: [{ head: 'Case', cells: cases }],
+    },
+    context,
+  )
+  return detail === 'table' ? [table] : [table, ...steps]
+}
+
+export function explainDisplacement(
+  level: string,
+  all: readonly Displacement[],
+  shown: Displacement,
+  detail: Detail,
+  display: Display,
+  context: Context,
+): readonly Piece[] {
+  const { points, result, governing } = shown
+  const axis = result.case.axis
+  const at = points.rows.indexOf(governing.corner)
+  const ends = points.column(`delta_${axis}`).cell(at)
+  const steps = [
+    result.u,
+    result.v,
+    result.phi,
+    points.column('delta_x').cell(0),
+    points.column('delta_y').cell(0),
+    ends,
+  ].map(value => explainValue(value, context))
+  if (detail === 'result') return [explainValue(governing.value, context)]
+  const table = explainTable(
+    points,
+    {
+      id: `${level}.displacement.${result.case.name}`,
+      caption: `Displacement of the centre of mass and of the corners of ${level} in case ${result.case.name}.`,
+      rowHead: 'Point',
+      columns: ['x', 'y', 'delta_x', 'delta_y'],
+      governs: at,
+    },
+    context,
+  )
+  const drift = caseTable(
+    all.map(({ result }) => result),
+    display,
+  ).take(
+    sym('delta', '\\delta', 'displacement'),
+    all.map(({ governing }) => governing.value),
+  )
+  const summary = explainTable(
+    drift,
+    {
+      id: `${level}.drift`,
+      caption: `Largest displacement of a corner of ${level} along the force, in each case.`,
+      rowHead: 'Case',
+      columns: ['delta'],
+      words: [{ head: 'Corner', cells: all.map(({ governing }) => governing.corner) }],
+    },
+    context,
+  )
+  return detail === 'table' ? [table, summary] : [...steps, table, summary]
+}
+
+/** The residual that the arithmetic may leave, of the storey shear. */
+const ALLOWED = 1e-9
+
+const resisted = {
+  x: sym('R_x', '\\sum V\\,c', 'force'),
+  y: sym('R_y', '\\sum V\\,s', 'force'),
+  M: sym('R_M', '\\sum V\\,r', 'moment'),
+}
+const applied = sym('M_o', 'M_o', 'moment')
+
+export function explainEquilibrium(
+  { level, cases }: Distribution,
+  detail: Detail,
+  display: Display,
+  context: Context,
+): readonly Piece[] {
+  const table = caseTable(cases, display)
+    .take(
+      V,
+      cases.map(({ shear }) => shear),
+    )
+    .take(
+      resisted.x,
+      cases.map(({ residual }) => residual.resisted.x),
+    )
+    .take(
+      resisted.y,
+      cases.map(({ residual }) => residual.resisted.y),
+    )
+    .take(
+      applied,
+      cases.map(({ residual }) => residual.appliedMoment),
+    )
+    .take(
+      resisted.M,
+      cases.map(({ residual }) => residual.resisted.M),
+    )
+  for (const { residual } of cases) context.roots.set(residual.ratio.id, residual.ratio)
+  const residuals = cases.map(({ residual }) => numeralOnPage(rounded(residual.ratio.si), context.language))
+  const check = equilibriumCheck(level, cases, context)
+  if (detail === 'result') return check ? [check] : []
+  return [
+    explainTable(
+      table,
+      {
+        id: `${level}.equilibrium`,
+        caption: `What acts on ${level} and what its walls resist, moments about the origin. The residual is the largest difference over the storey shear.`,
+        rowHead: 'Case',
+        columns: ['V', 'R_x', 'R_y', 'M_o', 'R_M'],
+        words: [{ head: 'Residual', cells: residuals }],
+      },
+      context,
+    ),
+    ...(check ? [check] : []),
+  ]
+}
+
+function equilibriumCheck(level: string, cases: readonly CaseResult[], context: Context): Check | undefined {
+  const [first, ...rest] = cases.map(({ residual }) => residual.ratio)
+  if (!first) return undefined
+  const worst = rest.reduce((a, b) => (b.si > a.si ? b : a), first)
+  const id = `${level}.equilibrium.check`
+  const known = context.checks.find(check => check.id === id)
+  if (known) return known
+  const ratio = worst.si / ALLOWED
+  const check: Check = {
+    kind: 'check',
+    id: context.anchor(id),
+    what: context.words(`Equilibrium of ${level}, largest residual`),
+    demand: printed(worst, context.language),
+    capacity: numeralOnPage(rounded(ALLOWED), context.language),
+    numbers: { demand: worst.si, capacity: ALLOWED, unit: '' },
+    ratio,
+    ratioPrinted: numeralOnPage(rounded(ratio), context.language),
+    ok: ratio <= 1,
+    reference: 'limit of the arithmetic',
+    sourceLines: [],
+  }
+  context.checks.push(check)
+  return check
+}

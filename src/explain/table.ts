@@ -1,0 +1,111 @@
+/** A tabulation as a table of the page, its columns as formulas below it. */
+import { columnDecimals, fixed, numeralOnPage } from '../base/numeral.ts'
+import type { Span } from '../base/span.ts'
+import type { Tabulation } from '../base/tabulation.ts'
+import { tex } from '../base/tex.ts'
+import { letter, typeset } from '../base/typeset.ts'
+import { unitText } from '../base/unit.ts'
+import { shown, spansOf, type Value } from '../base/value.ts'
+import type { Context } from './context.ts'
+import type { Column, ColumnFormula, Row, Table } from './sheet.ts'
+
+export interface TableWant {
+  readonly id: string
+  readonly caption: string
+  /** Head of the first column, which names the rows. */
+  readonly rowHead: string
+  /** The columns to show, by the names of their symbols, in order. */
+  readonly columns: readonly string[]
+  /** Sums under their columns. */
+  readonly sums?: Readonly<Record<string, Value>>
+  /** Index of the row that governs. */
+  readonly governs?: number
+  /** Words in columns of their own, after the numbers. */
+  readonly words?: readonly { readonly head: string; readonly cells: readonly string[] }[]
+  /** Columns whose formulas are told elsewhere. */
+  readonly knownFormulas?: readonly string[]
+}
+
+export function explainTable(table: Tabulation, want: TableWant, context: Context): Table {
+  const columns = want.columns.map(name => numberColumn(table, name, want.sums?.[name], context))
+  const words = want.words ?? []
+  const id = context.anchor(want.id)
+  context.tabled(id, table)
+  for (const name of want.columns) for (let i = 0; i < table.rows.length; i++) root(table.column(name).cell(i), context)
+  for (const sum of Object.values(want.sums ?? {})) root(sum, context)
+  const rows = table.rows.map(
+    (name, i): Row => ({
+      cells: [name, ...columns.map(({ cells }) => cells[i] ?? ''), ...words.map(({ cells }) => cells[i] ?? '')],
+      governs: want.governs === i,
+    }),
+  )
+  const foot: Row = {
+    cells: [context.words('Sum'), ...columns.map(({ sum }) => sum), ...words.map(() => '')],
+    governs: false,
+  }
+  return {
+    kind: 'table',
+    id,
+    number: '',
+    caption: context.words(want.caption),
+    columns: [
+      { key: 'name', head: context.words(want.rowHead), unit: '', align: 'left' },
+      ...columns.map(({ column }) => column),
+      ...words.map(({ head }): Column => ({ key: head, head: context.words(head), unit: '', align: 'left' })),
+    ],
+    rows,
+    ...(want.sums ? { foot } : {}),
+    formulas: formulasOf(table, want, context),
+    sourceLines: context.lines(givenSpans(table, want.columns)),
+  }
+}
+
+const root = (value: Value, context: Context): void => {
+  context.roots.set(value.id, value)
+}
+
+interface NumberColumn {
+  readonly column: Column
+  readonly cells: readonly string[]
+  readonly sum: string
+}
+
+function numberColumn(table: Tabulation, name: string, sum: Value | undefined, { language }: Context): NumberColumn {
+  const { sym, cell } = table.column(name)
+  const values = table.rows.map((_, i) => cell(i))
+  const unit = values[0] ? unitText(values[0].unit) : ''
+  const numbers = values.map(shown)
+  const decimals = columnDecimals(sum ? [...numbers, shown(sum)] : numbers)
+  const print = (number: number) => numeralOnPage(fixed(number, decimals), language)
+  return {
+    column: { key: name, head: tex(sym.tex), unit, align: 'right' },
+    cells: numbers.map(print),
+    sum: sum ? print(shown(sum)) : '',
+  }
+}
+
+function formulasOf(
+  table: Tabulation,
+  { columns, knownFormulas = [] }: TableWant,
+  context: Context,
+): readonly ColumnFormula[] {
+  return columns.flatMap(name => {
+    const { sym, formula } = table.column(name)
+    if (!formula || knownFormulas.includes(name)) return []
+    context.formulas.add(formula)
+    const body = typeset(formula.body, symbol => letter(formula.symbols.get(symbol)?.tex ?? symbol), context.language)
+    return [{ symbol: tex(sym.tex), formula: body, reference: context.words(formula.source) }]
+  })
+}
+
+/** Places where the engineer wrote what the table shows. */
+function givenSpans(table: Tabulation, columns: readonly string[]): readonly Span[] {
+  return columns.flatMap(name =>
+    table.rows.flatMap((_, i) => {
+      const value = table.column(name).cell(i)
+      return value.origin.kind === 'worked' && value.origin.span === undefined && table.column(name).formula
+        ? []
+        : spansOf(value)
+    }),
+  )
+}

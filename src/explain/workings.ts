@@ -1,0 +1,188 @@
+/** Answers what a working asks for, from the results. */
+import type { Diagnostic } from '../base/diagnostic.ts'
+import { type Result, together } from '../base/ledger.ts'
+import { suggestion } from '../base/near.ts'
+import { bad, good } from '../base/outcome.ts'
+import type { CaseResult } from '../compute/distribution.ts'
+import type { LevelWork } from '../compute/level.ts'
+import { diagnose } from '../read/text.ts'
+import type { Context } from './context.ts'
+import { explainMass, explainPolarMoment } from './mass.ts'
+import type { Request, Want } from './request.ts'
+import { explainEccentricity, explainRigidity, explainStiffness } from './rigidity.ts'
+import {
+  explainDesignShears,
+  explainDisplacement,
+  explainEquilibrium,
+  explainTorsion,
+  explainWallShears,
+} from './shears.ts'
+import type { Piece } from './sheet.ts'
+
+const headings: Readonly<Record<Want, string>> = {
+  plan: 'Plan',
+  'centre of mass': 'Centre of mass',
+  'polar moment': 'Polar moment of mass',
+  'wall stiffness': 'Wall stiffness',
+  'centre of rigidity': 'Centre of rigidity',
+  eccentricity: 'Eccentricity',
+  torsion: 'Torsion',
+  'wall shears': 'Wall shears',
+  'design shears': 'Design shears',
+  displacement: 'Displacement',
+  equilibrium: 'Equilibrium',
+}
+
+/** The pieces of one want; a want that cannot be worked becomes a box with its reasons. */
+export function explainWant(want: Want, level: LevelWork, request: Request, context: Context): readonly Piece[] {
+  const made = answer(want, level, request, context)
+  const pieces: readonly Piece[] = made.ok ? made.value : [{ kind: 'fault', diagnostics: made.because }]
+  return request.whole ? [{ kind: 'heading', text: context.words(headings[want]) }, ...pieces] : pieces
+}
+
+function answer(want: Want, level: LevelWork, request: Request, context: Context): Result<readonly Piece[]> {
+  const { detail } = request
+  switch (want) {
+    case 'plan':
+      return plan(level, request, context)
+    case 'centre of mass': {
+      const parts = together({ mass: level.mass(), plan: level.plan() })
+      return parts.ok ? good(explainMass(parts.value.mass, parts.value.plan, detail, context)) : parts
+    }
+    case 'polar moment': {
+      const mass = level.mass()
+      return mass.ok ? good(explainPolarMoment(mass.value, detail, context)) : mass
+    }
+    case 'wall stiffness': {
+      const parts = together({ springs: level.springs(), walls: level.walls() })
+      if (!parts.ok) return parts
+      const shown = wallsShown(level, request)
+      return shown.ok
+        ? good(explainStiffness(level, parts.value.springs, parts.value.walls, shown.value, detail, context))
+        : shown
+    }
+    case 'centre of rigidity': {
+      const rigidity = level.rigidity()
+      return rigidity.ok ? good(explainRigidity(rigidity.value, detail, context)) : rigidity
+    }
+    case 'eccentricity': {
+      const eccentricity = level.eccentricity()
+      if (!eccentricity.ok) return eccentricity
+      const forces = level.forces()
+      if (!forces.ok) return forces
+      const acting = forces.value ? level.acting() : undefined
+      return good(explainEccentricity(eccentricity.value, acting?.ok ? acting.value : undefined, context))
+    }
+    case 'torsion':
+    case 'wall shears':
+    case 'design shears':
+    case 'displacement':
+    case 'equilibrium':
+      return shears(want, level, request, context)
+  }
+}
+
+function plan(level: LevelWork, { caseName }: Request, context: Context): Result<readonly Piece[]> {
+  const chosen = caseName ? caseOf(level, caseName) : undefined
+  if (chosen && !chosen.ok) return chosen
+  const made = context.sketch(level, caseName?.text)
+  if (!made.ok) return made
+  const shears = level.distribution().ok
+  const what = !shears ? '' : caseName ? ` Shears of case ${caseName.text}.` : ' Design shears.'
+  return good([
+    {
+      kind: 'figure',
+      id: context.anchor(`${level.name}.plan`),
+      number: '',
+      caption: context.words(`Plan of ${level.name}.${what}`),
+      ...made.value,
+    },
+  ])
+}
+
+type ShearWant = 'torsion' | 'wall shears' | 'design shears' | 'displacement' | 'equilibrium'
+
+function shears(want: ShearWant, level: LevelWork, request: Request, context: Context): Result<readonly Piece[]> {
+  const { detail } = request
+  const parts = together({
+    distribution: level.distribution(),
+    display: level.display(),
+    walls: wallsShown(level, request),
+    cases: casesShown(level, request),
+  })
+  if (!parts.ok) return parts
+  const { distribution, display, walls, cases } = parts.value
+  const [first] = cases
+  if (!first) return bad([])
+  switch (want) {
+    case 'torsion':
+      return good(explainTorsion(distribution, first, detail, display, context))
+    case 'wall shears':
+      return good(explainWallShears(distribution, cases, walls, detail, context))
+    case 'design shears':
+      return good(explainDesignShears(distribution, walls, detail, context))
+    case 'equilibrium':
+      return good(explainEquilibrium(distribution, detail, display, context))
+    case 'displacement': {
+      const all = level.displacements()
+      if (!all.ok) return all
+      const worst = all.value.reduce((a, b) =>
+        Math.abs(b.governing.value.si) > Math.abs(a.governing.value.si) ? b : a,
+      )
+      const shown = request.caseName ? all.value.find(({ result }) => result === first) : worst
+      return good(explainDisplacement(level.name, all.value, shown ?? worst, detail, display, context))
+    }
+  }
+}
+
+/** The walls to work in full: those asked for, or the one that governs, or the stiffest where no force is known. */
+function wallsShown(level: LevelWork, { walls }: Request): Result<readonly string[]> {
+  const springs = level.springs()
+  if (!springs.ok) return springs
+  const names = springs.value.map(({ name }) => name)
+  const unknown = walls.filter(({ text }) => !names.includes(text))
+  if (unknown.length > 0)
+    return bad(
+      unknown.map(({ text, span }) =>
+        diagnose(
+          'error',
+          'unknown-wall',
+          span,
+          `there is no wall ${text} at ${level.name}`,
+          suggestion(text, names, 'wall'),
+        ),
+      ),
+    )
+  if (walls.length > 0) return good(walls.map(({ text }) => text))
+  const forces = level.forces()
+  const distribution = forces.ok && forces.value ? level.distribution() : undefined
+  if (distribution?.ok) return good([distribution.value.design.rows[distribution.value.governingWall] ?? ''])
+  return good([springs.value.reduce((a, b) => (b.k.si > a.k.si ? b : a)).name])
+}
+
+/** The case asked for, every case, or the one that governs. */
+function casesShown(level: LevelWork, { caseName }: Request): Result<readonly CaseResult[]> {
+  const distribution = level.distribution()
+  if (!distribution.ok) return distribution
+  const { cases, governingCase, governingWall } = distribution.value
+  if (caseName?.text === 'all') return good(cases)
+  if (caseName) return caseOf(level, caseName)
+  return good(cases.filter(each => each.case.name === governingCase(governingWall).text))
+}
+
+function caseOf(level: LevelWork, { text, span }: NonNullable<Request['caseName']>): Result<readonly CaseResult[]> {
+  const distribution = level.distribution()
+  if (!distribution.ok) return distribution
+  const { cases } = distribution.value
+  const found = cases.filter(each => each.case.name === text)
+  return found.length > 0 ? good(found) : bad([unknownCase(text, span, cases)])
+}
+
+const unknownCase = (text: string, span: Request['at'], cases: readonly CaseResult[]): Diagnostic =>
+  diagnose(
+    'error',
+    'unknown-case',
+    span,
+    `there is no case ${text}`,
+    `There are: ${cases.map(each => each.case.name).join(', ')}, and all.`,
+  )

@@ -1,0 +1,106 @@
+/** Reading documents and writing results; nothing else touches the disk. */
+import { mkdirSync, mkdtempSync, readdirSync, readFileSync, renameSync, rmSync, statSync, writeFileSync } from 'node:fs'
+import { dirname, extname, join } from 'node:path'
+import type { Diagnostic } from './base/diagnostic.ts'
+import { bad, good, type Outcome } from './base/outcome.ts'
+
+/** The Markdown files that a path names: itself, or those of a folder and the folders in it. */
+export function documentsIn(path: string): Outcome<readonly string[]> {
+  try {
+    if (!statSync(path).isDirectory()) return good([path])
+    const found = markdownIn(path)
+    return found.length > 0 ? good(found) : bad(`${path}: no Markdown file in this folder`)
+  } catch (error) {
+    return bad(`${path}: ${reason(error)}`)
+  }
+}
+
+function markdownIn(folder: string): readonly string[] {
+  const entries = readdirSync(folder, { withFileTypes: true }).sort((a, b) => (a.name < b.name ? -1 : 1))
+  return entries.flatMap(entry => {
+    const path = join(folder, entry.name)
+    if (entry.isDirectory()) return entry.name.startsWith('.') || entry.name === 'node_modules' ? [] : markdownIn(path)
+    return extname(entry.name) === '.md' && !entry.name.endsWith('.worked.md') ? [path] : []
+  })
+}
+
+/** A calculation is prose and tables; a file beyond this is something else. */
+const LARGEST = 5 * 1024 * 1024
+
+type TextFault = Pick<Diagnostic, 'rule' | 'message' | 'help'>
+
+export function readText(path: string): Outcome<string, TextFault> {
+  try {
+    const { size } = statSync(path)
+    if (size > LARGEST)
+      return bad({
+        rule: 'file-too-large',
+        message: `this file has ${(size / 1048576).toFixed(1)} MB; ${LARGEST / 1048576} MB are read`,
+        help: 'Split the document.',
+      })
+    return decode(readFileSync(path))
+  } catch (error) {
+    return bad({
+      rule: 'file-unreadable',
+      message: `this file cannot be read: ${reason(error)}`,
+      help: 'Check its name and its permissions.',
+    })
+  }
+}
+
+function decode(bytes: Uint8Array): Outcome<string, TextFault> {
+  try {
+    return good(new TextDecoder('utf-8', { fatal: true }).decode(bytes))
+  } catch {
+    return bad({
+      rule: 'not-utf-8',
+      message: `this file is not UTF-8 text: line ${firstStrangeLine(bytes)} has other bytes`,
+      help: 'Save it as UTF-8.',
+    })
+  }
+}
+
+/** The line of the first bytes that do not decode. */
+function firstStrangeLine(bytes: Uint8Array): number {
+  const text = new TextDecoder('utf-8').decode(bytes)
+  return text.slice(0, Math.max(0, text.indexOf('\ufffd'))).split('\n').length
+}
+
+/** Writes each file whole or not at all: a reader never sees half of one. */
+export function writeWhole(
+  folder: string,
+  files: readonly { readonly name: string; readonly text: string }[],
+): Outcome<undefined> {
+  if (files.length === 0) return good(undefined)
+  let workshop: string | undefined
+  try {
+    mkdirSync(folder, { recursive: true })
+    workshop = mkdtempSync(join(folder, '.platemark-'))
+    for (const { name, text } of files) {
+      mkdirSync(dirname(join(workshop, name)), { recursive: true })
+      writeFileSync(join(workshop, name), text)
+    }
+    for (const { name } of files) renameSync(join(workshop, name), join(folder, name))
+    return good(undefined)
+  } catch (error) {
+    return bad(`${folder}: the results cannot be written: ${reason(error)}`)
+  } finally {
+    if (workshop !== undefined) rmSync(workshop, { recursive: true, force: true })
+  }
+}
+
+const reasons: Readonly<Record<string, string>> = {
+  ENOENT: 'there is no such file or folder',
+  EACCES: 'permission is refused',
+  EPERM: 'permission is refused',
+  EROFS: 'the disk is read-only',
+  ENOTDIR: 'part of the path is not a folder',
+  EEXIST: 'a file stands where a folder is needed',
+  EISDIR: 'it is a folder',
+  ENOSPC: 'the disk is full',
+}
+
+function reason(error: unknown): string {
+  const code = error instanceof Error && 'code' in error ? String(error.code) : ''
+  return reasons[code] ?? (error instanceof Error ? error.message : String(error))
+}

@@ -1,0 +1,44 @@
+/** The texts of --help, for someone who has never seen the tool. */
+
+export const help = `Platemark compiles a Markdown document into the lateral calculation of a
+shear-wall building, with formulas, values put in, results, tables and sketches.
+
+  platemark build FILE…    write the calculation beside each file
+  platemark check FILE…    say what is wrong and how the checks come out
+
+A FILE is a Markdown document; a folder stands for all .md files in it.
+platemark COMMAND --help tells more. platemark --version prints the version.
+
+What it writes is to be reviewed by the engineer of record; local codes govern.`
+
+const texts = {
+  build: `platemark build FILE… [--to html,md,json] [--out DIR] [--draft] [--list]
+
+Works each document and writes:
+
+  html   one page that needs nothing beside it (what you get without --to)
+  md     the same calculation as Markdown, with its sketches as SVG beside it;
+         named NAME.worked.md when it is written beside its source
+  json   every value, step, check and diagnostic, for other programs
+
+  --out DIR   write there instead of beside the source
+  --draft     write the pages in spite of errors, with a box at each and a banner
+  --list      one line for each diagnostic
+
+A document with errors leaves its pages as they were; its JSON is always written.
+Exit code: 0 done, 1 errors, 2 wrong usage. A check that fails is a result, not an error.
+
+  platemark build workshop.md
+  platemark build calcs/ --to html,json --out out/`,
+  check: `platemark check FILE… [--list]
+
+Works each document, prints what is wrong with it and how its checks come out, and writes nothing.
+
+  --list      one line for each diagnostic
+
+Exit code: 0 all well, 1 errors or failed checks, 2 wrong usage.
+
+  platemark check workshop.md`,
+} as const
+
+export const helpFor = (command: keyof typeof texts): string => texts[command]

@@ -1,0 +1,52 @@
+/** The package as a library: the compiler, and a plugin for any unified pipeline. */
+import type { Html, Root, RootContent } from 'mdast'
+import type { Processor } from 'unified'
+import type { VFile } from 'vfile'
+import { positionOf, sourceOf } from './base/span.ts'
+import { type Compiled, compileText, compileTree } from './compile.ts'
+import { pieceNodes } from './render/markdown.ts'
+import { markdownSettings } from './render/math-nodes.ts'
+
+export type { Diagnostic } from './base/diagnostic.ts'
+export { longForm, oneLine } from './base/report.ts'
+export { type Format, type Host, type OutputFile, publish } from './publish.ts'
+export { type Compiled, compileText, compileTree }
+
+/**
+ * A remark plugin. It replaces Platemark's fenced blocks by the worked calculation
+ * as Markdown nodes and puts quoted results into the prose; every diagnostic
+ * becomes a message of the file. Formulas are nodes of type `math` and
+ * `inlineMath`, as other math plugins have them; figures are `html` nodes that hold
+ * an SVG. Front matter is read where the pipeline parses it to a `yaml` node.
+ */
+export function remarkPlatemark(this: Processor): (tree: Root, file: VFile) => Root {
+  const data = this.data()
+  const held: unknown = Reflect.get(data, 'toMarkdownExtensions')
+  const extensions: unknown[] = Array.isArray(held) ? held : []
+  extensions.push(markdownSettings)
+  Reflect.set(data, 'toMarkdownExtensions', extensions)
+  return (tree, file) => {
+    const compiled = compileTree(tree, sourceOf(file.path ?? 'document.md', String(file)))
+    report(compiled, file)
+    return { type: 'root', children: nodesOf(compiled) }
+  }
+}
+
+function nodesOf({ parts, source }: Compiled): RootContent[] {
+  return parts.flatMap((part): readonly RootContent[] => {
+    if (part.kind === 'prose') return part.nodes
+    return part.pieces.flatMap((piece): readonly RootContent[] => {
+      if (piece.kind === 'figure') return [{ type: 'html', value: piece.svg } satisfies Html]
+      return pieceNodes(piece, { source, level: 3, figureFile: () => '' })
+    })
+  })
+}
+
+function report({ source, diagnostics }: Compiled, file: VFile): void {
+  for (const { rule, severity, message, help, at } of diagnostics) {
+    const [start, end] = [positionOf(source, at.span.start), positionOf(source, at.span.end)]
+    const made = file.message(message, { place: { start, end }, ruleId: rule, source: 'platemark' })
+    made.fatal = severity === 'error'
+    made.note = help
+  }
+}

@@ -1,0 +1,104 @@
+/** A compiled document as files: the page, the expanded Markdown with its figures, the results. */
+import type { Root, RootContent } from 'mdast'
+import remarkFrontmatter from 'remark-frontmatter'
+import remarkGfm from 'remark-gfm'
+import remarkStringify from 'remark-stringify'
+import { unified } from 'unified'
+import { type Compiled, type Part, sheetOf } from './compile.ts'
+import type { Figure } from './explain/sheet.ts'
+import type { BodyPart } from './render/body.ts'
+import { renderHtml } from './render/html.ts'
+import { renderJson } from './render/json.ts'
+import { documentNodes, pieceNodes } from './render/markdown.ts'
+import { markdownSettings } from './render/math-nodes.ts'
+import { isDefinition, proseHtml } from './render/prose.ts'
+import { createShapeCache } from './render/typeset.ts'
+
+/** What a document cannot have from its own text. */
+export interface Host {
+  readonly version: string
+  /** A text that was prepared when the program was built, such as a style or a face. */
+  readonly asset: (name: string) => string
+  /** Hex digits. */
+  readonly sha256: (text: string) => string
+}
+
+export type Format = 'html' | 'md' | 'json'
+
+export interface OutputFile {
+  readonly name: string
+  readonly text: string
+}
+
+/** @param stem name of the document without its ending */
+export function publish(
+  compiled: Compiled,
+  stem: string,
+  format: Format,
+  draft: boolean,
+  host: Host,
+): readonly OutputFile[] {
+  switch (format) {
+    case 'html':
+      return [{ name: `${stem}.html`, text: page(compiled, draft, host) }]
+    case 'md':
+      return markdown(compiled, stem, draft, host)
+    case 'json':
+      return [{ name: `${stem}.json`, text: results(compiled, host) }]
+  }
+}
+
+/** Shapes of formulas are the same in every document. */
+const shapes = createShapeCache()
+
+function page(compiled: Compiled, draft: boolean, host: Host): string {
+  const { source } = compiled
+  const sheet = sheetOf(compiled, host.version, host.sha256(source.text), draft)
+  return renderHtml({ sheet, body: bodyOf(compiled), source, asset: host.asset, shapes })
+}
+
+function bodyOf({ parts }: Compiled): readonly BodyPart[] {
+  const definitions = definitionsIn(parts)
+  return parts.flatMap((part, i): readonly BodyPart[] =>
+    part.kind === 'pieces' ? part.pieces : [{ kind: 'prose', html: proseHtml(part.nodes, definitions, `note-${i}`) }],
+  )
+}
+
+const definitionsIn = (parts: readonly Part[]): readonly RootContent[] =>
+  parts.flatMap(part => (part.kind === 'prose' ? part.nodes.filter(isDefinition) : []))
+
+const writer = unified()
+  .use(remarkStringify, { ...markdownSettings, rule: '-' })
+  .use(remarkGfm)
+  .use(remarkFrontmatter)
+
+function markdown(compiled: Compiled, stem: string, draft: boolean, host: Host): readonly OutputFile[] {
+  const { parts, source } = compiled
+  const figures: OutputFile[] = []
+  const figureFile = ({ id, svg }: Figure): string => {
+    const name = `${stem}.${id.replace(/[^\p{L}\p{N}.-]+/gu, '-')}.svg`
+    figures.push({ name, text: `${svg}\n` })
+    return encodeURI(name)
+  }
+  const setting = { source, level: 3, figureFile } as const
+  const nodes = parts.flatMap((part): readonly RootContent[] =>
+    part.kind === 'pieces'
+      ? part.pieces.flatMap(piece => pieceNodes(piece, setting))
+      : part.nodes.filter(({ type }) => type !== 'yaml' && type !== 'html'),
+  )
+  const sheet = sheetOf(compiled, host.version, host.sha256(source.text), draft)
+  const root: Root = { type: 'root', children: [...documentNodes(sheet, nodes)] }
+  return [{ name: `${stem}.md`, text: writer.stringify(root) }, ...figures]
+}
+
+function results({ source, choices, context, checks, diagnostics }: Compiled, host: Host): string {
+  return renderJson({
+    version: host.version,
+    source,
+    sha256: host.sha256(source.text),
+    language: choices.language,
+    roots: context.roots.values(),
+    checks,
+    diagnostics,
+  })
+}

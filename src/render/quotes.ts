@@ -1,0 +1,55 @@
+/** Puts quoted results, and the numbers of headings, into the tree of the prose. */
+import type { Heading, PhrasingContent, RootContent, Text } from 'mdast'
+import type { Quote } from '../explain/sheet.ts'
+
+/** A quote that was found, with the place it leads to, or the words that stand where it would be. */
+export type Quoted =
+  | {
+      readonly within: { readonly start: number; readonly end: number }
+      readonly quote: Quote
+      readonly place: string | undefined
+    }
+  | { readonly within: { readonly start: number; readonly end: number }; readonly missing: string }
+
+export type Quotes = ReadonlyMap<Text, readonly Quoted[]>
+
+/** The same node with its quotes put in; nodes without quotes stay the same objects. */
+export function withQuotes<T extends RootContent>(node: T, quotes: Quotes): T {
+  if (quotes.size === 0 || !('children' in node)) return node
+  // A parent's children are of the kinds that it held before: text is replaced by text, strong and link.
+  const children = (node.children as RootContent[]).flatMap((child): readonly RootContent[] =>
+    child.type === 'text' ? inline(child, quotes.get(child)) : [withQuotes(child, quotes)],
+  )
+  return { ...node, children } as T
+}
+
+function inline(text: Text, quoted: readonly Quoted[] | undefined): PhrasingContent[] {
+  if (!quoted || quoted.length === 0) return [text]
+  const out: PhrasingContent[] = []
+  let from = 0
+  for (const each of quoted) {
+    if (each.within.start > from) out.push({ type: 'text', value: text.value.slice(from, each.within.start) })
+    out.push(inPlace(each))
+    from = each.within.end
+  }
+  if (from < text.value.length) out.push({ type: 'text', value: text.value.slice(from) })
+  return out
+}
+
+function inPlace(quoted: Quoted): PhrasingContent {
+  if ('missing' in quoted) return { type: 'strong', children: [{ type: 'text', value: `[${quoted.missing}]` }] }
+  const words: Text = { type: 'text', value: quoted.quote.printed }
+  if (quoted.place === undefined) return words
+  return {
+    type: 'link',
+    url: `#${quoted.place.replace(/%/g, '%25').replace(/ /g, '%20')}`,
+    children: [words],
+    data: { hProperties: { className: ['q'] } },
+  }
+}
+
+/** A heading with its number before its words. */
+export const withNumber = (heading: Heading, number: string | undefined): Heading =>
+  number === undefined
+    ? heading
+    : { ...heading, children: [{ type: 'text', value: `${number} ` }, ...heading.children] }
