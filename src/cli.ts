@@ -43,10 +43,20 @@ interface Settings {
 export function run(args: readonly string[]): number {
   const settings = readArguments(args)
   if (typeof settings === 'number') return settings
-  const codes = settings.documents.map(path =>
-    settings.command === 'build' ? build(path, settings) : check(path, settings),
-  )
+  const codes = settings.documents.map(path => guarded(path, settings))
   return Math.max(DONE, ...codes)
+}
+
+/** A fault of our own must not hide the other documents, and is said as what it is. */
+function guarded(path: string, settings: Settings): number {
+  try {
+    return settings.command === 'build' ? build(path, settings) : check(path, settings)
+  } catch (error) {
+    const detail = error instanceof Error ? (process.env.PLATEMARK_DEBUG ? (error.stack ?? '') : error.message) : ''
+    return fail(
+      `${shownPath(path)}: Platemark has a fault of its own here: ${detail}\nPlease report it with the document. Nothing was written.`,
+    )
+  }
 }
 
 function readArguments(args: readonly string[]): Settings | number {
@@ -77,9 +87,7 @@ function readOptions(command: Command, args: readonly string[]): Settings | numb
   }
   const { values, positionals } = parsed
   if (positionals.length === 0) return misuse('Name a Markdown file, or a folder of them.')
-  const to = (typeof values.to === 'string' ? values.to : 'html')
-    .split(',')
-    .map(word => word.trim())
+  const to = (typeof values.to === 'string' ? values.to : 'html').split(',').map(word => word.trim())
   const strange = to.find(word => !isFormat(word))
   if (strange !== undefined) return misuse(`There is no format ${strange}. Formats are ${inWords(formats, 'and')}.`)
   const found = positionals.map(path => documentsIn(path))
@@ -98,9 +106,10 @@ function readOptions(command: Command, args: readonly string[]): Settings | numb
 function compileFile(path: string): Compiled | undefined {
   const read = readText(path)
   if (read.ok) return compileText(shownPath(path), read.value)
-  const source = sourceOf(shownPath(path), '')
+  const { text, offset, rule, message, help } = read.because
+  const at = { span: { start: offset, end: offset + 1 }, text: '' }
   process.stderr.write(
-    `${longForm(source, { severity: 'error', at: { span: { start: 0, end: 1 }, text: '' }, also: [], ...read.because })}\n\n`,
+    `${longForm(sourceOf(shownPath(path), text), { rule, severity: 'error', message, help, at, also: [] })}\n\n`,
   )
   return undefined
 }
@@ -142,13 +151,15 @@ function tell({ source, diagnostics }: Compiled, settings: Settings): number {
   return errors
 }
 
+/** Prints how the checks came out. @returns the number that failed */
 function sayChecks({ source, checks }: Compiled): number {
-  const failed = checks.filter(({ ok }) => !ok)
   for (const { what, demand, capacity, ratioPrinted, ok } of checks)
     process.stdout.write(
       `${source.path}: ${what}: ${demand} ${ok ? '≤' : '>'} ${capacity}, ratio ${ratioPrinted}, ${ok ? 'OK' : 'NG'}\n`,
     )
-  return failed.length
+  const failed = checks.filter(({ ok }) => !ok).length
+  process.stdout.write(`${source.path}: ${count(checks.length, 'check')}, ${failed === 0 ? 'none' : failed} failed\n`)
+  return failed
 }
 
 const count = (n: number, noun: string): string => `${n} ${noun}${n === 1 ? '' : 's'}`

@@ -133,7 +133,7 @@ function workQuotes({ quotes }: Document, sheet: Worksheet, context: Context, fa
     if (!quote.ok) for (const fault of quote.because) faults.add(fault)
     const { within, node } = mark
     const quoted: Quoted = quote.ok
-      ? { within, quote: quote.value, place: context.placeOf(mark.id.text) }
+      ? { within, quote: quote.value, place: context.placeOf(quote.value.id) }
       : { within, missing: `${mark.id.text}: not worked` }
     found.set(node, [...(found.get(node) ?? []), quoted])
   }

@@ -27,7 +27,13 @@ function markdownIn(folder: string): readonly string[] {
 /** A calculation is prose and tables; a file beyond this is something else. */
 const LARGEST = 5 * 1024 * 1024
 
-type TextFault = Pick<Diagnostic, 'rule' | 'message' | 'help'>
+/** Why a file has no text; where only some of it is strange, the rest and the place are there to be shown. */
+export interface TextFault extends Pick<Diagnostic, 'rule' | 'message' | 'help'> {
+  readonly text: string
+  readonly offset: number
+}
+
+const faultOfWhole = { text: '', offset: 0 }
 
 export function readText(path: string): Outcome<string, TextFault> {
   try {
@@ -37,6 +43,7 @@ export function readText(path: string): Outcome<string, TextFault> {
         rule: 'file-too-large',
         message: `this file has ${(size / 1048576).toFixed(1)} MB; ${LARGEST / 1048576} MB are read`,
         help: 'Split the document.',
+        ...faultOfWhole,
       })
     return decode(readFileSync(path))
   } catch (error) {
@@ -44,6 +51,7 @@ export function readText(path: string): Outcome<string, TextFault> {
       rule: 'file-unreadable',
       message: `this file cannot be read: ${reason(error)}`,
       help: 'Check its name and its permissions.',
+      ...faultOfWhole,
     })
   }
 }
@@ -52,18 +60,10 @@ function decode(bytes: Uint8Array): Outcome<string, TextFault> {
   try {
     return good(new TextDecoder('utf-8', { fatal: true }).decode(bytes))
   } catch {
-    return bad({
-      rule: 'not-utf-8',
-      message: `this file is not UTF-8 text: line ${firstStrangeLine(bytes)} has other bytes`,
-      help: 'Save it as UTF-8.',
-    })
+    const text = new TextDecoder('utf-8').decode(bytes)
+    const offset = Math.max(0, text.indexOf('\ufffd'))
+    return bad({ rule: 'not-utf-8', message: 'this file is not UTF-8 text', help: 'Save it as UTF-8.', text, offset })
   }
-}
-
-/** The line of the first bytes that do not decode. */
-function firstStrangeLine(bytes: Uint8Array): number {
-  const text = new TextDecoder('utf-8').decode(bytes)
-  return text.slice(0, Math.max(0, text.indexOf('\ufffd'))).split('\n').length
 }
 
 /** Writes each file whole or not at all: a reader never sees half of one. */

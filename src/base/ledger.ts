@@ -55,14 +55,14 @@ function tooDeep({ name, at }: Task): Diagnostic {
 
 function ring(tasks: readonly Task[]): Diagnostic {
   const [first] = tasks
-  const at = first?.at ?? { start: 0, end: 0 }
+  const last = tasks.at(-1)
   const path = [...tasks, ...(first ? [first] : [])].map(({ name }) => name)
   return {
     rule: 'ring-of-definitions',
     severity: 'error',
     message: `${first?.name ?? ''} rests on itself: ${path.join(' → ')}`,
-    at: { span: at, text: 'the ring starts here' },
-    also: tasks.slice(1).map(({ name, at }) => ({ span: at, text: `${name} is part of it` })),
+    at: { span: last?.at ?? { start: 0, end: 0 }, text: `asks for ${first?.name ?? ''} again` },
+    also: tasks.slice(0, -1).map(({ name, at }) => ({ span: at, text: `${name} is part of the ring` })),
     help: 'State one of these values as a number.',
   }
 }

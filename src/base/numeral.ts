@@ -72,7 +72,7 @@ const finish = (negative: boolean, digits: string, exponent: number): Numeral =>
 export const fixed = (value: number, decimals: number): Numeral =>
   finish(value < 0, Math.abs(value).toFixed(decimals), 0)
 
-/** Decimals that give every number of a column its digits, no more than its largest needs. */
+/** Decimals that give the largest number of a column four digits, and fewer where none has more. */
 export function columnDecimals(values: Iterable<number>): number {
   let largest = 0
   let exact = 0
@@ -82,9 +82,7 @@ export function columnDecimals(values: Iterable<number>): number {
     exact = Math.max(exact, exactDecimals(size, 4) ?? 9)
   }
   if (largest === 0) return 0
-  const needed = rounding(largest, 0, 4)
-  const point = needed.digits.indexOf('.')
-  const decimals = (point === -1 ? 0 : needed.digits.length - point - 1) - needed.exponent
+  const decimals = 3 - Math.floor(Math.log10(largest))
   return Math.min(Math.max(0, decimals), exact, 12)
 }
 

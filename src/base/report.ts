@@ -15,11 +15,12 @@ export function longForm(source: Source, diagnostic: Diagnostic): string {
   const marks = [{ ...at, sign: '^' }, ...also.map(label => ({ ...label, sign: '-' }))]
     .sort((a, b) => a.span.start - b.span.start)
     .slice(0, 12)
+  const marked = source.text === '' ? [] : marks
   const width = Math.max(...marks.map(({ span }) => String(positionOf(source, span.start).line).length)) + 1
   return [
     `${severity}[${rule}]: ${message}`,
     `  ${source.path}:${line}:${column}`,
-    ...marks.flatMap(mark => markedLine(source, mark, width)),
+    ...marked.flatMap(mark => markedLine(source, mark, width)),
     ...help
       .split('\n')
       .filter(sentence => sentence !== '')

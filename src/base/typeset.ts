@@ -105,7 +105,8 @@ function setBinary(expr: Expr & { kind: 'binary' }, setName: SetName, language: 
       const top = set(expr.left, setName, language)
       const bottom = set(expr.right, setName, language)
       return {
-        ...whole(joinTex('\\frac{', top.tex, '}{', bottom.tex, '}')),
+        // Full size at any depth: a value with its unit must stay legible inside a fraction.
+        ...whole(joinTex('\\dfrac{', top.tex, '}{', bottom.tex, '}')),
         binding: PRODUCT + 0.5,
         startsWithDigit: top.startsWithDigit,
       }
@@ -115,13 +116,19 @@ function setBinary(expr: Expr & { kind: 'binary' }, setName: SetName, language: 
       const power = set(expr.right, setName, language)
       const held = base.binding < WHOLE ? bracketed(base.tex) : base.tex
       return {
-        ...whole(joinTex('{', held, '}^{', power.tex, '}')),
+        ...whole(joinTex('{', held, '}^{', small(power.tex), '}')),
         binding: POWER,
         startsWithDigit: base.startsWithDigit && base.binding === WHOLE,
       }
     }
   }
 }
+
+/** Fractions of a power shrink with it. */
+const small = ({ parts, slots }: Tex): Tex => ({
+  parts: parts.map(part => part.replaceAll('\\dfrac', '\\frac')),
+  slots,
+})
 
 /** The factors of a chain of products, which needs no brackets of its own. */
 function factorsOf(expr: Expr): readonly Expr[] {

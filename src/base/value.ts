@@ -46,6 +46,8 @@ export interface Word {
   readonly text: string
   /** Why it is this one. */
   readonly because: string
+  /** The value that it tells of. */
+  readonly about: string
 }
 
 export const dimensionOfValue = ({ unit }: Value): Dimension => unit.dimension

@@ -68,5 +68,6 @@ export function governingCase(level: string, cases: readonly CaseResult[], desig
     id: `${level}.wall.${design.rows[wallIdx] ?? ''}.case`,
     text: best?.case.name ?? '',
     because: 'the case of its largest shear',
+    about: `${level}.wall.${design.rows[wallIdx] ?? ''}.V`,
   }
 }

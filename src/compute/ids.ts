@@ -170,7 +170,12 @@ function governing(
   const wall = design.rows[governingWall] ?? ''
   switch (key) {
     case 'wall':
-      return { id: `${level}.governing.wall`, text: wall, because: 'the wall of the largest shear per length' }
+      return {
+        id: `${level}.governing.wall`,
+        text: wall,
+        because: 'the wall of the largest shear per length',
+        about: `${level}.wall.${wall}.v`,
+      }
     case 'case':
       return governingCase(governingWall)
     case 'V':

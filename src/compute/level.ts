@@ -34,6 +34,8 @@ export interface Surroundings {
   readonly construction: (name: string) => (() => Result<Construction>) | undefined
   readonly constructionNames: readonly string[]
   readonly forceTables: readonly Block[]
+  /** Faults of blocks of a topic that found no level. */
+  readonly strays: (topic: string) => readonly Diagnostic[]
   /** The levels above this one, the nearest first. */
   readonly above: () => Result<readonly LevelWork[]>
 }
@@ -71,10 +73,16 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
   const once = <T>(what: string, work: () => Result<T>, at: Span = anchor) =>
     scope.ledger.once(`${name}.${what}`, at, work)
 
+  /** A block that found no level is the cause of what this one lacks. */
+  const missing = (topic: string): readonly Diagnostic[] => {
+    const strays = around.strays(topic)
+    return strays.length > 0 ? strays : [topicMissing(name, topic, anchor)]
+  }
+
   const areas = once('areas', () => {
     const grid = around.grid()
     if (!grid.ok) return grid
-    if (givens.areas.length === 0) return bad([missing(name, 'areas', anchor)])
+    if (givens.areas.length === 0) return bad(missing('areas'))
     return readAreas(givens.areas, name, grid.value, scope)
   })
 
@@ -104,7 +112,7 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
   const walls = once('walls', () => {
     const grid = around.grid()
     if (!grid.ok) return grid
-    if (givens.walls.length === 0) return bad([missing(name, 'walls', anchor)])
+    if (givens.walls.length === 0) return bad(missing('walls'))
     return readWalls(givens.walls, name, grid.value, scope)
   })
 
@@ -168,7 +176,7 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     const given = walls()
     if (!given.ok) return given
     const outside = plan()
-    const faults = outside.ok ? given.value.flatMap(wall => wallOutside(wall, outside.value)) : []
+    const faults = outside.ok ? given.value.flatMap(wall => wallOutside(wall, outside.value, scope.display)) : []
     const made = all(
       given.value.map((wall): Result<Spring> => {
         const k = stiffnessFor(wall)
@@ -204,7 +212,7 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     const parts = together({ forces: forces(), mass: mass(), plan: plan() })
     if (!parts.ok) return parts
     const { forces: given, mass: m, plan: p } = parts.value
-    if (!given) return bad([missing(name, 'forces', anchor)])
+    if (!given) return bad(missing('forces'))
     const arm = (axis: 'x' | 'y') =>
       work(
         `${name}.ea.${axis}`,
@@ -271,25 +279,30 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
   }
 }
 
-const missing = (level: string, topic: string, at: Span): Diagnostic =>
+const topicMissing = (level: string, topic: string, at: Span): Diagnostic =>
   diagnose('error', `${topic}-missing`, at, `level ${level} has no ${topic}`, `Give them in a block ${topic} ${level}.`)
 
-function wallOutside({ name, from, to, span }: Wall, { outline, areas }: Plan): readonly Diagnostic[] {
+function wallOutside(
+  { name, from, to, place }: Wall,
+  { outline, areas }: Plan,
+  { system }: Display,
+): readonly Diagnostic[] {
   const ends = [from, to].map(({ x, y }) => ({ x: x.si, y: y.si }))
   const [a, b] = ends
   if (!a || !b) return []
   const off = Math.min(...outline.map(ring => distanceFrom(ring, a, b)))
   if (off <= OFF_EDGE) return []
-  const feet = (off / 0.3048).toFixed(2)
-  const also = areas.slice(0, 1).map(({ name, span }) => ({ span, text: `${name} is an area of the level` }))
+  const print = (metres: number) => (system === 'US' ? `${(metres / 0.3048).toFixed(2)} ft` : `${metres.toFixed(2)} m`)
+  const where = `from x = ${print(a.x)}, y = ${print(a.y)} to x = ${print(b.x)}, y = ${print(b.y)}`
+  const also = areas.map(({ name, span }) => ({ span, text: `${name} is an area of the level` }))
   return [
     diagnose(
       'error',
       'wall-outside-level',
-      span,
-      `wall ${name} stands ${feet} ft (${off.toFixed(2)} m) outside its level`,
+      place,
+      `wall ${name} stands ${print(off)} outside its level`,
       'A diaphragm can only push on walls that it meets.\nMove the wall, or extend an area.',
-      { also },
+      { label: where, also: also.slice(0, 3) },
     ),
   ]
 }

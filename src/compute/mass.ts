@@ -36,6 +36,7 @@ const Wx = sym('W_x', 'W\\,x', 'moment')
 const Wy = sym('W_y', 'W\\,y', 'moment')
 const own = sym('I_o', 'I_o', 'weightMoment')
 const polar = sym('I', 'I', 'weightMoment')
+const polarSum = sym('I_p', 'I_p', 'weightMoment')
 const sumW = sym('sum_W', '\\sum W', 'force')
 const sumWx = sym('sum_Wx', '\\sum W\\,x', 'moment')
 const sumWy = sym('sum_Wy', '\\sum W\\,y', 'moment')
@@ -214,7 +215,7 @@ function workCentre(level: string, tables: Tables, display: Display): Mass {
     .work(moments.x, { W: 'W', x: 'x' }, 'Wx')
     .work(moments.y, { W: 'W', y: 'y' }, 'Wy')
     .take(own, gathered('I_o'))
-  const total = parts.sum('W', sumW, `${level}.W`)
+  const total = parts.sum('W', W, `${level}.W`)
   const sums = { Wx: parts.sum('W_x', sumWx, `${level}.sum.Wx`), Wy: parts.sum('W_y', sumWy, `${level}.sum.Wy`) }
   const centre = {
     x: work(`${level}.CM.x`, centreOfMass.x, { sum_Wx: sums.Wx, sum_W: total }, display),
@@ -222,5 +223,5 @@ function workCentre(level: string, tables: Tables, display: Display): Mass {
   }
   if (tables.areas && !tables.lines && !tables.points) parts.take(A, gathered('A')).take(areaLoad, gathered('w'))
   parts.work(moments.polar, { I_o: 'I_o', W: 'W', x: 'x', y: 'y', x_m: centre.x, y_m: centre.y })
-  return { level, W: total, ...centre, Ip: parts.sum('I', polar, `${level}.I_p`), ...tables, parts, sums }
+  return { level, W: total, ...centre, Ip: parts.sum('I', polarSum, `${level}.I_p`), ...tables, parts, sums }
 }

@@ -63,6 +63,7 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
       construction: name => constructions.get(name),
       constructionNames: [...constructions.keys()],
       forceTables: givens.forceTables,
+      strays: givens.strays,
       above: () => {
         const lines = levelLines()
         if (!lines.ok) return lines
@@ -86,22 +87,27 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
     )
   }
 
-  /** Works what an equation rests on first, so that a long chain does not nest. */
+  /**
+   * Works what an equation rests on first, so that a long chain does not nest. A ring is left to the
+   * ledger, which tells its path.
+   */
   function workInOrder(name: string): Result<Value> | undefined {
     const waiting = [name]
-    const seen = new Set<string>()
-    const order: string[] = []
+    const opened = new Set<string>()
+    const closed = new Set<string>()
     for (let next = waiting.at(-1); next !== undefined; next = waiting.at(-1)) {
+      if (opened.has(next)) {
+        waiting.pop()
+        closed.add(next)
+        continue
+      }
+      opened.add(next)
       const body = bodies.get(next)
-      const rest =
-        body && !seen.has(next)
-          ? [...namesIn(body.body).keys()].filter(other => bodies.has(other) && !seen.has(other))
-          : []
-      seen.add(next)
-      if (rest.length === 0) order.push(waiting.pop() ?? '')
-      else waiting.push(...rest)
+      const rest = body ? [...namesIn(body.body).keys()].filter(other => bodies.has(other) && !closed.has(other)) : []
+      if (rest.some(other => opened.has(other))) return equations.get(name)?.()
+      waiting.push(...rest)
     }
-    for (const earlier of order) equations.get(earlier)?.()
+    for (const earlier of closed) equations.get(earlier)?.()
     return equations.get(name)?.()
   }
 

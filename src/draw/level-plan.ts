@@ -102,13 +102,15 @@ function forceOf(
 
 function describe({ level, language, plan, walls, mass, rigidity, distribution }: LevelPicture): string {
   const parts = [
-    `Plan of ${level} with ${plan.areas.length} areas, ${plan.openings.length} openings and ${walls.length} walls.`,
+    `Plan of ${level} with ${count(plan.areas.length, 'area')}, ${count(plan.openings.length, 'opening')} and ${count(walls.length, 'wall')}.`,
   ]
   if (mass) parts.push(`The centre of mass is at ${pair(mass, language)}.`)
   if (rigidity) parts.push(`The centre of rigidity is at ${pair(rigidity, language)}.`)
   if (distribution) parts.push(`Wall ${distribution.design.rows[distribution.governingWall] ?? ''} governs.`)
   return parts.join(' ')
 }
+
+const count = (n: number, noun: string): string => `${n === 0 ? 'no' : n} ${noun}${n === 1 ? '' : 's'}`
 
 function required<T>(value: T | undefined): T {
   if (value === undefined) throw new Error('a row of the areas has no load')

@@ -21,7 +21,7 @@ export class Context {
   readonly roots = new Map<string, Value>()
   /** Every formula that was printed, in order. */
   readonly formulas = new Set<Formula>()
-  readonly checks: Check[] = []
+  private readonly checked = new Map<string, Check>()
   private readonly anchors = new Map<string, number>()
   private readonly tables: { readonly anchor: string; readonly table: Tabulation }[] = []
 
@@ -41,6 +41,15 @@ export class Context {
     const times = (this.anchors.get(id) ?? 0) + 1
     this.anchors.set(id, times)
     return times === 1 ? id : `${id}-${times}`
+  }
+
+  /** Records a check once, however often it is shown. */
+  check(check: Check): void {
+    this.checked.set(check.id, check)
+  }
+
+  get checks(): readonly Check[] {
+    return [...this.checked.values()]
   }
 
   tabled(anchor: string, table: Tabulation): void {

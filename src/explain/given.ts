@@ -16,7 +16,8 @@ const titles: Readonly<Record<string, string>> = {
 
 export function explainGiven(block: Block, context: Context): readonly Piece[] {
   const { topic, about, table, settings, options } = block
-  const title = `${titles[topic] ?? topic}${about ? ` ${about.text}` : ''}, as given`
+  const joint = topic === 'construction' ? ' ' : ' of '
+  const title = `${titles[topic] ?? topic}${about ? `${joint}${about.text}` : ''}, as given`
   const stated = [...settings, ...options]
   const id = context.anchor(`given.${topic}${about ? `.${about.text}` : ''}`)
   const lines = context.lines([block.info])

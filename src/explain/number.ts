@@ -16,7 +16,8 @@ export function numberItems<P>(items: readonly Numbered<P>[]): {
   readonly headings: ReadonlyMap<P, string>
 } {
   const depths = items.flatMap(item => (item.kind === 'heading' ? [item.depth] : []))
-  const top = Math.min(...(loneTitle(depths) ? depths.slice(1) : depths), 6)
+  const parted = items.some(item => item.kind === 'pieces' && item.pieces.some(({ kind }) => kind === 'heading'))
+  const top = Math.min(...(loneTitle(depths, parted) ? depths.slice(1) : depths), 6)
   const headings = new Map<P, string>()
   const counts: number[] = []
   const within = { equation: 0, table: 0, figure: 0 }
@@ -48,8 +49,9 @@ export function numberItems<P>(items: readonly Numbered<P>[]): {
   return { items: numbered, headings }
 }
 
-const loneTitle = ([first, ...rest]: readonly number[]): boolean =>
-  first !== undefined && rest.length > 0 && rest.every(depth => depth > first)
+/** @param parted true when workings bring headings of their own */
+const loneTitle = ([first, ...rest]: readonly number[], parted: boolean): boolean =>
+  first !== undefined && (rest.length > 0 || parted) && rest.every(depth => depth > first)
 
 function numberPiece(
   piece: Piece,

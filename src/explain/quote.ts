@@ -16,11 +16,11 @@ export function explainQuote({ id, options }: QuoteMark, scope: Scope, context: 
   const found = scope.lookup(id.text)
   if (found === undefined) return bad([unknownName(id.text, id.span, scope)])
   if (!found.ok) return found
-  if (isWord(found.value)) return good({ id: id.text, printed: found.value.text })
+  if (isWord(found.value)) return good({ id: found.value.about, printed: found.value.text })
   context.roots.set(found.value.id, found.value)
-  if (options.text === '') return good({ id: id.text, printed: printed(found.value, context.language) })
+  if (options.text === '') return good({ id: found.value.id, printed: printed(found.value, context.language) })
   const asked = asAsked(found.value, options, context)
-  return asked.ok ? good({ id: id.text, printed: asked.value }) : asked
+  return asked.ok ? good({ id: found.value.id, printed: asked.value }) : asked
 }
 
 /** `1 kip` asks for kips to the nearest one; `0.01 ft` for feet with two decimals. */

@@ -2,6 +2,7 @@
 import type { Assumption } from '../model/scope.ts'
 import type { Context } from './context.ts'
 import type { DocumentWant } from './request.ts'
+import { shownCheck } from './shears.ts'
 import type { Piece } from './sheet.ts'
 
 /** Worked after everything else, since they list what the rest did. */
@@ -17,7 +18,7 @@ export function explainRegister(
       return [register('references', 'References', referenceItems(context), context)]
     case 'checks':
       return context.checks.length > 0
-        ? [...context.checks].sort((a, b) => b.ratio - a.ratio)
+        ? [...context.checks].sort((a, b) => b.ratio - a.ratio).map(check => shownCheck(check, context))
         : [{ kind: 'note', text: 'No check is made in this document.' }]
   }
 }

@@ -194,11 +194,12 @@ const resisted = {
 const applied = sym('M_o', 'M_o', 'moment')
 
 export function explainEquilibrium(
-  { level, cases }: Distribution,
+  distribution: Distribution,
   detail: Detail,
   display: Display,
   context: Context,
 ): readonly Piece[] {
+  const { level, cases } = distribution
   const table = caseTable(cases, display)
     .take(
       V,
@@ -222,8 +223,8 @@ export function explainEquilibrium(
     )
   for (const { residual } of cases) context.roots.set(residual.ratio.id, residual.ratio)
   const residuals = cases.map(({ residual }) => numeralOnPage(rounded(residual.ratio.si), context.language))
-  const check = equilibriumCheck(level, cases, context)
-  if (detail === 'result') return check ? [check] : []
+  const check = shownCheck(equilibriumCheck(distribution, context), context)
+  if (detail === 'result') return [check]
   return [
     explainTable(
       table,
@@ -236,21 +237,18 @@ export function explainEquilibrium(
       },
       context,
     ),
-    ...(check ? [check] : []),
+    check,
   ]
 }
 
-function equilibriumCheck(level: string, cases: readonly CaseResult[], context: Context): Check | undefined {
-  const [first, ...rest] = cases.map(({ residual }) => residual.ratio)
-  if (!first) return undefined
-  const worst = rest.reduce((a, b) => (b.si > a.si ? b : a), first)
-  const id = `${level}.equilibrium.check`
-  const known = context.checks.find(check => check.id === id)
-  if (known) return known
+/** The check of the case with the largest residual. */
+export function equilibriumCheck({ level, cases }: Distribution, context: Context): Check {
+  const ratios = cases.map(({ residual }) => residual.ratio)
+  const worst = ratios.reduce((a, b) => (b.si > a.si ? b : a))
   const ratio = worst.si / ALLOWED
-  const check: Check = {
+  return {
     kind: 'check',
-    id: context.anchor(id),
+    id: `${level}.equilibrium.check`,
     what: context.words(`Equilibrium of ${level}, largest residual`),
     demand: printed(worst, context.language),
     capacity: numeralOnPage(rounded(ALLOWED), context.language),
@@ -261,6 +259,7 @@ function equilibriumCheck(level: string, cases: readonly CaseResult[], context: 
     reference: 'limit of the arithmetic',
     sourceLines: [],
   }
-  context.checks.push(check)
-  return check
 }
+
+/** A check where it stands on the page, with an anchor of its own. */
+export const shownCheck = (check: Check, context: Context): Check => ({ ...check, id: context.anchor(check.id) })

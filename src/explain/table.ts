@@ -1,8 +1,10 @@
 /** A tabulation as a table of the page, its columns as formulas below it. */
+
+import type { Kind } from '../base/kind.ts'
 import { columnDecimals, fixed, numeralOnPage } from '../base/numeral.ts'
 import type { Span } from '../base/span.ts'
 import type { Tabulation } from '../base/tabulation.ts'
-import { tex } from '../base/tex.ts'
+import { tex, texSource } from '../base/tex.ts'
 import { letter, typeset } from '../base/typeset.ts'
 import { unitText } from '../base/unit.ts'
 import { shown, spansOf, type Value } from '../base/value.ts'
@@ -27,7 +29,8 @@ export interface TableWant {
 }
 
 export function explainTable(table: Tabulation, want: TableWant, context: Context): Table {
-  const columns = want.columns.map(name => numberColumn(table, name, want.sums?.[name], context))
+  const decimals = decimalsByKind(table, want)
+  const columns = want.columns.map(name => numberColumn(table, name, want.sums?.[name], decimals, context))
   const words = want.words ?? []
   const id = context.anchor(want.id)
   context.tabled(id, table)
@@ -70,17 +73,35 @@ interface NumberColumn {
   readonly sum: string
 }
 
-function numberColumn(table: Tabulation, name: string, sum: Value | undefined, { language }: Context): NumberColumn {
+/** Columns that measure the same in one unit print with the same decimals, so that they can be compared. */
+function decimalsByKind(table: Tabulation, { columns, sums }: TableWant): ReadonlyMap<Kind, number> {
+  const numbers = new Map<Kind, number[]>()
+  for (const name of columns) {
+    const { sym, cell } = table.column(name)
+    const found = numbers.get(sym.kind) ?? []
+    for (let i = 0; i < table.rows.length; i++) found.push(shown(cell(i)))
+    const sum = sums?.[name]
+    if (sum) found.push(shown(sum))
+    numbers.set(sym.kind, found)
+  }
+  return new Map([...numbers].map(([kind, found]) => [kind, columnDecimals(found)]))
+}
+
+function numberColumn(
+  table: Tabulation,
+  name: string,
+  sum: Value | undefined,
+  decimals: ReadonlyMap<Kind, number>,
+  { language }: Context,
+): NumberColumn {
   const { sym, cell } = table.column(name)
   const values = table.rows.map((_, i) => cell(i))
   const unit = values[0] ? unitText(values[0].unit) : ''
-  const numbers = values.map(shown)
-  const decimals = columnDecimals(sum ? [...numbers, shown(sum)] : numbers)
-  const print = (number: number) => numeralOnPage(fixed(number, decimals), language)
+  const print = (value: Value) => numeralOnPage(fixed(shown(value), decimals.get(sym.kind) ?? 0), language)
   return {
     column: { key: name, head: tex(sym.tex), unit, align: 'right' },
-    cells: numbers.map(print),
-    sum: sum ? print(shown(sum)) : '',
+    cells: values.map(print),
+    sum: sum ? print(sum) : '',
   }
 }
 
@@ -94,6 +115,8 @@ function formulasOf(
     if (!formula || knownFormulas.includes(name)) return []
     context.formulas.add(formula)
     const body = typeset(formula.body, symbol => letter(formula.symbols.get(symbol)?.tex ?? symbol), context.language)
+    // W x is the product that its head says.
+    if (texSource(body) === sym.tex) return []
     return [{ symbol: tex(sym.tex), formula: body, reference: context.words(formula.source) }]
   })
 }

@@ -11,6 +11,7 @@ import { explainMass, explainPolarMoment } from './mass.ts'
 import type { Request, Want } from './request.ts'
 import { explainEccentricity, explainRigidity, explainStiffness } from './rigidity.ts'
 import {
+  equilibriumCheck,
   explainDesignShears,
   explainDisplacement,
   explainEquilibrium,
@@ -114,6 +115,8 @@ function shears(want: ShearWant, level: LevelWork, request: Request, context: Co
   const { distribution, display, walls, cases } = parts.value
   const [first] = cases
   if (!first) return bad([])
+  // Every working that shows shears answers for their equilibrium.
+  context.check(equilibriumCheck(distribution, context))
   switch (want) {
     case 'torsion':
       return good(explainTorsion(distribution, first, detail, display, context))

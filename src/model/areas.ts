@@ -9,7 +9,7 @@ import { texAbout } from '../base/work.ts'
 import type { Block } from '../read/block.ts'
 import { diagnose, part, type Text, trimmed } from '../read/text.ts'
 import { quantity } from './cell.ts'
-import { duplicates, filled, nameIn, type RowOf, recordsOf, strangeLines, strangeSettings } from './columns.ts'
+import { filled, type RowOf, readRows } from './columns.ts'
 import { crossesItself, signedArea } from './geometry.ts'
 import { type Corner, type Grid, readPoint } from './grid.ts'
 import type { Scope } from './scope.ts'
@@ -27,35 +27,27 @@ export interface Area {
 
 const OPENING = 'opening'
 
-export function readAreas(blocks: readonly Block[], level: string, grid: Grid, scope: Scope): Result<readonly Area[]> {
-  const names: Text[] = []
-  const parts = blocks.flatMap((block): readonly Result<Area>[] => {
-    const records = recordsOf(block, { needed: ['area', 'load'], optional: ['from', 'to', 'outline', 'note'] })
-    const faults = [...strangeSettings(block, []), ...strangeLines(block)]
-    if (!records.ok || faults.length > 0) return [bad([...faults, ...(records.ok ? [] : records.because)])]
-    return records.value.map(record => readArea(record, level, grid, scope, names))
-  })
-  const repeated = duplicates(names, 'area')
-  const read = all(parts)
-  if (repeated.length > 0) return bad([...repeated, ...(read.ok ? [] : read.because)])
-  return read
+const rules = {
+  needed: ['area', 'load'],
+  optional: ['from', 'to', 'outline', 'note'],
+  oneOf: [['from', 'to'], ['outline']],
 }
 
-function readArea(record: RowOf, level: string, grid: Grid, scope: Scope, names: Text[]): Result<Area> {
-  const name = nameIn(record, 'area')
-  if (!name.ok) return name
-  names.push(name.value)
+export const readAreas = (blocks: readonly Block[], level: string, grid: Grid, scope: Scope): Result<readonly Area[]> =>
+  readRows(blocks, 'area', rules, (record, name) => readArea(record, name, level, grid, scope))
+
+function readArea(record: RowOf, name: Text, level: string, grid: Grid, scope: Scope): Result<Area> {
   const load = filled(record, 'load')
   if (!load.ok) return load
-  const id = `${level}.areas.${name.value.text}`
+  const id = `${level}.areas.${name.text}`
   const shape = record.cell('outline')
-    ? readPolygon(record, id, name.value, grid, scope)
-    : readRectangle(record, id, name.value, grid, scope)
+    ? readPolygon(record, id, name, grid, scope)
+    : readRectangle(record, id, name, grid, scope)
   if (!shape.ok) return shape
   const unit = record.unit('load')
   const open = load.value.text.toLowerCase() === OPENING
   return good({
-    name: name.value.text,
+    name: name.text,
     ...shape.value,
     ...(open ? {} : { load: { cell: load.value, ...(unit ? { unit } : {}) } }),
     note: record.cell('note')?.text ?? '',

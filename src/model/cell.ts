@@ -30,7 +30,8 @@ export interface Want {
 export function quantity(cell: Text, want: Want, scope: Scope): Result<Value> {
   const parsed = parseExpr(cell.text, cell.span.start)
   if (!parsed.ok) return bad([exprDiagnostic(parsed.because)])
-  return quantityOf(parsed.value, cell.span, want, scope)
+  // Through the ledger, so that a ring of definitions names this cell.
+  return scope.ledger.once(want.id, cell.span, () => quantityOf(parsed.value, cell.span, want, scope))()
 }
 
 /** The same from an expression that is already read. */

@@ -1,6 +1,6 @@
 /** Matches the columns of a block's table to those that its topic has. */
 import type { Diagnostic } from '../base/diagnostic.ts'
-import type { Result } from '../base/ledger.ts'
+import { all, type Result } from '../base/ledger.ts'
 import { inWords, suggestion } from '../base/near.ts'
 import { bad, good } from '../base/outcome.ts'
 import type { Unit } from '../base/unit.ts'
@@ -18,10 +18,13 @@ export interface RowOf {
 export interface ColumnRules {
   readonly needed: readonly string[]
   readonly optional: readonly string[]
+  /** Sets of optional columns, of which one must be there whole. */
+  readonly oneOf?: readonly (readonly string[])[]
 }
 
 /** The rows of a block's table, or what is wrong with its head. */
-export function recordsOf(block: Block, { needed, optional }: ColumnRules): Result<readonly RowOf[]> {
+export function recordsOf(block: Block, rules: ColumnRules): Result<readonly RowOf[]> {
+  const { needed, optional, oneOf = [] } = rules
   if (block.faults.length > 0) return bad(block.faults)
   if (!block.table)
     return bad([
@@ -62,6 +65,20 @@ export function recordsOf(block: Block, { needed, optional }: ColumnRules): Resu
         headerLine.span,
         `column ${inWords(missing, 'and')} is missing`,
         `A table of ${block.topic} has ${inWords(needed, 'and')}${optional.length > 0 ? `, and may have ${inWords(optional, 'and')}` : ''}.`,
+      ),
+    )
+  const present = (column: string) => header.some(({ name }) => name.text === column)
+  if (faults.length === 0 && oneOf.length > 0 && !oneOf.some(set => set.every(present)))
+    faults.push(
+      diagnose(
+        'error',
+        'column-missing',
+        headerLine.span,
+        `a table of ${block.topic} also has ${inWords(
+          oneOf.map(set => inWords(set, 'and')),
+          'or',
+        )}`,
+        'Add the columns that are missing.',
       ),
     )
   if (faults.length > 0) return bad(faults)
@@ -170,3 +187,30 @@ export function strangeLines(block: Block): readonly Diagnostic[] {
 
 export const settingOf = (block: Block, name: string): Text | undefined =>
   [...block.settings, ...block.options].find(setting => setting.name.text === name)?.value
+
+/**
+ * The rows of all blocks of one topic, each read by its name; a name that stands twice is refused.
+ * @param column the column that holds the name
+ */
+export function readRows<T>(
+  blocks: readonly Block[],
+  column: string,
+  rules: ColumnRules,
+  read: (record: RowOf, name: Text) => Result<T>,
+): Result<readonly T[]> {
+  const names: Text[] = []
+  const parts = blocks.flatMap((block): readonly Result<T>[] => {
+    const records = recordsOf(block, rules)
+    const faults = [...strangeSettings(block, []), ...strangeLines(block)]
+    if (!records.ok || faults.length > 0) return [bad([...faults, ...(records.ok ? [] : records.because)])]
+    return records.value.map((record): Result<T> => {
+      const name = nameIn(record, column)
+      if (!name.ok) return name
+      names.push(name.value)
+      return read(record, name.value)
+    })
+  })
+  const repeated = duplicates(names, column)
+  const done = all(parts)
+  return repeated.length > 0 ? bad([...repeated, ...(done.ok ? [] : done.because)]) : done
+}

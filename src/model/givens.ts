@@ -23,6 +23,8 @@ export interface Givens {
   /** `forces` that name no level and hold a table of them. */
   readonly forceTables: readonly Block[]
   readonly faults: readonly Diagnostic[]
+  /** Faults of blocks that found no level: what their level then lacks follows from them. */
+  readonly strays: (topic: string) => readonly Diagnostic[]
 }
 
 const perLevel = ['areas', 'line-loads', 'point-loads', 'walls', 'forces'] as const
@@ -35,8 +37,12 @@ export function gather(blocks: readonly Block[]): Givens {
   const about = (block: Block) => perLevel.some(topic => topic === block.topic) && !isForceTable(block)
   const named = blocks.filter(about)
   const names = levelTable.length > 0 ? levelNames(levelTable) : [firstName(named, blocks)]
-  for (const block of blocks.filter(block => about(block) || block.topic === 'working'))
-    faults.push(...strangeLevel(block, names))
+  const strays = new Map<string, readonly Diagnostic[]>()
+  for (const block of blocks.filter(block => about(block) || block.topic === 'working')) {
+    const strange = strangeLevel(block, names)
+    faults.push(...strange)
+    strays.set(block.topic, [...(strays.get(block.topic) ?? []), ...strange])
+  }
   const levels = names.map((name): LevelGivens => {
     const mine = named.filter(block => levelNameOf(block, names) === name)
     const on = (topic: string) => mine.filter(block => block.topic === topic)
@@ -57,6 +63,7 @@ export function gather(blocks: readonly Block[]): Givens {
     equations: of('equations'),
     forceTables: of('forces').filter(isForceTable),
     faults,
+    strays: topic => strays.get(topic) ?? [],
   }
 }
 

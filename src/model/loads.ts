@@ -1,6 +1,6 @@
 /** Line and point loads of a level. */
 import { sym } from '../base/formula.ts'
-import { all, type Result } from '../base/ledger.ts'
+import type { Result } from '../base/ledger.ts'
 import { bad, good } from '../base/outcome.ts'
 import type { Span } from '../base/span.ts'
 import type { Unit } from '../base/unit.ts'
@@ -9,16 +9,7 @@ import { texAbout } from '../base/work.ts'
 import type { Block } from '../read/block.ts'
 import { diagnose, type Text } from '../read/text.ts'
 import { quantity } from './cell.ts'
-import {
-  type ColumnRules,
-  duplicates,
-  filled,
-  nameIn,
-  type RowOf,
-  recordsOf,
-  strangeLines,
-  strangeSettings,
-} from './columns.ts'
+import { type ColumnRules, filled, type RowOf, readRows } from './columns.ts'
 import { type Corner, type Grid, readPoint } from './grid.ts'
 import type { Scope } from './scope.ts'
 
@@ -87,35 +78,23 @@ export function readPointLoads(
   })
 }
 
-function readEach<T>(
+/** The rows of a topic, each with the cell of its load. */
+const readEach = <T>(
   blocks: readonly Block[],
-  what: string,
+  column: string,
   rules: ColumnRules,
   read: (record: RowOf, name: string, loaded: Loaded) => Result<T>,
-): Result<readonly T[]> {
-  const names: Text[] = []
-  const parts = blocks.flatMap((block): readonly Result<T>[] => {
-    const records = recordsOf(block, rules)
-    const faults = [...strangeSettings(block, []), ...strangeLines(block)]
-    if (!records.ok || faults.length > 0) return [bad([...faults, ...(records.ok ? [] : records.because)])]
-    return records.value.map((record): Result<T> => {
-      const name = nameIn(record, what)
-      if (!name.ok) return name
-      names.push(name.value)
-      const cell = filled(record, 'load')
-      if (!cell.ok) return cell
-      const unit = record.unit('load')
-      return read(record, name.value.text, {
-        name: name.value.text,
-        load: { cell: cell.value, ...(unit ? { unit } : {}) },
-        span: record.line.span,
-      })
+): Result<readonly T[]> =>
+  readRows(blocks, column, rules, (record, { text }) => {
+    const cell = filled(record, 'load')
+    if (!cell.ok) return cell
+    const unit = record.unit('load')
+    return read(record, text, {
+      name: text,
+      load: { cell: cell.value, ...(unit ? { unit } : {}) },
+      span: record.line.span,
     })
   })
-  const repeated = duplicates(names, what)
-  const done = all(parts)
-  return repeated.length > 0 ? bad([...repeated, ...(done.ok ? [] : done.because)]) : done
-}
 
 /** The load itself, read when the mass is worked. */
 export function readLoad(loaded: LineLoad | PointLoad, level: string, scope: Scope): Result<Value> {

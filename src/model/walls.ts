@@ -1,7 +1,7 @@
 /** Walls of a level: where they stand, how high they are, and what gives them their stiffness. */
 import { isNumber } from '../base/dimension.ts'
 import { sym } from '../base/formula.ts'
-import { all, type Result } from '../base/ledger.ts'
+import type { Result } from '../base/ledger.ts'
 import { bad, good } from '../base/outcome.ts'
 import { parseExpr } from '../base/parse.ts'
 import type { Span } from '../base/span.ts'
@@ -11,7 +11,7 @@ import { texAbout } from '../base/work.ts'
 import type { Block } from '../read/block.ts'
 import { diagnose, type Text } from '../read/text.ts'
 import { aboveZero, exprDiagnostic, quantity, stated, workExpr } from './cell.ts'
-import { duplicates, filled, nameIn, type RowOf, recordsOf, strangeLines, strangeSettings } from './columns.ts'
+import { filled, type RowOf, readRows } from './columns.ts'
 import { type Corner, type Grid, readPoint } from './grid.ts'
 import type { Scope } from './scope.ts'
 
@@ -19,7 +19,9 @@ interface Placed {
   readonly name: string
   readonly from: Corner
   readonly to: Corner
+  /** Its row, and within it the cells of its two ends. */
   readonly span: Span
+  readonly place: Span
 }
 
 /** A wall whose stiffness follows from its construction and height. */
@@ -41,27 +43,17 @@ export type Wall = BuiltWall | StatedWall
 const height = sym('h', 'h', 'length')
 export const stiffness = sym('k', 'k', 'stiffness')
 
-export function readWalls(blocks: readonly Block[], level: string, grid: Grid, scope: Scope): Result<readonly Wall[]> {
-  const names: Text[] = []
-  const parts = blocks.flatMap((block): readonly Result<Wall>[] => {
-    const records = recordsOf(block, {
-      needed: ['wall', 'from', 'to'],
-      optional: ['height', 'construction', 'k', 'note'],
-    })
-    const faults = [...strangeSettings(block, []), ...strangeLines(block)]
-    if (!records.ok || faults.length > 0) return [bad([...faults, ...(records.ok ? [] : records.because)])]
-    return records.value.map(record => readWall(record, level, grid, scope, names))
-  })
-  const repeated = duplicates(names, 'wall')
-  const read = all(parts)
-  return repeated.length > 0 ? bad([...repeated, ...(read.ok ? [] : read.because)]) : read
+const rules = {
+  needed: ['wall', 'from', 'to'],
+  optional: ['height', 'construction', 'k', 'note'],
+  oneOf: [['height', 'construction'], ['k']],
 }
 
-function readWall(record: RowOf, level: string, grid: Grid, scope: Scope, names: Text[]): Result<Wall> {
-  const name = nameIn(record, 'wall')
-  if (!name.ok) return name
-  names.push(name.value)
-  const placed = readPlace(record, name.value.text, level, grid, scope)
+export const readWalls = (blocks: readonly Block[], level: string, grid: Grid, scope: Scope): Result<readonly Wall[]> =>
+  readRows(blocks, 'wall', rules, (record, name) => readWall(record, name.text, level, grid, scope))
+
+function readWall(record: RowOf, name: string, level: string, grid: Grid, scope: Scope): Result<Wall> {
+  const placed = readPlace(record, name, level, grid, scope)
   if (!placed.ok) return placed
   const [k, construction] = [record.cell('k'), record.cell('construction')]
   if (k && construction)
@@ -70,14 +62,14 @@ function readWall(record: RowOf, level: string, grid: Grid, scope: Scope, names:
         'error',
         'stiffness-twice',
         k.span,
-        `wall ${name.value.text} has both a stated k and a construction`,
+        `wall ${name} has both a stated k and a construction`,
         'Keep one of them.',
         { also: [{ span: construction.span, text: 'construction' }] },
       ),
     ])
   const unit = record.unit('k')
   if (k) {
-    const high = record.cell('height') ? readHeight(record, name.value.text, level, scope) : undefined
+    const high = record.cell('height') ? readHeight(record, name, level, scope) : undefined
     if (high && !high.ok) return high
     return good({
       ...placed.value,
@@ -92,11 +84,11 @@ function readWall(record: RowOf, level: string, grid: Grid, scope: Scope, names:
         'error',
         'stiffness-missing',
         record.line.span,
-        `wall ${name.value.text} has neither a construction nor a stated k`,
+        `wall ${name} has neither a construction nor a stated k`,
         'Name its construction, or state k in a column of its own.',
       ),
     ])
-  const high = readHeight(record, name.value.text, level, scope)
+  const high = readHeight(record, name, level, scope)
   return high.ok ? good({ ...placed.value, kind: 'built', construction, height: high.value }) : high
 }
 
@@ -108,19 +100,17 @@ function readPlace(record: RowOf, name: string, level: string, grid: Grid, scope
   const a = readPoint(from.value, { ...want, mark: '1' }, grid, scope)
   const b = readPoint(to.value, { ...want, mark: '2' }, grid, scope)
   if (!a.ok || !b.ok) return bad([...(a.ok ? [] : a.because), ...(b.ok ? [] : b.because)])
+  const place = {
+    start: Math.min(from.value.span.start, to.value.span.start),
+    end: Math.max(from.value.span.end, to.value.span.end),
+  }
   const length = Math.hypot(b.value.x.si - a.value.x.si, b.value.y.si - a.value.y.si)
   // A wall shorter than a tenth of a millimetre is two spellings of one point.
   if (length < 1e-4)
     return bad([
-      diagnose(
-        'error',
-        'wall-without-length',
-        { start: from.value.span.start, end: to.value.span.end },
-        `wall ${name} has no length`,
-        'Its two ends are the same point.',
-      ),
+      diagnose('error', 'wall-without-length', place, `wall ${name} has no length`, 'Its two ends are the same point.'),
     ])
-  return good({ name, ...directed(a.value, b.value), span: record.line.span })
+  return good({ name, ...directed(a.value, b.value), span: record.line.span, place })
 }
 
 /**
