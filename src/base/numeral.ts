@@ -18,7 +18,7 @@ export interface Numeral {
 const EXACT = 1e-11
 
 /** Numbers outside these bounds print with a power of ten. */
-const LARGE = 1e9
+const LARGE = 1e7
 const SMALL = 1e-3
 
 /**

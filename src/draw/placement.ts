@@ -57,7 +57,7 @@ export const priceOfCrossing = {
   gridLine: 9,
   edge: 26,
   seam: 8,
-  opening: 20,
+  opening: 40,
   leader: Number.POSITIVE_INFINITY,
   legs: 60,
 } as const

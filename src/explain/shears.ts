@@ -69,28 +69,27 @@ export function explainTorsion(
 
 export function explainWallShears(
   { level, cases }: Distribution,
-  shown: readonly CaseResult[],
+  shown: CaseResult,
   walls: readonly string[],
   detail: Detail,
   context: Context,
 ): readonly Piece[] {
-  return shown.flatMap((each): readonly Piece[] => {
-    const steps = walls.flatMap(wall => shearSteps(each, wall, detail).map(value => explainValue(value, context)))
-    if (detail === 'result') return steps
-    const caption = `Direct and torsional shear of the walls of ${level} in case ${each.case.name}${cases.length > shown.length ? '; the other cases are worked in the same way' : ''}.`
-    const table = explainTable(
-      each.walls,
-      {
-        id: `${level}.shears.${each.case.name}`,
-        caption,
-        rowHead: 'Wall',
-        columns: ['k', 'c', 's', 'rho', 'V_d', 'V_t', 'V'],
-      },
-      context,
-    )
-    const moved = isSkewed(each) ? [each.u, each.v].map(value => explainValue(value, context)) : []
-    return detail === 'table' ? [table] : [...moved, ...steps, table]
-  })
+  const steps = walls.flatMap(wall => shearSteps(shown, wall, detail).map(value => explainValue(value, context)))
+  if (detail === 'result') return steps
+  const { name } = shown.case
+  const others = cases.length > 1 ? '; the other cases are worked in the same way' : ''
+  const table = explainTable(
+    shown.walls,
+    {
+      id: `${level}.shears.${name}`,
+      caption: `Direct and torsional shear of the walls of ${level} in case ${name}${others}.`,
+      rowHead: 'Wall',
+      columns: ['k', 'c', 's', 'rho', 'V_d', 'V_t', 'V'],
+    },
+    context,
+  )
+  const moved = isSkewed(shown) ? [shown.u, shown.v].map(value => explainValue(value, context)) : []
+  return detail === 'table' ? [table] : [...moved, ...steps, table]
 }
 
 /** Skewed walls share direct shear through the displacement of the centre of rigidity. */

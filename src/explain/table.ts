@@ -110,7 +110,7 @@ function formulasOf(
   { columns, knownFormulas = [] }: TableWant,
   context: Context,
 ): readonly ColumnFormula[] {
-  return columns.flatMap(name => {
+  const found = columns.flatMap(name => {
     const { sym, formula } = table.column(name)
     if (!formula || knownFormulas.includes(name)) return []
     context.formulas.add(formula)
@@ -119,6 +119,8 @@ function formulasOf(
     if (texSource(body) === sym.tex) return []
     return [{ symbol: tex(sym.tex), formula: body, reference: context.words(formula.source) }]
   })
+  // A source that several formulas share in a row is told once, after the last.
+  return found.map((one, i) => (found[i + 1]?.reference === one.reference ? { ...one, reference: '' } : one))
 }
 
 /** Places where the engineer wrote what the table shows. */

@@ -1,9 +1,9 @@
 /** Answers what a working asks for, from the results. */
 import type { Diagnostic } from '../base/diagnostic.ts'
-import { type Result, together } from '../base/ledger.ts'
+import { all, type Result, together } from '../base/ledger.ts'
 import { suggestion } from '../base/near.ts'
 import { bad, good } from '../base/outcome.ts'
-import type { CaseResult } from '../compute/distribution.ts'
+import type { CaseResult, Distribution } from '../compute/distribution.ts'
 import type { LevelWork } from '../compute/level.ts'
 import { diagnose } from '../read/text.ts'
 import type { Context } from './context.ts'
@@ -86,19 +86,24 @@ function answer(want: Want, level: LevelWork, request: Request, context: Context
 function plan(level: LevelWork, { caseName }: Request, context: Context): Result<readonly Piece[]> {
   const chosen = caseName ? caseOf(level, caseName) : undefined
   if (chosen && !chosen.ok) return chosen
-  const made = context.sketch(level, caseName?.text)
+  return figure(level, caseName?.text, context)
+}
+
+/** The plan with the design shears, or with those of one case and the force where it acts. */
+function figure(level: LevelWork, caseName: string | undefined, context: Context): Result<readonly Piece[]> {
+  const made = context.sketch(level, caseName)
   if (!made.ok) return made
-  const shears = level.distribution().ok
-  const what = !shears ? '' : caseName ? ` Shears of case ${caseName.text}.` : ' Design shears.'
-  return good([
-    {
-      kind: 'figure',
-      id: context.anchor(`${level.name}.plan`),
-      number: '',
-      caption: context.words(`Plan of ${level.name}.${what}`),
-      ...made.value,
-    },
-  ])
+  const shears = hasShears(level)
+  const what = !shears ? '' : caseName ? ` Shears and storey force of case ${caseName}.` : ' Design shears.'
+  const id = caseName ? `${level.name}.plan.${caseName}` : `${level.name}.plan`
+  const caption = context.words(`Plan of ${level.name}.${what}`)
+  return good([{ kind: 'figure', id: context.anchor(id), number: '', caption, ...made.value }])
+}
+
+/** True when forces are stated and shared out. */
+function hasShears(level: LevelWork): boolean {
+  const forces = level.forces()
+  return forces.ok && forces.value !== undefined && level.distribution().ok
 }
 
 type ShearWant = 'torsion' | 'wall shears' | 'design shears' | 'displacement' | 'equilibrium'
@@ -121,7 +126,7 @@ function shears(want: ShearWant, level: LevelWork, request: Request, context: Co
     case 'torsion':
       return good(explainTorsion(distribution, first, detail, display, context))
     case 'wall shears':
-      return good(explainWallShears(distribution, cases, walls, detail, context))
+      return wallShears(level, distribution, cases, walls, request, context)
     case 'design shears':
       return good(explainDesignShears(distribution, walls, detail, context))
     case 'equilibrium':
@@ -136,6 +141,25 @@ function shears(want: ShearWant, level: LevelWork, request: Request, context: Co
       return good(explainDisplacement(level.name, all.value, shown ?? worst, detail, display, context))
     }
   }
+}
+
+/** The shears of each case asked for, and in full detail the plan that shows them. */
+function wallShears(
+  level: LevelWork,
+  distribution: Distribution,
+  cases: readonly CaseResult[],
+  walls: readonly string[],
+  { detail }: Request,
+  context: Context,
+): Result<readonly Piece[]> {
+  const pieces = cases.map((each): Result<readonly Piece[]> => {
+    const worked = explainWallShears(distribution, each, walls, detail, context)
+    if (detail !== 'full') return good(worked)
+    const drawn = figure(level, each.case.name, context)
+    return drawn.ok ? good([...worked, ...drawn.value]) : drawn
+  })
+  const done = all(pieces)
+  return done.ok ? good(done.value.flat()) : done
 }
 
 /** The walls to work in full: those asked for, or the one that governs, or the stiffest where no force is known. */
@@ -157,8 +181,7 @@ function wallsShown(level: LevelWork, { walls }: Request): Result<readonly strin
       ),
     )
   if (walls.length > 0) return good(walls.map(({ text }) => text))
-  const forces = level.forces()
-  const distribution = forces.ok && forces.value ? level.distribution() : undefined
+  const distribution = hasShears(level) ? level.distribution() : undefined
   if (distribution?.ok) return good([distribution.value.design.rows[distribution.value.governingWall] ?? ''])
   return good([springs.value.reduce((a, b) => (b.k.si > a.k.si ? b : a)).name])
 }
