@@ -25,6 +25,7 @@ const host: Host = {
   version: PLATEMARK_VERSION,
   asset: name => readFileSync(join(__dirname, 'assets', name), 'utf8'),
   sha256: text => createHash('sha256').update(text).digest('hex'),
+  shapes: () => readFileSync(join(__dirname, 'assets/shapes.txt'), 'latin1'),
 }
 
 const commands = ['build', 'check'] as const
@@ -122,10 +123,11 @@ function build(path: string, settings: Settings): number {
   if (!compiled) return ERRORS
   const errors = tell(compiled, settings)
   const folder = settings.out ?? dirname(path)
-  const stem =
-    basename(path, extname(path)) + (settings.out === undefined && settings.to.includes('md') ? '.worked' : '')
+  const stem = basename(path, extname(path))
+  // Beside its source the worked Markdown needs a name of its own.
+  const stemOf = (format: Format) => (format === 'md' && settings.out === undefined ? `${stem}.worked` : stem)
   const wanted = settings.to.filter(format => format === 'json' || errors === 0 || settings.draft)
-  const files = wanted.flatMap(format => publish(compiled, stem, format, settings.draft && errors > 0, host))
+  const files = wanted.flatMap(format => publish(compiled, stemOf(format), format, settings.draft && errors > 0, host))
   const written = writeWhole(folder, files)
   if (!written.ok) return fail(written.because)
   for (const { name } of files) process.stdout.write(`${shownPath(join(folder, name))}\n`)

@@ -4,15 +4,17 @@ import remarkFrontmatter from 'remark-frontmatter'
 import remarkGfm from 'remark-gfm'
 import remarkStringify from 'remark-stringify'
 import { unified } from 'unified'
-import { type Compiled, type Part, sheetOf } from './compile.ts'
+import { type Compiled, sheetOf } from './compile.ts'
 import type { Figure } from './explain/sheet.ts'
 import type { BodyPart } from './render/body.ts'
 import { renderHtml } from './render/html.ts'
 import { renderJson } from './render/json.ts'
 import { documentNodes, pieceNodes } from './render/markdown.ts'
 import { markdownSettings } from './render/math-nodes.ts'
+import type { Part } from './render/parts.ts'
 import { isDefinition, proseHtml } from './render/prose.ts'
-import { createShapeCache } from './render/typeset.ts'
+import { unpackShapes } from './render/shape-pack.ts'
+import { createShapeCache, type ShapeCache } from './render/typeset.ts'
 
 /** What a document cannot have from its own text. */
 export interface Host {
@@ -21,6 +23,8 @@ export interface Host {
   readonly asset: (name: string) => string
   /** Hex digits. */
   readonly sha256: (text: string) => string
+  /** Shapes of formulas that the build packed; without them each is set when it is first met. */
+  readonly shapes?: () => string
 }
 
 export type Format = 'html' | 'md' | 'json'
@@ -48,13 +52,19 @@ export function publish(
   }
 }
 
+const caches = new WeakMap<Host, ShapeCache>()
+
 /** Shapes of formulas are the same in every document. */
-const shapes = createShapeCache()
+export function shapesOf(host: Host): ShapeCache {
+  const known = caches.get(host) ?? createShapeCache(host.shapes && unpackShapes(host.shapes()))
+  caches.set(host, known)
+  return known
+}
 
 function page(compiled: Compiled, draft: boolean, host: Host): string {
   const { source } = compiled
   const sheet = sheetOf(compiled, host.version, host.sha256(source.text), draft)
-  return renderHtml({ sheet, body: bodyOf(compiled), source, asset: host.asset, shapes })
+  return renderHtml({ sheet, body: bodyOf(compiled), source, asset: host.asset, shapes: shapesOf(host) })
 }
 
 function bodyOf({ parts }: Compiled): readonly BodyPart[] {
@@ -84,7 +94,7 @@ function markdown(compiled: Compiled, stem: string, draft: boolean, host: Host):
   const nodes = parts.flatMap((part): readonly RootContent[] =>
     part.kind === 'pieces'
       ? part.pieces.flatMap(piece => pieceNodes(piece, setting))
-      : part.nodes.filter(({ type }) => type !== 'yaml' && type !== 'html'),
+      : part.nodes.filter(({ type }) => type !== 'yaml'),
   )
   const sheet = sheetOf(compiled, host.version, host.sha256(source.text), draft)
   const root: Root = { type: 'root', children: [...documentNodes(sheet, nodes)] }

@@ -1,12 +1,12 @@
 /**
- * Builds `dist`: the command as one file with its code cache, the library, its
+ * Builds `dist`: the command in a few files with their code caches, the library, its
  * types, and the assets of a page.
  */
 import { execFileSync } from 'node:child_process'
-import { chmod, copyFile, mkdir, readFile, rm, writeFile } from 'node:fs/promises'
-import { fileURLToPath } from 'node:url'
+import { chmod, copyFile, mkdir, readdir, readFile, rm, writeFile } from 'node:fs/promises'
+import { fileURLToPath, pathToFileURL } from 'node:url'
 import { build } from 'esbuild'
-import { writeAssets } from './assets.mjs'
+import { prepareAssets, writeAssets } from './assets.mjs'
 
 const root = fileURLToPath(new URL('../..', import.meta.url))
 const dist = `${root}dist`
@@ -25,8 +25,38 @@ const common = {
   define: { PLATEMARK_VERSION: JSON.stringify(version) },
 }
 
+/**
+ * Keeps KaTeX in a file of its own, which is loaded for the first formula whose shape was not packed.
+ * @type {import('esbuild').Plugin}
+ */
+const katexApart = {
+  name: 'katex-apart',
+  setup(build) {
+    build.onResolve({ filter: /^katex$/ }, () => ({ path: 'katex', namespace: 'apart' }))
+    build.onResolve({ filter: /^\.\/katex\.cjs$/, namespace: 'apart' }, ({ path }) => ({ path, external: true }))
+    build.onLoad({ filter: /.*/, namespace: 'apart' }, () => ({
+      contents: `exports.renderToString = (source, options) => require('./katex.cjs').renderToString(source, options)`,
+    }))
+  },
+}
+
 await Promise.all([
-  build({ ...common, entryPoints: [`${root}src/cli.ts`], format: 'cjs', minify: true, outfile: `${dist}/command.cjs` }),
+  build({
+    ...common,
+    entryPoints: [`${root}src/cli.ts`],
+    format: 'cjs',
+    minify: true,
+    outfile: `${dist}/command.cjs`,
+    plugins: [katexApart],
+  }),
+  build({
+    ...common,
+    stdin: { contents: `export { default } from 'katex'`, resolveDir: root },
+    format: 'cjs',
+    minify: true,
+    outfile: `${dist}/katex.cjs`,
+    footer: { js: 'module.exports=module.exports.default' },
+  }),
   build({
     ...common,
     entryPoints: [`${root}src/index.ts`],
@@ -34,17 +64,41 @@ await Promise.all([
     packages: 'external',
     outfile: `${dist}/index.js`,
   }),
+  build({
+    ...common,
+    entryPoints: [`${root}src/build/pack.ts`],
+    format: 'esm',
+    packages: 'external',
+    outfile: `${dist}/pack.mjs`,
+  }),
   writeAssets(`${dist}/assets`),
   copyFile(`${root}src/build/launcher.cjs`, `${dist}/platemark.cjs`),
   copyFile(`${root}src/render/results.schema.json`, `${dist}/results.schema.json`),
 ])
 await chmod(`${dist}/platemark.cjs`, 0o755)
-// The cache holds what a build runs, so it is taken after one.
-await writeFile(`${dist}/warm.md`, await readFile(`${root}samples/starter.md`, 'utf8'))
-execFileSync(
-  process.execPath,
-  [`${dist}/platemark.cjs`, 'build', `${dist}/warm.md`, '--out', `${dist}/warm`, '--to', 'html,json'],
-  { env: { ...process.env, PLATEMARK_WRITE_CACHE: '1' }, stdio: ['ignore', 'ignore', 'inherit'] },
-)
-await rm(`${dist}/warm.md`)
-await rm(`${dist}/warm`, { recursive: true })
+await writeFile(`${dist}/assets/shapes.txt`, await packedShapes())
+await rm(`${dist}/pack.mjs`)
+await writeCodeCaches()
+
+/** The shapes of the samples' formulas, which nearly all are formulas of every document. */
+async function packedShapes() {
+  const { pack } = await import(pathToFileURL(`${dist}/pack.mjs`).href)
+  const assets = await prepareAssets()
+  const names = (await readdir(`${root}samples`, { recursive: true })).filter(name => name.endsWith('.md')).sort()
+  const documents = await Promise.all(names.map(name => readFile(`${root}samples/${name}`, 'utf8')))
+  return pack(documents, { version, asset: (/** @type {string} */ name) => assets.get(name) ?? '', sha256: () => '' })
+}
+
+/** A cache holds what a run used, so it is taken after one, of a document with a formula that was not packed. */
+async function writeCodeCaches() {
+  const starter = await readFile(`${root}samples/starter.md`, 'utf8')
+  const formulas = 'warm_one = 2 ft + sqrt(9 ft^2)\nwarm_two = (warm_one / 3)^2 - 4 ft^2\nwarm_three = 7 kip * warm_one'
+  await writeFile(`${dist}/warm.md`, `${starter}\n\`\`\`equations\n${formulas}\n\`\`\`\n`)
+  execFileSync(
+    process.execPath,
+    [`${dist}/platemark.cjs`, 'build', `${dist}/warm.md`, '--out', `${dist}/warm`, '--to', 'html,json'],
+    { env: { ...process.env, PLATEMARK_WRITE_CACHE: '1' }, stdio: ['ignore', 'ignore', 'inherit'] },
+  )
+  await rm(`${dist}/warm.md`)
+  await rm(`${dist}/warm`, { recursive: true })
+}

@@ -2,18 +2,17 @@
 /**
  * Starts the command from one file, with the code that V8 compiled last time: parsing and compiling
  * are most of a short run. A cache of another version of Node is refused by V8 and then not used.
+ * What few runs need is in files of its own beside it, loaded the same way when first asked for.
  */
 const { readFileSync, writeFileSync } = require('node:fs')
 const { join } = require('node:path')
 const { Script } = require('node:vm')
 
-const file = join(__dirname, 'command.cjs')
-const cacheFile = `${file}.cache`
-// The bundle is plain ASCII, which reads fastest as Latin-1.
-const code = readFileSync(file, 'latin1')
+/** @type {Map<string, import('node:vm').Script>} */
+const scripts = new Map()
 
-/** @returns {Buffer | undefined} */
-function readCache() {
+/** @param {string} cacheFile @returns {Buffer | undefined} */
+function readCache(cacheFile) {
   try {
     return readFileSync(cacheFile)
   } catch {
@@ -21,12 +20,32 @@ function readCache() {
   }
 }
 
-const cachedData = readCache()
-const script = new Script(`(function (require, module, exports, __dirname) {${code}\n})`, {
-  filename: file,
-  ...(cachedData ? { cachedData } : {}),
-})
-const made = { exports: { run: (/** @type {readonly string[]} */ _args) => 0 } }
-script.runInThisContext()(require, made, made.exports, __dirname)
-process.exitCode = made.exports.run(process.argv.slice(2))
-if (process.env.PLATEMARK_WRITE_CACHE === '1') writeFileSync(cacheFile, script.createCachedData())
+/** @type {Map<string, unknown>} */
+const loaded = new Map()
+
+/** A file of ours by `./name`; anything else as Node finds it. @param {string} name */
+function load(name) {
+  if (!name.startsWith('./')) return require(name)
+  if (!loaded.has(name)) loaded.set(name, run(join(__dirname, name)))
+  return loaded.get(name)
+}
+
+/** @param {string} file */
+function run(file) {
+  const cachedData = readCache(`${file}.cache`)
+  // The bundle is plain ASCII, which reads fastest as Latin-1.
+  const code = readFileSync(file, 'latin1')
+  const script = new Script(`(function (require, module, exports, __dirname) {${code}\n})`, {
+    filename: file,
+    ...(cachedData ? { cachedData } : {}),
+  })
+  scripts.set(file, script)
+  const made = { exports: {} }
+  script.runInThisContext()(load, made, made.exports, __dirname)
+  return made.exports
+}
+
+const command = /** @type {{ run: (args: readonly string[]) => number }} */ (load('./command.cjs'))
+process.exitCode = command.run(process.argv.slice(2))
+if (process.env.PLATEMARK_WRITE_CACHE === '1')
+  for (const [file, script] of scripts) writeFileSync(`${file}.cache`, script.createCachedData())

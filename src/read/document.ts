@@ -2,12 +2,13 @@
  * Markdown to prose and blocks with their places. The tree stays as remark made it; blocks and quotes
  * are found in it.
  */
-import type { Code, Html, Node, Root, Text as TextNode, Yaml } from 'mdast'
+import type { Code, Definition, Html, Link, Node, Root, Text as TextNode, Yaml } from 'mdast'
 import type { Diagnostic } from '../base/diagnostic.ts'
 import { nearNames } from '../base/near.ts'
 import { lineOf, lineText, type Source } from '../base/span.ts'
 import { type Block, readBlock } from './block.ts'
 import { type FrontMatter, noFrontMatter, readFront } from './front.ts'
+import { isSafeLink } from './links.ts'
 import { diagnose, type Text } from './text.ts'
 import { isTopic, laterTopics, topics } from './topics.ts'
 
@@ -34,35 +35,59 @@ export function readDocument(tree: Root, source: Source): Document {
   const blocks = new Map<Code, Block>()
   const quotes: QuoteMark[] = []
   let front = noFrontMatter
-  visit(tree, node => {
+  const cut = visit(tree, node => {
     if (isYaml(node) && front === noFrontMatter) front = readFront(yamlText(node))
     else if (isCode(node)) {
       const block = blockOf(node, source, faults)
       if (block) blocks.set(node, block)
     } else if (isHtml(node)) faults.push(...htmlLeftOut(node))
+    else if (isLink(node) && !isSafeLink(node.url)) faults.push(linkLeftOut(node))
     else if (node.type === 'image' || node.type === 'imageReference') faults.push(imageLeftOut(node))
     else if (isText(node)) quotes.push(...quotesIn(node, source))
   })
+  faults.push(...cut.map(nestedTooDeep))
   return { source, tree, front, blocks, quotes, faults }
 }
 
 const isYaml = (node: Node): node is Yaml => node.type === 'yaml'
 const isCode = (node: Node): node is Code => node.type === 'code'
 const isHtml = (node: Node): node is Html => node.type === 'html'
+const isLink = (node: Node): node is Link | Definition => node.type === 'link' || node.type === 'definition'
 const isText = (node: Node): node is TextNode => node.type === 'text'
 
-function visit(tree: Root, see: (node: Node) => void): void {
-  const waiting: Node[] = [tree]
-  for (let node = waiting.pop(); node; node = waiting.pop()) {
+/** Lists and quotations within each other beyond this are no document; the tree is cut there. */
+const DEEPEST = 60
+
+/** Sees every node in reading order. @returns the nodes whose contents were cut off */
+function visit(tree: Root, see: (node: Node) => void): readonly Node[] {
+  const waiting: { readonly node: Node; readonly depth: number }[] = [{ node: tree, depth: 0 }]
+  const cut: Node[] = []
+  for (let next = waiting.pop(); next; next = waiting.pop()) {
+    const { node, depth } = next
     see(node)
+    if (!('children' in node)) continue
     // Every parent of an mdast tree holds its children under this name.
-    const children = 'children' in node ? (node.children as readonly Node[]) : []
+    const children = node.children as Node[]
+    if (depth >= DEEPEST && children.length > 0) {
+      cut.push(node)
+      children.length = 0
+    }
     for (let i = children.length - 1; i >= 0; i--) {
       const child = children[i]
-      if (child) waiting.push(child)
+      if (child) waiting.push({ node: child, depth: depth + 1 })
     }
   }
+  return cut
 }
+
+const nestedTooDeep = (node: Node): Diagnostic =>
+  diagnose(
+    'error',
+    'nested-too-deep',
+    { start: startOf(node), end: startOf(node) + 1 },
+    `lists and quotations nest deeper than ${DEEPEST}`,
+    'What lies deeper is not read. Take it out to the margin.',
+  )
 
 const startOf = (node: Node): number => node.position?.start.offset ?? 0
 const endOf = (node: Node): number => node.position?.end.offset ?? 0
@@ -147,6 +172,15 @@ function htmlLeftOut(node: Html): readonly Diagnostic[] {
     ),
   ]
 }
+
+const linkLeftOut = (node: Link | Definition): Diagnostic =>
+  diagnose(
+    'warning',
+    'link-left-out',
+    { start: startOf(node), end: endOf(node) },
+    `this link leads to ${node.url.slice(0, 40)}, which a page does not open`,
+    'A link leads to http, https, mailto or a place in the document.',
+  )
 
 function imageLeftOut(node: Node): Diagnostic {
   return diagnose(

@@ -1,9 +1,9 @@
 /** The engineer's own prose as HTML: quotes put in, headings numbered, and nothing let through that could act. */
-import type { Element, Root as HastRoot } from 'hast'
+import type { Root as HastRoot } from 'hast'
 import { defaultSchema, type Schema, sanitize } from 'hast-util-sanitize'
 import { toHtml } from 'hast-util-to-html'
 import type { Nodes, Root, RootContent } from 'mdast'
-import { type Handler, toHast } from 'mdast-util-to-hast'
+import { toHast } from 'mdast-util-to-hast'
 
 /** Links may lead out of the page; nothing is fetched from anywhere. */
 const schema: Schema = {
@@ -24,14 +24,6 @@ const schema: Schema = {
   },
 }
 
-/** A picture is a request to another file, so its description stands for it. */
-const image: Handler = (_state, node: { readonly alt?: string | null }): Element => ({
-  type: 'element',
-  tagName: 'em',
-  properties: {},
-  children: [{ type: 'text', value: node.alt ?? '' }],
-})
-
 /**
  * @param nodes prose that stands together
  * @param definitions link and footnote definitions of the whole document
@@ -43,7 +35,6 @@ export function proseHtml(nodes: readonly RootContent[], definitions: readonly R
   const tree = toHast(root, {
     clobberPrefix: `${mark}-`,
     footnoteLabelTagName: 'p',
-    handlers: { image, imageReference: image },
   })
   const safe = sanitize(tree, schema)
   return toHtml(safe as HastRoot).trim()

@@ -1,17 +1,6 @@
 /** Puts quoted results, and the numbers of headings, into the tree of the prose. */
 import type { Heading, PhrasingContent, RootContent, Text } from 'mdast'
-import type { Quote } from '../explain/sheet.ts'
-
-/** A quote that was found, with the place it leads to, or the words that stand where it would be. */
-export type Quoted =
-  | {
-      readonly within: { readonly start: number; readonly end: number }
-      readonly quote: Quote
-      readonly place: string | undefined
-    }
-  | { readonly within: { readonly start: number; readonly end: number }; readonly missing: string }
-
-export type Quotes = ReadonlyMap<Text, readonly Quoted[]>
+import type { Quoted, Quotes } from '../explain/blocks.ts'
 
 /** The same node with its quotes put in; nodes without quotes stay the same objects. */
 export function withQuotes<T extends RootContent>(node: T, quotes: Quotes): T {

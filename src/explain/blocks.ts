@@ -1,0 +1,150 @@
+/** Every block and quote of a document, explained: what the page puts in its place. */
+import type { Code, Heading, Nodes, RootContent, Text as TextNode } from 'mdast'
+import type { Diagnostic } from '../base/diagnostic.ts'
+import type { Worksheet } from '../compute/worksheet.ts'
+import { levelNameOf } from '../model/givens.ts'
+import type { Block } from '../read/block.ts'
+import type { Document, QuoteMark } from '../read/document.ts'
+import { diagnose } from '../read/text.ts'
+import type { Context } from './context.ts'
+import { explainValue } from './equation.ts'
+import { explainGiven } from './given.ts'
+import type { Numbered } from './number.ts'
+import { explainQuote } from './quote.ts'
+import { explainRegister } from './registers.ts'
+import { isDocumentWant, type Request, readRequest } from './request.ts'
+import type { Piece, Quote } from './sheet.ts'
+import { explainWant } from './workings.ts'
+
+/** The pieces of every working and equation block; lists of the whole document come last, since they tell of the rest. */
+export function explainBlocks(
+  { blocks }: Document,
+  sheet: Worksheet,
+  context: Context,
+): ReadonlyMap<Code, readonly Piece[]> {
+  const worked = new Map<Code, readonly Piece[]>()
+  const requests = [...blocks]
+    .filter(([, { topic }]) => topic === 'working')
+    .map(([node, block]) => [node, block, readRequest(block)] as const)
+  for (const [node, block] of blocks)
+    if (block.topic === 'equations') worked.set(node, equationPieces(block, sheet, context))
+  for (const [node, block, request] of requests) {
+    if (!request.ok) worked.set(node, [{ kind: 'fault', diagnostics: request.because }])
+    else if (!request.value.wants.some(isDocumentWant))
+      worked.set(node, workingPieces(block, request.value, sheet, context))
+  }
+  for (const [node, block, request] of requests)
+    if (request.ok && request.value.wants.some(isDocumentWant))
+      worked.set(node, workingPieces(block, request.value, sheet, context))
+  return worked
+}
+
+function workingPieces(block: Block, request: Request, sheet: Worksheet, context: Context): readonly Piece[] {
+  const names = sheet.levels.map(({ name }) => name)
+  const level = sheet.levels.find(({ name }) => name === levelNameOf(block, names))
+  return request.wants.flatMap((want): readonly Piece[] => {
+    if (isDocumentWant(want)) return explainRegister(want, sheet.assumptions(), context)
+    return level
+      ? explainWant(want, level, request, context)
+      : [{ kind: 'fault', diagnostics: [noLevel(block, names)] }]
+  })
+}
+
+const noLevel = (block: Block, names: readonly string[]): Diagnostic =>
+  diagnose(
+    'error',
+    'level-missing',
+    block.info,
+    'this working does not say which level it is about',
+    `Name one of: ${names.join(', ')}.`,
+  )
+
+function equationPieces(block: Block, sheet: Worksheet, context: Context): readonly Piece[] {
+  return block.lines.map((line): Piece => {
+    const value = sheet.equation(line)
+    return value.ok ? explainValue(value.value, context) : { kind: 'fault', diagnostics: value.because }
+  })
+}
+
+/** A quote with the place it leads to, or the words that stand where it would be. */
+export type Quoted = { readonly within: QuoteMark['within'] } & (
+  | { readonly quote: Quote; readonly place: string | undefined }
+  | { readonly missing: string; readonly faults: readonly Diagnostic[] }
+)
+
+/** The quotes of each text of the prose, in order. */
+export type Quotes = ReadonlyMap<TextNode, readonly Quoted[]>
+
+export function explainQuotes({ quotes }: Document, sheet: Worksheet, context: Context): Quotes {
+  const found = new Map<TextNode, Quoted[]>()
+  for (const mark of quotes) {
+    const quote = explainQuote(mark, sheet.scope, context)
+    const { within, node, id } = mark
+    const quoted: Quoted = quote.ok
+      ? { within, quote: quote.value, place: context.placeOf(quote.value.id) }
+      : { within, missing: `${id.text}: not worked`, faults: quote.because }
+    found.set(node, [...(found.get(node) ?? []), quoted])
+  }
+  return found
+}
+
+export const quoteFaults = (quotes: Quotes): readonly Diagnostic[] =>
+  [...quotes.values()].flat().flatMap(quoted => ('missing' in quoted ? quoted.faults : []))
+
+export const faultsIn = (pieces: readonly Piece[]): readonly Diagnostic[] =>
+  pieces.flatMap(piece => (piece.kind === 'fault' ? piece.diagnostics : []))
+
+/** Blocks stand at the margin: one inside a list or a quotation has no place of its own on the page. */
+export function nestedBlocks({ tree, blocks }: Document): readonly Diagnostic[] {
+  const atMargin = new Set<Nodes>(tree.children)
+  return [...blocks].flatMap(([node, { info, topic }]) =>
+    atMargin.has(node)
+      ? []
+      : [
+          diagnose(
+            'error',
+            'block-nested',
+            info,
+            `this block ${topic} stands inside a list or a quotation`,
+            'Put it at the margin.',
+          ),
+        ],
+  )
+}
+
+/** What was given, and a box where something is wrong with it. */
+export function explainGivenBlock(
+  node: Code,
+  block: Block,
+  context: Context,
+  diagnostics: readonly Diagnostic[],
+): readonly Piece[] {
+  const [start, end] = [node.position?.start.offset ?? 0, node.position?.end.offset ?? 0]
+  const own = diagnostics.filter(({ at }) => at.span.start >= start && at.span.start < end)
+  return [...explainGiven(block, context), ...(own.length > 0 ? [{ kind: 'fault', diagnostics: own } as const] : [])]
+}
+
+/** Every node of the document as an item to be numbered: a heading, the pieces of a block, or other prose. */
+export const itemsOf = (
+  document: Document,
+  worked: ReadonlyMap<Code, readonly Piece[]>,
+  context: Context,
+  diagnostics: readonly Diagnostic[],
+): readonly Numbered<RootContent>[] =>
+  document.tree.children.map(node => itemOf(node, document, worked, context, diagnostics))
+
+function itemOf(
+  node: RootContent,
+  { blocks }: Document,
+  worked: ReadonlyMap<Code, readonly Piece[]>,
+  context: Context,
+  diagnostics: readonly Diagnostic[],
+): Numbered<RootContent> {
+  if (node.type === 'heading') return { kind: 'heading', depth: node.depth, text: headingText(node), key: node }
+  const block = node.type === 'code' ? blocks.get(node) : undefined
+  if (node.type !== 'code' || !block) return { kind: 'other', key: node }
+  return { kind: 'pieces', pieces: worked.get(node) ?? explainGivenBlock(node, block, context, diagnostics), key: node }
+}
+
+const headingText = (node: Heading): string =>
+  node.children.map(child => ('value' in child ? child.value : '')).join('')

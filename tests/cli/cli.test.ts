@@ -1,0 +1,217 @@
+/** The command itself, as a process: exit codes, what it writes, and what it leaves alone. */
+import { spawnSync } from 'node:child_process'
+import { existsSync, mkdirSync, mkdtempSync, readdirSync, readFileSync, rmSync, writeFileSync } from 'node:fs'
+import { tmpdir } from 'node:os'
+import { join } from 'node:path'
+import { fileURLToPath } from 'node:url'
+import Ajv from 'ajv'
+import { afterAll, beforeEach, describe, expect, test } from 'vitest'
+import schema from '../../src/render/results.schema.json'
+
+const command = fileURLToPath(new URL('../../dist/platemark.cjs', import.meta.url))
+const root = fileURLToPath(new URL('../..', import.meta.url))
+const workshop = mkdtempSync(join(tmpdir(), 'platemark-'))
+afterAll(() => rmSync(workshop, { recursive: true, force: true }))
+
+let folder = ''
+let count = 0
+beforeEach(() => {
+  folder = join(workshop, String(count++))
+  mkdirSync(folder)
+})
+
+function run(...args: string[]) {
+  const { status, stdout, stderr } = spawnSync(process.execPath, [command, ...args], { cwd: folder, encoding: 'utf8' })
+  return { status, stdout, stderr }
+}
+
+const put = (name: string, text: string | Uint8Array) => writeFileSync(join(folder, name), text)
+const read = (name: string) => readFileSync(join(folder, name), 'utf8')
+
+const sound =
+  '```areas\n| area | from | to | load |\n|---|---|---|---|\n| A | 0 ft, 0 ft | 9 ft, 9 ft | 50 psf |\n```\n\n```working\ncentre of mass\n```\n'
+const faulty = sound.replace('50 psf', '50 pfs')
+
+describe('exit codes', () => {
+  test('0 when a document builds', () => {
+    put('a.md', sound)
+    expect(run('build', 'a.md').status).toBe(0)
+  })
+
+  test('1 when a document has an error', () => {
+    put('a.md', faulty)
+    expect(run('build', 'a.md').status).toBe(1)
+    expect(run('check', 'a.md').status).toBe(1)
+  })
+
+  test.each([
+    [[]],
+    [['bild', 'a.md']],
+    [['build']],
+    [['build', 'a.md', '--too', 'html']],
+    [['build', 'a.md', '--to', 'docx']],
+  ])('2 when it is called wrongly: %j', args => {
+    put('a.md', sound)
+    const { status, stderr } = run(...args)
+    expect(status).toBe(2)
+    expect(stderr).toContain('platemark --help')
+  })
+
+  test('help and version go to standard output', () => {
+    expect(run('--help')).toMatchObject({ status: 0, stderr: '' })
+    expect(run('build', '--help').stdout).toContain('--draft')
+    expect(run('check', '--help').stdout).toContain('writes nothing')
+    expect(run('--version').stdout).toMatch(/^\d+\.\d+\.\d+\n$/)
+  })
+})
+
+describe('what a build writes', () => {
+  test('a page beside its source, and nothing else', () => {
+    put('a.md', sound)
+    run('build', 'a.md')
+    expect(readdirSync(folder).sort()).toEqual(['a.html', 'a.md'])
+  })
+
+  test('the worked Markdown never takes the place of its source', () => {
+    put('a.md', sound)
+    run('build', 'a.md', '--to', 'md')
+    expect(read('a.md')).toBe(sound)
+    expect(read('a.worked.md')).toContain('x_m')
+  })
+
+  test('a document with errors leaves its pages as they were, and its results tell the errors', () => {
+    put('a.md', sound)
+    run('build', 'a.md', '--to', 'html,json')
+    const before = read('a.html')
+    put('a.md', faulty)
+    run('build', 'a.md', '--to', 'html,json')
+    expect(read('a.html')).toBe(before)
+    expect(JSON.parse(read('a.json')).diagnostics[0]).toMatchObject({
+      rule: 'unknown-unit',
+      severity: 'error',
+      line: 4,
+    })
+  })
+
+  test('a draft is written with a box at the fault and a banner', () => {
+    put('a.md', faulty)
+    expect(run('build', 'a.md', '--draft').status).toBe(1)
+    expect(read('a.html')).toContain('there is no unit pfs')
+    expect(read('a.html')).toMatch(/draft/i)
+  })
+
+  test('the same source gives the same bytes', () => {
+    put('a.md', sound)
+    run('build', 'a.md', '--to', 'html,md,json', '--out', 'x')
+    run('build', 'a.md', '--to', 'html,md,json', '--out', 'y')
+    for (const name of ['a.html', 'a.md', 'a.json']) expect(read(`x/${name}`)).toBe(read(`y/${name}`))
+  })
+
+  test('several files and a folder in one call; one with errors does not stop the others', () => {
+    mkdirSync(join(folder, 'calcs', 'deep'), { recursive: true })
+    put('calcs/a.md', faulty)
+    put('calcs/b.md', sound)
+    put('calcs/deep/c.md', sound)
+    put('d.md', sound)
+    expect(run('build', 'calcs', 'd.md').status).toBe(1)
+    expect(existsSync(join(folder, 'calcs/a.html'))).toBe(false)
+    for (const name of ['calcs/b.html', 'calcs/deep/c.html', 'd.html'])
+      expect(existsSync(join(folder, name))).toBe(true)
+  })
+
+  test('results keep to their published schema, for every sample', () => {
+    const validate = new Ajv({ allErrors: true }).compile(schema)
+    run('build', join(root, 'samples'), '--to', 'json', '--out', 'out')
+    for (const name of readdirSync(join(folder, 'out'))) {
+      expect(
+        validate(JSON.parse(read(`out/${name}`))),
+        `${name}: ${JSON.stringify(validate.errors?.slice(0, 3))}`,
+      ).toBe(true)
+    }
+  })
+})
+
+describe('what cannot be read or written is said in plain words', () => {
+  test('a file that is not there', () => {
+    const { status, stderr } = run('build', 'none.md')
+    expect(status).toBe(1)
+    expect(stderr).toBe('none.md: there is no such file or folder\n')
+  })
+
+  test('a folder without Markdown', () => {
+    mkdirSync(join(folder, 'empty'))
+    expect(run('build', 'empty').stderr).toContain('no Markdown file')
+  })
+
+  test('bytes that are not UTF-8, at their line', () => {
+    put('a.md', Buffer.from('---\ntitle: Caf\xe9\n---\n', 'latin1'))
+    const { status, stderr } = run('check', 'a.md')
+    expect(status).toBe(1)
+    expect(stderr).toContain('a.md:2:11')
+  })
+
+  test('a file of 10 MB', () => {
+    put('a.md', `${sound}${'x'.repeat(10 * 1024 * 1024)}`)
+    expect(run('check', 'a.md').stderr).toContain('10.0 MB; 5 MB are read')
+  })
+
+  test('an output folder that cannot be made', () => {
+    put('a.md', sound)
+    put('taken', 'a file')
+    const { status, stderr } = run('build', 'a.md', '--out', 'taken')
+    expect(status).toBe(1)
+    expect(stderr).toMatch(/taken: the results cannot be written/)
+  })
+
+  test('no message shows a stack or a path of the program', () => {
+    put('a.md', faulty)
+    expect(run('check', 'a.md').stderr).not.toMatch(/at .*\.(?:cjs|ts):\d+/)
+  })
+})
+
+describe('hostile documents', () => {
+  test('no script, handler, remote address or script link reaches a page', () => {
+    put(
+      'a.md',
+      `${sound.replace('| A |', '| <script>alert(1)</script> |')}\n<script>alert(2)</script>\n\n[x](javascript:alert(3)) ![p](http://example.test/x.png) <b onclick="x()">hi</b> [y](data:text/html,z)\n`,
+    )
+    expect(run('build', 'a.md', '--to', 'html,md').status).toBe(0)
+    const page = read('a.html')
+    expect(page).not.toMatch(/<script/i)
+    expect(page).not.toMatch(/onclick=/i)
+    expect(page).not.toMatch(/javascript:/i)
+    expect(page).not.toMatch(/src="http/i)
+    expect(page).not.toMatch(/href="data:/i)
+    // An escaped < is a letter, not a tag.
+    expect(read('a.worked.md')).not.toMatch(/(?<!\\)<script/i)
+  })
+
+  test('nesting, towers and long lines end in a message, not in a crash', () => {
+    const deep = (n: number) => `${'('.repeat(n)}1${')'.repeat(n)}`
+    put(
+      'a.md',
+      `\`\`\`equations\na = ${deep(20000)}\nb = ${deep(3000)}\nc = ${'2^'.repeat(2000)}2\nd = 9^9^9^9\n\`\`\`\n${'>'.repeat(3000)} x\n${'- '.repeat(500)}y\n`,
+    )
+    const { status, stderr } = run('check', 'a.md')
+    expect(status).toBe(1)
+    expect(stderr).toContain('expression-too-long')
+    expect(stderr).toContain('expression-too-deep')
+    expect(stderr).toContain('no-finite-value')
+    expect(stderr).toContain('nested-too-deep')
+  })
+
+  test('5,000 walls are worked', () => {
+    const walls = Array.from(
+      { length: 5000 },
+      (_, i) =>
+        `| W${i} | ${i % 100} ft, ${Math.floor(i / 100)} ft | ${(i % 100) + (i % 2)} ft, ${Math.floor(i / 100) + 1 - (i % 2)} ft | 5 kip/in |`,
+    )
+    put(
+      'a.md',
+      `\`\`\`areas\n| area | from | to | load |\n|---|---|---|---|\n| A | 0 ft, 0 ft | 100 ft, 51 ft | 50 psf |\n\`\`\`\n\n\`\`\`walls\n| wall | from | to | k |\n|---|---|---|---|\n${walls.join('\n')}\n\`\`\`\n\n\`\`\`forces\nx: 50 kip\ny: 50 kip\naccidental: 5%\n\`\`\`\n\n\`\`\`working\ndesign shears\n\`\`\`\n`,
+    )
+    const { status, stdout } = run('build', 'a.md')
+    expect(status).toBe(0)
+    expect(stdout).toContain('OK')
+  })
+})

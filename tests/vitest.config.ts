@@ -1,0 +1,13 @@
+import { defineConfig } from 'vitest/config'
+
+/** Run from the root of the project: `npx vitest run --config tests/vitest.config.ts`. */
+export default defineConfig({
+  test: {
+    include: ['tests/**/*.test.ts'],
+    exclude: ['tests/bench/**', 'node_modules/**'],
+    pool: 'threads',
+    maxWorkers: 2,
+    testTimeout: 60_000,
+    hookTimeout: 60_000,
+  },
+})
