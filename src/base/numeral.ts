@@ -32,9 +32,18 @@ export function rounded(value: number, extra = 0): Numeral {
   return rounding(value, 4 + extra, 4 + extra)
 }
 
-/** A number that was typed: every digit that it has, up to nine. */
-export function asTyped(value: number): Numeral {
-  return rounding(value, 9, 4)
+/**
+ * A number that was typed: every digit that it has, up to nine. One without an end, such as 12'-7" in
+ * feet, is rounded as a worked one is.
+ */
+export function asTyped(value: number, extra = 0): Numeral {
+  return rounding(value, 9, 4 + extra)
+}
+
+/** Every digit that tells a number from its neighbours, so that its text reads back as the number itself. */
+export function everyDigit(value: number): Numeral {
+  const [digits = '', exponent = '0'] = String(Math.abs(value)).split('e')
+  return finish(value < 0, digits, Number(exponent))
 }
 
 function rounding(value: number, mostExact: number, significant: number): Numeral {

@@ -1,6 +1,6 @@
 /** Expressions as plain text that the reader takes back and that comes to the same number. */
 import type { Expr } from './expr.ts'
-import { asTyped, type Numeral, numeralPlain } from './numeral.ts'
+import { asTyped, everyDigit, type Numeral, numeralPlain, numeralValue } from './numeral.ts'
 import { type Unit, unitText } from './unit.ts'
 
 const precedence = { '+': 1, '-': 1, '*': 2, '/': 2, '^': 4 } as const
@@ -34,12 +34,18 @@ function written(text: string): Written {
   return { text, binding: /[\s%]/.test(text) ? 1.5 : WHOLE }
 }
 
+/** A constant of the formula itself is not a printed value: it keeps every digit. */
+function constant(count: number): Numeral {
+  const typed = asTyped(count)
+  return numeralValue(typed) === count ? typed : everyDigit(count)
+}
+
 function write(expr: Expr, leaf: (name: string) => string): Written {
   switch (expr.kind) {
     case 'number':
       return { text: expr.text, binding: WHOLE }
     case 'quantity':
-      return written(valuePlain(asTyped(expr.count), expr.unit))
+      return written(valuePlain(constant(expr.count), expr.unit))
     case 'name':
       return written(leaf(expr.name))
     case 'negate':

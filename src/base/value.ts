@@ -57,7 +57,7 @@ export const shown = ({ si, unit, rounding }: Value): number => (Math.abs(si) < 
 
 /** The number as it prints: a typed one with all its digits, a worked one rounded. */
 export function printedNumeral(value: Value, extra = 0): Numeral {
-  return typed(value.origin) ? asTyped(shown(value)) : rounded(shown(value), extra)
+  return typed(value.origin) ? asTyped(shown(value), extra) : rounded(shown(value), extra)
 }
 
 const typed = ({ kind }: Origin): boolean => kind === 'given' || kind === 'default'
