@@ -8,6 +8,7 @@ import { longForm, oneLine } from './base/report.ts'
 import { sourceOf } from './base/span.ts'
 import type { Compiled } from './compile.ts'
 import { compileText } from './compile.ts'
+import { auditSteps } from './explain/audit.ts'
 import { documentsIn, readText, writeWhole } from './files.ts'
 import { help, helpFor } from './help.ts'
 import { type Format, type Host, publish } from './publish.ts'
@@ -28,7 +29,7 @@ const host: Host = {
   shapes: () => readFileSync(join(__dirname, 'assets/shapes.txt'), 'latin1'),
 }
 
-const commands = ['build', 'check'] as const
+const commands = ['build', 'check', 'audit'] as const
 type Command = (typeof commands)[number]
 
 interface Settings {
@@ -51,7 +52,7 @@ export function run(args: readonly string[]): number {
 /** A fault of our own must not hide the other documents, and is said as what it is. */
 function guarded(path: string, settings: Settings): number {
   try {
-    return settings.command === 'build' ? build(path, settings) : check(path, settings)
+    return actions[settings.command](path, settings)
   } catch (error) {
     const detail = error instanceof Error ? (process.env.PLATEMARK_DEBUG ? (error.stack ?? '') : error.message) : ''
     return fail(
@@ -74,6 +75,7 @@ function readArguments(args: readonly string[]): Settings | number {
 const options = {
   build: { to: { type: 'string' }, out: { type: 'string' }, draft: { type: 'boolean' }, list: { type: 'boolean' } },
   check: { list: { type: 'boolean' } },
+  audit: { list: { type: 'boolean' } },
 } as const
 
 function readOptions(command: Command, args: readonly string[]): Settings | number {
@@ -141,6 +143,22 @@ function check(path: string, settings: Settings): number {
   const errors = tell(compiled, settings)
   return errors > 0 || sayChecks(compiled) > 0 ? ERRORS : DONE
 }
+
+/** Goes over every printed line. A line that does not hold is a fault of ours, and is said as one. */
+function audit(path: string, settings: Settings): number {
+  const compiled = compileFile(path)
+  if (!compiled) return ERRORS
+  const errors = tell(compiled, settings)
+  const { source, context } = compiled
+  const { lines, broken } = auditSteps(context.roots.values())
+  for (const { id, line, because } of broken) process.stdout.write(`${source.path}: ${id}: ${because}: ${line}\n`)
+  process.stdout.write(
+    `${source.path}: ${count(lines, 'line')} audited, ${broken.length === 0 ? 'all hold' : `${broken.length} do not hold`}\n`,
+  )
+  return errors > 0 || broken.length > 0 ? ERRORS : DONE
+}
+
+const actions = { build, check, audit } as const
 
 /** Prints every diagnostic and a closing count. @returns the number of errors */
 function tell({ source, diagnostics }: Compiled, settings: Settings): number {

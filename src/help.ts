@@ -5,6 +5,7 @@ shear-wall building, with formulas, values put in, results, tables and sketches.
 
   platemark build FILE…    write the calculation beside each file
   platemark check FILE…    say what is wrong and how the checks come out
+  platemark audit FILE…    show that every printed line holds to its digits
 
 A FILE is a Markdown document; a folder stands for all .md files in it.
 platemark COMMAND --help tells more. platemark --version prints the version.
@@ -39,6 +40,17 @@ Works each document, prints what is wrong with it and how its checks come out, a
 Exit code: 0 all well, 1 errors or failed checks, 2 wrong usage.
 
   platemark check workshop.md`,
+  audit: `platemark audit FILE… [--list]
+
+Goes over every worked line of each document. Each printed number stands for all numbers that would
+print the same; the line must be able to come to the printed result, and its text must read back
+as the same numbers. Lines that do not hold are printed; nothing is written.
+
+  --list      one line for each diagnostic
+
+Exit code: 0 every line holds, 1 errors or lines that do not hold, 2 wrong usage.
+
+  platemark audit workshop.md`,
 } as const
 
 export const helpFor = (command: keyof typeof texts): string => texts[command]

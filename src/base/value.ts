@@ -2,7 +2,6 @@
  * A value and where it came from. Every number of a document is one: typed by the engineer, worked
  * by a step from other values, or taken by default. The chain of `inputs` is the whole trace.
  */
-import type { Dimension } from './dimension.ts'
 import type { Formula } from './formula.ts'
 
 import type { Language } from './language.ts'
@@ -49,8 +48,6 @@ export interface Word {
   /** The value that it tells of. */
   readonly about: string
 }
-
-export const dimensionOfValue = ({ unit }: Value): Dimension => unit.dimension
 
 /** The number in the unit that it prints in. */
 export const shown = ({ si, unit, rounding }: Value): number => (Math.abs(si) < rounding ? 0 : si / unit.scale)

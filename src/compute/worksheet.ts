@@ -87,12 +87,15 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
     )
   }
 
+  /** Equations that have been asked for, so that a chain is not gone through again for each of its links. */
+  const settled = new Set<string>()
+
   /**
    * Works what an equation rests on first, so that a long chain does not nest. A ring is left to the
    * ledger, which tells its path.
    */
   function workInOrder(name: string): Result<Value> | undefined {
-    const waiting = [name]
+    const waiting = settled.has(name) ? [] : [name]
     const opened = new Set<string>()
     const closed = new Set<string>()
     for (let next = waiting.at(-1); next !== undefined; next = waiting.at(-1)) {
@@ -103,11 +106,15 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
       }
       opened.add(next)
       const body = bodies.get(next)
-      const rest = body ? [...namesIn(body.body).keys()].filter(other => bodies.has(other) && !closed.has(other)) : []
+      const names = body ? [...namesIn(body.body).keys()] : []
+      const rest = names.filter(other => bodies.has(other) && !closed.has(other) && !settled.has(other))
       if (rest.some(other => opened.has(other))) return equations.get(name)?.()
       waiting.push(...rest)
     }
-    for (const earlier of closed) equations.get(earlier)?.()
+    for (const earlier of closed) {
+      equations.get(earlier)?.()
+      settled.add(earlier)
+    }
     return equations.get(name)?.()
   }
 

@@ -16,15 +16,48 @@ const samples = 9
 export function areaPlacing(area: Patch, openings: readonly Patch[]): Placing {
   const middle = centroid(area.outline)
   const settings = widths.map(width => lettering('area', width, ...nameLines(area.name, width), area.load))
-  const near = samplesOf(area.outline).flatMap(at =>
-    settings.flatMap((letters, idx) =>
-      [0, -Math.PI / 2].flatMap(angle =>
-        liesInside(letters, at, angle, area, openings) ? [areaSpot(letters, at, angle, middle, 2 * idx)] : [],
-      ),
-    ),
+  const ways = settings.flatMap((letters, idx) =>
+    [0, -Math.PI / 2].map((angle): Way => ({ letters, angle, price: 2 * idx, turning: angle === 0 ? 0 : 3 })),
   )
+  const inside = samplesOf(area.outline)
+  const near = { [Symbol.iterator]: () => spotsNear(middle, inside, ways, area, openings) }
   const free = (at: Point): Spot => labelSpot(settings[1] ?? lettering('area', widestName, area.name), at, 0, 0)
-  return { near: near.sort((a, b) => a.price - b.price), anchors: anchorsIn(area.outline, middle), free }
+  return { near, anchors: anchorsIn(inside, area.outline, middle), free }
+}
+
+/** One way of setting the name: in lines of some width, level or turned. */
+interface Way {
+  readonly letters: Lettering
+  readonly angle: number
+  readonly price: number
+  readonly turning: number
+}
+
+/**
+ * Spots in order of their price, each made only when it is asked for: a large area has two thousand,
+ * of which one of the first few will nearly always do.
+ */
+function* spotsNear(
+  middle: Point,
+  inside: readonly Point[],
+  ways: readonly Way[],
+  area: Patch,
+  openings: readonly Patch[],
+): Generator<Spot> {
+  const points = inside
+    .map(at => ({ at, off: Math.hypot(at.x - middle.x, at.y - middle.y) * 0.05 }))
+    .sort((a, b) => a.off - b.off)
+  const heads = ways.map(way => ({ way, next: 0 }))
+  const priceOf = ({ way, next }: (typeof heads)[number]): number =>
+    way.price + (points[next]?.off ?? Number.POSITIVE_INFINITY) + way.turning
+  for (;;) {
+    const best = heads.reduce((a, b) => (priceOf(b) < priceOf(a) ? b : a))
+    const price = priceOf(best)
+    const at = points[best.next++]?.at
+    if (at === undefined) return
+    const { letters, angle } = best.way
+    if (liesInside(letters, at, angle, area, openings)) yield labelSpot(letters, at, angle, price)
+  }
 }
 
 /** A long name is set in lines; what the last of them cannot hold is cut. */
@@ -36,16 +69,10 @@ function nameLines(name: string, width: number): readonly string[] {
 const anchorSpacing = 12
 
 /** A few points of the area that a leader may reach, its middle first. */
-function anchorsIn(outline: readonly Point[], middle: Point): readonly Point[] {
-  const inside = samplesOf(outline)
+function anchorsIn(inside: readonly Point[], outline: readonly Point[], middle: Point): readonly Point[] {
   const spaced = inside.filter((_, idx) => idx % Math.ceil(inside.length / 6) === 0)
   const points = insidePolygon(middle, outline) || inside.length === 0 ? [middle, ...spaced] : spaced
   return points.filter((p, idx) => points.findIndex(q => distance(p, q) < anchorSpacing) === idx)
-}
-
-function areaSpot(letters: Lettering, at: Point, angle: number, middle: Point, price: number): Spot {
-  const off = Math.hypot(at.x - middle.x, at.y - middle.y) * 0.05
-  return labelSpot(letters, at, angle, price + off + (angle === 0 ? 0 : 3))
 }
 
 function liesInside(letters: Lettering, at: Point, angle: number, area: Patch, openings: readonly Patch[]): boolean {

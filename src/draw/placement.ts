@@ -29,7 +29,7 @@ export interface Spot {
 
 export interface Placing {
   /** Spots beside the thing named, most welcome first. */
-  readonly near: readonly Spot[]
+  readonly near: Iterable<Spot>
   /** Where a leader may end, and the label at the other end of it. */
   readonly anchors: readonly Point[]
   readonly free: (at: Point, anchor: Point) => Spot
@@ -91,8 +91,8 @@ export function placePair(sheet: Sheet, a: Placing, b: Placing): readonly (reado
   return pair === undefined ? [place(sheet, a), place(sheet, b)] : pair.map(choice => settle(sheet, choice))
 }
 
-function priced(field: Field, spots: readonly Spot[]): readonly Choice[] {
-  const choices = spots.map(spot => ({ spot, price: priceOf(field, spot) }))
+function priced(field: Field, spots: Iterable<Spot>): readonly Choice[] {
+  const choices = Array.from(spots, spot => ({ spot, price: priceOf(field, spot) }))
   return choices.filter(({ price }) => price <= goodEnoughPair).sort((a, b) => a.price - b.price)
 }
 
@@ -124,7 +124,7 @@ function settle(sheet: Sheet, { spot, leader }: Choice): readonly SceneNode[] {
   return [...line, ...spot.draw(crossed ? sheet.groundAt(at) : 'clear')]
 }
 
-function cheapest(field: Field, spots: readonly Spot[]): Choice | undefined {
+function cheapest(field: Field, spots: Iterable<Spot>): Choice | undefined {
   let best: Choice | undefined
   for (const spot of spots) {
     if (best !== undefined && spot.price >= best.price) break

@@ -7,13 +7,12 @@ import { plain } from '../base/plain.ts'
 import { joinTex, type Tex, tex } from '../base/tex.ts'
 import { letter, typeset, valueSet } from '../base/typeset.ts'
 import { unitTex } from '../base/unit.ts'
-import { printed, printedNumeral, printedPlain, type Step, spansOf, type Value } from '../base/value.ts'
+import { printedNumeral, printedPlain, type Step, spansOf, type Value } from '../base/value.ts'
 import type { Context } from './context.ts'
 import type { Equation } from './sheet.ts'
 
 export function explainValue(value: Value, context: Context): Equation {
   context.roots.set(value.id, value)
-  const { language } = context
   const { origin } = value
   const step = origin.kind === 'worked' ? origin.step : undefined
   if (step) context.formulas.add(step.formula)
@@ -27,7 +26,6 @@ export function explainValue(value: Value, context: Context): Equation {
     reference: context.words(referenceOf(value)),
     assumes: step?.formula.assumes.map(text => context.words(text)) ?? [],
     sourceLines: context.lines(spansOf(value)),
-    plain: `${value.id} = ${printed(value, language)}`,
   }
 }
 

@@ -24,7 +24,6 @@ export function explainGiven(block: Block, context: Context): readonly Piece[] {
   const pieces: Piece[] = []
   if (table) {
     const columns = table.header.map(({ name, unit }, i) => ({
-      key: name.text,
       head: name.text,
       unit: unit?.text ?? '',
       align:
@@ -37,8 +36,8 @@ export function explainGiven(block: Block, context: Context): readonly Piece[] {
   }
   if (stated.length > 0) {
     const columns = [
-      { key: 'what', head: table ? 'Setting' : title.replace(', as given', ''), unit: '', align: 'left' as const },
-      { key: 'value', head: 'Value', unit: '', align: 'left' as const },
+      { head: table ? 'Setting' : title.replace(', as given', ''), unit: '', align: 'left' as const },
+      { head: 'Value', unit: '', align: 'left' as const },
     ]
     const rows = stated.map(({ name, value }): Row => ({ cells: [name.text, value.text], governs: false }))
     pieces.push(given(table ? context.anchor(`${id}.settings`) : id, title, columns, rows, lines))

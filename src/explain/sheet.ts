@@ -24,12 +24,9 @@ export interface Equation {
   readonly assumes: readonly string[]
   /** Source lines of the inputs, ascending. */
   readonly sourceLines: readonly number[]
-  /** The same step in plain text, for readers who cannot see it. */
-  readonly plain: string
 }
 
 export interface Column {
-  readonly key: string
   /** The column's symbol or plain words. */
   readonly head: Tex | string
   /** Printed under the head, in the plain spelling of units (`kip/in`, `ft^2`); empty when there is none. */

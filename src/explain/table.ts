@@ -52,9 +52,9 @@ export function explainTable(table: Tabulation, want: TableWant, context: Contex
     number: '',
     caption: context.words(want.caption),
     columns: [
-      { key: 'name', head: context.words(want.rowHead), unit: '', align: 'left' },
+      { head: context.words(want.rowHead), unit: '', align: 'left' },
       ...columns.map(({ column }) => column),
-      ...words.map(({ head }): Column => ({ key: head, head: context.words(head), unit: '', align: 'left' })),
+      ...words.map(({ head }): Column => ({ head: context.words(head), unit: '', align: 'left' })),
     ],
     rows,
     ...(want.sums ? { foot } : {}),
@@ -99,7 +99,7 @@ function numberColumn(
   const unit = values[0] ? unitText(values[0].unit) : ''
   const print = (value: Value) => numeralOnPage(fixed(shown(value), decimals.get(sym.kind) ?? 0), language)
   return {
-    column: { key: name, head: tex(sym.tex), unit, align: 'right' },
+    column: { head: tex(sym.tex), unit, align: 'right' },
     cells: values.map(print),
     sum: sum ? print(sum) : '',
   }

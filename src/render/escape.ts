@@ -25,8 +25,8 @@ export function pageText(text: string): string {
   )
 }
 
-/** The attribute value that leads to an element of this id on the same page. */
-export const fragment = (id: string): string => `#${escapeHtml(id.replace(/%/g, '%25').replace(/ /g, '%20'))}`
+/** The address of an element of this id on the same page. */
+export const fragment = (id: string): string => `#${id.replace(/%/g, '%25').replace(/ /g, '%20')}`
 
 /** A quoted CSS string; every character that is not plain goes in by number, so that `</style>` cannot come about. */
 export function cssString(text: string): string {

@@ -1,9 +1,8 @@
 /** Small parts that several pieces share, and what they are set with. */
 import type { Source } from '../base/span.ts'
 import type { Tex } from '../base/tex.ts'
-import type { Quote } from '../explain/sheet.ts'
 import { linesInWords } from './body.ts'
-import { escapeHtml, fragment, pageText } from './escape.ts'
+import { escapeHtml } from './escape.ts'
 import { type Typesetter, withoutDigitGroups } from './typeset.ts'
 
 export interface Setting {
@@ -13,10 +12,6 @@ export interface Setting {
   /** Level of a heading inside a working, from the heading above it. */
   readonly level: number
 }
-
-/** A value in prose, with the way to where it was worked. */
-export const quoteHtml = ({ id, printed }: Quote): string =>
-  `<a class="q" href="${fragment(id)}">${pageText(printed)}</a>`
 
 /** A formula in running text: KaTeX hides its HTML from readers by ear, who get MathML instead. */
 export function inlineMath(tex: Tex, { typesetter }: Setting): string {

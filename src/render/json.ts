@@ -7,6 +7,7 @@ import { unitText } from '../base/unit.ts'
 import { printed, spansOf, type Value } from '../base/value.ts'
 import { substituted } from '../explain/equation.ts'
 import type { Check } from '../explain/sheet.ts'
+import { everyValue } from '../explain/trace.ts'
 
 export interface Results {
   readonly version: string
@@ -46,18 +47,6 @@ export function renderJson(results: Results): string {
     })),
   }
   return `${JSON.stringify(object, null, 1)}\n`
-}
-
-/** Printed values and all that they rest on, each once, sorted by id. */
-function everyValue(roots: Iterable<Value>): readonly Value[] {
-  const found = new Map<string, Value>()
-  const waiting = [...roots]
-  for (let value = waiting.pop(); value; value = waiting.pop()) {
-    if (found.has(value.id)) continue
-    found.set(value.id, value)
-    if (value.origin.kind === 'worked') waiting.push(...value.origin.step.inputs.values())
-  }
-  return [...found.values()].sort((a, b) => (a.id < b.id ? -1 : a.id > b.id ? 1 : 0))
 }
 
 const finite = (number: number): number | null => (Number.isFinite(number) ? number : null)

@@ -1,6 +1,7 @@
 /** Puts quoted results, and the numbers of headings, into the tree of the prose. */
 import type { Heading, PhrasingContent, RootContent, Text } from 'mdast'
 import type { Quoted, Quotes } from '../explain/blocks.ts'
+import { fragment } from './escape.ts'
 
 /** The same node with its quotes put in; nodes without quotes stay the same objects. */
 export function withQuotes<T extends RootContent>(node: T, quotes: Quotes): T {
@@ -31,7 +32,7 @@ function inPlace(quoted: Quoted): PhrasingContent {
   if (quoted.place === undefined) return words
   return {
     type: 'link',
-    url: `#${quoted.place.replace(/%/g, '%25').replace(/ /g, '%20')}`,
+    url: fragment(quoted.place),
     children: [words],
     data: { hProperties: { className: ['q'] } },
   }

@@ -131,6 +131,14 @@ describe('what a build writes', () => {
   })
 })
 
+describe('audit', () => {
+  test('finds every printed line of every sample to hold to its digits', () => {
+    const { status, stdout } = run('audit', join(root, 'samples'))
+    expect(status).toBe(0)
+    expect(stdout).toMatch(/boatyard\.md: [3-9]\d\d lines audited, all hold/)
+  })
+})
+
 describe('what cannot be read or written is said in plain words', () => {
   test('a file that is not there', () => {
     const { status, stderr } = run('build', 'none.md')

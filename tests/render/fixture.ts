@@ -90,7 +90,6 @@ const wallStiffness: Equation = {
   reference: 'beam theory, flexure and shear',
   assumes: ['G = 0.4 E', 'shear shape factor 1.2', 'uncracked section'],
   sourceLines: [31, 44],
-  plain: 'k_W1 = E t / (4 (h/L)^3 + 3 h/L)',
 }
 
 const centreOfRigidity: Equation = {
@@ -121,7 +120,6 @@ const centreOfRigidity: Equation = {
   reference: 'statics',
   assumes: [],
   sourceLines: [31, 32, 33, 34],
-  plain: 'x_r = sum(k x) / sum(k)',
 }
 
 const polar: Equation = {
@@ -148,7 +146,6 @@ const polar: Equation = {
   reference: 'rigid diaphragm; walls along y only',
   assumes: ['walls have no stiffness across their plane'],
   sourceLines: [31, 32, 33, 34],
-  plain: 'J = sum(k d^2)',
 }
 
 const eccentricity: Equation = {
@@ -161,7 +158,6 @@ const eccentricity: Equation = {
   reference: 'ASCE 7-22 §12.8.4.1',
   assumes: [],
   sourceLines: [],
-  plain: 'e_x = x_m - x_r',
 }
 
 const single: Equation = {
@@ -174,11 +170,9 @@ const single: Equation = {
   reference: '',
   assumes: [],
   sourceLines: [31],
-  plain: 'n = 4',
 }
 
-const right = (key: string, head: Tex | string, columnUnit: string): Column => ({
-  key,
+const right = (head: Tex | string, columnUnit: string): Column => ({
   head,
   unit: columnUnit,
   align: 'right',
@@ -207,18 +201,18 @@ const shears: Table = {
   number: '2.1',
   caption: 'Walls along y and their shares of 62 kip, case EY.',
   columns: [
-    { key: 'wall', head: 'Wall', unit: '', align: 'left' },
-    right('h', tex('h'), 'ft'),
-    right('L', tex('L'), 'ft'),
-    right('t', tex('t'), 'in'),
-    right('k', tex('k'), 'kip/in'),
-    right('x', tex('x'), 'ft'),
-    right('kx', tex('k\\,x'), 'kip*ft/in'),
-    right('d', tex('d'), 'ft'),
-    right('kd2', tex('k\\,d^{2}'), 'kip*ft^2/in'),
-    right('Vd', tex('V_{\\text{d}}'), 'kip'),
-    right('Vt', tex('V_{\\text{t}}'), 'kip'),
-    right('V', tex('V'), 'kip'),
+    { head: 'Wall', unit: '', align: 'left' },
+    right(tex('h'), 'ft'),
+    right(tex('L'), 'ft'),
+    right(tex('t'), 'in'),
+    right(tex('k'), 'kip/in'),
+    right(tex('x'), 'ft'),
+    right(tex('k\\,x'), 'kip*ft/in'),
+    right(tex('d'), 'ft'),
+    right(tex('k\\,d^{2}'), 'kip*ft^2/in'),
+    right(tex('V_{\\text{d}}'), 'kip'),
+    right(tex('V_{\\text{t}}'), 'kip'),
+    right(tex('V'), 'kip'),
   ],
   rows: walls.map(shearRow),
   foot: {
@@ -253,11 +247,11 @@ const areas: Table = {
   number: '1.1',
   caption: 'Areas of the roof. Hatch is an opening.',
   columns: [
-    { key: 'area', head: 'Area', unit: '', align: 'left' },
-    right('A', tex('A'), 'ft^2'),
-    right('w', tex('w'), 'psf'),
-    right('W', tex('W'), 'kip'),
-    { key: 'note', head: 'Note', unit: '', align: 'left' },
+    { head: 'Area', unit: '', align: 'left' },
+    right(tex('A'), 'ft^2'),
+    right(tex('w'), 'psf'),
+    right(tex('W'), 'kip'),
+    { head: 'Note', unit: '', align: 'left' },
   ],
   rows: [
     { cells: ['Ropewalk', '2,160', '68', '146.88', 'deck and topping'], governs: false },
@@ -348,6 +342,7 @@ export const body: readonly BodyPart[] = [
     demand: `${printed(vMax, 1)} psi`,
     capacity: '38.0 psi',
     ratio: vMax / 38,
+    numbers: { demand: 1, capacity: 1, unit: '' },
     ratioPrinted: printed(vMax / 38, 2),
     ok: true,
     reference: 'TMS 402-22 §8.3.5',
@@ -360,6 +355,7 @@ export const body: readonly BodyPart[] = [
     demand: '0.61 in',
     capacity: '0.58 in',
     ratio: 0.61 / 0.58,
+    numbers: { demand: 1, capacity: 1, unit: '' },
     ratioPrinted: printed(0.61 / 0.58, 2),
     ok: false,
     reference: 'ASCE 7-22 §12.12.1',
@@ -372,6 +368,7 @@ export const body: readonly BodyPart[] = [
     demand: '6.2×10⁻⁵ kip',
     capacity: '0.062 kip',
     ratio: 0.001,
+    numbers: { demand: 1, capacity: 1, unit: '' },
     ratioPrinted: '0.001',
     ok: true,
     reference: '',

@@ -6,7 +6,6 @@ import type { Sheet } from '../../src/explain/sheet.ts'
 import { type BodyPart, linesInWords } from '../../src/render/body.ts'
 import { cssString, fragment, pageText } from '../../src/render/escape.ts'
 import { renderHtml } from '../../src/render/html.ts'
-import { quoteHtml } from '../../src/render/html-parts.ts'
 import { createShapeCache } from '../../src/render/typeset.ts'
 import { asset } from './assets.ts'
 import { body, sheet, source } from './fixture.ts'
@@ -100,6 +99,7 @@ describe('the page', () => {
             demand: 'd',
             capacity: 'c',
             ratio,
+            numbers: { demand: 1, capacity: 1, unit: '' },
             ratioPrinted: 'r',
             ok: true,
             reference: '',
@@ -249,7 +249,6 @@ describe('text from the document', () => {
       reference: hostile,
       assumes: [hostile],
       sourceLines: [1],
-      plain: hostile,
     },
     {
       kind: 'table',
@@ -257,8 +256,8 @@ describe('text from the document', () => {
       number: hostile,
       caption: hostile,
       columns: [
-        { key: hostile, head: hostile, unit: hostile, align: 'left' },
-        { key: 'k', head: tex('k'), unit: hostile, align: 'right' },
+        { head: hostile, unit: hostile, align: 'left' },
+        { head: tex('k'), unit: hostile, align: 'right' },
       ],
       rows: [row],
       foot: row,
@@ -273,6 +272,7 @@ describe('text from the document', () => {
       demand: hostile,
       capacity: hostile,
       ratio: 1,
+      numbers: { demand: 1, capacity: 1, unit: '' },
       ratioPrinted: hostile,
       ok: true,
       reference: hostile,
@@ -310,11 +310,8 @@ describe('text from the document', () => {
     expect(occurrences(html, /<main>/)).toBe(1)
   })
 
-  test('is escaped in a quote, whose id may hold any sign', () => {
-    expect(quoteHtml({ id: 'roof.wall.W1.V.EX+', printed: '19.8 kip' })).toBe(
-      '<a class="q" href="#roof.wall.W1.V.EX+">19.8 kip</a>',
-    )
-    expect(quoteHtml({ id: hostile, printed: hostile })).not.toMatch(raw)
+  test('is made safe in the address of a place, whose id may hold any sign', () => {
+    expect(fragment('roof.wall.W1.V.EX+')).toBe('#roof.wall.W1.V.EX+')
     expect(fragment('a b%20')).toBe('#a%20b%2520')
   })
 

@@ -136,8 +136,8 @@ describe('text from the document', () => {
       number: '',
       caption: value,
       columns: [
-        { key: 'a', head: value, unit: 'ft^2', align: 'left' },
-        { key: 'b', head: tex('\\left|M\\right|'), unit: '', align: 'right' },
+        { head: value, unit: 'ft^2', align: 'left' },
+        { head: tex('\\left|M\\right|'), unit: '', align: 'right' },
       ],
       rows: [row],
       foot: row,

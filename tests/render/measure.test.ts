@@ -32,7 +32,7 @@ test('a table is as wide as the longest of head, unit and cell in each column, a
     id: '',
     number: '',
     caption: '',
-    columns: [{ key: 'a', head: 'Wall', unit: '', align: 'left' }],
+    columns: [{ head: 'Wall', unit: '', align: 'left' }],
     rows: [{ cells: ['0123456789'], governs: false }],
     formulas: [],
     sourceLines: [],
