@@ -255,11 +255,11 @@ export function prepare(expr: Expr, names: readonly string[]): Run {
     }
     case 'negate': {
       const of = prepare(expr.of, names)
-      return inputs => pairwise(minus, 0, of(inputs))
+      return inputs => pairwise('-', 0, of(inputs))
     }
     case 'binary': {
       const [left, right] = [prepare(expr.left, names), prepare(expr.right, names)]
-      const op = operators[expr.op]
+      const { op } = expr
       return inputs => pairwise(op, left(inputs), right(inputs))
     }
     case 'call': {
@@ -294,11 +294,9 @@ export function evaluate(expr: Expr, lookup: (name: string) => number): number {
   }
 }
 
-const minus = (a: number, b: number) => a - b
-
 const operators = {
   '+': (a: number, b: number) => a + b,
-  '-': minus,
+  '-': (a: number, b: number) => a - b,
   '*': (a: number, b: number) => a * b,
   '/': (a: number, b: number) => a / b,
   '^': (a: number, b: number) => a ** b,
@@ -306,21 +304,52 @@ const operators = {
 
 const operate = (op: keyof typeof operators, a: number, b: number): number => operators[op](a, b)
 
-function pairwise(op: (a: number, b: number) => number, a: Numbers, b: Numbers): Numbers {
-  if (typeof a === 'number') return typeof b === 'number' ? op(a, b) : b.map(one => op(a, one))
-  return typeof b === 'number' ? a.map(one => op(one, b)) : a.map((one, i) => op(one, b[i] ?? Number.NaN))
+function pairwise(op: keyof typeof operators, a: Numbers, b: Numbers): Numbers {
+  if (typeof a === 'number' && typeof b === 'number') return operate(op, a, b)
+  const length = typeof a === 'number' ? lengthOf(b) : a.length
+  const out = new Float64Array(length)
+  loops[op](asColumn(a, length), asColumn(b, length), out)
+  return out
+}
+
+const lengthOf = (column: Numbers): number => (typeof column === 'number' ? 1 : column.length)
+
+const asColumn = (numbers: Numbers, length: number): Float64Array =>
+  typeof numbers === 'number' ? new Float64Array(length).fill(numbers) : numbers
+
+type Column = Readonly<Float64Array>
+
+// One loop for each operator: a thousand walls in many cases go through here, and a loop that is handed
+// its operator calls it for every number.
+const loops: Readonly<Record<keyof typeof operators, (a: Column, b: Column, out: Float64Array) => void>> = {
+  '+': (a, b, out) => {
+    for (let i = 0; i < out.length; i++) out[i] = (a[i] ?? Number.NaN) + (b[i] ?? Number.NaN)
+  },
+  '-': (a, b, out) => {
+    for (let i = 0; i < out.length; i++) out[i] = (a[i] ?? Number.NaN) - (b[i] ?? Number.NaN)
+  },
+  '*': (a, b, out) => {
+    for (let i = 0; i < out.length; i++) out[i] = (a[i] ?? Number.NaN) * (b[i] ?? Number.NaN)
+  },
+  '/': (a, b, out) => {
+    for (let i = 0; i < out.length; i++) out[i] = (a[i] ?? Number.NaN) / (b[i] ?? Number.NaN)
+  },
+  '^': (a, b, out) => {
+    for (let i = 0; i < out.length; i++) out[i] = (a[i] ?? Number.NaN) ** (b[i] ?? Number.NaN)
+  },
 }
 
 /** A function of columns, row by row. */
 function apply(fn: FunctionName, args: readonly Numbers[]): Numbers {
-  const column = args.find(arg => typeof arg !== 'number')
-  if (column === undefined || typeof column === 'number') return callFunction(fn, args.map(Number))
-  return column.map((_, i) =>
-    callFunction(
-      fn,
-      args.map(arg => (typeof arg === 'number' ? arg : (arg[i] ?? Number.NaN))),
-    ),
-  )
+  const first = args.find(arg => typeof arg !== 'number')
+  if (first === undefined) return callFunction(fn, args.map(Number))
+  const length = lengthOf(first)
+  const columns = args.map(arg => asColumn(arg, length))
+  const row = new Array<number>(columns.length)
+  return new Float64Array(length).map((_, i) => {
+    for (let at = 0; at < row.length; at++) row[at] = columns[at]?.[i] ?? Number.NaN
+    return callFunction(fn, row)
+  })
 }
 
 export function callFunction(fn: FunctionName, args: readonly number[]): number {

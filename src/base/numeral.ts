@@ -55,7 +55,10 @@ function rounding(value: number, mostExact: number, significant: number): Numera
   const exact = exactDecimals(mantissa, Math.max(0, mostExact - whole))
   const first = Number(mantissa.toExponential()[0])
   const decimals = exact ?? Math.max(0, significant + (first === 1 ? 1 : 0) - whole)
-  return finish(value < 0, mantissa.toFixed(decimals), power)
+  const digits = mantissa.toFixed(decimals)
+  // 9.9996 rounds up to 10.000, which with a power of ten is 1.000 of the next.
+  if (power !== 0 && digits.startsWith('10')) return finish(value < 0, (mantissa / 10).toFixed(decimals), power + 1)
+  return finish(value < 0, digits, power)
 }
 
 const scaled = (size: number, power: number): number => Number(`${size}e${-power}`) || size / 10 ** power

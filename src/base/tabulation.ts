@@ -15,6 +15,8 @@ export interface TableColumn {
   readonly formula?: Formula
   /** The value of a row, with its origin. */
   readonly cell: (rowIdx: number) => Value
+  /** The id of a row's value, without making the value. */
+  readonly idOf: (rowIdx: number) => string
 }
 
 /** The input of a column's formula: another column, by its symbol's name, or one value for all rows. */
@@ -23,6 +25,8 @@ export type ColumnInput = string | Value
 export class Tabulation {
   readonly rows: readonly string[]
   private readonly held = new Map<string, TableColumn>()
+  /** Made when first asked for. */
+  private ids: ReadonlySet<string> | undefined
   private readonly idOf: (row: string, key: string) => string
   private readonly display: Display
 
@@ -35,8 +39,23 @@ export class Tabulation {
 
   /** A column of values worked or given elsewhere, one a row. */
   take(sym: Sym, values: readonly Value[]): this {
-    const numbers = Float64Array.from(values, ({ si }) => si)
-    this.held.set(sym.name, { sym, numbers, cell: rowIdx => required(values[rowIdx]) })
+    const numbers = new Float64Array(values.length)
+    for (let i = 0; i < values.length; i++) numbers[i] = required(values[i]).si
+    const cell = (rowIdx: number) => required(values[rowIdx])
+    return this.hold({ sym, numbers, cell, idOf: rowIdx => cell(rowIdx).id })
+  }
+
+  /**
+   * A column of another table of the same rows, as values that are known: its formula is told there.
+   * @param as its symbol here
+   */
+  takeColumn({ sym, numbers, cell, idOf }: TableColumn, as: Sym = sym): this {
+    return this.hold({ sym: as, numbers, cell, idOf })
+  }
+
+  private hold(column: TableColumn): this {
+    this.held.set(column.sym.name, column)
+    this.ids = undefined
     return this
   }
 
@@ -58,8 +77,8 @@ export class Tabulation {
       cells[rowIdx] ??= this.worked(formula, inputs, key, column, rowIdx)
       return required(cells[rowIdx])
     }
-    this.held.set(formula.gives.name, { sym: formula.gives, numbers: column, formula, cell })
-    return this
+    const idOf = (rowIdx: number) => this.idOf(required(this.rows[rowIdx]), key)
+    return this.hold({ sym: formula.gives, numbers: column, formula, cell, idOf })
   }
 
   column(name: string): TableColumn {
@@ -72,7 +91,8 @@ export class Tabulation {
 
   /** True when a cell of the table has this id. */
   has(id: string): boolean {
-    return this.rows.some((_, rowIdx) => this.columns.some(({ cell }) => cell(rowIdx).id === id))
+    this.ids ??= new Set(this.columns.flatMap(({ idOf }) => this.rows.map((_, rowIdx) => idOf(rowIdx))))
+    return this.ids.has(id)
   }
 
   /** The sum of a column, as a value that later formulas use by the symbol `of`. */

@@ -50,11 +50,7 @@ export function designTable({ level, springs }: Rigidity, cases: readonly CaseRe
   const inputs: Record<string, string> = {}
   for (const { case: each, walls } of cases) {
     const symbol = sym(`V_${plainCase(each.name)}`, texAbout('V', each.name), 'force')
-    const { cell } = walls.column('V')
-    table.take(
-      symbol,
-      springs.map((_, i) => cell(i)),
-    )
+    table.takeColumn(walls.column('V'), symbol)
     inputs[symbol.name] = symbol.name
   }
   return table.work(envelope(cases.map(({ case: each }) => each)), inputs).work(shearPerLength, { V: 'V', L: 'L' })

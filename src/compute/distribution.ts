@@ -118,22 +118,7 @@ function workCase(
   const { moment, moments } = workMoment(each, rigidity, acting, e, display)
   const about = [each.name]
   const move = moved(each, rigidity, shear, display)
-  const walls = new Tabulation(
-    rigidity.springs.map(({ name }) => name),
-    (row, key) => `${level}.wall.${row}.${key}`,
-    display,
-  )
-  for (const name of ['k', 'c', 's', 'rho', 'x', 'y']) {
-    const { sym, cell } = rigidity.walls.column(name)
-    walls.take(
-      sym,
-      rigidity.springs.map((_, i) => cell(i)),
-    )
-  }
-  directShear(walls, each, rigidity, shear, move)
-  walls
-    .work(wallShear.torsional, { T: moment, k: 'k', rho: 'rho', J: rigidity.J }, `Vt.${each.name}`)
-    .work(wallShear.total, { V_d: 'V_d', V_t: 'V_t' }, `V.${each.name}`)
+  const walls = wallShears(each, rigidity, { shear, moment, ...move }, display)
   return {
     case: each,
     shear,
@@ -144,6 +129,22 @@ function workCase(
     walls,
     residual: residualOf(level, each, walls, acting, shear, display),
   }
+}
+
+/** V_d, V_t and V of every wall from what acts on the level in a case. */
+export function wallShears(
+  each: Case,
+  rigidity: Rigidity,
+  acts: { readonly shear: Value; readonly moment: Value; readonly u: Value; readonly v: Value },
+  display: Display,
+): Tabulation {
+  const { level, walls: known, J } = rigidity
+  const walls = new Tabulation(known.rows, (row, key) => `${level}.wall.${row}.${key}`, display)
+  for (const name of ['k', 'c', 's', 'rho', 'x', 'y']) walls.takeColumn(known.column(name))
+  directShear(walls, each, rigidity, acts.shear, acts)
+  return walls
+    .work(wallShear.torsional, { T: acts.moment, k: 'k', rho: 'rho', J }, `Vt.${each.name}`)
+    .work(wallShear.total, { V_d: 'V_d', V_t: 'V_t' }, `V.${each.name}`)
 }
 
 function directShear(

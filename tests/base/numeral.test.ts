@@ -47,9 +47,8 @@ describe('digits of a worked number', () => {
     [6.54321e-5, '6.543×10⁻⁵'],
     [-1.23456e-7, '−1.2346×10⁻⁷'],
     [2.5e12, '2.5×10¹²'],
-    [9.99996e-4, '0.0010000'],
-    [9.99996e8, '999,996,000'],
-    [9.99996e11, '1.0000×10¹²'],
+    [9.99996e-4, '1.000×10⁻³'],
+    [9.99996e11, '1.000×10¹²'],
   ])('%d prints as %s, with a power of ten', (value, text) => {
     expect(page(value)).toBe(text)
   })
@@ -104,8 +103,8 @@ describe('digits of a typed number', () => {
   })
 
   test('one without an end is rounded, and to more digits where a line asks for them', () => {
-    expect(numeralPlain(asTyped(12 + 7 / 12))).toBe('12.58')
-    expect(numeralPlain(asTyped(12 + 7 / 12, 2))).toBe('12.58333'.slice(0, 7))
+    expect(numeralPlain(asTyped(12 + 7 / 12))).toBe('12.583')
+    expect(numeralPlain(asTyped(12 + 7 / 12, 2))).toBe('12.58333')
   })
 
   test('every digit of a constant reads back as the very same number', () => {
@@ -122,7 +121,7 @@ describe('three spellings of one number', () => {
   test('digits are grouped by comma in American and by a thin space in British', () => {
     expect(page(1234567, 'en-US')).toBe('1,234,567')
     expect(page(1234567, 'en-GB')).toBe('1\u202f234\u202f567')
-    expect(page(-4321.5, 'en-GB')).toBe('−4\u202f321.5'.replace('.5', ''))
+    expect(page(-4321.7, 'en-GB')).toBe('−4\u202f322')
     expect(page(999, 'en-GB')).toBe('999')
     expect(texSource(numeralTex(rounded(1234567), 'en-US'))).toBe('1{,}234{,}567')
     expect(texSource(numeralTex(rounded(1234567), 'en-GB'))).toBe('1\\,234\\,567')

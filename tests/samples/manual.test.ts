@@ -272,9 +272,9 @@ function printedQuotes(
   const missing = unresolved([...ids.keys()], { text, names })
   const there = [...ids].filter(([id]) => !missing.includes(id))
   const quotes = there.map(([id]) => `\`${id}\` {{${id}}}\n`).join('\n')
-  const source = `${text.replace('units: US', `units: ${system}`)}\n\n${quotes}`
+  const source = `${text.replace('units: US', `units: ${system}`)}\n\n## Quotes\n\n${quotes}`
   const [page] = publish(compileText('quotes.md', source), 'quotes', 'md', false, host)
-  const lines = [...(page?.text ?? '').matchAll(/^`([^`]+)` \[?([^[\]\n]+?)(?:\]\(#[^)]*\))?$/gm)]
+  const lines = [...(page?.text.split(' Quotes\n')[1] ?? '').matchAll(/^`([^`]+)` \[?([^[\]\n]+?)(?:\]\(#[^)]*\))?$/gm)]
   expect(lines).toHaveLength(there.length)
   return new Map(lines.map(([, id = '', printed = '']) => [ids.get(id) ?? id, printed]))
 }
