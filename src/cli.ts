@@ -1,6 +1,4 @@
 /** Arguments, files and exit codes. */
-import { createHash } from 'node:crypto'
-import { readFileSync } from 'node:fs'
 import { basename, dirname, extname, join, relative, resolve } from 'node:path'
 import { parseArgs } from 'node:util'
 import { inWords, suggestion } from './base/near.ts'
@@ -11,9 +9,8 @@ import { compileText } from './compile.ts'
 import { auditSteps } from './explain/audit.ts'
 import { documentsIn, readText, writeWhole } from './files.ts'
 import { help, helpFor } from './help.ts'
-import { type Format, type Host, publish } from './publish.ts'
-
-declare const PLATEMARK_VERSION: string
+import { hostAt } from './host.ts'
+import { type Format, publish } from './publish.ts'
 
 const DONE = 0
 const ERRORS = 1
@@ -22,12 +19,7 @@ const WRONG_USAGE = 2
 const formats: readonly string[] = ['html', 'md', 'json'] satisfies readonly Format[]
 const isFormat = (word: string): word is Format => formats.includes(word)
 
-const host: Host = {
-  version: PLATEMARK_VERSION,
-  asset: name => readFileSync(join(__dirname, 'assets', name), 'utf8'),
-  sha256: text => createHash('sha256').update(text).digest('hex'),
-  shapes: () => readFileSync(join(__dirname, 'assets/shapes.txt'), 'latin1'),
-}
+const host = hostAt(join(__dirname, 'assets'))
 
 const commands = ['build', 'check', 'audit'] as const
 type Command = (typeof commands)[number]

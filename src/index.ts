@@ -1,15 +1,22 @@
 /** The package as a library: the compiler, and a plugin for any unified pipeline. */
+
+import { fileURLToPath } from 'node:url'
 import type { Html, Root, RootContent } from 'mdast'
 import type { Processor } from 'unified'
 import type { VFile } from 'vfile'
 import { positionOf, sourceOf } from './base/span.ts'
 import { type Compiled, compileText, compileTree } from './compile.ts'
+import { hostAt } from './host.ts'
+import type { Host } from './publish.ts'
 import { pieceNodes } from './render/markdown.ts'
 import { markdownSettings } from './render/math-nodes.ts'
 
 export type { Diagnostic } from './base/diagnostic.ts'
 export { longForm, oneLine } from './base/report.ts'
 export { type Format, type Host, type OutputFile, publish } from './publish.ts'
+
+/** The host that `publish` needs, with the assets of this package. */
+export const host: Host = hostAt(fileURLToPath(new URL('./assets/', import.meta.url)))
 export { type Compiled, compileText, compileTree }
 
 /**

@@ -127,6 +127,9 @@ function call(fn: FunctionName, args: readonly Interval[]): Interval {
 
 /** Sine and cosine reach ±1 at every half turn within the interval. */
 function wave(fn: 'sin' | 'cos', a: Interval): Interval {
+  // A whole turn reaches both; so may an end so large that its neighbours in the arithmetic are half a turn apart.
+  const largest = Math.max(Math.abs(a.low), Math.abs(a.high))
+  if (!(a.high - a.low < 2 * Math.PI) || largest > 1e15) return { low: -1, high: 1 }
   const crests: number[] = []
   const offset = fn === 'sin' ? Math.PI / 2 : 0
   const first = Math.ceil((a.low - offset) / Math.PI)

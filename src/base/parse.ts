@@ -67,6 +67,8 @@ const UNIT_NAME = /[\p{L}°]+|%/uy
 /** The inches of feet and inches, after the foot mark or `ft`. */
 const INCHES = /(?:-|\s+)?(\d+(?:\.\d+)?)(?:\s+(\d+)\/(\d+))?\s*(?:"|″|'')/y
 const INCHES_IN_WORDS = /\s+(\d+(?:\.\d+)?)(?:\s+(\d+)\/(\d+))?\s+in\b(?![*/^])/y
+/** `12 ft-6 in`, which no rule of arithmetic reads as it is meant. */
+const HYPHENED_INCHES = /-\d+(?:\.\d+)?\s*(?:"|″|in\b)/y
 /** A fraction of an inch: `3/8 in`, `6 1/2 in`, `1/2"`. */
 const FRACTION = /(?:(\d+)\s+)?(\d+)\/(\d+)\s*(?:in\b(?![*/^])|"|″)/y
 
@@ -161,6 +163,13 @@ class Reader {
     if (made.factors.length === 1 && made.factors[0]?.atom.name === 'ft') {
       const inches = this.take(INCHES_IN_WORDS)
       if (inches) return this.length(value + inchesOf(inches) / 12, 'ft', start)
+      if (this.take(HYPHENED_INCHES))
+        this.stop(
+          'feet-and-inches',
+          'this may be read as a length in feet and inches or as a difference',
+          'Write 12 ft 6 in or 12\'-6" for the length; put a space on each side of a minus.',
+          start,
+        )
     }
     return { kind: 'quantity', count: value, unit: made, span: this.span(start) }
   }
@@ -307,7 +316,8 @@ class Reader {
   }
 
   private unexpected(): never {
-    const sign = this.peek()
+    // A whole character, which may be two halves in the text.
+    const [sign = ''] = this.text.slice(this.at, this.at + 2)
     if (sign === '')
       this.stop(
         'expression-ends',

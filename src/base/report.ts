@@ -12,9 +12,10 @@ export function oneLine(source: Source, { rule, severity, message, at }: Diagnos
 export function longForm(source: Source, diagnostic: Diagnostic): string {
   const { rule, severity, message, at, also, help } = diagnostic
   const { line, column } = positionOf(source, at.span.start)
-  const marks = [{ ...at, sign: '^' }, ...also.map(label => ({ ...label, sign: '-' }))]
-    .sort((a, b) => a.span.start - b.span.start)
-    .slice(0, 12)
+  // A long ring has hundreds of other places; the cause is among those shown.
+  const marks = [{ ...at, sign: '^' }, ...also.slice(0, 11).map(label => ({ ...label, sign: '-' }))].sort(
+    (a, b) => a.span.start - b.span.start,
+  )
   const marked = source.text === '' ? [] : marks
   const width = Math.max(...marks.map(({ span }) => String(positionOf(source, span.start).line).length)) + 1
   return [

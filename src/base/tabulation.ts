@@ -63,8 +63,14 @@ export class Tabulation {
    * A column worked from others.
    * @param inputs for each symbol of the formula, a column's name or one value
    * @param key of the ids of its cells; the symbol's name when left out
+   * @param about what its letter says beside the row, such as the load case
    */
-  work(formula: Formula, inputs: Readonly<Record<string, ColumnInput>>, key: string = formula.gives.name): this {
+  work(
+    formula: Formula,
+    inputs: Readonly<Record<string, ColumnInput>>,
+    key: string = formula.gives.name,
+    about: readonly string[] = [],
+  ): this {
     const numbers: Record<string, Numbers> = {}
     for (const name of formula.symbols.keys()) {
       const input = inputs[name]
@@ -74,7 +80,7 @@ export class Tabulation {
     const column = typeof result === 'number' ? new Float64Array(this.rows.length).fill(result) : result
     const cells: Value[] = []
     const cell = (rowIdx: number) => {
-      cells[rowIdx] ??= this.worked(formula, inputs, key, column, rowIdx)
+      cells[rowIdx] ??= this.worked(formula, inputs, key, column, rowIdx, about)
       return required(cells[rowIdx])
     }
     const idOf = (rowIdx: number) => this.idOf(required(this.rows[rowIdx]), key)
@@ -124,6 +130,7 @@ export class Tabulation {
     key: string,
     numbers: Float64Array,
     rowIdx: number,
+    about: readonly string[],
   ): Value {
     const row = required(this.rows[rowIdx])
     const values = Object.entries(inputs).map(([name, input]) => {
@@ -132,7 +139,7 @@ export class Tabulation {
     })
     return {
       id: this.idOf(row, key),
-      tex: texAbout(formula.gives.tex, row),
+      tex: texAbout(formula.gives.tex, row, ...about),
       si: required(numbers[rowIdx]),
       ...shownAs(formula.gives, this.display),
       origin: { kind: 'worked', step: { formula, inputs: new Map(values) } },

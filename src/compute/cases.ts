@@ -15,6 +15,9 @@ const sides = [
   ['-', -1],
 ] as const
 
+/** A case as the page prints it, with a true minus. */
+export const caseOnPage = (name: string): string => name.replace('-', '−')
+
 /** `EX EX+ EX- EY EY+ EY-`, those whose force is stated. */
 export function casesOf(axes: readonly Axis[]): readonly Case[] {
   return axes.flatMap(axis => sides.map(([sign, moved]) => ({ name: `E${axis.toUpperCase()}${sign}`, axis, moved })))

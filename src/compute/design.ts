@@ -4,7 +4,7 @@ import type { Display } from '../base/kind.ts'
 import { Tabulation } from '../base/tabulation.ts'
 import type { Word } from '../base/value.ts'
 import { texAbout } from '../base/work.ts'
-import type { Case } from './cases.ts'
+import { type Case, caseOnPage } from './cases.ts'
 import type { CaseResult } from './distribution.ts'
 import type { Rigidity } from './rigidity.ts'
 import { L, V } from './symbols.ts'
@@ -27,7 +27,7 @@ function envelope(cases: readonly Case[]): Formula {
   const key = cases.map(({ name }) => name).join()
   const known = envelopes.get(key)
   if (known) return known
-  const symbols = cases.map(({ name }) => sym(`V_${plainCase(name)}`, texAbout('V', name), 'force'))
+  const symbols = cases.map(({ name }) => sym(`V_${plainCase(name)}`, texAbout('V', caseOnPage(name)), 'force'))
   const made = formula({
     gives: V,
     body: `max(${symbols.map(({ name }) => `abs(${name})`).join(', ')})`,
@@ -49,7 +49,7 @@ export function designTable({ level, springs }: Rigidity, cases: readonly CaseRe
   )
   const inputs: Record<string, string> = {}
   for (const { case: each, walls } of cases) {
-    const symbol = sym(`V_${plainCase(each.name)}`, texAbout('V', each.name), 'force')
+    const symbol = sym(`V_${plainCase(each.name)}`, texAbout('V', caseOnPage(each.name)), 'force')
     table.takeColumn(walls.column('V'), symbol)
     inputs[symbol.name] = symbol.name
   }

@@ -3,6 +3,7 @@ import { formula, sym } from '../base/formula.ts'
 import type { Display } from '../base/kind.ts'
 import { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
+import { caseOnPage } from './cases.ts'
 import type { CaseResult } from './distribution.ts'
 import type { Plan } from './plan.ts'
 import type { Rigidity } from './rigidity.ts'
@@ -41,8 +42,8 @@ export function workDisplacement(
   const points = new Tabulation([CENTRE_OF_MASS, ...corners.map(({ name }) => name)], id, display)
     .take(x, [mass.x, ...corners.map(({ x }) => x)])
     .take(y, [mass.y, ...corners.map(({ y }) => y)])
-    .work(displacement.x, { u_0: result.u, phi: result.phi, y: 'y', y_r: rigidity.y }, `x.${name}`)
-    .work(displacement.y, { v_0: result.v, phi: result.phi, x: 'x', x_r: rigidity.x }, `y.${name}`)
+    .work(displacement.x, { u_0: result.u, phi: result.phi, y: 'y', y_r: rigidity.y }, `x.${name}`, [caseOnPage(name)])
+    .work(displacement.y, { v_0: result.v, phi: result.phi, x: 'x', x_r: rigidity.x }, `y.${name}`, [caseOnPage(name)])
   const { numbers, cell } = points.column(`delta_${axis}`)
   let at = 1
   numbers.forEach((value, i) => {

@@ -10,7 +10,7 @@ import type { Display } from '../base/kind.ts'
 import { Tabulation } from '../base/tabulation.ts'
 import type { Value, Word } from '../base/value.ts'
 import { texAbout, work } from '../base/work.ts'
-import { type Axis, type Case, casesOf } from './cases.ts'
+import { type Axis, type Case, caseOnPage, casesOf } from './cases.ts'
 import { designTable, governingCase } from './design.ts'
 import { type Residual, residualOf } from './equilibrium.ts'
 import type { Rigidity } from './rigidity.ts'
@@ -116,7 +116,6 @@ function workCase(
   if (!shear) throw new Error(`case ${each.name} has no storey shear`)
   const { level } = rigidity
   const { moment, moments } = workMoment(each, rigidity, acting, e, display)
-  const about = [each.name]
   const move = moved(each, rigidity, shear, display)
   const walls = wallShears(each, rigidity, { shear, moment, ...move }, display)
   return {
@@ -125,7 +124,9 @@ function workCase(
     moment,
     ...(moments ? { moments } : {}),
     ...move,
-    phi: work(`${level}.phi.${each.name}`, movement.phi, { T: moment, J: rigidity.J }, display, about),
+    phi: work(`${level}.phi.${each.name}`, movement.phi, { T: moment, J: rigidity.J }, display, [
+      caseOnPage(each.name),
+    ]),
     walls,
     residual: residualOf(level, each, walls, acting, shear, display),
   }
@@ -139,12 +140,13 @@ export function wallShears(
   display: Display,
 ): Tabulation {
   const { level, walls: known, J } = rigidity
+  const about = [caseOnPage(each.name)]
   const walls = new Tabulation(known.rows, (row, key) => `${level}.wall.${row}.${key}`, display)
   for (const name of ['k', 'c', 's', 'rho', 'x', 'y']) walls.takeColumn(known.column(name))
   directShear(walls, each, rigidity, acts.shear, acts)
   return walls
-    .work(wallShear.torsional, { T: acts.moment, k: 'k', rho: 'rho', J }, `Vt.${each.name}`)
-    .work(wallShear.total, { V_d: 'V_d', V_t: 'V_t' }, `V.${each.name}`)
+    .work(wallShear.torsional, { T: acts.moment, k: 'k', rho: 'rho', J }, `Vt.${each.name}`, about)
+    .work(wallShear.total, { V_d: 'V_d', V_t: 'V_t' }, `V.${each.name}`, about)
 }
 
 function directShear(
@@ -155,9 +157,10 @@ function directShear(
   { u, v }: { readonly u: Value; readonly v: Value },
 ): void {
   const key = `Vd.${name}`
-  if (!orthogonal) walls.work(wallShear.directSkew, { k: 'k', c: 'c', u_0: u, s: 's', v_0: v }, key)
-  else if (axis === 'x') walls.work(wallShear.directX, { V_x: shear, k: 'k', c: 'c', K_xx: K.xx }, key)
-  else walls.work(wallShear.directY, { V_y: shear, k: 'k', s: 's', K_yy: K.yy }, key)
+  const about = [caseOnPage(name)]
+  if (!orthogonal) walls.work(wallShear.directSkew, { k: 'k', c: 'c', u_0: u, s: 's', v_0: v }, key, about)
+  else if (axis === 'x') walls.work(wallShear.directX, { V_x: shear, k: 'k', c: 'c', K_xx: K.xx }, key, about)
+  else walls.work(wallShear.directY, { V_y: shear, k: 'k', s: 's', K_yy: K.yy }, key, about)
 }
 
 function moved(
@@ -169,22 +172,22 @@ function moved(
   const [idU, idV] = [`${level}.u.${name}`, `${level}.v.${name}`]
   if (orthogonal || !K.xy || !D) {
     const still = (id: string, of: Sym): Value => ({
-      ...work(id, movement.x.u, { V_x: { ...shear, si: 0 }, K_xx: K.xx }, display, [name]),
-      tex: texAbout(of.tex, name),
+      ...work(id, movement.x.u, { V_x: { ...shear, si: 0 }, K_xx: K.xx }, display, [caseOnPage(name)]),
+      tex: texAbout(of.tex, caseOnPage(name)),
       origin: { kind: 'measured', what: `no part of the force of ${name} acts this way`, spans: [] },
     })
     if (axis === 'x')
-      return { u: work(idU, movement.x.u, { V_x: shear, K_xx: K.xx }, display, [name]), v: still(idV, v0) }
-    return { u: still(idU, u0), v: work(idV, movement.x.v, { V_y: shear, K_yy: K.yy }, display, [name]) }
+      return { u: work(idU, movement.x.u, { V_x: shear, K_xx: K.xx }, display, [caseOnPage(name)]), v: still(idV, v0) }
+    return { u: still(idU, u0), v: work(idV, movement.x.v, { V_y: shear, K_yy: K.yy }, display, [caseOnPage(name)]) }
   }
   const { xx, yy, xy } = K
   if (axis === 'x')
     return {
-      u: work(idU, movement.skewX.u, { K_yy: yy, V_x: shear, D }, display, [name]),
-      v: work(idV, movement.skewX.v, { K_xy: xy, V_x: shear, D }, display, [name]),
+      u: work(idU, movement.skewX.u, { K_yy: yy, V_x: shear, D }, display, [caseOnPage(name)]),
+      v: work(idV, movement.skewX.v, { K_xy: xy, V_x: shear, D }, display, [caseOnPage(name)]),
     }
   return {
-    u: work(idU, movement.skewY.u, { K_xy: xy, V_y: shear, D }, display, [name]),
-    v: work(idV, movement.skewY.v, { K_xx: xx, V_y: shear, D }, display, [name]),
+    u: work(idU, movement.skewY.u, { K_xy: xy, V_y: shear, D }, display, [caseOnPage(name)]),
+    v: work(idV, movement.skewY.v, { K_xx: xx, V_y: shear, D }, display, [caseOnPage(name)]),
   }
 }

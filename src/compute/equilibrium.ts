@@ -4,7 +4,7 @@ import type { Display } from '../base/kind.ts'
 import type { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
 import { work } from '../base/work.ts'
-import type { Case } from './cases.ts'
+import { type Case, caseOnPage } from './cases.ts'
 import { type Acting, appliedMoment } from './storey.ts'
 import { c, s, V, Vx, Vy, x, y } from './symbols.ts'
 
@@ -81,21 +81,23 @@ export function residualOf(
   }
   const x =
     axis === 'x'
-      ? work(`${id}.x.${name}`, balance.alongX, { sum_Vc: sums.sum_Vc, V_x: shear }, display, [name])
-      : work(`${id}.x.${name}`, balance.noneX, sums, display, [name])
+      ? work(`${id}.x.${name}`, balance.alongX, { sum_Vc: sums.sum_Vc, V_x: shear }, display, [caseOnPage(name)])
+      : work(`${id}.x.${name}`, balance.noneX, sums, display, [caseOnPage(name)])
   const y =
     axis === 'y'
-      ? work(`${id}.y.${name}`, balance.alongY, { sum_Vs: sums.sum_Vs, V_y: shear }, display, [name])
-      : work(`${id}.y.${name}`, balance.noneY, sums, display, [name])
+      ? work(`${id}.y.${name}`, balance.alongY, { sum_Vs: sums.sum_Vs, V_y: shear }, display, [caseOnPage(name)])
+      : work(`${id}.y.${name}`, balance.noneY, sums, display, [caseOnPage(name)])
   const applied = appliedMoment(level, each, acting, display)
-  const M = work(`${id}.M.${name}`, balance.moment, { sum_Vr: sums.sum_Vr, M_o: applied }, display, [name])
+  const M = work(`${id}.M.${name}`, balance.moment, { sum_Vr: sums.sum_Vr, M_o: applied }, display, [caseOnPage(name)])
   const l = longestArm(walls)
   const inputs = { R_x: x, R_y: y, R_M: M, l, [axis === 'x' ? 'V_x' : 'V_y']: shear }
   return {
     x,
     y,
     M,
-    ratio: work(`${id}.ratio.${name}`, axis === 'x' ? balance.ratioX : balance.ratioY, inputs, display, [name]),
+    ratio: work(`${id}.ratio.${name}`, axis === 'x' ? balance.ratioX : balance.ratioY, inputs, display, [
+      caseOnPage(name),
+    ]),
     resisted: { x: sums.sum_Vc, y: sums.sum_Vs, M: sums.sum_Vr },
     appliedMoment: applied,
   }

@@ -345,6 +345,6 @@ const driftNotWorked = (level: string, at: Span): Diagnostic =>
     'warning',
     'drift-not-worked',
     at,
-    `displacement of level ${level} is not worked`,
+    `displacement of ${level} is not worked`,
     `Its walls have relative stiffness, which fixes ${inWords(['shares of force'], 'and')} but not displacement. Give them a construction, or k with a unit.`,
   )

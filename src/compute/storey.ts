@@ -10,7 +10,7 @@ import type { Display } from '../base/kind.ts'
 import { type ColumnInput, Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
 import { texAbout, work } from '../base/work.ts'
-import { type Axis, type Case, casesOf } from './cases.ts'
+import { type Axis, type Case, caseOnPage, casesOf } from './cases.ts'
 import type { Rigidity } from './rigidity.ts'
 import { eax, eay, ex, ey, Fx, Fy, T, Vx, Vy, xm, xr, ym, yr } from './symbols.ts'
 
@@ -123,10 +123,10 @@ export function workMoment(
   if (only && force && more.length === 0 && only.level === rigidity.level) {
     const inputs: Record<string, Value> = axis === 'x' ? { F_x: force, e_y: e.y } : { F_y: force, e_x: e.x }
     if (moved !== 0) inputs[axis === 'x' ? 'e_ay' : 'e_ax'] = axis === 'x' ? only.arm.y : only.arm.x
-    return { moment: work(id, about, inputs, display, [name]) }
+    return { moment: work(id, about, inputs, display, [caseOnPage(name)]) }
   }
   const moments = momentTable(each, rigidity, from, display)
-  return { moment: { ...moments.sum('T', T, id), tex: texAbout(T.tex, name) }, moments }
+  return { moment: { ...moments.sum('T', T, id), tex: texAbout(T.tex, caseOnPage(name)) }, moments }
 }
 
 /** Each level's force has its own arm about this storey's centre of rigidity. */
@@ -164,7 +164,7 @@ function momentTable(
       axis === 'x' ? eay : eax,
       from.map(({ arm }) => (axis === 'x' ? arm.y : arm.x)),
     )
-  return table.work(momentFormula(each).about, inputs, `T.${name}`)
+  return table.work(momentFormula(each).about, inputs, `T.${name}`, [caseOnPage(name)])
 }
 
 /** The same forces about the origin, which leans on no centre of rigidity. */
@@ -191,5 +191,5 @@ export function appliedMoment(level: string, each: Case, acting: readonly Acting
       from.map(({ arm }) => (axis === 'x' ? arm.y : arm.x)),
     )
   const inputs = Object.fromEntries([...origin.symbols.keys()].map(symbol => [symbol, symbol]))
-  return table.work(origin, inputs, `M_o.${name}`).sum('M_o', Mo, `${level}.M_o.${name}`)
+  return table.work(origin, inputs, `M_o.${name}`, [caseOnPage(name)]).sum('M_o', Mo, `${level}.M_o.${name}`)
 }

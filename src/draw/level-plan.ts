@@ -3,6 +3,7 @@ import { inLanguage, type Language } from '../base/language.ts'
 import { asTyped, columnDecimals, fixed, numeralOnPage } from '../base/numeral.ts'
 import { unit, unitOnPage, unitText } from '../base/unit.ts'
 import { onPage, printed, shown, type Value } from '../base/value.ts'
+import { caseOnPage } from '../compute/cases.ts'
 import type { CaseResult, Distribution } from '../compute/distribution.ts'
 import type { Mass } from '../compute/mass.ts'
 import type { Plan } from '../compute/plan.ts'
@@ -52,7 +53,9 @@ export function planView(picture: LevelPicture): PlanView {
     dimension: metres => onPage(asTyped(metres / scale.scale), scale, language),
     scaleUnit: { metres: scale.scale, name: system === 'US' ? 'ft' : 'm' },
     legend: {
-      shear: drawn ? `shear of a wall in ${drawn.case.name}, ${unitOfShear}` : `design shear of a wall, ${unitOfShear}`,
+      shear: drawn
+        ? `shear of a wall in ${caseOnPage(drawn.case.name)}, ${unitOfShear}`
+        : `design shear of a wall, ${unitOfShear}`,
       centreOfMass: words('centre of mass'),
       centreOfRigidity: words('centre of rigidity'),
       force: words('storey force'),

@@ -5,6 +5,7 @@ import { fixed } from '../base/numeral.ts'
 import { bad, good } from '../base/outcome.ts'
 import { parseExpr } from '../base/parse.ts'
 import { onPage, printed, type Value } from '../base/value.ts'
+import { caseOnPage } from '../compute/cases.ts'
 import { exprDiagnostic, unknownName } from '../model/cell.ts'
 import { isWord, type Scope } from '../model/scope.ts'
 import type { QuoteMark } from '../read/document.ts'
@@ -16,7 +17,11 @@ export function explainQuote({ id, options }: QuoteMark, scope: Scope, context: 
   const found = scope.lookup(id.text)
   if (found === undefined) return bad([unknownName(id.text, id.span, scope)])
   if (!found.ok) return found
-  if (isWord(found.value)) return good({ id: found.value.about, printed: found.value.text })
+  if (isWord(found.value))
+    return good({
+      id: found.value.about,
+      printed: found.value.id.endsWith('.case') ? caseOnPage(found.value.text) : found.value.text,
+    })
   context.roots.set(found.value.id, found.value)
   if (options.text === '') return good({ id: found.value.id, printed: printed(found.value, context.language) })
   const asked = asAsked(found.value, options, context)

@@ -110,7 +110,7 @@ export function explainRigidity(rigidity: Rigidity, detail: Detail, context: Con
         explainTable(
           walls,
           {
-            id: `${level}.lines`,
+            id: `${level}.wall-lines`,
             caption: `Walls of ${level}: stiffness, direction cosine and sine, midpoint, and arm about the origin.`,
             rowHead: 'Wall',
             columns: ['k', 'c', 's', 'x', 'y', 'r'],
@@ -133,7 +133,7 @@ export function explainRigidity(rigidity: Rigidity, detail: Detail, context: Con
     walls,
     {
       id: `${level}.arms`,
-      caption: `Arm of each wall about the centre of rigidity, positive where its shear turns ${level} counter-clockwise.`,
+      caption: `Arm of each wall about the centre of rigidity, positive where its shear turns the diaphragm counter-clockwise.`,
       rowHead: 'Wall',
       columns: ['k', 'rho', 'k_rho2'],
       sums: { k_rho2: J },
@@ -141,7 +141,11 @@ export function explainRigidity(rigidity: Rigidity, detail: Detail, context: Con
     context,
   )
   if (detail === 'table') return [...tables, ...say(x, y), arms, ...say(J)]
-  return [...tables, ...say(K.xx, K.yy, K.xy, ...(orthogonal ? [] : sums), D, x, y, angle), arms, ...say(J)]
+  const axes: readonly Piece[] = orthogonal
+    ? [{ kind: 'note', text: 'Every wall lies along x or y, so these are the principal axes.' }]
+    : []
+  const centre = say(K.xx, K.yy, K.xy, ...(orthogonal ? [] : sums), D, x, y, angle)
+  return [...tables, ...axes, ...centre, arms, ...say(J)]
 }
 
 const sumsOf = (sums: Readonly<Record<string, Value | undefined>>): Readonly<Record<string, Value>> =>

@@ -3,7 +3,8 @@ import { sym } from '../base/formula.ts'
 import type { Display } from '../base/kind.ts'
 import { numeralOnPage, rounded } from '../base/numeral.ts'
 import { Tabulation } from '../base/tabulation.ts'
-import { printed, type Value } from '../base/value.ts'
+import type { Value } from '../base/value.ts'
+import { caseOnPage } from '../compute/cases.ts'
 import type { Displacement } from '../compute/displacement.ts'
 import type { CaseResult, Distribution } from '../compute/distribution.ts'
 import { T, V } from '../compute/symbols.ts'
@@ -15,21 +16,23 @@ import { explainTable } from './table.ts'
 
 const caseTable = (cases: readonly CaseResult[], display: Display): Tabulation =>
   new Tabulation(
-    cases.map(each => each.case.name),
+    cases.map(each => caseOnPage(each.case.name)),
     (row, key) => `${key}.${row}`,
     display,
   )
 
 export function explainTorsion(
-  distribution: Distribution,
-  shown: CaseResult,
+  { level, cases }: Distribution,
+  shown: readonly CaseResult[],
   detail: Detail,
   display: Display,
   context: Context,
 ): readonly Piece[] {
-  const { level, cases } = distribution
-  const result = explainValue(shown.moment, context)
-  if (detail === 'result') return [result]
+  const results = shown.flatMap(each => [
+    ...(detail === 'full' ? momentTable(level, each, context) : []),
+    explainValue(each.moment, context),
+  ])
+  if (detail === 'result') return results
   const table = caseTable(cases, display)
     .take(
       V,
@@ -39,32 +42,31 @@ export function explainTorsion(
       T,
       cases.map(({ moment }) => moment),
     )
-  const several = shown.moments
-    ? [
-        explainTable(
-          shown.moments,
-          {
-            id: `${level}.moments`,
-            caption: `Moment of each level's force about the centre of rigidity of ${level}, case ${shown.case.name}.`,
-            rowHead: 'Level',
-            columns: shown.moments.columns.map(({ sym }) => sym.name),
-            sums: { T: shown.moment },
-          },
-          context,
-        ),
-      ]
-    : []
-  const all = explainTable(
-    table,
-    {
-      id: `${level}.torsion`,
-      caption: `Storey shear and its moment about the centre of rigidity of ${level}, counter-clockwise positive. In EX+ the mass is moved toward positive y, in EY+ toward positive x.`,
-      rowHead: 'Case',
-      columns: ['V', 'T'],
-    },
-    context,
-  )
-  return detail === 'table' ? [all] : [...several, result, all]
+  const want = {
+    id: `${level}.torsion`,
+    caption: `Storey shear and its moment about the centre of rigidity of ${level}, counter-clockwise positive. In EX+ the mass is moved toward positive y, in EY+ toward positive x.`,
+    rowHead: 'Case',
+    columns: ['V', 'T'],
+  }
+  const all = explainTable(table, want, context)
+  return detail === 'table' ? [all] : [...results, all]
+}
+
+/** How the moment comes together where the forces of several levels act. */
+function momentTable(
+  level: string,
+  { case: { name }, moment, moments }: CaseResult,
+  context: Context,
+): readonly Piece[] {
+  if (!moments) return []
+  const want = {
+    id: `${level}.moments.${name}`,
+    caption: `Moment of each level's force about the centre of rigidity of ${level}, case ${caseOnPage(name)}.`,
+    rowHead: 'Level',
+    columns: moments.columns.map(({ sym }) => sym.name),
+    sums: { T: moment },
+  }
+  return [explainTable(moments, want, context)]
 }
 
 export function explainWallShears(
@@ -82,7 +84,7 @@ export function explainWallShears(
     shown.walls,
     {
       id: `${level}.shears.${name}`,
-      caption: `Direct and torsional shear of the walls of ${level} in case ${name}${others}.`,
+      caption: `Direct and torsional shear of the walls of ${level} in case ${caseOnPage(name)}${others}.`,
       rowHead: 'Wall',
       columns: ['k', 'c', 's', 'rho', 'V_d', 'V_t', 'V'],
     },
@@ -113,7 +115,7 @@ export function explainDesignShears(
   })
   if (detail === 'result') return steps
   const columns = design.columns.map(({ sym }) => sym.name).filter(name => name !== 'L' && name !== 'v')
-  const cases = design.rows.map((_, i) => governingCase(i).text)
+  const cases = design.rows.map((_, i) => caseOnPage(governingCase(i).text))
   const table = explainTable(
     design,
     {
@@ -132,35 +134,13 @@ export function explainDesignShears(
 export function explainDisplacement(
   level: string,
   all: readonly Displacement[],
-  shown: Displacement,
+  shown: readonly Displacement[],
   detail: Detail,
   display: Display,
   context: Context,
 ): readonly Piece[] {
-  const { points, result, governing } = shown
-  const axis = result.case.axis
-  const at = points.rows.indexOf(governing.corner)
-  const ends = points.column(`delta_${axis}`).cell(at)
-  const steps = [
-    result.u,
-    result.v,
-    result.phi,
-    points.column('delta_x').cell(0),
-    points.column('delta_y').cell(0),
-    ends,
-  ].map(value => explainValue(value, context))
-  if (detail === 'result') return [explainValue(governing.value, context)]
-  const table = explainTable(
-    points,
-    {
-      id: `${level}.displacement.${result.case.name}`,
-      caption: `Displacement of the centre of mass and of the corners of ${level} in case ${result.case.name}.`,
-      rowHead: 'Point',
-      columns: ['x', 'y', 'delta_x', 'delta_y'],
-      governs: at,
-    },
-    context,
-  )
+  if (detail === 'result') return shown.map(({ governing }) => explainValue(governing.value, context))
+  const worked = shown.flatMap(each => displacedPoints(level, each, detail, context))
   const drift = caseTable(
     all.map(({ result }) => result),
     display,
@@ -168,18 +148,39 @@ export function explainDisplacement(
     sym('delta', '\\delta', 'displacement'),
     all.map(({ governing }) => governing.value),
   )
-  const summary = explainTable(
-    drift,
-    {
-      id: `${level}.drift`,
-      caption: `Largest displacement of a corner of ${level} along the force, in each case.`,
-      rowHead: 'Case',
-      columns: ['delta'],
-      words: [{ head: 'Corner', cells: all.map(({ governing }) => governing.corner) }],
-    },
-    context,
+  const want = {
+    id: `${level}.drift`,
+    caption: `Largest displacement of a corner of ${level} along the force in each case, relative to the foot of its walls.`,
+    rowHead: 'Case',
+    columns: ['delta'],
+    words: [{ head: 'Corner', cells: all.map(({ governing }) => governing.corner) }],
+  }
+  return [...worked, explainTable(drift, want, context)]
+}
+
+/** The movement of one case: at the centre of rigidity, at the centre of mass, at the governing corner, and all in a table. */
+function displacedPoints(
+  level: string,
+  { points, result, governing }: Displacement,
+  detail: Detail,
+  context: Context,
+): readonly Piece[] {
+  const { name, axis } = result.case
+  const at = points.rows.indexOf(governing.corner)
+  const [dx, dy] = [points.column('delta_x'), points.column('delta_y')]
+  const corner = (axis === 'x' ? dx : dy).cell(at)
+  const steps = [result.u, result.v, result.phi, dx.cell(0), dy.cell(0), corner].map(value =>
+    explainValue(value, context),
   )
-  return detail === 'table' ? [table, summary] : [...steps, table, summary]
+  const want = {
+    id: `${level}.displacement.${name}`,
+    caption: `Displacement of the centre of mass and of the corners of ${level} in case ${caseOnPage(name)}.`,
+    rowHead: 'Point',
+    columns: ['x', 'y', 'delta_x', 'delta_y'],
+    governs: at,
+  }
+  const table = explainTable(points, want, context)
+  return detail === 'table' ? [table] : [...steps, table]
 }
 
 /** The residual that the arithmetic may leave, of the storey shear. */
@@ -221,7 +222,7 @@ export function explainEquilibrium(
       cases.map(({ residual }) => residual.resisted.M),
     )
   for (const { residual } of cases) context.roots.set(residual.ratio.id, residual.ratio)
-  const residuals = cases.map(({ residual }) => numeralOnPage(rounded(residual.ratio.si), context.language))
+  const residuals = cases.map(({ residual }) => residualOnPage(residual.ratio, context))
   const check = shownCheck(equilibriumCheck(distribution, context), context)
   if (detail === 'result') return [check]
   return [
@@ -240,6 +241,9 @@ export function explainEquilibrium(
   ]
 }
 
+/** Two digits tell what a residual has to tell: how small it is. */
+const residualOnPage = ({ si }: Value, { language }: Context): string => numeralOnPage(rounded(si, -2), language)
+
 /** The check of the case with the largest residual. */
 export function equilibriumCheck({ level, cases }: Distribution, context: Context): Check {
   const ratios = cases.map(({ residual }) => residual.ratio)
@@ -249,11 +253,11 @@ export function equilibriumCheck({ level, cases }: Distribution, context: Contex
     kind: 'check',
     id: `${level}.equilibrium.check`,
     what: context.words(`Equilibrium of ${level}, largest residual`),
-    demand: printed(worst, context.language),
+    demand: residualOnPage(worst, context),
     capacity: numeralOnPage(rounded(ALLOWED), context.language),
     numbers: { demand: worst.si, capacity: ALLOWED, unit: '' },
     ratio,
-    ratioPrinted: numeralOnPage(rounded(ratio), context.language),
+    ratioPrinted: numeralOnPage(rounded(ratio, -2), context.language),
     ok: ratio <= 1,
     reference: 'limit of the arithmetic',
     sourceLines: [],

@@ -3,6 +3,8 @@ import type { Diagnostic } from '../base/diagnostic.ts'
 import { all, type Result, together } from '../base/ledger.ts'
 import { suggestion } from '../base/near.ts'
 import { bad, good } from '../base/outcome.ts'
+import { caseOnPage } from '../compute/cases.ts'
+import type { Displacement } from '../compute/displacement.ts'
 import type { CaseResult, Distribution } from '../compute/distribution.ts'
 import type { LevelWork } from '../compute/level.ts'
 import { diagnose } from '../read/text.ts'
@@ -83,10 +85,17 @@ function answer(want: Want, level: LevelWork, request: Request, context: Context
   }
 }
 
-function plan(level: LevelWork, { caseName }: Request, context: Context): Result<readonly Piece[]> {
-  const chosen = caseName ? caseOf(level, caseName) : undefined
-  if (chosen && !chosen.ok) return chosen
-  return figure(level, caseName?.text, context)
+function plan(level: LevelWork, request: Request, context: Context): Result<readonly Piece[]> {
+  if (!request.caseName) return figure(level, undefined, context)
+  const cases = casesShown(level, request)
+  if (!cases.ok) return cases
+  return flatAll(cases.value.map(each => figure(level, each.case.name, context)))
+}
+
+/** The pieces of several answers in order, or all their faults. */
+function flatAll(parts: readonly Result<readonly Piece[]>[]): Result<readonly Piece[]> {
+  const done = all(parts)
+  return done.ok ? good(done.value.flat()) : done
 }
 
 /** The plan with the design shears, or with those of one case and the force where it acts. */
@@ -94,7 +103,7 @@ function figure(level: LevelWork, caseName: string | undefined, context: Context
   const made = context.sketch(level, caseName)
   if (!made.ok) return made
   const shears = hasShears(level)
-  const what = !shears ? '' : caseName ? ` Shears and storey force of case ${caseName}.` : ' Design shears.'
+  const what = !shears ? '' : caseName ? ` Shears and storey force of case ${caseOnPage(caseName)}.` : ' Design shears.'
   const id = caseName ? `${level.name}.plan.${caseName}` : `${level.name}.plan`
   const caption = context.words(`Plan of ${level.name}.${what}`)
   return good([{ kind: 'figure', id: context.anchor(id), number: '', caption, ...made.value }])
@@ -118,13 +127,11 @@ function shears(want: ShearWant, level: LevelWork, request: Request, context: Co
   })
   if (!parts.ok) return parts
   const { distribution, display, walls, cases } = parts.value
-  const [first] = cases
-  if (!first) return bad([])
   // Every working that shows shears answers for their equilibrium.
   context.check(equilibriumCheck(distribution, context))
   switch (want) {
     case 'torsion':
-      return good(explainTorsion(distribution, first, detail, display, context))
+      return good(explainTorsion(distribution, cases, detail, display, context))
     case 'wall shears':
       return wallShears(level, distribution, cases, walls, request, context)
     case 'design shears':
@@ -132,13 +139,12 @@ function shears(want: ShearWant, level: LevelWork, request: Request, context: Co
     case 'equilibrium':
       return good(explainEquilibrium(distribution, detail, display, context))
     case 'displacement': {
-      const all = level.displacements()
-      if (!all.ok) return all
-      const worst = all.value.reduce((a, b) =>
-        Math.abs(b.governing.value.si) > Math.abs(a.governing.value.si) ? b : a,
-      )
-      const shown = request.caseName ? all.value.find(({ result }) => result === first) : worst
-      return good(explainDisplacement(level.name, all.value, shown ?? worst, detail, display, context))
+      const moved = level.displacements()
+      if (!moved.ok) return moved
+      const size = (each: Displacement) => Math.abs(each.governing.value.si)
+      const worst = moved.value.reduce((a, b) => (size(b) > size(a) ? b : a))
+      const shown = request.caseName ? moved.value.filter(({ result }) => cases.includes(result)) : [worst]
+      return good(explainDisplacement(level.name, moved.value, shown, detail, display, context))
     }
   }
 }
@@ -158,8 +164,7 @@ function wallShears(
     const drawn = figure(level, each.case.name, context)
     return drawn.ok ? good([...worked, ...drawn.value]) : drawn
   })
-  const done = all(pieces)
-  return done.ok ? good(done.value.flat()) : done
+  return flatAll(pieces)
 }
 
 /** The walls to work in full: those asked for, or the one that governs, or the stiffest where no force is known. */

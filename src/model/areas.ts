@@ -131,12 +131,12 @@ function readPolygon(record: RowOf, id: string, name: Text, grid: Grid, scope: S
   return good({ outline: area > 0 ? corners.value : [...corners.value].reverse(), rectangle: false })
 }
 
-/** Points in brackets, or crossings with spaces between. */
+/** Points in brackets and crossings, with spaces between. */
 function pointsOf(cell: Text): readonly Text[] {
-  const bracketed = [...cell.text.matchAll(/\(([^()]*(?:\([^()]*\)[^()]*)*)\)/g)]
-  if (bracketed.length > 0)
-    return bracketed.map(found => trimmed(part(cell, found.index + 1, found.index + found[0].length - 1)))
-  return [...cell.text.matchAll(/\S+/g)].map(found => part(cell, found.index, found.index + found[0].length))
+  return [...cell.text.matchAll(/\(((?:[^()]|\([^()]*\))*)\)|[^\s(]+/g)].map(found => {
+    const end = found.index + found[0].length
+    return found[1] === undefined ? part(cell, found.index, end) : trimmed(part(cell, found.index + 1, end - 1))
+  })
 }
 
 export const areaLoad = sym('w', 'w', 'areaLoad')

@@ -96,7 +96,7 @@ export function workEquation({ name, body, span, unit }: Equation, scope: Scope)
     id: name.text,
     tex: nameTex(name.text),
     si,
-    unit: unit ?? worked.value.unit,
+    unit: unit ?? (body.kind === 'quantity' ? body.unit : worked.value.unit),
     rounding: 0,
     origin: given ? { kind: 'given', span } : stated(body, span, sym(name.text, nameTex(name.text), 'number'), inputs),
   })
