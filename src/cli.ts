@@ -7,7 +7,7 @@ import { sourceOf } from './base/span.ts'
 import type { Compiled } from './compile.ts'
 import { compileText } from './compile.ts'
 import { auditSteps } from './explain/audit.ts'
-import { documentsIn, readText, writeWhole } from './files.ts'
+import { type DocumentFile, documentsIn, readText, writeWhole } from './files.ts'
 import { help, helpFor } from './help.ts'
 import { hostAt } from './host.ts'
 import { type Format, publish } from './publish.ts'
@@ -26,7 +26,7 @@ type Command = (typeof commands)[number]
 
 interface Settings {
   readonly command: Command
-  readonly documents: readonly string[]
+  readonly documents: readonly DocumentFile[]
   readonly to: readonly Format[]
   readonly out: string | undefined
   readonly draft: boolean
@@ -37,18 +37,18 @@ interface Settings {
 export function run(args: readonly string[]): number {
   const settings = readArguments(args)
   if (typeof settings === 'number') return settings
-  const codes = settings.documents.map(path => guarded(path, settings))
+  const codes = settings.documents.map(document => guarded(document, settings))
   return Math.max(DONE, ...codes)
 }
 
 /** A fault of our own must not hide the other documents, and is said as what it is. */
-function guarded(path: string, settings: Settings): number {
+function guarded(document: DocumentFile, settings: Settings): number {
   try {
-    return actions[settings.command](path, settings)
+    return actions[settings.command](document, settings)
   } catch (error) {
     const detail = error instanceof Error ? (process.env.PLATEMARK_DEBUG ? (error.stack ?? '') : error.message) : ''
     return fail(
-      `${shownPath(path)}: Platemark has a fault of its own here: ${detail}\nPlease report it with the document. Nothing was written.`,
+      `${shownPath(document.path)}: Platemark has a fault of its own here: ${detail}\nPlease report it with the document. Nothing was written.`,
     )
   }
 }
@@ -90,12 +90,17 @@ function readOptions(command: Command, args: readonly string[]): Settings | numb
   if (missing.length > 0) return fail(missing.join('\n'))
   return {
     command,
-    documents: [...new Set(found.flatMap(each => (each.ok ? each.value : [])))],
+    documents: onlyOnce(found.flatMap(each => (each.ok ? each.value : []))),
     to: to.filter(isFormat),
     out: typeof values.out === 'string' ? values.out : undefined,
     draft: values.draft === true,
     oneLine: values.list === true,
   }
+}
+
+/** Each document once, however often it was named. */
+function onlyOnce(documents: readonly DocumentFile[]): readonly DocumentFile[] {
+  return [...new Map(documents.map(document => [resolve(document.path), document])).values()]
 }
 
 function compileFile(path: string): Compiled | undefined {
@@ -112,11 +117,11 @@ function compileFile(path: string): Compiled | undefined {
 const shownPath = (path: string): string => relative(process.cwd(), resolve(path)).replaceAll('\\', '/')
 
 /** Pages are written by a sound build, or as a draft; results always are. */
-function build(path: string, settings: Settings): number {
+function build({ path, within }: DocumentFile, settings: Settings): number {
   const compiled = compileFile(path)
   if (!compiled) return ERRORS
   const errors = tell(compiled, settings)
-  const folder = settings.out ?? dirname(path)
+  const folder = settings.out === undefined ? dirname(path) : join(settings.out, within)
   const stem = basename(path, extname(path))
   // Beside its source the worked Markdown needs a name of its own.
   const stemOf = (format: Format) => (format === 'md' && settings.out === undefined ? `${stem}.worked` : stem)
@@ -129,7 +134,7 @@ function build(path: string, settings: Settings): number {
   return errors > 0 ? ERRORS : DONE
 }
 
-function check(path: string, settings: Settings): number {
+function check({ path }: DocumentFile, settings: Settings): number {
   const compiled = compileFile(path)
   if (!compiled) return ERRORS
   const errors = tell(compiled, settings)
@@ -137,7 +142,7 @@ function check(path: string, settings: Settings): number {
 }
 
 /** Goes over every printed line. A line that does not hold is a fault of ours, and is said as one. */
-function audit(path: string, settings: Settings): number {
+function audit({ path }: DocumentFile, settings: Settings): number {
   const compiled = compileFile(path)
   if (!compiled) return ERRORS
   const errors = tell(compiled, settings)

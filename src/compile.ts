@@ -1,9 +1,5 @@
 /** The whole pipeline: Markdown in, a calculation out, ready to be set in any format. */
 import type { Root } from 'mdast'
-import remarkFrontmatter from 'remark-frontmatter'
-import remarkGfm from 'remark-gfm'
-import remarkParse from 'remark-parse'
-import { unified } from 'unified'
 import type { Diagnostic } from './base/diagnostic.ts'
 import { sorted } from './base/report.ts'
 import { type Source, sourceOf } from './base/span.ts'
@@ -16,6 +12,7 @@ import type { Check, Sheet } from './explain/sheet.ts'
 import { type Choices, readChoices } from './model/front.ts'
 import { gather } from './model/givens.ts'
 import { readDocument } from './read/document.ts'
+import { parseMarkdown } from './read/markdown.ts'
 import { type Part, partsOf } from './render/parts.ts'
 
 export interface Compiled {
@@ -28,10 +25,8 @@ export interface Compiled {
   readonly diagnostics: readonly Diagnostic[]
 }
 
-const processor = unified().use(remarkParse).use(remarkGfm).use(remarkFrontmatter)
-
 export function compileText(path: string, text: string): Compiled {
-  return compileTree(processor.parse(text), sourceOf(path, text))
+  return compileTree(parseMarkdown(text), sourceOf(path, text))
 }
 
 export function compileTree(tree: Root, source: Source): Compiled {
@@ -53,7 +48,7 @@ export function compileTree(tree: Root, source: Source): Compiled {
     ...quoteFaults(quotes),
     ...sheet.warnings(),
   ])
-  const { items, headings } = numberItems(itemsOf(document, worked, context, diagnostics))
+  const { items, headings } = numberItems(itemsOf(document, worked, diagnostics))
   return { source, choices, parts: partsOf(items, headings, quotes), context, checks: context.checks, diagnostics }
 }
 

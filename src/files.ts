@@ -1,14 +1,21 @@
 /** Reading documents and writing results; nothing else touches the disk. */
 import { mkdirSync, mkdtempSync, readdirSync, readFileSync, renameSync, rmSync, statSync, writeFileSync } from 'node:fs'
-import { dirname, extname, join } from 'node:path'
+import { dirname, extname, join, relative } from 'node:path'
 import type { Diagnostic } from './base/diagnostic.ts'
 import { bad, good, type Outcome } from './base/outcome.ts'
 
+/** A document to be built. */
+export interface DocumentFile {
+  readonly path: string
+  /** Folder of it within the folder that was named, kept where results go elsewhere. */
+  readonly within: string
+}
+
 /** The Markdown files that a path names: itself, or those of a folder and the folders in it. */
-export function documentsIn(path: string): Outcome<readonly string[]> {
+export function documentsIn(path: string): Outcome<readonly DocumentFile[]> {
   try {
-    if (!statSync(path).isDirectory()) return good([path])
-    const found = markdownIn(path)
+    if (!statSync(path).isDirectory()) return good([{ path, within: '' }])
+    const found = markdownIn(path).map(file => ({ path: file, within: relative(path, dirname(file)) }))
     return found.length > 0 ? good(found) : bad(`${path}: no Markdown file in this folder`)
   } catch (error) {
     return bad(`${path}: ${reason(error)}`)

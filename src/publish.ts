@@ -90,16 +90,30 @@ function markdown(compiled: Compiled, stem: string, draft: boolean, host: Host):
     figures.push({ name, text: `${svg}\n` })
     return encodeURI(name)
   }
+  const lift = liftOf(parts)
   const setting = { source, level: 3, figureFile } as const
   const nodes = parts.flatMap((part): readonly RootContent[] =>
     part.kind === 'pieces'
       ? part.pieces.flatMap(piece => pieceNodes(piece, setting))
-      : part.nodes.filter(({ type }) => type !== 'yaml'),
+      : part.nodes.filter(({ type }) => type !== 'yaml').map(node => lowered(node, lift)),
   )
   const sheet = sheetOf(compiled, host.version, host.sha256(source.text), draft)
   const root: Root = { type: 'root', children: [...documentNodes(sheet, nodes)] }
   return [{ name: `${stem}.md`, text: writer.stringify(root) }, ...figures]
 }
+
+/** The title is the only heading of the first level; those of the document stand below it. */
+function liftOf(parts: readonly Part[]): number {
+  const depths = parts.flatMap(part => (part.kind === 'prose' ? part.nodes.flatMap(depthOf) : []))
+  return depths.length === 0 ? 0 : 2 - Math.min(...depths)
+}
+
+const depthOf = (node: RootContent): readonly number[] => (node.type === 'heading' ? [node.depth] : [])
+
+const depths = [1, 2, 3, 4, 5, 6] as const
+
+const lowered = (node: RootContent, lift: number): RootContent =>
+  node.type === 'heading' ? { ...node, depth: depths[Math.min(6, node.depth + lift) - 1] ?? 6 } : node
 
 function results({ source, choices, context, checks, diagnostics }: Compiled, host: Host): string {
   return renderJson({

@@ -15,7 +15,7 @@ import { distanceFrom } from '../model/geometry.ts'
 import type { LevelGivens } from '../model/givens.ts'
 import type { Grid } from '../model/grid.ts'
 import { type LineLoad, type PointLoad, readLineLoads, readPointLoads } from '../model/loads.ts'
-import type { Scope } from '../model/scope.ts'
+import type { Assumption, Scope } from '../model/scope.ts'
 import { readStiffness, readWalls, type Wall } from '../model/walls.ts'
 import type { Block } from '../read/block.ts'
 import { diagnose } from '../read/text.ts'
@@ -198,6 +198,7 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     const parts = together({ springs: springs(), display: display() })
     if (!parts.ok) return parts
     const made = workRigidity(name, parts.value.springs, parts.value.display)
+    for (const assumption of rigidAssumptions(name)) scope.assume(assumption)
     return made.ok ? made : bad([unstable(name, made.because, givens.walls[0]?.info ?? anchor)])
   })
 
@@ -231,6 +232,7 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
   const distribution = once('storey', (): Result<Distribution> => {
     const above = around.above()
     if (!above.ok) return above
+    if (above.value.length > 0) scope.assume(storeyByStorey)
     const actings = all([...above.value.map(level => level.acting()), acting()])
     const parts = together({ rigidity: rigidity(), mass: mass(), display: display(), actings })
     if (!parts.ok) return parts
@@ -339,6 +341,17 @@ const unstable = (level: string, because: Unstable, at: Span): Diagnostic =>
     `the walls of ${level} cannot hold it: ${because}`,
     `A rigid diaphragm needs stiffness along both axes and against turning. ${unstableHelp[because]}`,
   )
+
+const storeyByStorey: Assumption = {
+  text: 'Each storey is worked on its own: its walls stand on what is below as on a foundation.',
+  because: 'walls are worked storey by storey',
+}
+
+/** What the model of a floor on springs takes for granted. */
+const rigidAssumptions = (level: string): readonly Assumption[] => [
+  { text: `The diaphragm of ${level} is rigid in its plane.`, because: 'no other behaviour is worked' },
+  { text: 'Walls resist along their own line only.', because: 'their stiffness across it is left out' },
+]
 
 const driftNotWorked = (level: string, at: Span): Diagnostic =>
   diagnose(

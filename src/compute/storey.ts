@@ -85,10 +85,19 @@ export function workEccentricity(
 const forces = { x: Fx, y: Fy }
 const storeyShears = { x: Vx, y: Vy }
 
+/** A storey below one level carries the force of that level, under a name of its own. */
+const ownForce = {
+  x: formula({ gives: Vx, body: 'F_x', of: [Fx], source: STATICS }),
+  y: formula({ gives: Vy, body: 'F_y', of: [Fy], source: STATICS }),
+}
+
 /** The force of the level itself, or the sum from the levels at and above it. */
 export function storeyShear(level: string, axis: Axis, acting: readonly Acting[], display: Display): Value {
   const from = acting.flatMap(({ level, force }) => (force[axis] ? [{ level, value: force[axis] }] : []))
   const [only, ...more] = from
+  const id = `${level}.storey.${axis}`
+  if (only && more.length === 0 && only.level === level)
+    return work(id, ownForce[axis], { [forces[axis].name]: only.value }, display)
   const table = new Tabulation(
     from.map(({ level }) => level),
     (row, key) => `${row}.force.${key}`,
@@ -97,8 +106,7 @@ export function storeyShear(level: string, axis: Axis, acting: readonly Acting[]
     forces[axis],
     from.map(({ value }) => value),
   )
-  const total = table.sum(forces[axis].name, storeyShears[axis], `${level}.storey.${axis}`)
-  return only && more.length === 0 && only.level === level ? only.value : total
+  return table.sum(forces[axis].name, storeyShears[axis], id)
 }
 
 function momentFormula({ name }: Case) {

@@ -3,6 +3,7 @@ import type { Diagnostic } from '../base/diagnostic.ts'
 import { namesIn } from '../base/expr.ts'
 import { Ledger, type Result } from '../base/ledger.ts'
 import { bad, good } from '../base/outcome.ts'
+import type { Span } from '../base/span.ts'
 import type { Value, Word } from '../base/value.ts'
 import { duplicates } from '../model/columns.ts'
 import { type Construction, readConstruction } from '../model/construction.ts'
@@ -17,6 +18,12 @@ import type { Text } from '../read/text.ts'
 import { constructionValue, levelIds, levelValue } from './ids.ts'
 import { type LevelWork, levelWork } from './level.ts'
 
+/** A value that a cell works from others, and the place of the cell. */
+export interface StatedCell {
+  readonly value: Value
+  readonly at: Span
+}
+
 export interface Worksheet {
   readonly scope: Scope
   readonly grid: () => Result<Grid>
@@ -28,6 +35,8 @@ export interface Worksheet {
   readonly equationLines: readonly Text[]
   readonly assumptions: () => readonly Assumption[]
   readonly warnings: () => readonly Diagnostic[]
+  /** Values that cells of the given blocks work from others. */
+  readonly statedCells: () => readonly StatedCell[]
   /** Reads every given block, whether or not a working asks for it, and returns its faults. */
   readonly readAll: () => readonly Diagnostic[]
 }
@@ -35,6 +44,7 @@ export interface Worksheet {
 export function worksheet(givens: Givens, { system, assumptions: chosen }: Choices): Worksheet {
   const ledger = new Ledger()
   const warnings: Diagnostic[] = []
+  const statedCells = new Map<string, StatedCell>()
   const assumptions = new Map(chosen.map(assumption => [assumption.text, assumption]))
   const scope: Scope = {
     ledger,
@@ -43,6 +53,7 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
     ids: () => [...equations.keys(), ...levels.flatMap(levelIds)],
     warn: fault => warnings.push(fault),
     assume: assumption => assumptions.set(assumption.text, assumption),
+    stated: (value, at) => statedCells.set(value.id, { value, at }),
   }
   const nowhere = { start: 0, end: 0 }
   const grid = ledger.once('grid', givens.grid[0]?.info ?? nowhere, () => readGrid(givens.grid, scope))
@@ -123,6 +134,7 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
     if (path.length === 0) return equations.has(id) ? workInOrder(id) : undefined
     const level = levels.find(({ name }) => name === head)
     const [first = '', second = ''] = path
+    if (level && first === 'elevation' && path.length === 1) return elevationOf(head)
     if (level) {
       const found = levelValue(level, path)
       if (found) return found
@@ -134,6 +146,13 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
       return construction && user ? constructionValue(construction, user.moduli(first), second) : undefined
     }
     return undefined
+  }
+
+  function elevationOf(level: string): Result<Value> | undefined {
+    const read = levelLines()
+    if (!read.ok) return read
+    const line = read.value.find(({ name }) => name === level)
+    return line?.elevation && good(line.elevation)
   }
 
   function gridValue(name: string): Result<Value> | undefined {
@@ -157,6 +176,7 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
     },
     assumptions: () => [...assumptions.values()],
     warnings: () => warnings,
+    statedCells: () => [...statedCells.values()],
     readAll: () => [
       ...givens.faults,
       ...repeated,

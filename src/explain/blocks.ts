@@ -26,8 +26,10 @@ export function explainBlocks(
   const requests = [...blocks]
     .filter(([, { topic }]) => topic === 'working')
     .map(([node, block]) => [node, block, readRequest(block)] as const)
-  for (const [node, block] of blocks)
+  for (const [node, block] of blocks) {
     if (block.topic === 'equations') worked.set(node, equationPieces(block, sheet, context))
+    else if (block.topic !== 'working') worked.set(node, givenPieces(node, block, sheet, context))
+  }
   for (const [node, block, request] of requests) {
     if (!request.ok) worked.set(node, [{ kind: 'fault', diagnostics: request.because }])
     else if (!request.value.wants.some(isDocumentWant))
@@ -62,7 +64,10 @@ const noLevel = (block: Block, names: readonly string[]): Diagnostic =>
 function equationPieces(block: Block, sheet: Worksheet, context: Context): readonly Piece[] {
   return block.lines.map((line): Piece => {
     const value = sheet.equation(line)
-    return value.ok ? explainValue(value.value, context) : { kind: 'fault', diagnostics: value.because }
+    if (!value.ok) return { kind: 'fault', diagnostics: value.because }
+    const equation = explainValue(value.value, context)
+    // What the engineer says of a line tells more than that they wrote it.
+    return line.comment === '' ? equation : { ...equation, reference: line.comment }
   })
 }
 
@@ -112,38 +117,53 @@ export function nestedBlocks({ tree, blocks }: Document): readonly Diagnostic[] 
   )
 }
 
-/** What was given, and a box where something is wrong with it. */
-export function explainGivenBlock(
-  node: Code,
-  block: Block,
-  context: Context,
-  diagnostics: readonly Diagnostic[],
-): readonly Piece[] {
-  const [start, end] = [node.position?.start.offset ?? 0, node.position?.end.offset ?? 0]
-  const own = diagnostics.filter(({ at }) => at.span.start >= start && at.span.start < end)
-  return [...explainGiven(block, context), ...(own.length > 0 ? [{ kind: 'fault', diagnostics: own } as const] : [])]
+/** What was given, and the steps of its cells that work a value from others. */
+function givenPieces(node: Code, block: Block, sheet: Worksheet, context: Context): readonly Piece[] {
+  const { start, end } = rangeOf(node)
+  const steps = sheet.statedCells().filter(({ at }) => at.start >= start && at.start < end)
+  const inOrder = [...steps].sort((a, b) => a.at.start - b.at.start)
+  return [...explainGiven(block, context), ...inOrder.map(({ value }) => explainValue(value, context))]
 }
 
-/** Every node of the document as an item to be numbered: a heading, the pieces of a block, or other prose. */
-export const itemsOf = (
+const rangeOf = (node: RootContent) => ({
+  start: node.position?.start.offset ?? 0,
+  end: node.position?.end.offset ?? 0,
+})
+
+/** Every node of the document as an item to be numbered, each followed by a box where something in it is wrong. */
+export function itemsOf(
   document: Document,
   worked: ReadonlyMap<Code, readonly Piece[]>,
-  context: Context,
   diagnostics: readonly Diagnostic[],
-): readonly Numbered<RootContent>[] =>
-  document.tree.children.map(node => itemOf(node, document, worked, context, diagnostics))
+): readonly Numbered<RootContent>[] {
+  return document.tree.children.flatMap((node): readonly Numbered<RootContent>[] => {
+    const pieces = node.type === 'code' ? worked.get(node) : undefined
+    const box = boxFor(node, pieces, diagnostics)
+    if (pieces) return [{ kind: 'pieces', pieces: [...pieces, ...box], key: node }]
+    const item: Numbered<RootContent> =
+      node.type === 'heading'
+        ? { kind: 'heading', depth: node.depth, text: headingText(node), key: node }
+        : { kind: 'other', key: node }
+    return box.length === 0 ? [item] : [item, { kind: 'pieces', pieces: box, key: node }]
+  })
+}
 
-function itemOf(
+/** A box with the faults of a node that its pieces do not show; warnings stand only beside what was given. */
+function boxFor(
   node: RootContent,
-  { blocks }: Document,
-  worked: ReadonlyMap<Code, readonly Piece[]>,
-  context: Context,
+  pieces: readonly Piece[] | undefined,
   diagnostics: readonly Diagnostic[],
-): Numbered<RootContent> {
-  if (node.type === 'heading') return { kind: 'heading', depth: node.depth, text: headingText(node), key: node }
-  const block = node.type === 'code' ? blocks.get(node) : undefined
-  if (node.type !== 'code' || !block) return { kind: 'other', key: node }
-  return { kind: 'pieces', pieces: worked.get(node) ?? explainGivenBlock(node, block, context, diagnostics), key: node }
+): readonly Piece[] {
+  const { start, end } = rangeOf(node)
+  const shown = new Set(faultsIn(pieces ?? []))
+  const own = diagnostics.filter(
+    fault =>
+      fault.at.span.start >= start &&
+      fault.at.span.start < end &&
+      (pieces !== undefined || fault.severity === 'error') &&
+      !shown.has(fault),
+  )
+  return own.length > 0 ? [{ kind: 'fault', diagnostics: own }] : []
 }
 
 const headingText = (node: Heading): string =>

@@ -35,11 +35,15 @@ export function explainGiven(block: Block, context: Context): readonly Piece[] {
     pieces.push(given(id, title, columns, rows, lines))
   }
   if (stated.length > 0) {
-    const columns = [
-      { head: table ? 'Setting' : title.replace(', as given', ''), unit: '', align: 'left' as const },
-      { head: 'Value', unit: '', align: 'left' as const },
-    ]
-    const rows = stated.map(({ name, value }): Row => ({ cells: [name.text, value.text], governs: false }))
+    const noted = stated.some(({ comment }) => comment !== '')
+    const heads = [table ? 'Setting' : 'Name', 'Value', ...(noted ? ['Note'] : [])]
+    const columns = heads.map(head => ({ head, unit: '', align: 'left' as const }))
+    const rows = stated.map(
+      ({ name, value, comment }): Row => ({
+        cells: [name.text, value.text, ...(noted ? [comment] : [])],
+        governs: false,
+      }),
+    )
     pieces.push(given(table ? context.anchor(`${id}.settings`) : id, title, columns, rows, lines))
   }
   return pieces

@@ -47,12 +47,13 @@ function assumptionItems(assumptions: readonly Assumption[], context: Context): 
 const sentence = (text: string): string =>
   `${/^[a-z] /i.test(text) ? text : text.charAt(0).toUpperCase() + text.slice(1)}.`
 
-/** Each source once, with the symbols that rest on it. */
+/** Each source once, in the order of its first use. */
 function referenceItems(context: Context): Items {
-  const bySource = new Map<string, Set<string>>()
-  for (const { source, gives } of context.formulas) {
-    if (source === 'stated' || source === 'sum of the column') continue
-    bySource.set(source, (bySource.get(source) ?? new Set()).add(gives.name))
-  }
-  return [...bySource].map(([source, symbols]) => ({ text: context.words(source), detail: [...symbols].join(', ') }))
+  const sources = new Set([...context.formulas].map(({ source }) => source))
+  return [...sources]
+    .filter(source => !ownWords.includes(source))
+    .map(source => ({ text: context.words(source), detail: '' }))
 }
+
+/** What a step says of itself when it leans on nothing outside the document. */
+const ownWords: readonly string[] = ['stated', 'sum of the column']

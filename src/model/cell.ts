@@ -24,6 +24,8 @@ export interface Want {
   readonly tex?: string
   /** The unit of the column's head, which a bare number takes. */
   readonly unit?: Unit
+  /** True for a coordinate, which the plan shows. */
+  readonly place?: boolean
 }
 
 /** A value of the kind that is wanted, in the document's units. */
@@ -41,19 +43,32 @@ export function quantityOf(expr: Expr, span: Span, want: Want, scope: Scope): Re
   const wanted = dimensionOfKind(want.sym.kind)
   const bare = isNumber(worked.value.dimension) && !isNumber(wanted)
   if (bare && want.unit === undefined) return bad([unitMissing(span, want, wanted)])
-  const factor = bare && want.unit ? want.unit.scale : 1
+  const unit = bare ? want.unit : undefined
+  const body = unit ? inUnit(expr, unit, span) : expr
   if (!bare && !sameDimension(worked.value.dimension, wanted))
     return bad([wrongDimension(span, want, worked.value.dimension, wanted)])
-  return good({
+  const value: Value = {
     id: want.id,
     tex: want.tex ?? want.sym.tex,
-    si: worked.value.si * factor,
+    si: worked.value.si * (unit?.scale ?? 1),
     unit: unitOfKind(want.sym.kind, scope.display),
     rounding: roundingOfKind(want.sym.kind),
     origin:
-      worked.value.inputs.size === 0 ? { kind: 'given', span } : stated(expr, span, want.sym, worked.value.inputs),
-  })
+      worked.value.inputs.size === 0 ? { kind: 'given', span } : stated(body, span, want.sym, worked.value.inputs),
+  }
+  // A bare name is told by the cell itself, and a coordinate by the plan.
+  if (worked.value.inputs.size > 0 && expr.kind !== 'name' && !want.place) scope.stated(value, span)
+  return good(value)
 }
+
+/** A pure number in the unit that its column's head gives. */
+const inUnit = (expr: Expr, unit: Unit, span: Span): Expr => ({
+  kind: 'binary',
+  op: '*',
+  left: expr,
+  right: { kind: 'quantity', count: 1, unit, span },
+  span,
+})
 
 /** A value that the engineer works from others, as a step of its own. */
 export function stated(expr: Expr, span: Span, gives: Sym, inputs: ReadonlyMap<string, Value>): Origin {

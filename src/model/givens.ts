@@ -36,7 +36,10 @@ export function gather(blocks: readonly Block[]): Givens {
   const levelTable = of('levels')
   const about = (block: Block) => perLevel.some(topic => topic === block.topic) && !isForceTable(block)
   const named = blocks.filter(about)
-  const names = levelTable.length > 0 ? levelNames(levelTable) : [firstName(named, blocks)]
+  const listed = levelNames(levelTable)
+  // Where the list of levels has faults of its own, they are the cause, not the blocks that name levels.
+  const used = [...new Set(blocks.filter(about).flatMap(({ about }) => about?.text ?? []))]
+  const names = levelTable.length === 0 ? [firstName(named, blocks)] : listed.length > 0 ? listed : used
   const strays = new Map<string, readonly Diagnostic[]>()
   for (const block of blocks.filter(block => about(block) || block.topic === 'working')) {
     const strange = strangeLevel(block, names)

@@ -133,6 +133,7 @@ function coordinate(cell: Text, axis: Axis, { id, mark, about }: PointWant, grid
     what: axis,
     sym: position[axis],
     tex: texAbout(`${axis}_{${mark}}`, ...about),
+    place: true,
   }
   const line = [...grid[axis]]
     .sort((a, b) => b.name.length - a.name.length)

@@ -2,6 +2,7 @@
 import type { Diagnostic } from '../base/diagnostic.ts'
 import type { Display } from '../base/kind.ts'
 import type { Ledger, Result } from '../base/ledger.ts'
+import type { Span } from '../base/span.ts'
 import type { Value, Word } from '../base/value.ts'
 
 /** Something taken because the document does not say it. */
@@ -20,6 +21,8 @@ export interface Scope {
   readonly ids: () => readonly string[]
   readonly warn: (fault: Diagnostic) => void
   readonly assume: (assumption: Assumption) => void
+  /** Tells of a value that a cell works from others, so that the page can show the step. */
+  readonly stated: (value: Value, at: Span) => void
 }
 
 export const isWord = (found: Value | Word): found is Word => 'text' in found

@@ -10,6 +10,13 @@ import { diagnose, part, type Text, trimmed } from './text.ts'
 export interface Setting {
   readonly name: Text
   readonly value: Text
+  /** What stands behind it after #. */
+  readonly comment: string
+}
+
+/** A line that is neither a setting nor a row, without its comment. */
+export interface Line extends Text {
+  readonly comment: string
 }
 
 export interface Block {
@@ -22,7 +29,7 @@ export interface Block {
   readonly settings: readonly Setting[]
   readonly table?: Table
   /** Lines that are neither: what a working asks for, the lines of equations. */
-  readonly lines: readonly Text[]
+  readonly lines: readonly Line[]
   /** Faults of the block's form; its meaning is not looked at when there are any. */
   readonly faults: readonly Diagnostic[]
 }
@@ -37,7 +44,7 @@ const COMMENT = /(?:^|\s)#.*$/s
 export function readBlock(info: Text, content: readonly Text[]): Block {
   const faults: Diagnostic[] = []
   const settings: Setting[] = []
-  const lines: Text[] = []
+  const lines: Line[] = []
   const rows: Text[] = []
   let tableEnded = false
   for (const raw of content) {
@@ -48,10 +55,12 @@ export function readBlock(info: Text, content: readonly Text[]): Block {
       continue
     }
     tableEnded ||= rows.length > 0 && line.text === ''
-    const kept = trimmed(part(line, 0, line.text.length - (COMMENT.exec(line.text)?.[0].length ?? 0)))
+    const remark = COMMENT.exec(line.text)?.[0] ?? ''
+    const comment = remark.trim().slice(1).trim()
+    const kept = trimmed(part(line, 0, line.text.length - remark.length))
     if (kept.text === '') continue
-    const setting = settingOf(kept)
-    if (!setting) lines.push(kept)
+    const setting = settingOf(kept, comment)
+    if (!setting) lines.push({ ...kept, comment })
     else {
       const before = settings.find(({ name }) => name.text === setting.name.text)
       if (before) faults.push(repeated(setting, before))
@@ -72,11 +81,11 @@ export function readBlock(info: Text, content: readonly Text[]): Block {
   }
 }
 
-function settingOf(line: Text): Setting | undefined {
+function settingOf(line: Text, comment: string): Setting | undefined {
   const found = SETTING.exec(line.text)
   if (!found || (line.text.includes('=') === true && line.text.indexOf('=') < line.text.indexOf(':'))) return undefined
   const name = found[1] ?? ''
-  return { name: part(line, 0, name.length), value: trimmed(part(line, line.text.indexOf(':') + 1)) }
+  return { name: part(line, 0, name.length), value: trimmed(part(line, line.text.indexOf(':') + 1)), comment }
 }
 
 function readInfo(info: Text): readonly [string, Text | undefined, readonly Setting[]] {
@@ -93,7 +102,7 @@ function readInfo(info: Text): readonly [string, Text | undefined, readonly Sett
 
 function option(word: Text): Setting {
   const sign = word.text.indexOf('=')
-  return { name: part(word, 0, sign), value: part(word, sign + 1) }
+  return { name: part(word, 0, sign), value: part(word, sign + 1), comment: '' }
 }
 
 const secondTable = (line: Text): Diagnostic =>

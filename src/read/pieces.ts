@@ -2,8 +2,8 @@
  * Where a Markdown text may be cut so that its pieces, read apart, give what the whole gives.
  *
  * A heading or a fence at the margin, after an empty line, ends every list, quotation and table before
- * it. Three things reach over such a line: an open fence, which is followed here; raw HTML, and
- * definitions of links and footnotes. A text that may hold one of the latter two is not cut.
+ * it. What reaches over such a line is an open fence at the margin, which is followed here, and raw HTML,
+ * definitions of links and footnotes, and fences that are indented: a text that may hold one of these is not cut.
  */
 
 export type Piece =
@@ -24,13 +24,16 @@ const LEAST = 1000
 
 const DEFINITION = /\]:/
 const OPEN_HTML = /^[ \t]*<(?:script|pre|style|textarea|!--(?!.*-->)|\?|!\[CDATA\[|![a-z])/im
+const FENCE = /^(`{3,}|~{3,})(.*)$/s
 const STRANGE = /[\r\0\ufeff]/
 
 /** @returns the pieces in order, which leave out nothing but empty lines; undefined when the text must be read whole */
 export function piecesOf(text: string): readonly Piece[] | undefined {
   if (STRANGE.test(text) || DEFINITION.test(text) || OPEN_HTML.test(text)) return undefined
-  const cutter = new Cutter(text)
   const start = frontMatterEnd(text)
+  // An open start of front matter makes the reader look at all that follows in another way.
+  if (start === 0 && text.startsWith('---')) return undefined
+  const cutter = new Cutter(text)
   let line = start === 0 ? 1 : text.slice(0, start).split('\n').length
   for (let at = start; at < text.length; line++) {
     const newline = text.indexOf('\n', at)
@@ -43,7 +46,7 @@ export function piecesOf(text: string): readonly Piece[] | undefined {
 
 /** Offset after the front matter, within which nothing is looked at. */
 function frontMatterEnd(text: string): number {
-  return /^---[ \t]*\n(?:[\s\S]*?\n)?---[ \t]*(?:\n|$)/.exec(text)?.[0].length ?? 0
+  return /^---[ \t]*\n(?:[\s\S]*?\n)??---[ \t]*(?:\n|$)/.exec(text)?.[0].length ?? 0
 }
 
 interface Open {
@@ -61,7 +64,8 @@ class Cutter {
   private readonly pieces: Piece[] = []
   private from = { start: 0, line: 1 }
   private open: Open | undefined
-  /** Nothing stands right above: an empty line, or the end of a fence that is a piece. */
+  private closed: Extract<Piece, { kind: 'fence' }> | undefined
+  /** Nothing stands right above but an empty line. */
   private free = true
   private readonly text: string
 
@@ -73,17 +77,21 @@ class Cutter {
   see(start: number, end: number, line: number): boolean {
     if (this.open) this.within(this.open, start, end, line)
     else {
+      const empty = this.text.slice(start, end).trim() === ''
+      if (empty) this.takeClosed(start, line)
+      this.closed = undefined
       const sign = this.text[start]
-      if (sign === ' ' && /^ {1,3}(?:```|~~~)/.test(this.text.slice(start, end))) return false
+      if (/.(?:```|~~~)/.test(this.text.slice(start, end)) && !FENCE.test(this.text.slice(start, end))) return false
       if (sign === '`' || sign === '~') this.fence(start, end, line)
       if (sign === '#' && this.free && start - this.from.start > LEAST && this.isHeading(start, end))
         this.cut(start, line)
-      this.free = start === end || this.text.slice(start, end).trim() === ''
+      this.free = empty
     }
     return true
   }
 
   finish(): readonly Piece[] {
+    this.takeClosed(this.text.length, 0)
     this.cut(this.text.length, 0)
     return this.pieces
   }
@@ -93,7 +101,7 @@ class Cutter {
   }
 
   private fence(start: number, end: number, line: number): void {
-    const found = /^(`{3,}|~{3,})(.*)$/s.exec(this.text.slice(start, end))
+    const found = FENCE.exec(this.text.slice(start, end))
     const [, mark = '', after = ''] = found ?? []
     if (!found || (mark.startsWith('`') && after.includes('`'))) return
     // The reader decodes escapes and entities, and keeps space at the end of an info string that has two words.
@@ -112,13 +120,20 @@ class Cutter {
     const closing = /^ {0,3}(`{3,}|~{3,})[ \t]*$/.exec(this.text.slice(start, end))?.[1]
     if (closing === undefined || !closing.startsWith(mark)) return
     this.open = undefined
-    this.free = open.apart
+    this.free = false
     if (!open.apart) return
-    this.cut(open.start, open.line)
     const content = this.text.slice(open.contentStart, Math.max(open.contentStart, start - 1))
     const { info } = open
-    this.pieces.push({ kind: 'fence', start: open.start, end, line: open.line, lastLine: line, info, content })
-    this.from = { start: Math.min(end + 1, this.text.length), line: line + 1 }
+    this.closed = { kind: 'fence', start: open.start, end, line: open.line, lastLine: line, info, content }
+  }
+
+  /** A fence becomes a piece once nothing stands right below it either. */
+  private takeClosed(next: number, line: number): void {
+    if (!this.closed) return
+    this.cut(this.closed.start, this.closed.line)
+    this.pieces.push(this.closed)
+    this.from = { start: next, line }
+    this.closed = undefined
   }
 
   /** Ends a piece of text. */

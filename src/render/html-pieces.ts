@@ -35,7 +35,7 @@ const figureHtml = ({
   svg,
   alternative,
 }: Figure): string => `<figure class="plan"${idAttribute(id)}>
-<div class="drawing" role="img" aria-label="${escapeHtml(alternative)}">${svg}</div>
+<div class="drawing" tabindex="0" role="img" aria-label="${escapeHtml(alternative)}">${svg}</div>
 <figcaption>${titleHtml('Figure', number)}${pageText(caption)}</figcaption>
 </figure>`
 

@@ -8,28 +8,29 @@ export function withQuotes<T extends RootContent>(node: T, quotes: Quotes): T {
   if (quotes.size === 0 || !('children' in node)) return node
   // A parent's children are of the kinds that it held before: text is replaced by text, strong and link.
   const children = (node.children as RootContent[]).flatMap((child): readonly RootContent[] =>
-    child.type === 'text' ? inline(child, quotes.get(child)) : [withQuotes(child, quotes)],
+    child.type === 'text' ? inline(child, quotes.get(child), node.type === 'link') : [withQuotes(child, quotes)],
   )
   return { ...node, children } as T
 }
 
-function inline(text: Text, quoted: readonly Quoted[] | undefined): PhrasingContent[] {
+/** @param linked true within a link of the engineer's own, which leads where they said */
+function inline(text: Text, quoted: readonly Quoted[] | undefined, linked: boolean): PhrasingContent[] {
   if (!quoted || quoted.length === 0) return [text]
   const out: PhrasingContent[] = []
   let from = 0
   for (const each of quoted) {
     if (each.within.start > from) out.push({ type: 'text', value: text.value.slice(from, each.within.start) })
-    out.push(inPlace(each))
+    out.push(inPlace(each, linked))
     from = each.within.end
   }
   if (from < text.value.length) out.push({ type: 'text', value: text.value.slice(from) })
   return out
 }
 
-function inPlace(quoted: Quoted): PhrasingContent {
+function inPlace(quoted: Quoted, linked: boolean): PhrasingContent {
   if ('missing' in quoted) return { type: 'strong', children: [{ type: 'text', value: `[${quoted.missing}]` }] }
   const words: Text = { type: 'text', value: quoted.quote.printed }
-  if (quoted.place === undefined) return words
+  if (quoted.place === undefined || linked) return words
   return {
     type: 'link',
     url: fragment(quoted.place),
