@@ -4,8 +4,8 @@ export type Language = 'en-US' | 'en-GB'
 /** British spelling, which is the spelling of the code, to American. */
 const american: readonly (readonly [RegExp, string])[] = [
   [/\b([Cc])entre/g, '$1enter'],
-  [/\b([Ss])torey/g, '$1tory'],
   [/\b([Ss])toreys/g, '$1tories'],
+  [/\b([Ss])torey/g, '$1tory'],
   [/\b([Mm])etre/g, '$1eter'],
   [/\b([Cc])olour/g, '$1olor'],
   [/\b([Bb])ehaviour/g, '$1ehavior'],

@@ -40,7 +40,7 @@ export class Ledger {
 }
 
 /** A longer chain of definitions would exhaust the machine before it told the reader anything. */
-const DEEPEST = 1000
+const DEEPEST = 300
 
 function tooDeep({ name, at }: Task): Diagnostic {
   return {

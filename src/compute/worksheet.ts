@@ -98,7 +98,7 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
     )
   }
 
-  /** Equations that have been asked for, so that a chain is not gone through again for each of its links. */
+  /** Equations whose parts were worked before them, or that lead into a ring: nothing is to be put in order there. */
   const settled = new Set<string>()
 
   /**
@@ -108,24 +108,24 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
   function workInOrder(name: string): Result<Value> | undefined {
     const waiting = settled.has(name) ? [] : [name]
     const opened = new Set<string>()
-    const closed = new Set<string>()
+    const order: string[] = []
     for (let next = waiting.at(-1); next !== undefined; next = waiting.at(-1)) {
       if (opened.has(next)) {
         waiting.pop()
-        closed.add(next)
+        if (!settled.has(next)) order.push(next)
+        settled.add(next)
         continue
       }
       opened.add(next)
       const body = bodies.get(next)
-      const names = body ? [...namesIn(body.body).keys()] : []
-      const rest = names.filter(other => bodies.has(other) && !closed.has(other) && !settled.has(other))
-      if (rest.some(other => opened.has(other))) return equations.get(name)?.()
+      const rest = body ? [...namesIn(body.body).keys()].filter(other => bodies.has(other) && !settled.has(other)) : []
+      if (rest.some(other => opened.has(other))) {
+        for (const each of opened) settled.add(each)
+        break
+      }
       waiting.push(...rest)
     }
-    for (const earlier of closed) {
-      equations.get(earlier)?.()
-      settled.add(earlier)
-    }
+    for (const earlier of order) equations.get(earlier)?.()
     return equations.get(name)?.()
   }
 
