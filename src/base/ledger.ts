@@ -40,7 +40,7 @@ export class Ledger {
 }
 
 /** A longer chain of definitions would exhaust the machine before it told the reader anything. */
-const DEEPEST = 300
+const DEEPEST = 600
 
 function tooDeep({ name, at }: Task): Diagnostic {
   return {

@@ -122,7 +122,9 @@ describe('what a build writes', () => {
   test('results keep to their published schema, for every sample', () => {
     const validate = new Ajv({ allErrors: true }).compile(schema)
     run('build', join(root, 'samples'), '--to', 'json', '--out', 'out')
-    for (const name of readdirSync(join(folder, 'out'))) {
+    for (const name of readdirSync(join(folder, 'out'), { recursive: true, encoding: 'utf8' }).filter(name =>
+      name.endsWith('.json'),
+    )) {
       expect(
         validate(JSON.parse(read(`out/${name}`))),
         `${name}: ${JSON.stringify(validate.errors?.slice(0, 3))}`,
