@@ -13,11 +13,22 @@ const american: readonly (readonly [RegExp, string])[] = [
   [/\b([Mm])odelled/g, '$1odeled'],
 ]
 
-/** Our own words in the document's spelling; never applied to what the engineer wrote. */
+/** Marks, from the private use area, around a name that keeps its own spelling. */
+const [OPEN, CLOSE] = ['\ue000', '\ue001']
+
+/** A name of the engineer's within words of ours. */
+export const verbatim = (name: string): string => `${OPEN}${name.replace(/[\ue000\ue001]/g, '')}${CLOSE}`
+
+/** Our own words in the document's spelling, and names as the engineer wrote them. */
 export function inLanguage(text: string, language: Language): string {
-  if (language === 'en-GB') return text
-  return american.reduce((out, [british, spelling]) => out.replace(british, spelling), text)
+  const pieces = text.split(/\ue000([^\ue001]*)\ue001/)
+  if (language === 'en-GB') return pieces.join('')
+  // Every second piece is a name.
+  return pieces.map((piece, i) => (i % 2 === 1 ? piece : americanOf(piece))).join('')
 }
+
+const americanOf = (text: string): string =>
+  american.reduce((out, [british, spelling]) => out.replace(british, spelling), text)
 
 /** Either spelling to the one the code uses, so that both are understood. */
 export function toBritish(text: string): string {

@@ -26,37 +26,48 @@ const common = {
 }
 
 /**
- * Keeps KaTeX in a file of its own, which is loaded for the first formula whose shape was not packed.
+ * What few runs need, by the functions that are called of it: KaTeX for a formula whose shape was not
+ * packed, YAML for front matter that is more than plain lines.
+ * @type {Readonly<Record<string, readonly string[]>>}
+ */
+const apart = { katex: ['renderToString'], yaml: ['isMap', 'isScalar', 'isSeq', 'parseDocument'] }
+
+/**
+ * Keeps those packages in files of their own, which are loaded when one of the functions is first called.
  * @type {import('esbuild').Plugin}
  */
-const katexApart = {
-  name: 'katex-apart',
+const packagesApart = {
+  name: 'packages-apart',
   setup(build) {
-    build.onResolve({ filter: /^katex$/ }, () => ({ path: 'katex', namespace: 'apart' }))
-    build.onResolve({ filter: /^\.\/katex\.cjs$/, namespace: 'apart' }, ({ path }) => ({ path, external: true }))
-    build.onLoad({ filter: /.*/, namespace: 'apart' }, () => ({
-      contents: `exports.renderToString = (source, options) => require('./katex.cjs').renderToString(source, options)`,
+    const filter = new RegExp(`^(?:${Object.keys(apart).join('|')})$`)
+    build.onResolve({ filter }, ({ path }) => ({ path, namespace: 'apart' }))
+    build.onResolve({ filter: /^\.\/\w+\.cjs$/, namespace: 'apart' }, ({ path }) => ({ path, external: true }))
+    build.onLoad({ filter: /.*/, namespace: 'apart' }, ({ path }) => ({
+      contents: (apart[path] ?? [])
+        .map(name => `exports.${name} = (...args) => require('./${path}.cjs').${name}(...args)`)
+        .join('\n'),
     }))
   },
 }
 
+/** The launcher calls each file as one function, which spares it a copy of the text. @type {import('esbuild').BuildOptions} */
+const loaded = {
+  ...common,
+  format: 'cjs',
+  minify: true,
+  banner: { js: '(function (require, module, exports, __dirname) {' },
+  footer: { js: '})' },
+}
+
 await Promise.all([
-  build({
-    ...common,
-    entryPoints: [`${root}src/cli.ts`],
-    format: 'cjs',
-    minify: true,
-    outfile: `${dist}/command.cjs`,
-    plugins: [katexApart],
-  }),
-  build({
-    ...common,
-    stdin: { contents: `export { default } from 'katex'`, resolveDir: root },
-    format: 'cjs',
-    minify: true,
-    outfile: `${dist}/katex.cjs`,
-    footer: { js: 'module.exports=module.exports.default' },
-  }),
+  build({ ...loaded, entryPoints: [`${root}src/cli.ts`], outfile: `${dist}/command.cjs`, plugins: [packagesApart] }),
+  ...Object.keys(apart).map(name =>
+    build({
+      ...loaded,
+      stdin: { contents: `module.exports = require('${name}')`, resolveDir: root },
+      outfile: `${dist}/${name}.cjs`,
+    }),
+  ),
   build({
     ...common,
     entryPoints: [`${root}src/index.ts`],
@@ -89,11 +100,12 @@ async function packedShapes() {
   return pack(documents, { version, asset: (/** @type {string} */ name) => assets.get(name) ?? '', sha256: () => '' })
 }
 
-/** A cache holds what a run used, so it is taken after one, of a document with a formula that was not packed. */
+/** A cache holds what a run used, so it is taken after one, of a document that needs every file. */
 async function writeCodeCaches() {
   const starter = await readFile(`${root}samples/starter.md`, 'utf8')
   const formulas = 'warm_one = 2 ft + sqrt(9 ft^2)\nwarm_two = (warm_one / 3)^2 - 4 ft^2\nwarm_three = 7 kip * warm_one'
-  await writeFile(`${dist}/warm.md`, `${starter}\n\`\`\`equations\n${formulas}\n\`\`\`\n`)
+  const front = starter.replace('---\n', '---\nby: "warm: up" # not plain\n')
+  await writeFile(`${dist}/warm.md`, `${front}\n\`\`\`equations\n${formulas}\n\`\`\`\n`)
   execFileSync(
     process.execPath,
     [`${dist}/platemark.cjs`, 'build', `${dist}/warm.md`, '--out', `${dist}/warm`, '--to', 'html,json'],

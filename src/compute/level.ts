@@ -1,6 +1,8 @@
 /** The work on one level, each part on demand and once. */
+
 import type { Diagnostic } from '../base/diagnostic.ts'
 import type { Display } from '../base/kind.ts'
+import { verbatim } from '../base/language.ts'
 import { all, type Result, together } from '../base/ledger.ts'
 import { inWords, suggestion } from '../base/near.ts'
 import { bad, good } from '../base/outcome.ts'
@@ -349,7 +351,7 @@ const storeyByStorey: Assumption = {
 
 /** What the model of a floor on springs takes for granted. */
 const rigidAssumptions = (level: string): readonly Assumption[] => [
-  { text: `The diaphragm of ${level} is rigid in its plane.`, because: 'no other behaviour is worked' },
+  { text: `The diaphragm of ${verbatim(level)} is rigid in its plane.`, because: 'no other behaviour is worked' },
   { text: 'Walls resist along their own line only.', because: 'their stiffness across it is left out' },
 ]
 

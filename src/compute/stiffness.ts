@@ -1,6 +1,8 @@
 /** Stiffness of a wall from its construction, length and height. */
+
 import { formula, sym } from '../base/formula.ts'
 import type { Display } from '../base/kind.ts'
+import { verbatim } from '../base/language.ts'
 import type { Value } from '../base/value.ts'
 import { work } from '../base/work.ts'
 import type { Construction } from '../model/construction.ts'
@@ -148,7 +150,7 @@ export function workModuli(
     )
   if (stated) return { E, G: stated, commonShear: false }
   if (nu) return { E, G: work(`${id}.G`, shearModulus.byPoisson, { E, nu }, display, [name]), commonShear: false }
-  assume({ text: `The shear modulus of ${name} is 0.4 E.`, because: 'neither G nor nu is stated' })
+  assume({ text: `The shear modulus of ${verbatim(name)} is 0.4 E.`, because: 'neither G nor nu is stated' })
   return { E, G: work(`${id}.G`, shearModulus.byShare, { E }, display, [name]), commonShear: true }
 }
 

@@ -41,6 +41,8 @@ const leaderAlongLine = 40
 
 type Cells = Map<number, Obstacle[]>
 
+const none: readonly Obstacle[] = []
+
 export class Field {
   /** Text and ink apart from thin lines: they refuse a label at once, and most labels on a crowded sheet are refused. */
   private readonly solid: Cells = new Map()
@@ -71,11 +73,22 @@ export class Field {
   price(box: Box): number {
     const bounds = boundsOfBox(box)
     if (bounds.x0 < this.left || bounds.x1 > this.right) return Number.POSITIVE_INFINITY
+    const solid = this.priceAmong(this.solid, box, bounds)
+    return solid === Number.POSITIVE_INFINITY ? solid : solid + this.priceAmong(this.thin, box, bounds)
+  }
+
+  /** Asked for every spot of every label, so it goes through the cells without a generator. */
+  private priceAmong(cells: Cells, box: Box, bounds: Bounds): number {
+    const question = ++this.question
     let sum = 0
-    for (const cells of [this.solid, this.thin]) {
-      for (const obstacle of this.within(cells, cellsWithin(bounds))) {
-        if (overlap(obstacle.bounds, bounds) && boxesMeet(obstacle.box, box)) sum += obstacle.price
-        if (sum === Number.POSITIVE_INFINITY) return sum
+    for (let col = Math.floor(bounds.x0 / cell); col <= Math.floor(bounds.x1 / cell); col++) {
+      for (let row = Math.floor(bounds.y0 / cell); row <= Math.floor(bounds.y1 / cell); row++) {
+        for (const obstacle of cells.get(col * rowsApart + row) ?? none) {
+          if (obstacle.seenBy === question) continue
+          obstacle.seenBy = question
+          if (overlap(obstacle.bounds, bounds) && boxesMeet(obstacle.box, box)) sum += obstacle.price
+          if (sum === Number.POSITIVE_INFINITY) return sum
+        }
       }
     }
     return sum

@@ -1,5 +1,5 @@
 /** The view of a level: what of the building and its results a plan sketch shows. */
-import { inLanguage, type Language } from '../base/language.ts'
+import { inLanguage, type Language, verbatim } from '../base/language.ts'
 import { asTyped, columnDecimals, fixed, numeralOnPage } from '../base/numeral.ts'
 import { unit, unitOnPage, unitText } from '../base/unit.ts'
 import { onPage, printed, shown, type Value } from '../base/value.ts'
@@ -38,7 +38,7 @@ export function planView(picture: LevelPicture): PlanView {
     mass?.areas?.rows.map((row, i) => [row, printed(required(mass.areas?.column('w').cell(i)), language)]) ?? [],
   )
   return {
-    title: words(`Plan of ${level}`),
+    title: words(`Plan of ${verbatim(level)}`),
     description: words(describe(picture)),
     language,
     areas: plan.areas.map(({ name, outline }) => ({ name, outline: outline.map(point), load: loads.get(name) ?? '' })),
@@ -105,11 +105,11 @@ function forceOf(
 
 function describe({ level, language, plan, walls, mass, rigidity, distribution }: LevelPicture): string {
   const parts = [
-    `Plan of ${level} with ${count(plan.areas.length, 'area')}, ${count(plan.openings.length, 'opening')} and ${count(walls.length, 'wall')}.`,
+    `Plan of ${verbatim(level)} with ${count(plan.areas.length, 'area')}, ${count(plan.openings.length, 'opening')} and ${count(walls.length, 'wall')}.`,
   ]
   if (mass) parts.push(`The centre of mass is at ${pair(mass, language)}.`)
   if (rigidity) parts.push(`The centre of rigidity is at ${pair(rigidity, language)}.`)
-  if (distribution) parts.push(`Wall ${distribution.design.rows[distribution.governingWall] ?? ''} governs.`)
+  if (distribution) parts.push(`Wall ${verbatim(distribution.design.rows[distribution.governingWall] ?? '')} governs.`)
   return parts.join(' ')
 }
 

@@ -51,8 +51,12 @@ function escapeAttribute(text: string): string {
   return escapeText(text).replaceAll('"', '&quot;')
 }
 
+/** Nearly every text: looked at as a whole before it is looked at sign by sign. */
+const ORDINARY = /^[\t\n\r -\ud7ff]*$/
+
 /** XML has no place, even escaped, for most control characters and for half a surrogate pair. */
 function onlyXmlCharacters(text: string): string {
+  if (ORDINARY.test(text)) return text
   return Array.from(text, sign => (isXmlCharacter(sign.codePointAt(0) ?? 0) ? sign : '\ufffd')).join('')
 }
 

@@ -1,4 +1,5 @@
 /** Weight, centre of mass and polar moment. */
+import { verbatim } from '../base/language.ts'
 import type { Mass } from '../compute/mass.ts'
 import type { Plan } from '../compute/plan.ts'
 import type { Context } from './context.ts'
@@ -13,7 +14,8 @@ export function explainMass(mass: Mass, plan: Plan, detail: Detail, context: Con
   if (detail === 'result') return results
   const tables = mass.lines || mass.points ? separateTables(mass, context) : []
   const columns = tables.length === 0 ? ['A', 'w', 'W', 'x', 'y', 'W_x', 'W_y'] : ['W', 'x', 'y', 'W_x', 'W_y']
-  const caption = tables.length === 0 ? `Areas of ${level}.${openingNote(plan)}` : `All parts of ${level}.`
+  const caption =
+    tables.length === 0 ? `Areas of ${verbatim(level)}.${openingNote(plan)}` : `All parts of ${verbatim(level)}.`
   const parts = explainTable(
     mass.parts,
     {
@@ -32,7 +34,7 @@ export function explainMass(mass: Mass, plan: Plan, detail: Detail, context: Con
 function openingNote({ parts }: Plan): string {
   const cut = parts.filter(({ area, name }) => area.name !== name).map(({ name }) => name)
   if (cut.length === 0) return ''
-  return ` ${cut.join(', ')}: ${cut.length === 1 ? 'an opening counts' : 'openings count'} as negative area.`
+  return ` ${verbatim(cut.join(', '))}: ${cut.length === 1 ? 'an opening counts' : 'openings count'} as negative area.`
 }
 
 function separateTables({ level, areas, lines, points }: Mass, context: Context): readonly Piece[] {
@@ -41,7 +43,7 @@ function separateTables({ level, areas, lines, points }: Mass, context: Context)
       ? [
           explainTable(
             tabulation,
-            { id: `${level}.${kind}`, caption: `${rowHead}s of ${level}.`, rowHead, columns },
+            { id: `${level}.${kind}`, caption: `${rowHead}s of ${verbatim(level)}.`, rowHead, columns },
             context,
           ),
         ]
@@ -61,7 +63,7 @@ function outlines({ level, parts }: Plan, context: Context): readonly Piece[] {
       sides,
       {
         id: `${level}.areas.${name}.sides`,
-        caption: `Sides of ${name}, each from (x₁, y₁) to (x₂, y₂), in order around it.`,
+        caption: `Sides of ${verbatim(name)}, each from (x₁, y₁) to (x₂, y₂), in order around it.`,
         rowHead: 'Side',
         columns: ['x_1', 'y_1', 'x_2', 'y_2', 'a', 'a_x', 'a_y'],
       },
@@ -78,7 +80,7 @@ export function explainPolarMoment({ level, parts, Ip }: Mass, detail: Detail, c
     parts,
     {
       id: `${level}.polar`,
-      caption: `Moment of each part of ${level} about the centre of mass.`,
+      caption: `Moment of each part of ${verbatim(level)} about the centre of mass.`,
       rowHead: 'Part',
       columns: ['W', 'x', 'y', 'I_o', 'I'],
       sums: { I: Ip },

@@ -1,5 +1,7 @@
 /** Wall stiffness, centre of rigidity and eccentricity. */
+
 import { sym } from '../base/formula.ts'
+import { verbatim } from '../base/language.ts'
 import type { Result } from '../base/ledger.ts'
 import { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
@@ -48,7 +50,7 @@ export function explainStiffness(
   const made = walls.map(wall => (wall.kind === 'built' ? wall.construction.text : 'stated'))
   const want = {
     id: `${level.name}.stiffness`,
-    caption: `Stiffness of the walls of ${level.name}.`,
+    caption: `Stiffness of the walls of ${verbatim(level.name)}.`,
     rowHead: 'Wall',
     columns: high ? ['L', 'h', 'k'] : ['L', 'k'],
     words: [{ head: 'Construction', cells: made }],
@@ -100,7 +102,7 @@ export function explainRigidity(rigidity: Rigidity, detail: Detail, context: Con
           walls,
           {
             id: `${level}.rigidity`,
-            caption: `Stiffness of the walls of ${level} along x and y; every wall lies along an axis.`,
+            caption: `Stiffness of the walls of ${verbatim(level)} along x and y; every wall lies along an axis.`,
             rowHead: 'Wall',
             columns: ['k', 'c', 's', 'k_x', 'k_y', 'x', 'y', 'k_y_x', 'k_x_y'],
             sums: sumsOf({ k_x: K.xx, k_y: K.yy, k_y_x: second, k_x_y: first }),
@@ -113,7 +115,7 @@ export function explainRigidity(rigidity: Rigidity, detail: Detail, context: Con
           walls,
           {
             id: `${level}.wall-lines`,
-            caption: `Walls of ${level}: stiffness, direction cosine and sine, midpoint, and arm about the origin.`,
+            caption: `Walls of ${verbatim(level)}: stiffness, direction cosine and sine, midpoint, and arm about the origin.`,
             rowHead: 'Wall',
             columns: ['k', 'c', 's', 'x', 'y', 'r'],
           },
@@ -123,7 +125,7 @@ export function explainRigidity(rigidity: Rigidity, detail: Detail, context: Con
           walls,
           {
             id: `${level}.rigidity`,
-            caption: `Plan stiffness of the walls of ${level}.`,
+            caption: `Plan stiffness of the walls of ${verbatim(level)}.`,
             rowHead: 'Wall',
             columns: ['k_x', 'k_y', 'k_xy', 'k_xr', 'k_yr'],
             sums: sumsOf({ k_x: K.xx, k_y: K.yy, k_xy: K.xy, k_xr: first, k_yr: second }),

@@ -1,6 +1,8 @@
 /** Torsion, wall shears, design shears, displacement and equilibrium. */
+
 import { sym } from '../base/formula.ts'
 import type { Display } from '../base/kind.ts'
+import { verbatim } from '../base/language.ts'
 import { numeralOnPage, rounded } from '../base/numeral.ts'
 import { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
@@ -44,7 +46,7 @@ export function explainTorsion(
     )
   const want = {
     id: `${level}.torsion`,
-    caption: `Storey shear and its moment about the centre of rigidity of ${level}, counter-clockwise positive. In EX+ the mass is moved toward positive y, in EY+ toward positive x.`,
+    caption: `Storey shear and its moment about the centre of rigidity of ${verbatim(level)}, counter-clockwise positive. In EX+ the mass is moved toward positive y, in EY+ toward positive x.`,
     rowHead: 'Case',
     columns: ['V', 'T'],
   }
@@ -61,7 +63,7 @@ function momentTable(
   if (!moments) return []
   const want = {
     id: `${level}.moments.${name}`,
-    caption: `Moment of each level's force about the centre of rigidity of ${level}, case ${caseOnPage(name)}.`,
+    caption: `Moment of each level's force about the centre of rigidity of ${verbatim(level)}, case ${caseOnPage(name)}.`,
     rowHead: 'Level',
     columns: moments.columns.map(({ sym }) => sym.name),
     sums: { T: moment },
@@ -84,7 +86,7 @@ export function explainWallShears(
     shown.walls,
     {
       id: `${level}.shears.${name}`,
-      caption: `Direct and torsional shear of the walls of ${level} in case ${caseOnPage(name)}${others}.`,
+      caption: `Direct and torsional shear of the walls of ${verbatim(level)} in case ${caseOnPage(name)}${others}.`,
       rowHead: 'Wall',
       columns: ['k', 'c', 's', 'rho', 'V_d', 'V_t', 'V'],
     },
@@ -120,7 +122,7 @@ export function explainDesignShears(
     design,
     {
       id: `${level}.design`,
-      caption: `Shear of each wall of ${level} in every case, and its design shear. ${design.rows[governingWall] ?? ''} has the largest shear per length and governs.`,
+      caption: `Shear of each wall of ${verbatim(level)} in every case, and its design shear. ${verbatim(design.rows[governingWall] ?? '')} has the largest shear per length and governs.`,
       rowHead: 'Wall',
       columns: [...columns, 'L', 'v'],
       governs: governingWall,
@@ -150,7 +152,7 @@ export function explainDisplacement(
   )
   const want = {
     id: `${level}.drift`,
-    caption: `Largest displacement of a corner of ${level} along the force in each case, relative to the foot of its walls.`,
+    caption: `Largest displacement of a corner of ${verbatim(level)} along the force in each case, relative to the foot of its walls.`,
     rowHead: 'Case',
     columns: ['delta'],
     words: [{ head: 'Corner', cells: all.map(({ governing }) => governing.corner) }],
@@ -174,7 +176,7 @@ function displacedPoints(
   )
   const want = {
     id: `${level}.displacement.${name}`,
-    caption: `Displacement of the centre of mass and of the corners of ${level} in case ${caseOnPage(name)}.`,
+    caption: `Displacement of the centre of mass and of the corners of ${verbatim(level)} in case ${caseOnPage(name)}.`,
     rowHead: 'Point',
     columns: ['x', 'y', 'delta_x', 'delta_y'],
     governs: at,
@@ -230,7 +232,7 @@ export function explainEquilibrium(
       table,
       {
         id: `${level}.equilibrium`,
-        caption: `What acts on ${level} and what its walls resist, moments about the origin. The residual is the largest difference over the storey shear.`,
+        caption: `What acts on ${verbatim(level)} and what its walls resist, moments about the origin. The residual is the largest difference over the storey shear.`,
         rowHead: 'Case',
         columns: ['V', 'R_x', 'R_y', 'M_o', 'R_M'],
         words: [{ head: 'Residual', cells: residuals }],
@@ -252,7 +254,7 @@ export function equilibriumCheck({ level, cases }: Distribution, context: Contex
   return {
     kind: 'check',
     id: `${level}.equilibrium.check`,
-    what: context.words(`Equilibrium of ${level}, largest residual`),
+    what: context.words(`Equilibrium of ${verbatim(level)}, largest residual`),
     demand: residualOnPage(worst, context),
     capacity: numeralOnPage(rounded(ALLOWED), context.language),
     numbers: { demand: worst.si, capacity: ALLOWED, unit: '' },

@@ -1,5 +1,7 @@
 /** Answers what a working asks for, from the results. */
+
 import type { Diagnostic } from '../base/diagnostic.ts'
+import { verbatim } from '../base/language.ts'
 import { all, type Result, together } from '../base/ledger.ts'
 import { suggestion } from '../base/near.ts'
 import { bad, good } from '../base/outcome.ts'
@@ -105,7 +107,7 @@ function figure(level: LevelWork, caseName: string | undefined, context: Context
   const shears = hasShears(level)
   const what = !shears ? '' : caseName ? ` Shears and storey force of case ${caseOnPage(caseName)}.` : ' Design shears.'
   const id = caseName ? `${level.name}.plan.${caseName}` : `${level.name}.plan`
-  const caption = context.words(`Plan of ${level.name}.${what}`)
+  const caption = context.words(`Plan of ${verbatim(level.name)}.${what}`)
   return good([{ kind: 'figure', id: context.anchor(id), number: '', caption, ...made.value }])
 }
 

@@ -1,5 +1,7 @@
 /** What walls are made of. */
+
 import { type Sym, sym } from '../base/formula.ts'
+import { verbatim } from '../base/language.ts'
 import { all, type Result } from '../base/ledger.ts'
 import { inWords, suggestion } from '../base/near.ts'
 import { bad, good } from '../base/outcome.ts'
@@ -166,7 +168,7 @@ function readEnds(block: Block, name: Text, scope: Scope): Result<Ends> {
   const ends = settingOf(block, 'ends')
   if (!ends) {
     scope.assume({
-      text: `Walls of ${name.text} are cantilevers: fixed at the foot, free at the head.`,
+      text: `Walls of ${verbatim(name.text)} are cantilevers: fixed at the foot, free at the head.`,
       because: 'ends is not stated',
     })
     return good('cantilever')

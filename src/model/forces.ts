@@ -1,6 +1,8 @@
 /** Stated storey forces: what acts at each level, and how far it may be off the centre of mass. */
+
 import { sym } from '../base/formula.ts'
 import { unitOfKind } from '../base/kind.ts'
+import { verbatim } from '../base/language.ts'
 import { all, type Result } from '../base/ledger.ts'
 import { bad, good } from '../base/outcome.ts'
 import type { Unit } from '../base/unit.ts'
@@ -136,7 +138,7 @@ function readShare(cell: Text, level: string, scope: Scope): Result<Value> {
 }
 
 function commonShare(level: string, scope: Scope): Value {
-  const text = `The force at ${level} may act off the centre of mass by 5% of the plan across it, to either side.`
+  const text = `The force at ${verbatim(level)} may act off the centre of mass by 5% of the plan across it, to either side.`
   scope.assume({ text, because: 'accidental is not stated; 5% as in ASCE 7-16 12.8.4.2 and EN 1998-1 4.3.2' })
   return {
     id: `${level}.accidental`,

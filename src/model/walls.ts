@@ -113,13 +113,17 @@ function readPlace(record: RowOf, name: string, level: string, grid: Grid, scope
   return good({ name, ...directed(a.value, b.value), span: record.line.span, place })
 }
 
+/** A wall whose ends lie this near above each other, as a share of its length, is parallel to y. */
+const UPRIGHT = 1e-9
+
 /**
  * A wall's own direction has a positive x part, or points up when it is parallel
  * to y, whichever end was written first: the sign of its shear follows from it.
  */
 function directed(a: Corner, b: Corner): { readonly from: Corner; readonly to: Corner } {
-  const forward = b.x.si > a.x.si || (b.x.si === a.x.si && b.y.si > a.y.si)
-  return forward ? { from: a, to: b } : { from: b, to: a }
+  const [dx, dy] = [b.x.si - a.x.si, b.y.si - a.y.si]
+  const upright = Math.abs(dx) <= UPRIGHT * Math.abs(dy)
+  return (upright ? dy > 0 : dx > 0) ? { from: a, to: b } : { from: b, to: a }
 }
 
 function readHeight(record: RowOf, name: string, level: string, scope: Scope): Result<Value> {

@@ -34,10 +34,16 @@ const later = {
 
 /** What an address that is a link without brackets cannot do without, in letters or behind an entity. */
 const BARE_LINK = /www|http|@|&/i
+/** A link whose address stands in brackets, so plain that it cannot be anything else. */
+const PLAIN_LINK = /(?<=^|[\s(])\[([\w ,.'-]+)\]\(https?:\/\/[\w./-]+\)/gm
+
+const mayHoldBareLink = (piece: string): boolean =>
+  BARE_LINK.test(piece) &&
+  BARE_LINK.test(piece.replace(PLAIN_LINK, (link, label: string) => (BARE_LINK.test(label) ? link : '')))
 
 function parsePiece({ start, end, line }: Piece, text: string): Root {
   const piece = text.slice(start, end)
-  const bareLinks = BARE_LINK.test(piece)
+  const bareLinks = mayHoldBareLink(piece)
   if (start === 0) return (bareLinks ? whole : first).parse(piece)
   const tree = (bareLinks ? later.bareLinks : later.plain).parse(piece)
   shift(tree, line - 1, start)

@@ -21,7 +21,11 @@ import { texSource } from '../../src/base/tex.ts'
 const page = (value: number, language: Language = 'en-US') => numeralOnPage(rounded(value), language)
 const runs = { numRuns: 2000, seed: 12 }
 const sizes = fc
-  .tuple(fc.double({ min: 1, max: 10, maxExcluded: true, noNaN: true }), fc.integer({ min: -14, max: 14 }), fc.boolean())
+  .tuple(
+    fc.double({ min: 1, max: 10, maxExcluded: true, noNaN: true }),
+    fc.integer({ min: -14, max: 14 }),
+    fc.boolean(),
+  )
   .map(([mantissa, exponent, negative]) => (negative ? -1 : 1) * mantissa * 10 ** exponent)
 
 describe('digits of a worked number', () => {

@@ -22,8 +22,8 @@ const names = ['a', 'b', 'h', 'k'] as const
 
 const inLetters = (expr: Expr): string => texSource(typeset(expr, name => letter(name), 'en-US'))
 
-const inValues = (expr: Expr, valueOf: (name: string) => number, language: Language, of: Unit = NO_UNIT): string =>
-  texSource(typeset(expr, name => valueSet(rounded(valueOf(name)), of, language), language))
+const inValues = (expr: Expr, shown: (name: string) => number, language: Language, of: Unit = NO_UNIT): string =>
+  texSource(typeset(expr, name => valueSet(rounded(shown(name)), of, language), language))
 
 const randomValue = (random: Random): number => {
   const size = random.pick([1e-5, 0.03, 1, 20, 4000, 3e6, 5e10])
@@ -40,7 +40,9 @@ function steady(expr: Expr, lookup: (name: string) => number): boolean {
 /** Constants print with at most nine digits. */
 function same(read: number, value: number, what: string): void {
   const close = read === value || Math.abs(read - value) <= 1e-7 * Math.max(Math.abs(read), Math.abs(value), 1e-300)
-  expect(close || (Number.isNaN(read) && Number.isNaN(value)), `${what}: read as ${read}, worked as ${value}`).toBe(true)
+  expect(close || (Number.isNaN(read) && Number.isNaN(value)), `${what}: read as ${read}, worked as ${value}`).toBe(
+    true,
+  )
 }
 
 describe('a formula reads on the page as it is worked', () => {

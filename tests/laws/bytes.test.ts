@@ -20,7 +20,7 @@ test('the same source gives the same bytes', () => {
   const [a, b] = [documentOf(first, american, 'whole calculation'), documentOf(second, metric, 'whole calculation')]
   const before = bytesOf(a)
   const between = bytesOf(b)
-  expect(before.length).toBe(4)
+  expect(before.length).toBeGreaterThanOrEqual(formats.length)
   expect(before.every(text => text.length > 1000)).toBe(true)
   expect(bytesOf(a)).toEqual(before)
   expect(bytesOf(b)).toEqual(between)

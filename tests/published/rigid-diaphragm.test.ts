@@ -9,7 +9,7 @@ import { describe, expect, test } from 'vitest'
 import { agrees, closeTo, disagrees } from '../support/agrees.ts'
 import { publishedReading } from '../support/worked.ts'
 
-const block = (info: string, lines: readonly string[]) => ['```' + info, ...lines, '```'].join('\n')
+const block = (info: string, lines: readonly string[]) => [`\`\`\`${info}`, ...lines, '```'].join('\n')
 
 const walls = (rows: readonly string[]) =>
   block('walls roof', ['| wall | from | to | k |', '|---|---|---|---|', ...rows.map(row => `| ${row} |`)])
@@ -54,7 +54,9 @@ describe('sacristy of the chapel (TI 809-04, Appendix H, example H3)', () => {
   })
 
   test('centre of rigidity of four walls (p. H3-32); the source calls the y coordinate crx and the x coordinate cry', () => {
-    const of = publishedReading([floor('0 ft, 0 ft', '10 ft, 19.67 ft', '50 psf'), fourWalls, worked('centre of rigidity')].join('\n\n'))
+    const of = publishedReading(
+      [floor('0 ft, 0 ft', '10 ft, 19.67 ft', '50 psf'), fourWalls, worked('centre of rigidity')].join('\n\n'),
+    )
     agrees(of('roof.sum.kx_y', 'kip*ft/in'), '48152')
     agrees(of('roof.sum.ky_x', 'kip*ft/in'), '218720')
     agrees(of('roof.K.xx', 'kip/in'), '3898')
@@ -93,7 +95,14 @@ describe('sacristy of the chapel (TI 809-04, Appendix H, example H3)', () => {
         points([`All | 6.25 ft, ${massY} | 31.9 kip`]),
         fourWalls,
         block('forces roof', ['x: roof.W / 6', 'y: roof.W / 6', 'accidental: 5%']),
-        block('working roof', ['eccentricity', 'centre of rigidity', 'torsion', 'wall shears', 'case: all', 'walls: W7, W8, A, C']),
+        block('working roof', [
+          'eccentricity',
+          'centre of rigidity',
+          'torsion',
+          'wall shears',
+          'case: all',
+          'walls: W7, W8, A, C',
+        ]),
         block('working roof', ['torsion', 'case: EX-']),
         block('working roof', ['torsion', 'case: EY-']),
       ].join('\n\n'),

@@ -5,7 +5,7 @@
  * four places before it cubes it; where that shows, the height is stated as the rounded ratio times the length.
  * TI 809-04: US Army Corps of Engineers, Seismic Design for Buildings (1998), reissued as UFC 3-310-03A (2005).
  */
-import { describe, expect, test } from 'vitest'
+import { describe, test } from 'vitest'
 import { agrees, disagrees } from '../support/agrees.ts'
 import { publishedReading } from '../support/worked.ts'
 

@@ -171,29 +171,31 @@ const box = (x1: number, y1: number, x2: number, y2: number): readonly Point[] =
 ]
 
 /** Two bays of unlike depth and load, side by side, with walls at any angle. */
-export const buildings: fc.Arbitrary<Building> = floor.map(({ width, depth, at, high, loads, sides, more, ...rest }) => {
-  const wall = (name: string, from: Point, to: Point, k: number): PlanWall => ({ name, from, to, k })
-  const [south, north, west, east] = sides
-  return {
-    areas: [
-      { name: 'Hall', outline: box(0, 0, at, depth), load: loads[0] },
-      { name: 'Store', outline: box(at, 0, width, high), load: loads[1] },
-    ],
-    walls: [
-      wall('S', { x: 0, y: 0 }, { x: width, y: 0 }, south),
-      wall('N', { x: 0, y: depth }, { x: at, y: depth }, north),
-      wall('W', { x: 0, y: 0 }, { x: 0, y: depth }, west),
-      wall('E', { x: width, y: 0 }, { x: width, y: high }, east),
-      ...more.map(({ at: [fx, fy], angle, length, k }, i) => {
-        const [x, y] = [fx * width, fy * high]
-        const half = turn(angle)({ x: length / 2, y: 0 })
-        return wall(`M${i + 1}`, { x: x - half.x, y: y - half.y }, { x: x + half.x, y: y + half.y }, k)
-      }),
-    ],
-    force: { x: rest.force[0], y: rest.force[1] },
-    accidental: rest.accidental,
-  }
-})
+export const buildings: fc.Arbitrary<Building> = floor.map(
+  ({ width, depth, at, high, loads, sides, more, ...rest }) => {
+    const wall = (name: string, from: Point, to: Point, k: number): PlanWall => ({ name, from, to, k })
+    const [south, north, west, east] = sides
+    return {
+      areas: [
+        { name: 'Hall', outline: box(0, 0, at, depth), load: loads[0] },
+        { name: 'Store', outline: box(at, 0, width, high), load: loads[1] },
+      ],
+      walls: [
+        wall('S', { x: 0, y: 0 }, { x: width, y: 0 }, south),
+        wall('N', { x: 0, y: depth }, { x: at, y: depth }, north),
+        wall('W', { x: 0, y: 0 }, { x: 0, y: depth }, west),
+        wall('E', { x: width, y: 0 }, { x: width, y: high }, east),
+        ...more.map(({ at: [fx, fy], angle, length, k }, i) => {
+          const [x, y] = [fx * width, fy * high]
+          const half = turn(angle)({ x: length / 2, y: 0 })
+          return wall(`M${i + 1}`, { x: x - half.x, y: y - half.y }, { x: x + half.x, y: y + half.y }, k)
+        }),
+      ],
+      force: { x: rest.force[0], y: rest.force[1] },
+      accidental: rest.accidental,
+    }
+  },
+)
 
 /** Only walls along the axes. */
 export const orthogonalBuildings = buildings.map(building => ({

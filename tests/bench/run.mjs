@@ -1,0 +1,243 @@
+/**
+ * Times what the project promises to be fast, and prints a table. Whole processes run in turns, so that
+ * a machine that slows down slows all of them; trust the ratios within one run, not the times.
+ */
+import { spawnSync } from 'node:child_process'
+import { createHash } from 'node:crypto'
+import { mkdirSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs'
+import { cpus, tmpdir } from 'node:os'
+import { join } from 'node:path'
+import { fileURLToPath, pathToFileURL } from 'node:url'
+import { build } from 'esbuild'
+import { Bench } from 'tinybench'
+import { longDocument } from './generate.mjs'
+
+const root = fileURLToPath(new URL('../..', import.meta.url))
+const command = join(root, 'dist/platemark.cjs')
+const folder = mkdtempSync(join(tmpdir(), 'platemark-bench-'))
+
+// Reading extra certificates costs Node more than a short run.
+const env = { ...process.env }
+delete env.NODE_EXTRA_CA_CERTS
+
+/** @typedef {{ name: string, args: readonly string[], status?: number }} Program the first argument is the program itself */
+
+function onePage() {
+  const starter = join(root, 'samples/starter.md')
+  // Other names and numbers, and a formula of its own: what a document is that the build has never seen.
+  const text = readFileSync(starter, 'utf8')
+    .replaceAll('20 ft', '23 ft')
+    .replaceAll('14 ft', '17 ft')
+    .replace(/^\| ([SNWE]) /gm, '| Wall$1 ')
+  const other = write(
+    'other.md',
+    `${text}\n\`\`\`equations\nw_snow = 25 psf\nS = w_snow * roof.area * (1 + 2 * 0.3) -> kip\n\`\`\`\n`,
+  )
+  compare('One page to HTML, whole process', 25, [
+    bare,
+    platemark('starter', starter),
+    platemark('another one-page document', other),
+    ...pandoc('pandoc --mathml, same content', expanded(starter)),
+  ])
+}
+
+function longCold() {
+  const long = write('long.md', longDocument(200, 2000))
+  compare('200 sections, 2,000 equations to HTML, whole process', 5, [
+    bare,
+    platemark('platemark', long),
+    ...pandoc('pandoc --mathml, same content', expanded(long)),
+  ])
+}
+
+/** @param {typeof import('./inside.ts')} inside */
+async function equations({ equationsOf, createTypesetter, texSource, katex }) {
+  const all = equationsOf(longDocument(200, 2000))
+  const options = /** @type {const} */ ({
+    throwOnError: true,
+    trust: false,
+    strict: false,
+    output: 'html',
+    displayMode: true,
+  })
+  const typesetter = createTypesetter()
+  const sample = all.filter((_, i) => i % 7 === 0)
+  const unlike = sample.filter(
+    tex => typesetter.html(tex, 'display') !== katex.renderToString(texSource(tex), options),
+  ).length
+  const bench = new Bench({ time: 1000, warmupTime: 300 })
+  bench.add('all', () => {
+    for (const tex of all) typesetter.html(tex, 'display')
+  })
+  bench.add('katex', () => {
+    for (const tex of sample.slice(0, 40)) katex.renderToString(texSource(tex), options)
+  })
+  await bench.run()
+  const [ours, direct] = [latency(bench, 'all'), latency(bench, 'katex')]
+  head('Equations typeset, warm')
+  row('platemark', [ours.min, ours.median], `${count((1000 * all.length) / ours.median)} a second`)
+  row('KaTeX alone, 40 of them', [direct.min, direct.median], `${count((1000 * 40) / direct.median)} a second`)
+  line(`bytes unlike KaTeX's own: ${unlike} of ${sample.length}`)
+}
+
+/** @param {typeof import('./inside.ts')} inside */
+async function walls({ manyWalls, shearsInCases }) {
+  const rigidity = manyWalls(1000)
+  const bench = new Bench({ time: 1000, warmupTime: 300 })
+  bench.add('shears', () => {
+    shearsInCases(rigidity, 64)
+  })
+  await bench.run()
+  const { min, median } = latency(bench, 'shears')
+  head('Shears of 1,000 walls in 64 cases')
+  row('direct, torsional and total', [min, median], `aim 5 ms: ${(median / 5).toFixed(2)}`)
+}
+
+/** Where the time of a long document goes, in one process, the first time it is done. @param {typeof import('./inside.ts')} inside */
+function phases({ parseMarkdown, readDocument, sourceOf, compileTree, publish, worksheet, gather, readChoices }) {
+  const text = longDocument(200, 2000)
+  head('200 sections, 2,000 equations, phase by phase in one process')
+  const tree = timed('read: Markdown to a tree', () => parseMarkdown(text))
+  const document = timed('read: blocks and quotes', () => readDocument(tree, sourceOf('long.md', text)))
+  timed('work: every given and equation', () =>
+    worksheet(gather([...document.blocks.values()]), readChoices(document.front)).readAll(),
+  )
+  const compiled = timed('read, work and explain, from the tree', () => compileTree(tree, sourceOf('long.md', text)))
+  const host = {
+    version: '0',
+    asset: (/** @type {string} */ name) => readFileSync(join(root, 'dist/assets', name), 'utf8'),
+    sha256: (/** @type {string} */ source) => createHash('sha256').update(source).digest('hex'),
+    shapes: () => readFileSync(join(root, 'dist/assets/shapes.txt'), 'latin1'),
+  }
+  for (const format of /** @type {const} */ (['html', 'md', 'json']))
+    timed(`render: ${format}`, () => publish(compiled, 'long', format, false, host))
+}
+
+function manyWalls() {
+  const rows = Array.from({ length: 5000 }, (_, i) => {
+    const [x, y] = [(i % 100) * 6, Math.floor(i / 100) * 6]
+    return `| W${i + 1} | ${x} ft, ${y} ft | ${i % 2 === 0 ? `${x + 5} ft, ${y} ft` : `${x} ft, ${y + 5} ft`} | 10 ft | CMU8 |`
+  })
+  const starter = readFileSync(join(root, 'samples/starter.md'), 'utf8')
+  const text = starter
+    .replace(/^\| [SNWE] .*\n/gm, '')
+    .replace(/20 ft, 14 ft/g, '600 ft, 300 ft')
+    .replace(/^(\|-+\|-+\|-+\|-+\|-+\|\n)/m, `$1${rows.join('\n')}\n`)
+  const path = write('walls.md', text)
+  compare('5,000 walls to HTML, whole process', 3, [bare, platemark('platemark', path)])
+}
+
+function tooLarge() {
+  const path = write('large.md', 'Words.\n\n'.repeat(1_310_720))
+  compare('10 MB refused, whole process', 10, [bare, { ...platemark('platemark', path), status: 1 }])
+}
+
+/** Programs in turns; the first is what the others are measured by. @param {string} title @param {number} rounds @param {readonly Program[]} programs */
+function compare(title, rounds, programs) {
+  const times = programs.map(() => /** @type {number[]} */ ([]))
+  for (let round = 0; round < rounds; round++)
+    programs.forEach(({ name, args: [program = '', ...args], status = 0 }, i) => {
+      const start = performance.now()
+      const done = spawnSync(program, args, { env, stdio: 'ignore' })
+      times[i]?.push(performance.now() - start)
+      if (done.status !== status) throw new Error(`${name} ended with ${done.status}`)
+    })
+  head(title)
+  const [first = 1] = times.map(median)
+  programs.forEach(({ name }, i) => {
+    const all = times[i] ?? []
+    row(name, [Math.min(...all), median(all)], `${(median(all) / first).toFixed(2)} × bare node`)
+  })
+}
+
+/** @type {Program} */
+const bare = { name: 'node -e 0', args: [process.execPath, '-e', '0'] }
+
+/** @param {string} name @param {string} path @returns {Program} */
+function platemark(name, path) {
+  return { name, args: [process.execPath, command, 'build', path, '--out', join(folder, 'out')] }
+}
+
+/** @param {string} name @param {string} path @returns {readonly Program[]} */
+function pandoc(name, path) {
+  if (spawnSync('pandoc', ['--version'], { stdio: 'ignore' }).status !== 0) {
+    line('pandoc is not installed: not compared')
+    return []
+  }
+  return [{ name, args: ['pandoc', '--mathml', '-s', '-f', 'markdown', '-o', join(folder, 'pandoc.html'), path] }]
+}
+
+/** The document as our own Markdown, with its formulas in $$. @param {string} path */
+function expanded(path) {
+  const out = join(folder, 'expanded')
+  mkdirSync(out, { recursive: true })
+  spawnSync(process.execPath, [command, 'build', path, '--to', 'md', '--out', out], { env, stdio: 'ignore' })
+  return join(out, path.replace(/^.*[/\\]/, ''))
+}
+
+/** @param {string} name @param {string} text */
+function write(name, text) {
+  const path = join(folder, name)
+  writeFileSync(path, text)
+  return path
+}
+
+/** @template T @param {string} name @param {() => T} work @returns {T} */
+function timed(name, work) {
+  const start = performance.now()
+  const result = work()
+  row(name, [performance.now() - start], '')
+  return result
+}
+
+/** @param {Bench} bench @param {string} name */
+function latency(bench, name) {
+  const result = bench.getTask(name)?.result
+  if (result === undefined || !('latency' in result)) throw new Error(`${name} was not timed`)
+  return { min: result.latency.min, median: result.latency.p50 }
+}
+
+/** @param {readonly number[]} times */
+function median(times) {
+  return [...times].sort((a, b) => a - b)[times.length >> 1] ?? Number.NaN
+}
+
+/** @param {string} title */
+const head = title => line(`\n${title.padEnd(58)} min ms  median ms`)
+/** @param {string} name @param {readonly number[]} times @param {string} note */
+const row = (name, times, note) =>
+  line(`  ${name.padEnd(54)}${times.map(time => time.toFixed(1).padStart(9)).join('  ')}   ${note}`)
+/** @param {number} n */
+const count = n => Math.round(n).toLocaleString('en-US')
+/** @param {string} text */
+const line = text => process.stdout.write(`${text}\n`)
+
+/** @returns {Promise<typeof import('./inside.ts')>} */
+async function loadInside() {
+  const outfile = join(folder, 'inside.mjs')
+  await build({
+    entryPoints: [fileURLToPath(new URL('inside.ts', import.meta.url))],
+    bundle: true,
+    platform: 'node',
+    format: 'esm',
+    outfile,
+    banner: { js: `import { createRequire } from 'node:module'; const require = createRequire(import.meta.url)` },
+  })
+  return import(pathToFileURL(outfile).href)
+}
+
+try {
+  process.stdout.write(
+    `${cpus().length} cores, ${cpus()[0]?.model ?? ''}, Node ${process.version}, ${new Date().toISOString().slice(0, 10)}\n`,
+  )
+  const inside = await loadInside()
+  onePage()
+  longCold()
+  await equations(inside)
+  await walls(inside)
+  phases(inside)
+  manyWalls()
+  tooLarge()
+} finally {
+  rmSync(folder, { recursive: true, force: true })
+}
