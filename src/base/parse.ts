@@ -26,6 +26,8 @@ export interface ExprFault {
 
 /** Brackets and powers may nest this deep; a longer chain of one operator does not nest. */
 const DEEPEST = 100
+/** A chain of one sign is a tree as deep as the chain is long, and is walked from the top. */
+const MOST_SIGNS = 1000
 /** Longer text is data, not a formula that anyone can follow. */
 const LONGEST = 8000
 
@@ -75,6 +77,7 @@ const FRACTION = /(?:(\d+)\s+)?(\d+)\/(\d+)\s*(?:in\b(?![*/^])|"|″)/y
 class Reader {
   private at = 0
   private depth = 0
+  private operators = 0
   private readonly text: string
   private readonly offset: number
 
@@ -146,7 +149,10 @@ class Reader {
       this.close(start)
       return { ...inner, span: this.span(start) }
     }
-    return this.fraction(start) ?? this.number(start) ?? this.nameOrCall(start) ?? this.unexpected()
+    // Most atoms are names: a number is only looked for where one can start.
+    const numeric = /[\d.]/.test(this.peek())
+    const number = numeric ? (this.fraction(start) ?? this.number(start)) : undefined
+    return number ?? this.nameOrCall(start) ?? this.unexpected()
   }
 
   private number(start: number): Expr | undefined {
@@ -300,6 +306,12 @@ class Reader {
   }
 
   private binary(op: Operator, left: Expr, right: Expr): Expr {
+    if (++this.operators > MOST_SIGNS)
+      this.stop(
+        'expression-too-long',
+        `this expression has more than ${MOST_SIGNS} signs`,
+        'Break it into named equations.',
+      )
     return { kind: 'binary', op, left, right, span: { start: left.span.start, end: right.span.end } }
   }
 

@@ -1,6 +1,6 @@
 /**
- * Builds `dist`: the command in a few files with their code caches, the library, its
- * types, and the assets of a page.
+ * Builds `dist`: the command in a few files with their code caches, the library, and the
+ * assets of a page.
  */
 import { execFileSync } from 'node:child_process'
 import { chmod, copyFile, mkdir, readdir, readFile, rm, writeFile } from 'node:fs/promises'

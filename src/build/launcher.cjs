@@ -6,14 +6,7 @@
  */
 const { readFileSync, writeFileSync } = require('node:fs')
 const { join } = require('node:path')
-const { setFlagsFromString } = require('node:v8')
 const { Script } = require('node:vm')
-
-// Functions are optimised once they have run about five times as long as usual. Most of what V8 would
-// optimise in so short a program is not run often enough to pay for it, and on a busy machine it takes turns
-// with the program itself. V8 reads this whenever a function is about to be optimised, so it may change at any
-// time; it was measured on Node 20, and another V8 may not know it.
-if (process.versions.v8.startsWith('11.')) setFlagsFromString('--interrupt-budget=600000')
 
 /** @type {Map<string, import('node:vm').Script>} */
 const scripts = new Map()
