@@ -54,10 +54,9 @@ export function compileTree(tree: Root, source: Source): Compiled {
 
 /** What every page carries around its body. */
 export function sheetOf({ choices, diagnostics }: Compiled, version: string, sha256: string, draft: boolean): Sheet {
-  const { title, project, number, revision, date, by, checked, standard, language } = choices
   return {
-    titleBlock: { title, project, number, revision, date, by, checked, standard },
-    language,
+    titleBlock: choices.titleBlock,
+    language: choices.language,
     sourceMark: `${sha256.slice(0, 4)} ${sha256.slice(4, 8)}`,
     version,
     faults: diagnostics.filter(({ severity }) => severity === 'error'),

@@ -4,9 +4,10 @@
  * nowhere else.
  */
 import { dimensionInWords, sameDimension } from './dimension.ts'
-import { dimensionOf, type Numbers, prepare, type Run } from './evaluate.ts'
+import { type Numbers, prepare, type Run } from './evaluate.ts'
 import { type Expr, namesIn } from './expr.ts'
 import { dimensionOfKind, type Kind } from './kind.ts'
+import { dimensionOf } from './measure.ts'
 import { parseExpr } from './parse.ts'
 
 /** A letter of the trade: how it is spelled in plain text and in TeX, and what it measures. */

@@ -2,9 +2,8 @@
 
 import type { Diagnostic } from '../base/diagnostic.ts'
 import type { Display } from '../base/kind.ts'
-import { verbatim } from '../base/language.ts'
 import { all, type Result, together } from '../base/ledger.ts'
-import { inWords, suggestion } from '../base/near.ts'
+import { suggestion } from '../base/near.ts'
 import { bad, good } from '../base/outcome.ts'
 import type { Span } from '../base/span.ts'
 import { NO_UNIT } from '../base/unit.ts'
@@ -13,19 +12,27 @@ import { work } from '../base/work.ts'
 import { type Area, readAreas } from '../model/areas.ts'
 import type { Construction } from '../model/construction.ts'
 import { type Forces, readForces } from '../model/forces.ts'
-import { distanceFrom } from '../model/geometry.ts'
 import type { LevelGivens } from '../model/givens.ts'
 import type { Grid } from '../model/grid.ts'
 import { type LineLoad, type PointLoad, readLineLoads, readPointLoads } from '../model/loads.ts'
-import type { Assumption, Scope } from '../model/scope.ts'
+import type { Scope } from '../model/scope.ts'
 import { readStiffness, readWalls, type Wall } from '../model/walls.ts'
 import type { Block } from '../read/block.ts'
 import { diagnose } from '../read/text.ts'
 import { type Displacement, workDisplacement } from './displacement.ts'
 import { type Distribution, workDistribution } from './distribution.ts'
+import {
+  driftNotWorked,
+  mixedStiffness,
+  rigidAssumptions,
+  storeyByStorey,
+  topicMissing,
+  unstable,
+  wallOutside,
+} from './level-faults.ts'
 import { type Mass, workMass } from './mass.ts'
 import { type Plan, workPlan } from './plan.ts'
-import { type Rigidity, type Spring, type Unstable, workRigidity } from './rigidity.ts'
+import { type Rigidity, type Spring, workRigidity } from './rigidity.ts'
 import { type Moduli, type WallLine, workLine, workModuli, workStiffness } from './stiffness.ts'
 import { type Acting, accidentalArm, type Eccentricity, workEccentricity } from './storey.ts'
 
@@ -63,9 +70,6 @@ export interface LevelWork {
   readonly distribution: () => Result<Distribution>
   readonly displacements: () => Result<readonly Displacement[]>
 }
-
-/** A wall may stand this far off the edge of its level, in m: its thickness, and the slack of a sketch. */
-const OFF_EDGE = 0.3
 
 export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork {
   const { name } = givens
@@ -282,84 +286,3 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     displacements,
   }
 }
-
-const topicMissing = (level: string, topic: string, at: Span): Diagnostic =>
-  diagnose('error', `${topic}-missing`, at, `level ${level} has no ${topic}`, `Give them in a block ${topic} ${level}.`)
-
-function wallOutside(
-  { name, from, to, place }: Wall,
-  { outline, areas }: Plan,
-  { system }: Display,
-): readonly Diagnostic[] {
-  const ends = [from, to].map(({ x, y }) => ({ x: x.si, y: y.si }))
-  const [a, b] = ends
-  if (!a || !b) return []
-  const off = Math.min(...outline.map(ring => distanceFrom(ring, a, b)))
-  if (off <= OFF_EDGE) return []
-  const print = (metres: number) => (system === 'US' ? `${(metres / 0.3048).toFixed(2)} ft` : `${metres.toFixed(2)} m`)
-  const where = `from x = ${print(a.x)}, y = ${print(a.y)} to x = ${print(b.x)}, y = ${print(b.y)}`
-  const also = areas.map(({ name, span }) => ({ span, text: `${name} is an area of the level` }))
-  return [
-    diagnose(
-      'error',
-      'wall-outside-level',
-      place,
-      `wall ${name} stands ${print(off)} outside its level`,
-      'A diaphragm can only push on walls that it meets.\nMove the wall, or extend an area.',
-      { label: where, also: also.slice(0, 3) },
-    ),
-  ]
-}
-
-function mixedStiffness(walls: readonly Wall[], springs: readonly Spring[]): Diagnostic | undefined {
-  const relative = springs.filter(({ k }) => k.unit === NO_UNIT).map(({ name }) => name)
-  const absolute = springs.filter(({ k }) => k.unit !== NO_UNIT).map(({ name }) => name)
-  const wall = walls.find(({ name }) => name === relative[0])
-  const other = walls.find(({ name }) => name === absolute[0])
-  if (!wall || !other) return undefined
-  return diagnose(
-    'error',
-    'stiffness-mixed',
-    wall.span,
-    `wall ${wall.name} has a stiffness without a unit, and wall ${other.name} has one with a unit`,
-    'Give every k of a level a unit, or none.',
-    { also: [{ span: other.span, text: `${other.name} has a unit` }] },
-  )
-}
-
-const unstableHelp: Readonly<Record<Unstable, string>> = {
-  'no stiffness along x': 'Add a wall that is not parallel to y.',
-  'no stiffness along y': 'Add a wall that is not parallel to x.',
-  'all walls are parallel': 'Add a wall in another direction.',
-  'all walls meet in one point':
-    'Add a wall whose line does not pass through that point: without one nothing resists torsion.',
-}
-
-const unstable = (level: string, because: Unstable, at: Span): Diagnostic =>
-  diagnose(
-    'error',
-    'walls-unstable',
-    at,
-    `the walls of ${level} cannot hold it: ${because}`,
-    `A rigid diaphragm needs stiffness along both axes and against turning. ${unstableHelp[because]}`,
-  )
-
-const storeyByStorey: Assumption = {
-  text: 'Each storey is worked on its own: its walls stand on what is below as on a foundation.',
-  because: 'walls are worked storey by storey',
-}
-
-/** What the model of a floor on springs takes for granted. */
-const rigidAssumptions = (level: string): readonly Assumption[] => [
-  { text: `The diaphragm of ${verbatim(level)} is rigid in its plane.`, because: 'no other behaviour is worked' },
-  { text: 'Walls resist along their own line only.', because: 'their stiffness across it is left out' },
-]
-
-const driftNotWorked = (level: string, at: Span): Diagnostic =>
-  diagnose(
-    'warning',
-    'drift-not-worked',
-    at,
-    `displacement of ${level} is not worked`,
-    `Its walls have relative stiffness, which fixes ${inWords(['shares of force'], 'and')} but not displacement. Give them a construction, or k with a unit.`,
-  )

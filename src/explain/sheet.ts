@@ -5,6 +5,9 @@
 import type { Diagnostic } from '../base/diagnostic.ts'
 import type { Language } from '../base/language.ts'
 import type { Tex } from '../base/tex.ts'
+import type { TitleBlock } from '../model/front.ts'
+
+export type { TitleBlock }
 
 /** One worked formula: its letters, its values, its result, and where each came from. */
 export interface Equation {
@@ -121,18 +124,6 @@ export type Piece = Equation | Table | Figure | Check | Note | Heading | Registe
 export interface Quote {
   readonly id: string
   readonly printed: string
-}
-
-/** What the title block carries; every field is printed as written, empty when the front matter leaves it out. */
-export interface TitleBlock {
-  readonly title: string
-  readonly project: string
-  readonly number: string
-  readonly revision: string
-  readonly date: string
-  readonly by: string
-  readonly checked: string
-  readonly standard: string
 }
 
 export interface Sheet {

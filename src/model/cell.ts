@@ -1,10 +1,11 @@
 /** Turns what stands in a cell or behind a setting into a value in base SI. */
 import { type Dimension, dimensionInWords, isNumber, sameDimension } from '../base/dimension.ts'
-import { dimensionOf, evaluate, unitCarried } from '../base/evaluate.ts'
+import { evaluate } from '../base/evaluate.ts'
 import { type Expr, namesIn } from '../base/expr.ts'
 import type { Formula, Sym } from '../base/formula.ts'
 import { dimensionOfKind, roundingOfKind, unitOfKind } from '../base/kind.ts'
 import type { Result } from '../base/ledger.ts'
+import { dimensionOf, unitCarried } from '../base/measure.ts'
 import { suggestion } from '../base/near.ts'
 import { bad, good } from '../base/outcome.ts'
 import { type ExprFault, parseExpr } from '../base/parse.ts'

@@ -7,7 +7,8 @@ import type { FrontMatter } from '../read/front.ts'
 import { diagnose } from '../read/text.ts'
 import type { Assumption } from './scope.ts'
 
-export interface Choices {
+/** What the title block carries; every field is printed as written, empty when the front matter leaves it out. */
+export interface TitleBlock {
   readonly title: string
   readonly project: string
   readonly number: string
@@ -16,6 +17,10 @@ export interface Choices {
   readonly by: string
   readonly checked: string
   readonly standard: string
+}
+
+export interface Choices {
+  readonly titleBlock: TitleBlock
   readonly system: System
   readonly language: Language
   readonly assumptions: readonly Assumption[]
@@ -67,7 +72,7 @@ export function readChoices(front: FrontMatter): Choices {
   const language =
     chosen('language', ['en-US', 'en-GB']) ??
     (american || (text('standard') === '' && system === 'US') ? 'en-US' : 'en-GB')
-  return {
+  const titleBlock: TitleBlock = {
     title: text('title'),
     project: text('project'),
     number: text('number'),
@@ -76,6 +81,9 @@ export function readChoices(front: FrontMatter): Choices {
     by: text('by'),
     checked: text('checked'),
     standard: text('standard'),
+  }
+  return {
+    titleBlock,
     system,
     language,
     assumptions,

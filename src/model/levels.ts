@@ -1,12 +1,14 @@
 /** The levels, from the top down. */
+import type { Diagnostic } from '../base/diagnostic.ts'
 import { sym } from '../base/formula.ts'
 import { all, type Result } from '../base/ledger.ts'
 import { bad, good } from '../base/outcome.ts'
+import type { Span } from '../base/span.ts'
 import type { Value } from '../base/value.ts'
 import { texAbout } from '../base/work.ts'
 import type { Block } from '../read/block.ts'
 import { diagnose, type Text } from '../read/text.ts'
-import { quantity } from './cell.ts'
+import { aboveZero, quantity } from './cell.ts'
 import { duplicates, filled, nameIn, recordsOf, settingOf, strangeLines, strangeSettings } from './columns.ts'
 import type { Scope } from './scope.ts'
 
@@ -14,6 +16,7 @@ export interface LevelLine {
   readonly name: string
   /** Height of the diaphragm above the base. */
   readonly elevation?: Value
+  readonly span: Span
 }
 
 const elevation = sym('z', 'z', 'length')
@@ -21,7 +24,7 @@ const elevation = sym('z', 'z', 'length')
 /** Sorted from the highest down; one level without an elevation when the document states none. */
 export function readLevels(blocks: readonly Block[], onlyName: string, scope: Scope): Result<readonly LevelLine[]> {
   const [block, second] = blocks
-  if (!block) return good([{ name: onlyName }])
+  if (!block) return good([{ name: onlyName, span: { start: 0, end: 0 } }])
   if (second)
     return bad([
       diagnose('error', 'levels-repeated', second.info, 'the levels are given twice', 'Put them in one table.', {
@@ -61,10 +64,31 @@ export function readLevels(blocks: readonly Block[], onlyName: string, scope: Sc
       },
       scope,
     )
-    return value.ok ? good({ name: name.value.text, elevation: value.value }) : value
+    const above = aboveZero(value, cell.value.span, `the elevation of ${name.value.text}`)
+    return above.ok ? good({ name: name.value.text, elevation: above.value, span: cell.value.span }) : above
   })
   const repeated = duplicates(names, 'level')
   const read = all(lines)
-  if (!read.ok || repeated.length > 0) return bad([...repeated, ...(read.ok ? [] : read.because)])
+  const level = read.ok ? sameElevation(read.value) : []
+  if (!read.ok || repeated.length > 0 || level.length > 0)
+    return bad([...repeated, ...level, ...(read.ok ? [] : read.because)])
   return good([...read.value].sort((a, b) => (b.elevation?.si ?? 0) - (a.elevation?.si ?? 0)))
+}
+
+/** Two diaphragms at one height have no storey between them, and no order. */
+function sameElevation(lines: readonly LevelLine[]): readonly Diagnostic[] {
+  return lines.flatMap((line, i) => {
+    const before = lines.slice(0, i).find(({ elevation }) => elevation?.si === line.elevation?.si)
+    if (!before) return []
+    return [
+      diagnose(
+        'error',
+        'levels-at-one-height',
+        line.span,
+        `levels ${before.name} and ${line.name} have the same elevation`,
+        'Areas at one height that move together are one level.',
+        { also: [{ span: before.span, text: before.name }] },
+      ),
+    ]
+  })
 }

@@ -1,8 +1,9 @@
 /** Expressions that nobody should write: each ends in a plain fault, soon, and none in an exception. */
 import fc from 'fast-check'
 import { describe, expect, test } from 'vitest'
-import { dimensionOf, evaluate, unitCarried } from '../../src/base/evaluate.ts'
+import { evaluate } from '../../src/base/evaluate.ts'
 import { namesIn } from '../../src/base/expr.ts'
+import { dimensionOf, unitCarried } from '../../src/base/measure.ts'
 import { parseExpr } from '../../src/base/parse.ts'
 import { plain } from '../../src/base/plain.ts'
 import { letter, typeset } from '../../src/base/typeset.ts'

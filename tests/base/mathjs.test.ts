@@ -1,8 +1,9 @@
 /** The reader and the evaluator against mathjs, an independent library, on the same text. */
 import { all, create } from 'mathjs'
 import { describe, expect, test } from 'vitest'
-import { dimensionOf, evaluate, prepare } from '../../src/base/evaluate.ts'
+import { evaluate, prepare } from '../../src/base/evaluate.ts'
 import type { Expr } from '../../src/base/expr.ts'
+import { dimensionOf } from '../../src/base/measure.ts'
 import { parseExpr } from '../../src/base/parse.ts'
 import { plain } from '../../src/base/plain.ts'
 import { anyMeasure, numberExpression, quantityExpression } from '../support/expressions.ts'

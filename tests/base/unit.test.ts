@@ -1,7 +1,8 @@
 /** Units: how lengths are written, what each is worth, and which unit a result carries. */
 import { describe, expect, test } from 'vitest'
-import { dimensionOf, evaluate, unitCarried } from '../../src/base/evaluate.ts'
+import { evaluate } from '../../src/base/evaluate.ts'
 import type { Expr } from '../../src/base/expr.ts'
+import { dimensionOf, unitCarried } from '../../src/base/measure.ts'
 import { type ExprFault, parseExpr } from '../../src/base/parse.ts'
 import { isUnitName, unit, unitOnPage, unitSpellings, unitTex, unitText } from '../../src/base/unit.ts'
 import { agrees } from '../support/agrees.ts'
