@@ -87,24 +87,33 @@ export function place(sheet: Sheet, placing: Placing): readonly SceneNode[] | un
  * way that costs least together if there is a good one, else one after the other.
  */
 export function placePair(sheet: Sheet, a: Placing, b: Placing): readonly (readonly SceneNode[] | undefined)[] {
-  const pair = bestPair(priced(sheet.field, a.near), priced(sheet.field, b.near))
+  const pair = bestPair(sheet.field, Array.from(a.near), Array.from(b.near))
   return pair === undefined ? [place(sheet, a), place(sheet, b)] : pair.map(choice => settle(sheet, choice))
 }
 
-function priced(field: Field, spots: Iterable<Spot>): readonly Choice[] {
-  const choices = Array.from(spots, spot => ({ spot, price: priceOf(field, spot) }))
-  return choices.filter(({ price }) => price <= goodEnoughPair).sort((a, b) => a.price - b.price)
-}
-
-function bestPair(as: readonly Choice[], bs: readonly Choice[]): readonly Choice[] | undefined {
+/** Spots come in the order of their own price, which what lies there only raises: most need never be looked at. */
+function bestPair(field: Field, as: readonly Spot[], bs: readonly Spot[]): readonly Choice[] | undefined {
+  const prices: number[] = []
+  const priceOfB = (spot: Spot, at: number) => {
+    prices[at] ??= priceOf(field, spot)
+    return prices[at] ?? Number.POSITIVE_INFINITY
+  }
+  const cheapestB = bs[0]?.price ?? Number.POSITIVE_INFINITY
   let best: readonly Choice[] | undefined
-  let least = goodEnoughPair
+  let least: number = goodEnoughPair
   for (const a of as) {
-    for (const b of bs) {
-      if (a.price + b.price >= least) break
-      if (spotsMeet(a.spot, b.spot)) continue
-      best = [a, b]
-      least = a.price + b.price
+    if (a.price + cheapestB >= least) break
+    const price = priceOf(field, a)
+    if (price + cheapestB >= least) continue
+    for (const [at, b] of bs.entries()) {
+      if (price + b.price >= least) break
+      const sum = price + priceOfB(b, at)
+      if (sum >= least || spotsMeet(a, b)) continue
+      best = [
+        { spot: a, price },
+        { spot: b, price: sum - price },
+      ]
+      least = sum
     }
   }
   return best
