@@ -55,6 +55,9 @@ function readArea(record: RowOf, name: Text, level: string, grid: Grid, scope: S
   })
 }
 
+/** A part of a plan smaller than a millimetre is two spellings of one line. */
+const LEAST = 1e-3
+
 type Shape = Pick<Area, 'outline' | 'rectangle'>
 
 function readRectangle(record: RowOf, id: string, name: Text, grid: Grid, scope: Scope): Result<Shape> {
@@ -66,13 +69,13 @@ function readRectangle(record: RowOf, id: string, name: Text, grid: Grid, scope:
   if (!a.ok || !b.ok) return bad([...(a.ok ? [] : a.because), ...(b.ok ? [] : b.because)])
   const [left, right] = inOrder(a.value.x, b.value.x)
   const [low, high] = inOrder(a.value.y, b.value.y)
-  if (right.si - left.si <= 0 || high.si - low.si <= 0)
+  if (right.si - left.si < LEAST || high.si - low.si < LEAST)
     return bad([
       diagnose(
         'error',
         'area-empty',
         { start: from.value.span.start, end: to.value.span.end },
-        `area ${name.text} has no extent in ${right.si - left.si <= 0 ? 'x' : 'y'}`,
+        `area ${name.text} has no extent in ${right.si - left.si < LEAST ? 'x' : 'y'}`,
         'Give two opposite corners.',
       ),
     ])
@@ -118,7 +121,7 @@ function readPolygon(record: RowOf, id: string, name: Text, grid: Grid, scope: S
       ),
     ])
   const area = signedArea(plain)
-  if (area === 0)
+  if (Math.abs(area) < LEAST * LEAST)
     return bad([
       diagnose(
         'error',

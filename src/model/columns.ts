@@ -37,6 +37,16 @@ export function recordsOf(block: Block, rules: ColumnRules): Result<readonly Row
       ),
     ])
   const { header, headerLine, rows } = block.table
+  if (rows.length === 0)
+    return bad([
+      diagnose(
+        'error',
+        'table-empty',
+        headerLine.span,
+        `this table of ${block.topic} has no rows`,
+        'Add a row, or leave the block out.',
+      ),
+    ])
   const known = [...needed, ...optional]
   const faults: Diagnostic[] = []
   const units = new Map<string, Unit>()
