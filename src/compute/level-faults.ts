@@ -7,6 +7,7 @@ import { inWords } from '../base/near.ts'
 import type { Span } from '../base/span.ts'
 import { NO_UNIT } from '../base/unit.ts'
 import { distanceFrom } from '../model/geometry.ts'
+import type { LineLoad, PointLoad } from '../model/loads.ts'
 import type { Assumption } from '../model/scope.ts'
 import type { Wall } from '../model/walls.ts'
 import { diagnose } from '../read/text.ts'
@@ -16,20 +17,25 @@ import type { Spring, Unstable } from './rigidity.ts'
 /** A wall may stand this far off the edge of its level, in m: its thickness, and the slack of a sketch. */
 const OFF_EDGE = 0.3
 
+const lengthPrinter =
+  ({ system }: Display) =>
+  (metres: number): string =>
+    system === 'US' ? `${(metres / 0.3048).toFixed(2)} ft` : `${metres.toFixed(2)} m`
+
 export const topicMissing = (level: string, topic: string, at: Span): Diagnostic =>
   diagnose('error', `${topic}-missing`, at, `level ${level} has no ${topic}`, `Give them in a block ${topic} ${level}.`)
 
 export function wallOutside(
   { name, from, to, place }: Wall,
   { outline, areas }: Plan,
-  { system }: Display,
+  display: Display,
 ): readonly Diagnostic[] {
   const ends = [from, to].map(({ x, y }) => ({ x: x.si, y: y.si }))
   const [a, b] = ends
   if (!a || !b) return []
   const off = Math.min(...outline.map(ring => distanceFrom(ring, a, b)))
   if (off <= OFF_EDGE) return []
-  const print = (metres: number) => (system === 'US' ? `${(metres / 0.3048).toFixed(2)} ft` : `${metres.toFixed(2)} m`)
+  const print = lengthPrinter(display)
   const where = `from x = ${print(a.x)}, y = ${print(a.y)} to x = ${print(b.x)}, y = ${print(b.y)}`
   const also = areas.map(({ name, span }) => ({ span, text: `${name} is an area of the level` }))
   return [
@@ -42,6 +48,29 @@ export function wallOutside(
       { label: where, also: also.slice(0, 3) },
     ),
   ]
+}
+
+/** Loads with an end off the plan: they may be meant, as over an eave, so they count and are pointed out. */
+export function loadsOutside(
+  loads: readonly (LineLoad | PointLoad)[],
+  { outline }: Plan,
+  display: Display,
+): readonly Diagnostic[] {
+  const print = lengthPrinter(display)
+  return loads.flatMap(load => {
+    const ends = ('from' in load ? [load.from, load.to] : [load.at]).map(({ x, y }) => ({ x: x.si, y: y.si }))
+    const off = Math.max(...ends.map(end => Math.min(...outline.map(ring => distanceFrom(ring, end, end)))))
+    if (off <= OFF_EDGE) return []
+    return [
+      diagnose(
+        'warning',
+        'load-outside-level',
+        load.span,
+        `load ${load.name} reaches ${print(off)} outside its level`,
+        'It counts where it is stated. Check its place.',
+      ),
+    ]
+  })
 }
 
 export function mixedStiffness(walls: readonly Wall[], springs: readonly Spring[]): Diagnostic | undefined {

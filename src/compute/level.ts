@@ -23,6 +23,7 @@ import { type Displacement, workDisplacement } from './displacement.ts'
 import { type Distribution, workDistribution } from './distribution.ts'
 import {
   driftNotWorked,
+  loadsOutside,
   mixedStiffness,
   rigidAssumptions,
   storeyByStorey,
@@ -112,7 +113,10 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
 
   const mass = once('W', () => {
     const parts = together({ plan: plan(), lines: lines(), points: points() })
-    return parts.ok ? workMass(parts.value.plan, parts.value.lines, parts.value.points, anchor, scope) : parts
+    if (!parts.ok) return parts
+    const { plan: drawn, lines: along, points: at } = parts.value
+    loadsOutside([...along, ...at], drawn, scope.display).forEach(scope.warn)
+    return workMass(drawn, along, at, anchor, scope)
   })
 
   const walls = once('walls', () => {

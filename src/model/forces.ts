@@ -113,7 +113,7 @@ function readStated({ x, y, unitX, unitY, accidental }: Stated, level: string, s
 
 /** A case without a force has nothing to share out. */
 function notZero(value: Result<Value> | undefined, cell: Text | undefined): Result<Value> | undefined {
-  if (!value?.ok || !cell || value.value.si !== 0) return value
+  if (!value?.ok || !cell || Math.abs(value.value.si) >= value.value.rounding) return value
   return bad([
     diagnose('error', 'force-zero', cell.span, 'this force is zero', 'Leave it out where nothing acts along an axis.'),
   ])

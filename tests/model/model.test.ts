@@ -16,7 +16,7 @@ function quoted(text: string, ...ids: string[]): readonly number[] {
 const FOOT = 0.3048
 const grid = '```grid\nx: A 0 ft, B 24 ft, 11 40 ft\ny: 1 0 ft, 2 18 ft\n```\n\n'
 const point = (at: string) =>
-  `${grid}\`\`\`areas\n| area | from | to | load |\n|---|---|---|---|\n| S | A1 | B2 | 9 psf |\n\`\`\`\n\n\`\`\`point-loads\n| point | at | load |\n|---|---|---|\n| P | ${at} | 1 kip |\n\`\`\`\n`
+  `${grid}\`\`\`areas\n| area | from | to | load |\n|---|---|---|---|\n| S | 0 ft, 0 ft | 40 ft, 18 ft | 9 psf |\n\`\`\`\n\n\`\`\`point-loads\n| point | at | load |\n|---|---|---|\n| P | ${at} | 1 kip |\n\`\`\`\n`
 
 describe('a point', () => {
   test.each([
