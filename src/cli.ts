@@ -7,7 +7,7 @@ import { sourceOf } from './base/span.ts'
 import type { Compiled } from './compile.ts'
 import { compileText } from './compile.ts'
 import { auditSteps } from './explain/audit.ts'
-import { type DocumentFile, documentsIn, readText, writeWhole } from './files.ts'
+import { type DocumentFile, documentsIn, print, readText, writeWhole } from './files.ts'
 import { help, helpFor } from './help.ts'
 import { hostAt } from './host.ts'
 import { type Format, publish } from './publish.ts'
@@ -108,7 +108,8 @@ function compileFile(path: string): Compiled | undefined {
   if (read.ok) return compileText(shownPath(path), read.value)
   const { text, offset, rule, message, help } = read.because
   const at = { span: { start: offset, end: offset + 1 }, text: '' }
-  process.stderr.write(
+  print(
+    'errors',
     `${longForm(sourceOf(shownPath(path), text), { rule, severity: 'error', message, help, at, also: [] })}\n\n`,
   )
   return undefined
@@ -129,7 +130,7 @@ function build({ path, within }: DocumentFile, settings: Settings): number {
   const files = wanted.flatMap(format => publish(compiled, stemOf(format), format, settings.draft && errors > 0, host))
   const written = writeWhole(folder, files)
   if (!written.ok) return fail(written.because)
-  for (const { name } of files) process.stdout.write(`${shownPath(join(folder, name))}\n`)
+  for (const { name } of files) print('output', `${shownPath(join(folder, name))}\n`)
   sayChecks(compiled)
   return errors > 0 ? ERRORS : DONE
 }
@@ -148,8 +149,9 @@ function audit({ path }: DocumentFile, settings: Settings): number {
   const errors = tell(compiled, settings)
   const { source, context } = compiled
   const { lines, broken } = auditSteps(context.roots.values())
-  for (const { id, line, because } of broken) process.stdout.write(`${source.path}: ${id}: ${because}: ${line}\n`)
-  process.stdout.write(
+  for (const { id, line, because } of broken) print('output', `${source.path}: ${id}: ${because}: ${line}\n`)
+  print(
+    'output',
     `${source.path}: ${count(lines, 'line')} audited, ${broken.length === 0 ? 'all hold' : `${broken.length} do not hold`}\n`,
   )
   return errors > 0 || broken.length > 0 ? ERRORS : DONE
@@ -160,38 +162,39 @@ const actions = { build, check, audit } as const
 /** Prints every diagnostic and a closing count. @returns the number of errors */
 function tell({ source, diagnostics }: Compiled, settings: Settings): number {
   for (const diagnostic of diagnostics)
-    process.stderr.write(settings.oneLine ? `${oneLine(source, diagnostic)}\n` : `${longForm(source, diagnostic)}\n\n`)
+    print('errors', settings.oneLine ? `${oneLine(source, diagnostic)}\n` : `${longForm(source, diagnostic)}\n\n`)
   const errors = diagnostics.filter(({ severity }) => severity === 'error').length
   const warnings = diagnostics.length - errors
   if (diagnostics.length > 0)
-    process.stderr.write(`${source.path}: ${count(errors, 'error')}, ${count(warnings, 'warning')}\n`)
+    print('errors', `${source.path}: ${count(errors, 'error')}, ${count(warnings, 'warning')}\n`)
   return errors
 }
 
 /** Prints how the checks came out. @returns the number that failed */
 function sayChecks({ source, checks }: Compiled): number {
   for (const { what, demand, capacity, ratioPrinted, ok } of checks)
-    process.stdout.write(
+    print(
+      'output',
       `${source.path}: ${what}: ${demand} ${ok ? '≤' : '>'} ${capacity}, ratio ${ratioPrinted}, ${ok ? 'OK' : 'NG'}\n`,
     )
   const failed = checks.filter(({ ok }) => !ok).length
-  process.stdout.write(`${source.path}: ${count(checks.length, 'check')}, ${failed === 0 ? 'none' : failed} failed\n`)
+  print('output', `${source.path}: ${count(checks.length, 'check')}, ${failed === 0 ? 'none' : failed} failed\n`)
   return failed
 }
 
 const count = (n: number, noun: string): string => `${n} ${noun}${n === 1 ? '' : 's'}`
 
 function say(text: string): number {
-  process.stdout.write(`${text}\n`)
+  print('output', `${text}\n`)
   return DONE
 }
 
 function misuse(text: string): number {
-  process.stderr.write(`${text}\nSee platemark --help.\n`)
+  print('errors', `${text}\nSee platemark --help.\n`)
   return WRONG_USAGE
 }
 
 function fail(text: string): number {
-  process.stderr.write(`${text}\n`)
+  print('errors', `${text}\n`)
   return ERRORS
 }

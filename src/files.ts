@@ -1,5 +1,15 @@
 /** Reading documents and writing results; nothing else touches the disk. */
-import { mkdirSync, mkdtempSync, readdirSync, readFileSync, renameSync, rmSync, statSync, writeFileSync } from 'node:fs'
+import {
+  mkdirSync,
+  mkdtempSync,
+  readdirSync,
+  readFileSync,
+  renameSync,
+  rmSync,
+  statSync,
+  writeFileSync,
+  writeSync,
+} from 'node:fs'
 import { dirname, extname, join, relative } from 'node:path'
 import type { Diagnostic } from './base/diagnostic.ts'
 import { bad, good, type Outcome } from './base/outcome.ts'
@@ -110,4 +120,21 @@ const reasons: Readonly<Record<string, string>> = {
 function reason(error: unknown): string {
   const code = error instanceof Error && 'code' in error ? String(error.code) : ''
   return reasons[code] ?? (error instanceof Error ? error.message : String(error))
+}
+
+/**
+ * Prints to the terminal or whatever stands in its place. Written straight to the file: setting
+ * up the streams of `process` takes longer than many a document.
+ */
+export function print(to: 'output' | 'errors', text: string): void {
+  const bytes = Buffer.from(text)
+  let written = 0
+  try {
+    while (written < bytes.length) written += writeSync(to === 'output' ? 1 : 2, bytes, written)
+  } catch {
+    // A pipe that is full for now, or that nobody reads any more: the stream knows how to wait and how to end.
+    const stream = to === 'output' ? process.stdout : process.stderr
+    if (stream.listenerCount('error') === 0) stream.on('error', () => undefined)
+    stream.write(bytes.subarray(written))
+  }
 }
