@@ -237,6 +237,7 @@ const homes: readonly Home[] = [
     names: { LEVEL: 'roof', NAME: 'CONC', AREA: 'Shaft', WALL: 'S1', CASE: 'EY-', CORNER: 'C1' },
   },
   { text: chapter('04-workings'), names: { LEVEL: 'roof', AREA: 'Porch', WALL: 'P', CASE: 'EY', NAME: 'CMU8' } },
+  { text: chapter('03-building'), names: { LEVEL: 'loft' } },
 ]
 
 const filledIn = (pattern: string, names: Names): string => pattern.replace(/[A-Z]{4,}/g, word => names[word] ?? word)
