@@ -1,5 +1,6 @@
 /** Names of areas and openings: where each would like to be. */
-import { boundsOfPoints, corners, distance, insidePolygon, type Point, sidesOf } from './geometry.ts'
+import { contains } from '../model/geometry.ts'
+import { boundsOfPoints, corners, distance, type Point, sidesOf } from './geometry.ts'
 import { type Lettering, lettering, letteringBox } from './label.ts'
 import { labelSpot, type Placing, type Spot } from './placement.ts'
 import type { Patch } from './slab.ts'
@@ -71,13 +72,13 @@ const anchorSpacing = 12
 /** A few points of the area that a leader may reach, its middle first. */
 function anchorsIn(inside: readonly Point[], outline: readonly Point[], middle: Point): readonly Point[] {
   const spaced = inside.filter((_, idx) => idx % Math.ceil(inside.length / 6) === 0)
-  const points = insidePolygon(middle, outline) || inside.length === 0 ? [middle, ...spaced] : spaced
+  const points = contains(outline, middle) || inside.length === 0 ? [middle, ...spaced] : spaced
   return points.filter((p, idx) => points.findIndex(q => distance(p, q) < anchorSpacing) === idx)
 }
 
 function liesInside(letters: Lettering, at: Point, angle: number, area: Patch, openings: readonly Patch[]): boolean {
-  if (openings.some(({ outline }) => insidePolygon(at, outline))) return false
-  return corners(letteringBox(letters, at, angle)).every(corner => insidePolygon(corner, area.outline))
+  if (openings.some(({ outline }) => contains(outline, at))) return false
+  return corners(letteringBox(letters, at, angle)).every(corner => contains(area.outline, corner))
 }
 
 /** Points spread over the inside of an outline. */
@@ -87,7 +88,7 @@ function samplesOf(outline: readonly Point[]): readonly Point[] {
   const { x0, y0, x1, y1 } = bounds
   const steps = Array.from({ length: samples * 2 - 1 }, (_, idx) => (idx + 1) / (samples * 2))
   const points = steps.flatMap(u => steps.map(v => ({ x: x0 + (x1 - x0) * u, y: y0 + (y1 - y0) * v })))
-  return points.filter(p => insidePolygon(p, outline))
+  return points.filter(p => contains(outline, p))
 }
 
 /** Name of an opening: in it clear of its cross if it fits, else beside it. */

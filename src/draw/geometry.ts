@@ -1,9 +1,8 @@
 /** Points, turned boxes and segments on the sheet: x to the right, y down, angles clockwise in radians. */
 
-export interface Point {
-  readonly x: number
-  readonly y: number
-}
+import type { Point } from '../model/geometry.ts'
+
+export type { Point }
 
 export interface Segment {
   readonly a: Point
@@ -106,17 +105,6 @@ export function nearestOf(b: Box, p: Point): Point {
   const along = Math.max(-b.halfWidth, Math.min(b.halfWidth, dot(gap, u)))
   const across = Math.max(-b.halfHeight, Math.min(b.halfHeight, dot(gap, v)))
   return add(b.at, add(times(u, along), times(v, across)))
-}
-
-export function insidePolygon(p: Point, polygon: readonly Point[]): boolean {
-  let inside = false
-  for (let i = 0, j = polygon.length - 1; i < polygon.length; j = i++) {
-    const a = polygon[i]
-    const b = polygon[j]
-    if (a === undefined || b === undefined) continue
-    if (a.y > p.y !== b.y > p.y && p.x < ((b.x - a.x) * (p.y - a.y)) / (b.y - a.y) + a.x) inside = !inside
-  }
-  return inside
 }
 
 export function sidesOf(polygon: readonly Point[]): readonly Segment[] {

@@ -1,4 +1,5 @@
 /** Slab areas and openings. */
+import { contains } from '../model/geometry.ts'
 import type { Field } from './field.ts'
 import {
   add,
@@ -6,7 +7,6 @@ import {
   boundsOfPoints,
   cut,
   direction,
-  insidePolygon,
   normal,
   type Point,
   type Segment,
@@ -25,8 +25,8 @@ export interface Patch {
 
 export function groundOf(areas: readonly Patch[], openings: readonly Patch[]): (p: Point) => 'paper' | 'wash' {
   return p => {
-    if (openings.some(({ outline }) => insidePolygon(p, outline))) return 'paper'
-    return areas.some(({ outline }) => insidePolygon(p, outline)) ? 'wash' : 'paper'
+    if (openings.some(({ outline }) => contains(outline, p))) return 'paper'
+    return areas.some(({ outline }) => contains(outline, p)) ? 'wash' : 'paper'
   }
 }
 
@@ -55,7 +55,7 @@ function isSeam({ a, b }: Segment, areas: readonly Patch[]): boolean {
   const middle = { x: (a.x + b.x) / 2, y: (a.y + b.y) / 2 }
   const aside = times(normal(direction(a, b)), 0.05)
   return [add(middle, aside), add(middle, times(aside, -1))].every(p =>
-    areas.some(({ outline }) => insidePolygon(p, outline)),
+    areas.some(({ outline }) => contains(outline, p)),
   )
 }
 
@@ -76,7 +76,7 @@ function diagonalsOf(outline: readonly Point[]): readonly Segment[] {
     { a: p, b: r },
     { a: q, b: s },
   ].flatMap(line => cut(line, sides))
-  return pieces.filter(({ a, b }) => insidePolygon({ x: (a.x + b.x) / 2, y: (a.y + b.y) / 2 }, outline))
+  return pieces.filter(({ a, b }) => contains(outline, { x: (a.x + b.x) / 2, y: (a.y + b.y) / 2 }))
 }
 
 function cornersOf(bounds: Bounds | undefined): readonly Point[] {

@@ -1,7 +1,7 @@
 import fc from 'fast-check'
 import { describe, expect, test } from 'vitest'
 import { Field } from '../../src/draw/field.ts'
-import { type Box, box, boxesMeet, cut, insidePolygon, sidesOf } from '../../src/draw/geometry.ts'
+import { type Box, box, boxesMeet, cut, sidesOf } from '../../src/draw/geometry.ts'
 import { lettering, letteringBox, readableAngle } from '../../src/draw/label.ts'
 import { labelSpot, place, placePair } from '../../src/draw/placement.ts'
 import { drawScaleBar, roundLength } from '../../src/draw/scalebar.ts'
@@ -9,6 +9,7 @@ import { element, formatNumber, serialise } from '../../src/draw/scene.ts'
 import { spread } from '../../src/draw/spread.ts'
 import { arrangeStems } from '../../src/draw/stems.ts'
 import { shorten, textWidth, wrap } from '../../src/draw/textwidth.ts'
+import { contains } from '../../src/model/geometry.ts'
 import { readXml } from './reading.ts'
 
 const style = { size: 12, weight: 'plain' } as const
@@ -211,8 +212,8 @@ describe('areas', () => {
   ]
 
   test('hold the points within their sides', () => {
-    expect(insidePolygon({ x: 5, y: 5 }, square)).toBe(true)
-    expect(insidePolygon({ x: 15, y: 5 }, square)).toBe(false)
+    expect(contains(square, { x: 5, y: 5 })).toBe(true)
+    expect(contains(square, { x: 15, y: 5 })).toBe(false)
   })
   test('have their sides cut where a neighbour begins and ends', () => {
     const pieces = cut(
