@@ -9,7 +9,7 @@ import { formula, type Sym, sym } from '../base/formula.ts'
 import type { Display } from '../base/kind.ts'
 import { Tabulation } from '../base/tabulation.ts'
 import type { Value, Word } from '../base/value.ts'
-import { texAbout, work } from '../base/work.ts'
+import { shownAs, texAbout, work } from '../base/work.ts'
 import { type Axis, type Case, caseOnPage, casesOf } from './cases.ts'
 import { designTable, governingCase } from './design.ts'
 import { type Residual, residualOf } from './equilibrium.ts'
@@ -54,7 +54,7 @@ const Vt = sym('V_t', 'V_t', 'force')
 const DIAPHRAGM = 'rigid diaphragm on springs (derived)'
 
 export const movement = {
-  x: {
+  along: {
     u: formula({ gives: u0, body: 'V_x/K_xx', of: [Vx, Kxx], source: DIAPHRAGM }),
     v: formula({ gives: v0, body: 'V_y/K_yy', of: [Vy, Kyy], source: DIAPHRAGM }),
   },
@@ -172,13 +172,21 @@ function moved(
   const [idU, idV] = [`${level}.u.${name}`, `${level}.v.${name}`]
   if (orthogonal || !K.xy || !D) {
     const still = (id: string, of: Sym): Value => ({
-      ...work(id, movement.x.u, { V_x: { ...shear, si: 0 }, K_xx: K.xx }, display, [caseOnPage(name)]),
+      id,
       tex: texAbout(of.tex, caseOnPage(name)),
-      origin: { kind: 'measured', what: `no part of the force of ${name} acts this way`, spans: [] },
+      si: 0,
+      ...shownAs(of, display),
+      origin: { kind: 'measured', what: `no part of the force of ${caseOnPage(name)} acts this way`, spans: [] },
     })
     if (axis === 'x')
-      return { u: work(idU, movement.x.u, { V_x: shear, K_xx: K.xx }, display, [caseOnPage(name)]), v: still(idV, v0) }
-    return { u: still(idU, u0), v: work(idV, movement.x.v, { V_y: shear, K_yy: K.yy }, display, [caseOnPage(name)]) }
+      return {
+        u: work(idU, movement.along.u, { V_x: shear, K_xx: K.xx }, display, [caseOnPage(name)]),
+        v: still(idV, v0),
+      }
+    return {
+      u: still(idU, u0),
+      v: work(idV, movement.along.v, { V_y: shear, K_yy: K.yy }, display, [caseOnPage(name)]),
+    }
   }
   const { xx, yy, xy } = K
   if (axis === 'x')

@@ -5,7 +5,7 @@ import type { Display } from '../base/kind.ts'
 import { verbatim } from '../base/language.ts'
 import { inWords } from '../base/near.ts'
 import type { Span } from '../base/span.ts'
-import { NO_UNIT } from '../base/unit.ts'
+import { NO_UNIT, unit, unitText } from '../base/unit.ts'
 import { distanceFrom } from '../model/geometry.ts'
 import type { LineLoad, PointLoad } from '../model/loads.ts'
 import type { Assumption } from '../model/scope.ts'
@@ -19,8 +19,10 @@ const OFF_EDGE = 0.3
 
 const lengthPrinter =
   ({ system }: Display) =>
-  (metres: number): string =>
-    system === 'US' ? `${(metres / 0.3048).toFixed(2)} ft` : `${metres.toFixed(2)} m`
+  (metres: number): string => {
+    const shown = unit(system === 'US' ? 'ft' : 'm')
+    return `${(metres / shown.scale).toFixed(2)} ${unitText(shown)}`
+  }
 
 export const topicMissing = (level: string, topic: string, at: Span): Diagnostic =>
   diagnose('error', `${topic}-missing`, at, `level ${level} has no ${topic}`, `Give them in a block ${topic} ${level}.`)

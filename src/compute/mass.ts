@@ -11,7 +11,9 @@ import { areaLoad, readAreaLoad } from '../model/areas.ts'
 import { type LineLoad, lineLoad, type PointLoad, pointLoad, readLoad } from '../model/loads.ts'
 import type { Scope } from '../model/scope.ts'
 import { diagnose } from '../read/text.ts'
+import { A, Ip } from './measure.ts'
 import type { Plan } from './plan.ts'
+import { segment } from './segment.ts'
 import { L, W, x, x1, x2, xm, y, y1, y2, ym } from './symbols.ts'
 
 export interface Mass {
@@ -30,8 +32,6 @@ export interface Mass {
   readonly sums: { readonly Wx: Value; readonly Wy: Value }
 }
 
-const A = sym('A', 'A', 'area')
-const Ip = sym('I_p', 'I_p', 'secondMoment')
 const Wx = sym('W_x', 'W\\,x', 'moment')
 const Wy = sym('W_y', 'W\\,y', 'moment')
 const own = sym('I_o', 'I_o', 'weightMoment')
@@ -49,10 +49,7 @@ const area = {
 }
 
 const line = {
-  L: formula({ gives: L, body: 'sqrt((x_2 - x_1)^2 + (y_2 - y_1)^2)', of: [x1, y1, x2, y2], source: 'geometry' }),
   W: formula({ gives: W, body: 'w*L', of: [lineLoad, L], source: STATICS }),
-  x: formula({ gives: x, body: '(x_1 + x_2)/2', of: [x1, x2], source: 'geometry' }),
-  y: formula({ gives: y, body: '(y_1 + y_2)/2', of: [y1, y2], source: 'geometry' }),
   own: formula({ gives: own, body: 'W*L^2/12', of: [W, L], source: STATICS }),
 }
 
@@ -164,11 +161,11 @@ function lineTable(level: string, lines: readonly LineLoad[], loads: readonly Va
       y2,
       lines.map(({ to }) => to.y),
     )
-    .work(line.L, { x_1: 'x_1', y_1: 'y_1', x_2: 'x_2', y_2: 'y_2' })
+    .work(segment.L, { x_1: 'x_1', y_1: 'y_1', x_2: 'x_2', y_2: 'y_2' })
     .take(lineLoad, loads)
     .work(line.W, { w: 'w', L: 'L' })
-    .work(line.x, { x_1: 'x_1', x_2: 'x_2' })
-    .work(line.y, { y_1: 'y_1', y_2: 'y_2' })
+    .work(segment.x, { x_1: 'x_1', x_2: 'x_2' })
+    .work(segment.y, { y_1: 'y_1', y_2: 'y_2' })
     .work(line.own, { W: 'W', L: 'L' })
 }
 

@@ -5,6 +5,7 @@ import { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
 import { work } from '../base/work.ts'
 import type { Corner } from '../model/grid.ts'
+import { segment } from './segment.ts'
 import { x, x1, x2, y, y1, y2 } from './symbols.ts'
 
 export interface Measured {
@@ -17,8 +18,8 @@ export interface Measured {
   readonly sides?: Tabulation
 }
 
-const A = sym('A', 'A', 'area')
-const Ip = sym('I_p', 'I_p', 'secondMoment')
+export const A = sym('A', 'A', 'area')
+export const Ip = sym('I_p', 'I_p', 'secondMoment')
 
 const rectangle = {
   A: formula({ gives: A, body: '(x_2 - x_1)*(y_2 - y_1)', of: [x1, x2, y1, y2], source: 'geometry' }),
@@ -28,8 +29,6 @@ const rectangle = {
     of: [x1, x2, y1, y2],
     source: 'geometry; an opening counts as negative area',
   }),
-  x: formula({ gives: x, body: '(x_1 + x_2)/2', of: [x1, x2], source: 'geometry' }),
-  y: formula({ gives: y, body: '(y_1 + y_2)/2', of: [y1, y2], source: 'geometry' }),
   Ip: formula({ gives: Ip, body: 'A*((x_2 - x_1)^2 + (y_2 - y_1)^2)/12', of: [A, x1, x2, y1, y2], source: 'geometry' }),
 }
 
@@ -97,8 +96,8 @@ function measureRectangle(
   const area = work(`${id}.A`, cut ? rectangle.cutA : rectangle.A, inputs, display, [name])
   return {
     A: area,
-    x: work(`${id}.x`, rectangle.x, of.x, display, [name]),
-    y: work(`${id}.y`, rectangle.y, of.y, display, [name]),
+    x: work(`${id}.x`, segment.x, of.x, display, [name]),
+    y: work(`${id}.y`, segment.y, of.y, display, [name]),
     Ip: work(`${id}.I_p`, rectangle.Ip, { ...inputs, A: area }, display, [name]),
   }
 }

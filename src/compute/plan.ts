@@ -3,20 +3,20 @@
  * openings take away, its outline, corners and size.
  */
 import type { Diagnostic } from '../base/diagnostic.ts'
-import { sym } from '../base/formula.ts'
 import type { Display } from '../base/kind.ts'
 import type { Result } from '../base/ledger.ts'
 import { inWords } from '../base/near.ts'
 import { bad, good } from '../base/outcome.ts'
 import type { Span } from '../base/span.ts'
+import { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
 import { shownAs } from '../base/work.ts'
 import type { Area } from '../model/areas.ts'
-import type { Point } from '../model/geometry.ts'
 import type { Corner } from '../model/grid.ts'
 import { diagnose } from '../read/text.ts'
 import { areaOf, common, outlineOf, type Ring } from './clip.ts'
-import { type Measured, measure } from './measure.ts'
+import { A, type Measured, measure } from './measure.ts'
+import { type Outline, workOutline } from './outline.ts'
 import { x, y } from './symbols.ts'
 
 /** An area, or what an opening takes from one: its area is then negative. */
@@ -28,23 +28,16 @@ export interface Part extends Measured {
   readonly span: Span
 }
 
-export interface Plan {
+export interface Plan extends Outline {
   readonly level: string
   readonly areas: readonly Area[]
   readonly openings: readonly Area[]
   readonly parts: readonly Part[]
-  /** Net plan area and length of the outer outline. */
+  /** Net plan area. */
   readonly area: Value
-  readonly perimeter: Value
   readonly outline: readonly Ring[]
-  /** Corners of the outer outline, named C1, C2 … counter-clockwise. */
-  readonly corners: readonly (Corner & { readonly name: string })[]
-  readonly size: { readonly x: Value; readonly y: Value }
   readonly warnings: readonly Diagnostic[]
 }
-
-const areaSym = sym('A', 'A', 'area')
-const size = { x: sym('B_x', 'B_x', 'length'), y: sym('B_y', 'B_y', 'length') }
 
 const pointsOf = (outline: readonly Corner[]): Ring => outline.map(({ x, y }) => ({ x: x.si, y: y.si }))
 
@@ -73,41 +66,22 @@ export function workPlan(level: string, given: readonly Area[], display: Display
   const spans = given.map(({ span }) => span)
   const outline = outlineOf(areas.map(({ outline }) => pointsOf(outline)))
   const outer = outline.filter(ring => areaOf([ring]) > 0)
-  const measured = (id: string, tex: string, si: number, of: typeof areaSym, what: string): Value => ({
-    id: `${level}.${id}`,
-    tex,
-    si,
-    ...shownAs(of, display),
-    origin: { kind: 'measured', what, spans },
-  })
-  const all = outer.flat()
-  const range = (axis: 'x' | 'y') =>
-    Math.max(...all.map(point => point[axis])) - Math.min(...all.map(point => point[axis]))
+  const table = new Tabulation(
+    parts.map(({ name }) => name),
+    (row, key) => `${level}.areas.${row}.${key}`,
+    display,
+  ).take(
+    A,
+    parts.map(part => part.A),
+  )
   return good({
     level,
     areas,
     openings,
     parts,
-    area: measured(
-      'area',
-      'A',
-      parts.reduce((total, { A }) => total + A.si, 0),
-      areaSym,
-      'sum of the areas less the openings',
-    ),
-    perimeter: measured(
-      'perimeter',
-      'P',
-      outer.reduce((total, ring) => total + lengthAround(ring), 0),
-      size.x,
-      'length of the outer outline',
-    ),
+    area: table.sum('A', A, `${level}.area`),
     outline,
-    corners: namedCorners(level, outer, display, spans),
-    size: {
-      x: measured('size.x', 'B_x', range('x'), size.x, 'extent of the plan along x'),
-      y: measured('size.y', 'B_y', range('y'), size.y, 'extent of the plan along y'),
-    },
+    ...workOutline(level, outer, spans, display),
     warnings: [...cuts.value.warnings, ...overlaps(areas)],
   })
 
@@ -227,41 +201,4 @@ function boxesMeet(a: Ring, b: Ring): boolean {
     Math.max(...a.map(p => p[axis])) <= Math.min(...b.map(p => p[axis])) ||
     Math.max(...b.map(p => p[axis])) <= Math.min(...a.map(p => p[axis]))
   return !apart('x') && !apart('y')
-}
-
-const lengthAround = (ring: Ring): number =>
-  ring.reduce((total, a, i) => total + distance(a, ring[(i + 1) % ring.length] ?? a), 0)
-
-const distance = (a: Point, b: Point): number => Math.hypot(b.x - a.x, b.y - a.y)
-
-/** Starting at the lowest corner of the left-most, so that the names do not hang on the order of the areas. */
-function namedCorners(
-  level: string,
-  outer: readonly Ring[],
-  display: Display,
-  spans: readonly Span[],
-): Plan['corners'] {
-  const rings = outer
-    .map(fromLowerLeft)
-    .sort((a, b) => (a[0]?.x ?? 0) - (b[0]?.x ?? 0) || (a[0]?.y ?? 0) - (b[0]?.y ?? 0))
-  return rings.flat().map((point, i) => {
-    const name = `C${i + 1}`
-    const at = (axis: 'x' | 'y', of: typeof x): Value => ({
-      id: `${level}.corner.${name}.${axis}`,
-      tex: `${axis}_{${name}}`,
-      si: point[axis],
-      ...shownAs(of, display),
-      origin: { kind: 'measured', what: `corner ${name} of the plan`, spans },
-    })
-    return { name, x: at('x', x), y: at('y', y) }
-  })
-}
-
-function fromLowerLeft(ring: Ring): Ring {
-  let first = 0
-  ring.forEach((point, i) => {
-    const best = ring[first]
-    if (best && point.x + point.y < best.x + best.y - 1e-9) first = i
-  })
-  return [...ring.slice(first), ...ring.slice(0, first)]
 }

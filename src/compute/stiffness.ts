@@ -8,7 +8,8 @@ import { work } from '../base/work.ts'
 import type { Construction } from '../model/construction.ts'
 import type { Assumption } from '../model/scope.ts'
 import type { BuiltWall, Wall } from '../model/walls.ts'
-import { c, k, L, s, x, x1, x2, y, y1, y2 } from './symbols.ts'
+import { segment } from './segment.ts'
+import { c, k, L, s, x1, x2, y1, y2 } from './symbols.ts'
 
 const E = sym('E', 'E', 'modulus')
 const G = sym('G', 'G', 'modulus')
@@ -93,10 +94,7 @@ export const wallStiffness = {
   }),
 }
 
-const geometry = {
-  L: formula({ gives: L, body: 'sqrt((x_2 - x_1)^2 + (y_2 - y_1)^2)', of: [x1, y1, x2, y2], source: 'geometry' }),
-  x: formula({ gives: x, body: '(x_1 + x_2)/2', of: [x1, x2], source: 'geometry' }),
-  y: formula({ gives: y, body: '(y_1 + y_2)/2', of: [y1, y2], source: 'geometry' }),
+const direction = {
   c: formula({ gives: c, body: '(x_2 - x_1)/L', of: [x1, x2, L], source: 'geometry' }),
   s: formula({ gives: s, body: '(y_2 - y_1)/L', of: [y1, y2, L], source: 'geometry' }),
 }
@@ -114,13 +112,13 @@ export interface WallLine {
 export function workLine({ name, from, to }: Wall, level: string, display: Display): WallLine {
   const id = `${level}.wall.${name}`
   const ends = { x_1: from.x, y_1: from.y, x_2: to.x, y_2: to.y }
-  const length = work(`${id}.L`, geometry.L, ends, display, [name])
+  const length = work(`${id}.L`, segment.L, ends, display, [name])
   return {
     L: length,
-    x: work(`${id}.x`, geometry.x, { x_1: from.x, x_2: to.x }, display, [name]),
-    y: work(`${id}.y`, geometry.y, { y_1: from.y, y_2: to.y }, display, [name]),
-    c: work(`${id}.c`, geometry.c, { x_1: from.x, x_2: to.x, L: length }, display, [name]),
-    s: work(`${id}.s`, geometry.s, { y_1: from.y, y_2: to.y, L: length }, display, [name]),
+    x: work(`${id}.x`, segment.x, { x_1: from.x, x_2: to.x }, display, [name]),
+    y: work(`${id}.y`, segment.y, { y_1: from.y, y_2: to.y }, display, [name]),
+    c: work(`${id}.c`, direction.c, { x_1: from.x, x_2: to.x, L: length }, display, [name]),
+    s: work(`${id}.s`, direction.s, { y_1: from.y, y_2: to.y, L: length }, display, [name]),
   }
 }
 

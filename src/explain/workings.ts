@@ -108,7 +108,21 @@ function figure(level: LevelWork, caseName: string | undefined, context: Context
   const what = !shears ? '' : caseName ? ` Shears and storey force of case ${caseOnPage(caseName)}.` : ' Design shears.'
   const id = caseName ? `${level.name}.plan.${caseName}` : `${level.name}.plan`
   const caption = context.words(`Plan of ${verbatim(level.name)}.${what}`)
-  return good([{ kind: 'figure', id: context.anchor(id), number: '', caption, ...made.value }])
+  const drawing: Piece = { kind: 'figure', id: context.anchor(id), number: '', caption, ...made.value }
+  const missing = notDrawn(level)
+  return good(missing.length > 0 ? [drawing, { kind: 'fault', diagnostics: missing }] : [drawing])
+}
+
+/** Why a sketch lacks a centre or the shears, where what they follow from was given. */
+function notDrawn({ givens, mass, rigidity, forces, distribution }: LevelWork): readonly Diagnostic[] {
+  const stated = forces()
+  const wanted: readonly Result<unknown>[] = [
+    mass(),
+    ...(givens.walls.length > 0 ? [rigidity()] : []),
+    ...(givens.walls.length > 0 && stated.ok && stated.value ? [distribution()] : []),
+  ]
+  const all = together(Object.fromEntries(wanted.map((result, i) => [i, result])))
+  return all.ok ? [] : all.because
 }
 
 /** True when forces are stated and shared out. */
