@@ -48,7 +48,7 @@ export function planView(picture: LevelPicture): PlanView {
     gridY: grid.y.map(({ name, at }) => ({ name, at: at.si })),
     ...(mass ? { centreOfMass: { at: point(mass), printed: pair(mass, language) } } : {}),
     ...(rigidity ? { centreOfRigidity: { at: point(rigidity), printed: pair(rigidity, language) } } : {}),
-    ...(drawn && mass ? { force: forceOf(drawn, distribution, mass, language) } : {}),
+    ...(drawn && mass && rigidity ? { force: forceOf(drawn, rigidity, mass, language) } : {}),
     ...(grid.north ? { north: grid.north.si } : {}),
     dimension: metres => onPage(asTyped(metres / scale.scale), scale, language),
     scaleUnit: { metres: scale.scale, name: system === 'US' ? 'ft' : 'm' },
@@ -58,7 +58,7 @@ export function planView(picture: LevelPicture): PlanView {
         : `design shear of a wall, ${unitOfShear}`,
       centreOfMass: words('centre of mass'),
       centreOfRigidity: words('centre of rigidity'),
-      force: words('storey force'),
+      force: words(distribution && distribution.acting.length > 1 ? 'storey shear' : 'storey force'),
     },
   }
 }
@@ -88,19 +88,19 @@ function wallsOf({ walls, distribution, language }: LevelPicture, drawn: CaseRes
   })
 }
 
-/** The force of a case where it acts: at the centre of mass, moved across by the accidental arm. */
-function forceOf(
-  { case: { axis, moved }, shear }: CaseResult,
-  distribution: Distribution | undefined,
-  mass: Mass,
-  language: Language,
-) {
-  const arm = distribution?.acting.at(-1)?.arm
-  const at = {
-    x: mass.x.si + (axis === 'y' ? moved * (arm?.x.si ?? 0) : 0),
-    y: mass.y.si + (axis === 'x' ? moved * (arm?.y.si ?? 0) : 0),
+/**
+ * The storey shear of a case on the line where it acts, which its moment about the centre of rigidity tells: with
+ * several levels that is the resultant of their forces. Along its line it is drawn at the centre of mass.
+ */
+function forceOf({ case: { axis }, shear, moment }: CaseResult, rigidity: Rigidity, mass: Mass, language: Language) {
+  const off = moment.si / shear.si
+  const at = axis === 'x' ? { x: mass.x.si, y: rigidity.y.si - off } : { x: rigidity.x.si + off, y: mass.y.si }
+  return {
+    at,
+    x: axis === 'x' ? shear.si : 0,
+    y: axis === 'y' ? shear.si : 0,
+    printed: printed(shear, language),
   }
-  return { at, x: axis === 'x' ? shear.si : 0, y: axis === 'y' ? shear.si : 0, printed: printed(shear, language) }
 }
 
 function describe({ level, language, plan, walls, mass, rigidity, distribution }: LevelPicture): string {

@@ -105,7 +105,11 @@ function figure(level: LevelWork, caseName: string | undefined, context: Context
   const made = context.sketch(level, caseName)
   if (!made.ok) return made
   const shears = hasShears(level)
-  const what = !shears ? '' : caseName ? ` Shears and storey force of case ${caseOnPage(caseName)}.` : ' Design shears.'
+  const what = !shears
+    ? ''
+    : caseName
+      ? ` Shears of case ${caseOnPage(caseName)}, and the storey shear where it acts.`
+      : ' Design shears.'
   const id = caseName ? `${level.name}.plan.${caseName}` : `${level.name}.plan`
   const caption = context.words(`Plan of ${verbatim(level.name)}.${what}`)
   const drawing: Piece = { kind: 'figure', id: context.anchor(id), number: '', caption, ...made.value }

@@ -20,11 +20,15 @@ export function unbreakableWidth(tex: Tex): number {
   }
   let widest = 0
   let stretch = 0
+  // Between \left and \right KaTeX keeps a line together.
+  let depth = 0
   while (reader.at < reader.tokens.length) {
     const token = reader.tokens[reader.at] ?? ''
     stretch += itemWidth(reader)
     widest = Math.max(widest, stretch)
-    if (operators.has(token)) stretch = 0
+    if (token === '\\left') depth++
+    else if (token === '\\right') depth--
+    else if (depth === 0 && operators.has(token)) stretch = 0
   }
   return widest
 }
