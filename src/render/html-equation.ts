@@ -6,7 +6,7 @@ import { idAttribute, type Setting, sourceHtml, unseenMath } from './html-parts.
 import { fitFactor, unbreakableWidth } from './measure.ts'
 
 /** Room for a line beside the origin, and with the whole width to itself, in em of the formula's type. */
-const ROOM_BESIDE = 24
+const ROOM_BESIDE = 22
 const ROOM_ALONE = 33
 
 /** About 5.5 pt on paper: below that a formula should have been a table. */
