@@ -7,7 +7,7 @@ import { sourceOf } from './base/span.ts'
 import type { Compiled } from './compile.ts'
 import { compileText } from './compile.ts'
 import { auditSteps } from './explain/audit.ts'
-import { type DocumentFile, documentsIn, print, readText, writeWhole } from './files.ts'
+import { type DocumentFile, documentsIn, nearbyOf, print, readText, writeWhole } from './files.ts'
 import { help, helpFor } from './help.ts'
 import { hostAt } from './host.ts'
 import { type Format, publish } from './publish.ts'
@@ -105,7 +105,7 @@ function onlyOnce(documents: readonly DocumentFile[]): readonly DocumentFile[] {
 
 function compileFile(path: string): Compiled | undefined {
   const read = readText(path)
-  if (read.ok) return compileText(shownPath(path), read.value)
+  if (read.ok) return compileText(shownPath(path), read.value, nearbyOf(path))
   const { text, offset, rule, message, help } = read.because
   const at = { span: { start: offset, end: offset + 1 }, text: '' }
   print(

@@ -13,10 +13,13 @@ import { type Choices, readChoices } from './model/front.ts'
 import { gather } from './model/givens.ts'
 import { readDocument } from './read/document.ts'
 import { parseMarkdown } from './read/markdown.ts'
+import { type Nearby, nothingNearby } from './read/nearby.ts'
 import { type Part, partsOf } from './render/parts.ts'
 
 export interface Compiled {
   readonly source: Source
+  /** The files that the document names. */
+  readonly nearby: Nearby
   readonly choices: Choices
   readonly parts: readonly Part[]
   readonly context: Context
@@ -25,11 +28,11 @@ export interface Compiled {
   readonly diagnostics: readonly Diagnostic[]
 }
 
-export function compileText(path: string, text: string): Compiled {
-  return compileTree(parseMarkdown(text), sourceOf(path, text))
+export function compileText(path: string, text: string, nearby: Nearby = nothingNearby): Compiled {
+  return compileTree(parseMarkdown(text), sourceOf(path, text), nearby)
 }
 
-export function compileTree(tree: Root, source: Source): Compiled {
+export function compileTree(tree: Root, source: Source, nearby: Nearby = nothingNearby): Compiled {
   const document = readDocument(tree, source)
   const choices = readChoices(document.front)
   const sheet = worksheet(gather([...document.blocks.values()]), choices)
@@ -49,7 +52,15 @@ export function compileTree(tree: Root, source: Source): Compiled {
     ...sheet.warnings(),
   ])
   const { items, headings } = numberItems(itemsOf(document, worked, diagnostics))
-  return { source, choices, parts: partsOf(items, headings, quotes), context, checks: context.checks, diagnostics }
+  return {
+    source,
+    nearby,
+    choices,
+    parts: partsOf(items, headings, quotes),
+    context,
+    checks: context.checks,
+    diagnostics,
+  }
 }
 
 /** What every page carries around its body. */

@@ -10,9 +10,10 @@ import {
   writeFileSync,
   writeSync,
 } from 'node:fs'
-import { dirname, extname, join, relative } from 'node:path'
+import { dirname, extname, join, relative, resolve } from 'node:path'
 import type { Diagnostic } from './base/diagnostic.ts'
 import { bad, good, type Outcome } from './base/outcome.ts'
+import type { Nearby } from './read/nearby.ts'
 
 /** A document to be built. */
 export interface DocumentFile {
@@ -58,7 +59,7 @@ export function readText(path: string): Outcome<string, TextFault> {
     if (size > LARGEST)
       return bad({
         rule: 'file-too-large',
-        message: `this file has ${(size / 1048576).toFixed(1)} MB; ${LARGEST / 1048576} MB are read`,
+        message: `this file has ${megabytes(size)} MB; ${megabytes(LARGEST)} MB are read`,
         help: 'Split the document.',
         ...faultOfWhole,
       })
@@ -72,6 +73,22 @@ export function readText(path: string): Outcome<string, TextFault> {
     })
   }
 }
+
+/** The files that the document at `path` names. */
+export const nearbyOf = (path: string): Nearby => ({
+  read: name => {
+    try {
+      const file = resolve(dirname(path), name)
+      const { size } = statSync(file)
+      if (size > LARGEST) return bad(`it has ${megabytes(size)} MB; ${megabytes(LARGEST)} MB are read`)
+      return good(readFileSync(file))
+    } catch (error) {
+      return bad(reason(error))
+    }
+  },
+})
+
+const megabytes = (size: number): string => String(Number((size / 1048576).toFixed(1)))
 
 function decode(bytes: Uint8Array): Outcome<string, TextFault> {
   try {
