@@ -7,6 +7,7 @@ import { sourceOf } from './base/span.ts'
 import type { Compiled } from './compile.ts'
 import { compileText } from './compile.ts'
 import { auditSteps } from './explain/audit.ts'
+import { missingForSubmittal } from './explain/submittal.ts'
 import { type DocumentFile, documentsIn, nearbyOf, print, readText, writeWhole } from './files.ts'
 import { help, helpFor } from './help.ts'
 import { hostAt } from './host.ts'
@@ -31,6 +32,8 @@ interface Settings {
   readonly out: string | undefined
   readonly draft: boolean
   readonly oneLine: boolean
+  /** True when what a submittal must carry is asked for too. */
+  readonly submittal: boolean
 }
 
 /** @returns the exit code */
@@ -66,7 +69,7 @@ function readArguments(args: readonly string[]): Settings | number {
 
 const options = {
   build: { to: { type: 'string' }, out: { type: 'string' }, draft: { type: 'boolean' }, list: { type: 'boolean' } },
-  check: { list: { type: 'boolean' } },
+  check: { list: { type: 'boolean' }, submittal: { type: 'boolean' } },
   audit: { list: { type: 'boolean' } },
 } as const
 
@@ -95,6 +98,7 @@ function readOptions(command: Command, args: readonly string[]): Settings | numb
     out: typeof values.out === 'string' ? values.out : undefined,
     draft: values.draft === true,
     oneLine: values.list === true,
+    submittal: values.submittal === true,
   }
 }
 
@@ -138,7 +142,9 @@ function build({ path, within }: DocumentFile, settings: Settings): number {
 function check({ path }: DocumentFile, settings: Settings): number {
   const compiled = compileFile(path)
   if (!compiled) return ERRORS
-  const errors = tell(compiled, settings)
+  const { choices, context, diagnostics } = compiled
+  const wanted = settings.submittal ? missingForSubmittal(choices, context) : []
+  const errors = tell({ ...compiled, diagnostics: [...diagnostics, ...wanted] }, settings)
   return errors > 0 || sayChecks(compiled) > 0 ? ERRORS : DONE
 }
 

@@ -5,22 +5,34 @@ import { sorted } from './base/report.ts'
 import { type Source, sourceOf } from './base/span.ts'
 import { worksheet } from './compute/worksheet.ts'
 import { sketchPlan } from './draw/sketch.ts'
-import { explainBlocks, explainQuotes, faultsIn, itemsOf, nestedBlocks, quoteFaults } from './explain/blocks.ts'
+import {
+  closingItems,
+  explainBlocks,
+  explainQuotes,
+  faultsIn,
+  itemsOf,
+  nestedBlocks,
+  quoteFaults,
+} from './explain/blocks.ts'
 import { Context } from './explain/context.ts'
 import { numberItems } from './explain/number.ts'
-import type { Check, Sheet } from './explain/sheet.ts'
+import { closingOf, prefaceOf } from './explain/preface.ts'
+import type { Check, Preface, Sheet, Template } from './explain/sheet.ts'
 import { type Choices, readChoices } from './model/front.ts'
 import { gather } from './model/givens.ts'
 import { readDocument } from './read/document.ts'
 import { parseMarkdown } from './read/markdown.ts'
 import { type Nearby, nothingNearby } from './read/nearby.ts'
 import { type Part, partsOf } from './render/parts.ts'
+import { readTemplate } from './render/template.ts'
 
 export interface Compiled {
   readonly source: Source
   /** The files that the document names. */
   readonly nearby: Nearby
   readonly choices: Choices
+  readonly preface: Preface
+  readonly template: Template
   readonly parts: readonly Part[]
   readonly context: Context
   readonly checks: readonly Check[]
@@ -37,10 +49,12 @@ export function compileTree(tree: Root, source: Source, nearby: Nearby = nothing
   const choices = readChoices(document.front)
   const sheet = worksheet(gather([...document.blocks.values()]), choices)
   const given = sheet.readAll()
-  const context = new Context(choices.language, source, (level, caseName) =>
+  const basis = { standard: choices.titleBlock.standard, system: choices.system }
+  const context = new Context(choices.language, source, basis, (level, caseName) =>
     sketchPlan(sheet, level, caseName, choices),
   )
-  const worked = explainBlocks(document, sheet, context)
+  const { worked, asked } = explainBlocks(document, sheet, context)
+  const template = readTemplate(choices.template, nearby)
   const quotes = explainQuotes(document, sheet, context)
   const diagnostics = sorted([
     ...document.faults,
@@ -50,12 +64,18 @@ export function compileTree(tree: Root, source: Source, nearby: Nearby = nothing
     ...[...worked.values()].flatMap(faultsIn),
     ...quoteFaults(quotes),
     ...sheet.warnings(),
+    ...(template.ok ? [] : template.because),
   ])
-  const { items, headings } = numberItems(itemsOf(document, worked, diagnostics))
+  const own = itemsOf(document, worked, diagnostics)
+  const all = [...own, ...closingItems(closingOf(asked, sheet, context), own)]
+  const { items, headings, contents } = numberItems(all, id => context.anchor(id))
+  const preface = prefaceOf(contents, asked, choices, sheet, context)
   return {
     source,
     nearby,
     choices,
+    preface,
+    template: template.ok ? template.value : {},
     parts: partsOf(items, headings, quotes),
     context,
     checks: context.checks,
@@ -64,9 +84,18 @@ export function compileTree(tree: Root, source: Source, nearby: Nearby = nothing
 }
 
 /** What every page carries around its body. */
-export function sheetOf({ choices, diagnostics }: Compiled, version: string, sha256: string, draft: boolean): Sheet {
+export function sheetOf(
+  { choices, preface, template, diagnostics }: Compiled,
+  version: string,
+  sha256: string,
+  draft: boolean,
+): Sheet {
   return {
     titleBlock: choices.titleBlock,
+    preface,
+    cover: choices.cover,
+    paper: choices.paper,
+    template,
     language: choices.language,
     sourceMark: `${sha256.slice(0, 4)} ${sha256.slice(4, 8)}`,
     version,

@@ -59,7 +59,7 @@ export function readText(path: string): Outcome<string, TextFault> {
     if (size > LARGEST)
       return bad({
         rule: 'file-too-large',
-        message: `this file has ${megabytes(size)} MB; ${megabytes(LARGEST)} MB are read`,
+        message: `this file has ${megabytes(size)} MB; ${LARGEST / 1048576} MB are read`,
         help: 'Split the document.',
         ...faultOfWhole,
       })
@@ -80,7 +80,7 @@ export const nearbyOf = (path: string): Nearby => ({
     try {
       const file = resolve(dirname(path), name)
       const { size } = statSync(file)
-      if (size > LARGEST) return bad(`it has ${megabytes(size)} MB; ${megabytes(LARGEST)} MB are read`)
+      if (size > LARGEST) return bad(`it has ${megabytes(size)} MB; ${LARGEST / 1048576} MB are read`)
       return good(readFileSync(file))
     } catch (error) {
       return bad(reason(error))
@@ -88,7 +88,7 @@ export const nearbyOf = (path: string): Nearby => ({
   },
 })
 
-const megabytes = (size: number): string => String(Number((size / 1048576).toFixed(1)))
+const megabytes = (size: number): string => (size / 1048576).toFixed(1)
 
 function decode(bytes: Uint8Array): Outcome<string, TextFault> {
   try {

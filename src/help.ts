@@ -31,15 +31,18 @@ Exit code: 0 done, 1 errors, 2 wrong usage. A check that fails is a result, not 
 
   platemark build workshop.md
   platemark build calcs/ --to html,json --out out/`,
-  check: `platemark check FILE… [--list]
+  check: `platemark check FILE… [--submittal] [--list]
 
 Works each document, prints what is wrong with it and how its checks come out, and writes nothing.
 
-  --list      one line for each diagnostic
+  --submittal   say too what is missing before it goes out: entries of the title block, names of who
+                made and who checked it, a cover to sign, revisions, sources of formulas
+  --list        one line for each diagnostic
 
 Exit code: 0 all well, 1 errors or failed checks, 2 wrong usage.
 
-  platemark check workshop.md`,
+  platemark check workshop.md
+  platemark check workshop.md --submittal`,
   audit: `platemark audit FILE… [--list]
 
 Goes over every worked line of each document. Each printed number stands for all numbers that would

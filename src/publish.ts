@@ -10,6 +10,7 @@ import type { BodyPart } from './render/body.ts'
 import { renderHtml } from './render/html.ts'
 import { renderJson } from './render/json.ts'
 import { documentNodes, pieceNodes } from './render/markdown.ts'
+import { anchor } from './render/markdown-parts.ts'
 import { markdownSettings } from './render/math-nodes.ts'
 import type { Part } from './render/parts.ts'
 import { isDefinition, proseHtml } from './render/prose.ts'
@@ -95,11 +96,17 @@ function markdown(compiled: Compiled, stem: string, draft: boolean, host: Host):
   const nodes = parts.flatMap((part): readonly RootContent[] =>
     part.kind === 'pieces'
       ? part.pieces.flatMap(piece => pieceNodes(piece, setting))
-      : part.nodes.filter(({ type }) => type !== 'yaml').map(node => lowered(node, lift)),
+      : part.nodes.filter(({ type }) => type !== 'yaml').flatMap(node => [...anchorOf(node), lowered(node, lift)]),
   )
   const sheet = sheetOf(compiled, host.version, host.sha256(source.text), draft)
   const root: Root = { type: 'root', children: [...documentNodes(sheet, nodes)] }
   return [{ name: `${stem}.md`, text: writer.stringify(root) }, ...figures]
+}
+
+/** The anchor of a heading, which the contents lead to. */
+function anchorOf(node: RootContent): readonly RootContent[] {
+  const id: unknown = node.type === 'heading' ? node.data?.hProperties?.id : undefined
+  return typeof id === 'string' ? anchor(id) : []
 }
 
 /** The title is the only heading of the first level; those of the document stand below it. */

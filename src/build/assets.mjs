@@ -25,6 +25,7 @@ export async function prepareAssets() {
   const label = await textFaces('@fontsource-variable/source-sans-3', 'label', 'Source Sans 3')
   const prepared = [...text, ...label]
   return new Map([
+    ['page.html', await readFile(join(root, 'templates/page.html'), 'utf8')],
     ['sheet.html', await readFile(join(root, 'templates/sheet.html'), 'utf8')],
     ['sheet.css', minified(await readFile(join(root, 'templates/sheet.css'), 'utf8'))],
     ['faces.json', JSON.stringify(prepared.map(({ face }) => face))],

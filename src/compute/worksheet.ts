@@ -12,6 +12,7 @@ import type { Choices } from '../model/front.ts'
 import type { Givens } from '../model/givens.ts'
 import { type Grid, readGrid } from '../model/grid.ts'
 import { type LevelLine, readLevels } from '../model/levels.ts'
+import { isLimit, type Limit, workLimit } from '../model/limits.ts'
 import type { Assumption, Scope } from '../model/scope.ts'
 import type { Block } from '../read/block.ts'
 import type { Text } from '../read/text.ts'
@@ -32,6 +33,8 @@ export interface Worksheet {
   readonly constructions: ReadonlyMap<string, () => Result<Construction>>
   /** The value of each line of the equation blocks, by its place. */
   readonly equation: (line: Text) => Result<Value>
+  /** The check of each line that compares two values, by its place. */
+  readonly limit: (line: Text) => Result<Limit>
   readonly equationLines: readonly Text[]
   readonly assumptions: () => readonly Assumption[]
   readonly warnings: () => readonly Diagnostic[]
@@ -86,6 +89,11 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
   )
 
   const lines = readEquations(givens.equations)
+  const limits = new Map<Text, () => Result<Limit>>(
+    givens.equations
+      .flatMap(({ lines }) => lines.filter(isLimit))
+      .map(line => [line, scope.ledger.once(`check ${line.text}`, line.span, () => workLimit(line, scope))]),
+  )
   const equations = new Map<string, () => Result<Value>>()
   const bodies = new Map<string, Equation>()
   for (const read of lines.values()) {
@@ -174,13 +182,14 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
       if (!read) return bad([])
       return read.ok ? (workInOrder(read.value.name.text) ?? bad([])) : read
     },
+    limit: line => limits.get(line)?.() ?? bad([]),
     assumptions: () => [...assumptions.values()],
     warnings: () => warnings,
     statedCells: () => [...statedCells.values()],
     readAll: () => [
       ...givens.faults,
       ...repeated,
-      ...faultsOf([...readers(), ...[...lines.keys()].map(line => () => equationFaults(line))]),
+      ...faultsOf([...readers(), ...[...lines.keys()].map(line => () => equationFaults(line)), ...limits.values()]),
     ],
   }
 

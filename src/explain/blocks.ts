@@ -1,27 +1,34 @@
 /** Every block and quote of a document, explained: what the page puts in its place. */
 import type { Code, Heading, Nodes, RootContent, Text as TextNode } from 'mdast'
 import type { Diagnostic } from '../base/diagnostic.ts'
+import { unitText } from '../base/unit.ts'
+import { printed, type Value } from '../base/value.ts'
 import type { Worksheet } from '../compute/worksheet.ts'
 import { levelNameOf } from '../model/givens.ts'
+import { isLimit } from '../model/limits.ts'
 import type { Block } from '../read/block.ts'
 import type { Document, QuoteMark } from '../read/document.ts'
 import { diagnose } from '../read/text.ts'
 import type { Context } from './context.ts'
 import { explainValue } from './equation.ts'
 import { explainGiven } from './given.ts'
-import type { Numbered } from './number.ts'
+import { type Numbered, topDepth } from './number.ts'
 import { explainQuote } from './quote.ts'
 import { explainRegister } from './registers.ts'
-import { isDocumentWant, type Request, readRequest } from './request.ts'
-import type { Piece, Quote } from './sheet.ts'
+import { type DocumentWant, isDocumentWant, type Request, readRequest } from './request.ts'
+import { shownCheck } from './shears.ts'
+import type { Check, Piece, Quote, Register } from './sheet.ts'
 import { explainWant } from './workings.ts'
 
+export interface Explained {
+  /** The pieces of every block. */
+  readonly worked: ReadonlyMap<Code, readonly Piece[]>
+  /** The lists of the whole document that some working asks for. */
+  readonly asked: ReadonlySet<DocumentWant>
+}
+
 /** The pieces of every working and equation block; lists of the whole document come last, since they tell of the rest. */
-export function explainBlocks(
-  { blocks }: Document,
-  sheet: Worksheet,
-  context: Context,
-): ReadonlyMap<Code, readonly Piece[]> {
+export function explainBlocks({ blocks }: Document, sheet: Worksheet, context: Context): Explained {
   const worked = new Map<Code, readonly Piece[]>()
   const requests = [...blocks]
     .filter(([, { topic }]) => topic === 'working')
@@ -38,14 +45,15 @@ export function explainBlocks(
   for (const [node, block, request] of requests)
     if (request.ok && request.value.wants.some(isDocumentWant))
       worked.set(node, workingPieces(block, request.value, sheet, context))
-  return worked
+  const wants = requests.flatMap(([, , request]) => (request.ok ? request.value.wants : []))
+  return { worked, asked: new Set(wants.filter(isDocumentWant)) }
 }
 
 function workingPieces(block: Block, request: Request, sheet: Worksheet, context: Context): readonly Piece[] {
   const names = sheet.levels.map(({ name }) => name)
   const level = sheet.levels.find(({ name }) => name === levelNameOf(block, names))
   return request.wants.flatMap((want): readonly Piece[] => {
-    if (isDocumentWant(want)) return explainRegister(want, sheet.assumptions(), context)
+    if (isDocumentWant(want)) return explainRegister(want, sheet, context)
     return level
       ? explainWant(want, level, request, context)
       : [{ kind: 'fault', diagnostics: [noLevel(block, names)] }]
@@ -63,12 +71,40 @@ const noLevel = (block: Block, names: readonly string[]): Diagnostic =>
 
 function equationPieces(block: Block, sheet: Worksheet, context: Context): readonly Piece[] {
   return block.lines.map((line): Piece => {
+    if (isLimit(line)) return limitPiece(line, sheet, context)
     const value = sheet.equation(line)
     if (!value.ok) return { kind: 'fault', diagnostics: value.because }
     const equation = explainValue(value.value, context)
     // What the engineer says of a line tells more than that they wrote it.
-    return line.comment === '' ? equation : { ...equation, reference: line.comment }
+    if (line.comment === '') return equation
+    context.cited.add(value.value.id)
+    return { ...equation, reference: line.comment }
   })
+}
+
+/** A check of the engineer's own: the comment says what it is, and after a semicolon where its limit is from. */
+function limitPiece(line: Block['lines'][number], sheet: Worksheet, context: Context): Piece {
+  const limit = sheet.limit(line)
+  if (!limit.ok) return { kind: 'fault', diagnostics: limit.because }
+  const { demand, capacity, ratio } = limit.value
+  for (const value of [demand, capacity, ratio]) context.roots.set(value.id, value)
+  const [what = '', ...reference] = line.comment.split(';')
+  const inUnit = (value: Value) => value.si / demand.unit.scale
+  const check: Check = {
+    kind: 'check',
+    id: `${demand.id}.check`,
+    what: what.trim() === '' ? line.text : what.trim(),
+    demand: printed(demand, context.language),
+    capacity: printed(capacity, context.language),
+    numbers: { demand: inUnit(demand), capacity: inUnit(capacity), unit: unitText(demand.unit) },
+    ratio: ratio.si,
+    ratioPrinted: printed(ratio, context.language),
+    ok: ratio.si <= 1,
+    reference: reference.join(';').trim(),
+    sourceLines: context.lines([line.span]),
+  }
+  context.check(check)
+  return shownCheck(check, context)
 }
 
 /** A quote with the place it leads to, or the words that stand where it would be. */
@@ -147,6 +183,25 @@ export function itemsOf(
     return box.length === 0 ? [item] : [item, { kind: 'pieces', pieces: box, key: node }]
   })
 }
+
+/** What is put at the end: sections like those of the document, or lists alone where it has none. */
+export function closingItems(
+  closing: readonly Register[],
+  items: readonly Numbered<RootContent>[],
+): readonly Numbered<RootContent>[] {
+  const top = topDepth(items)
+  return closing.flatMap((register): readonly Numbered<RootContent>[] => {
+    const words = { type: 'text' as const, value: register.title }
+    const heading: Heading = { type: 'heading', depth: depths[(top ?? 2) - 1] ?? 2, children: [words] }
+    if (top === undefined) return [{ kind: 'pieces', pieces: [register], key: heading }]
+    return [
+      { kind: 'heading', depth: heading.depth, text: register.title, key: heading },
+      { kind: 'pieces', pieces: [{ ...register, title: '' }], key: heading },
+    ]
+  })
+}
+
+const depths = [1, 2, 3, 4, 5, 6] as const
 
 /** A box with the faults of a node that its pieces do not show; warnings stand only beside what was given. */
 function boxFor(

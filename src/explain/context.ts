@@ -1,5 +1,6 @@
 /** What explaining a working needs besides the results themselves. */
 import type { Formula } from '../base/formula.ts'
+import type { System } from '../base/kind.ts'
 import type { Language } from '../base/language.ts'
 import { inLanguage } from '../base/language.ts'
 import type { Result } from '../base/ledger.ts'
@@ -7,27 +8,34 @@ import { lineOf, type Source, type Span } from '../base/span.ts'
 import type { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
 import type { LevelWork } from '../compute/level.ts'
-import type { Check, Figure } from './sheet.ts'
+import type { Check, Figure, TitleBlock } from './sheet.ts'
 
 /** Draws a level's plan; `caseName` asks for the shears of one case in place of the design shears. */
 export type Sketch = (level: LevelWork, caseName: string | undefined) => Result<Pick<Figure, 'svg' | 'alternative'>>
+
+/** What the front matter says of the calculation as a whole. */
+export type Basis = Pick<TitleBlock, 'standard'> & { readonly system: System }
 
 /** Gathers, over the whole document, what its lists and its JSON are made of. */
 export class Context {
   readonly language: Language
   readonly source: Source
+  readonly basis: Basis
   readonly sketch: Sketch
   /** Every value that was printed: the roots of the trace. */
   readonly roots = new Map<string, Value>()
+  /** Ids of the engineer's own lines that say where their formula is from. */
+  readonly cited = new Set<string>()
   /** Every formula that was printed, in order. */
   readonly formulas = new Set<Formula>()
   private readonly checked = new Map<string, Check>()
   private readonly anchors = new Map<string, number>()
   private readonly tables: { readonly anchor: string; readonly table: Tabulation }[] = []
 
-  constructor(language: Language, source: Source, sketch: Sketch) {
+  constructor(language: Language, source: Source, basis: Basis, sketch: Sketch) {
     this.language = language
     this.source = source
+    this.basis = basis
     this.sketch = sketch
   }
 

@@ -1,5 +1,21 @@
 /** Numbers headings, equations, tables and figures, section by section. */
-import type { Piece } from './sheet.ts'
+import type { Heading, Piece } from './sheet.ts'
+
+/** Number and anchor of a heading of the document. */
+export interface HeadingMark {
+  /** Empty where the heading is the title or brings its own. */
+  readonly number: string
+  readonly id: string
+}
+
+/** A line of the table of contents. */
+export interface ContentsEntry {
+  readonly id: string
+  readonly number: string
+  readonly text: string
+  /** 0 for a section, 1 for a part of one, and so on. */
+  readonly depth: number
+}
 
 /** A heading of the engineer's own, or the pieces of one working, in reading order. */
 export type Numbered<P> =
@@ -7,47 +23,74 @@ export type Numbered<P> =
   | { readonly kind: 'pieces'; readonly pieces: readonly Piece[]; readonly key: P }
   | { readonly kind: 'other'; readonly key: P }
 
-/**
- * @returns the same items, the pieces numbered within their section, and the number of each heading; a
- *   lone first heading is the title and has none, nor has one that brings its own
- */
-export function numberItems<P>(items: readonly Numbered<P>[]): {
+export interface NumberedDocument<P> {
   readonly items: readonly Numbered<P>[]
-  readonly headings: ReadonlyMap<P, string>
-} {
-  const depths = items.flatMap(item => (item.kind === 'heading' ? [item.depth] : []))
-  const parted = items.some(item => item.kind === 'pieces' && item.pieces.some(({ kind }) => kind === 'heading'))
-  const top = Math.min(...(loneTitle(depths, parted) ? depths.slice(1) : depths), 6)
-  const headings = new Map<P, string>()
+  readonly headings: ReadonlyMap<P, HeadingMark>
+  readonly contents: readonly ContentsEntry[]
+}
+
+/**
+ * The same items, their pieces numbered within their section, and the marks of the headings. A lone first
+ * heading is the title: it has no number, nor has one that brings its own.
+ *
+ * @param anchor gives an id that nothing else on the page has
+ */
+export function numberItems<P>(items: readonly Numbered<P>[], anchor: (id: string) => string): NumberedDocument<P> {
+  const top = topDepth(items) ?? 6
+  const headings = new Map<P, HeadingMark>()
+  const contents: ContentsEntry[] = []
   const counts: number[] = []
   const within = { equation: 0, table: 0, figure: 0 }
-  /** The number of the next heading at a level below the top. */
-  const next = (level: number): string => {
-    counts.length = Math.min(counts.length, level + 1)
-    while (counts.length <= level) counts.push(0)
-    counts[level] = (counts[level] ?? 0) + 1
-    if (level === 0) Object.assign(within, { equation: 0, table: 0, figure: 0 })
+  /** The number of the next heading at a depth below the top. */
+  const next = (depth: number): string => {
+    counts.length = Math.min(counts.length, depth + 1)
+    while (counts.length <= depth) counts.push(0)
+    counts[depth] = (counts[depth] ?? 0) + 1
+    if (depth === 0) Object.assign(within, { equation: 0, table: 0, figure: 0 })
     return counts.join('.')
   }
   let below = 0
+  const numberHeading = (piece: Heading): Heading => {
+    const [number, id] = [next(below), anchor(slug(piece.text))]
+    contents.push({ id, number, text: piece.text, depth: below })
+    return { ...piece, id, text: `${number} ${piece.text}` }
+  }
   const numbered = items.map((item): Numbered<P> => {
     if (item.kind === 'pieces')
       return {
         ...item,
         pieces: item.pieces.map(piece =>
-          piece.kind === 'heading'
-            ? { ...piece, text: `${next(below)} ${piece.text}` }
-            : numberPiece(piece, counts[0] ?? 0, within),
+          piece.kind === 'heading' ? numberHeading(piece) : numberPiece(piece, counts[0] ?? 0, within),
         ),
       }
-    if (item.kind === 'heading' && item.depth >= top) {
-      below = item.depth - top + 1
-      if (!/^\d/.test(item.text)) headings.set(item.key, next(item.depth - top))
+    if (item.kind === 'heading') {
+      const id = anchor(slug(item.text))
+      const own = /^\d+(?:\.\d+)*\.?(?=\s)/.exec(item.text)?.[0] ?? ''
+      const depth = item.depth - top
+      if (depth >= 0) below = depth + 1
+      const number = depth >= 0 && !/^\d/.test(item.text) ? next(depth) : ''
+      headings.set(item.key, { number, id })
+      if (depth >= 0) contents.push({ id, number: number || own, text: item.text.slice(own.length).trim(), depth })
     }
     return item
   })
-  return { items: numbered, headings }
+  return { items: numbered, headings, contents }
 }
+
+/** Depth of the headings that begin a section, the lone title set aside; undefined where there are none. */
+export function topDepth<P>(items: readonly Numbered<P>[]): number | undefined {
+  const depths = items.flatMap(item => (item.kind === 'heading' ? [item.depth] : []))
+  const parted = items.some(item => item.kind === 'pieces' && item.pieces.some(({ kind }) => kind === 'heading'))
+  const sections = loneTitle(depths, parted) ? depths.slice(1) : depths
+  return sections.length === 0 ? undefined : Math.min(...sections)
+}
+
+/** Words as they stand in an address: `center-of-mass`. */
+const slug = (text: string): string =>
+  text
+    .toLowerCase()
+    .replace(/[^\p{L}\p{N}]+/gu, '-')
+    .replace(/^-|-$/g, '') || 'section'
 
 /** @param parted true when workings bring headings of their own */
 const loneTitle = ([first, ...rest]: readonly number[], parted: boolean): boolean =>

@@ -1,27 +1,33 @@
 /** The lists of the whole document: what was assumed, what was relied on, what was checked. */
+import type { Worksheet } from '../compute/worksheet.ts'
 import type { Assumption } from '../model/scope.ts'
 import type { Context } from './context.ts'
+import { explainCriteria } from './criteria.ts'
 import type { DocumentWant } from './request.ts'
 import { shownCheck } from './shears.ts'
-import type { Piece } from './sheet.ts'
+import type { Check, Piece } from './sheet.ts'
 
 /** Worked after everything else, since they list what the rest did. */
-export function explainRegister(
-  want: DocumentWant,
-  assumptions: readonly Assumption[],
-  context: Context,
-): readonly Piece[] {
+export function explainRegister(want: DocumentWant, sheet: Worksheet, context: Context): readonly Piece[] {
   switch (want) {
+    case 'criteria':
+      return [explainCriteria(sheet, context)]
     case 'assumptions':
-      return [register('assumptions', 'Assumptions', assumptionItems(assumptions, context), context)]
+      return [register('assumptions', 'Assumptions', assumptionItems(sheet.assumptions(), context), context)]
     case 'references':
       return [register('references', 'References', referenceItems(context), context)]
     case 'checks':
       return context.checks.length > 0
-        ? [...context.checks].sort((a, b) => b.ratio - a.ratio).map(check => shownCheck(check, context))
+        ? worstFirst(context.checks).map(check => shownCheck(check, context))
         : [{ kind: 'note', text: 'No check is made in this document.' }]
   }
 }
+
+/** A ratio that is no number stands for the worst. */
+export const worstFirst = (checks: readonly Check[]): readonly Check[] =>
+  [...checks].sort((a, b) => rank(b) - rank(a) || (a.id < b.id ? -1 : 1))
+
+const rank = ({ ratio }: Check): number => (Number.isFinite(ratio) ? ratio : Number.MAX_VALUE)
 
 type Items = readonly { readonly text: string; readonly detail: string }[]
 

@@ -25,7 +25,7 @@ export const wants = [
 export type Want = (typeof wants)[number]
 
 /** Lists of the whole document rather than of a level. */
-export const documentWants = ['assumptions', 'references', 'checks'] as const
+export const documentWants = ['criteria', 'checks', 'assumptions', 'references'] as const
 export type DocumentWant = (typeof documentWants)[number]
 
 /** All of a level in order. */

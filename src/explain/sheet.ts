@@ -5,9 +5,11 @@
 import type { Diagnostic } from '../base/diagnostic.ts'
 import type { Language } from '../base/language.ts'
 import type { Tex } from '../base/tex.ts'
-import type { TitleBlock } from '../model/front.ts'
+import type { Paper, TitleBlock } from '../model/front.ts'
+import type { Revision } from '../model/revisions.ts'
+import type { ContentsEntry } from './number.ts'
 
-export type { TitleBlock }
+export type { ContentsEntry, Revision, TitleBlock }
 
 /** One worked formula: its letters, its values, its result, and where each came from. */
 export interface Equation {
@@ -101,6 +103,8 @@ export interface Note {
 /** A heading inside a working that has several parts. */
 export interface Heading {
   readonly kind: 'heading'
+  /** Its anchor; empty until the document is numbered. */
+  readonly id: string
   readonly text: string
 }
 
@@ -108,6 +112,7 @@ export interface Heading {
 export interface Register {
   readonly kind: 'register'
   readonly id: string
+  /** Empty where the section above it bears it. */
   readonly title: string
   readonly items: readonly { readonly text: string; readonly detail: string }[]
 }
@@ -126,8 +131,38 @@ export interface Quote {
   readonly printed: string
 }
 
+/** A check and the place where it is worked, where the document shows it. */
+export interface SummaryCheck {
+  readonly check: Check
+  readonly place: string | undefined
+}
+
+export interface Template {
+  /** What stands in the page's body, with fields such as `{{body}}`. Ours when left out. */
+  readonly html?: string
+  /** Rules that follow ours. */
+  readonly css?: string
+}
+
+/** What stands before the calculation. A list that the document places itself is empty here. */
+export interface Preface {
+  readonly contents: readonly ContentsEntry[]
+  /** Worst first. */
+  readonly checks: readonly SummaryCheck[]
+  readonly criteria: Table | undefined
+  readonly revisions: readonly Revision[]
+}
+
 export interface Sheet {
   readonly titleBlock: TitleBlock
+  readonly preface: Preface
+  /** True where a sheet of its own, with room for signature and seal, stands before everything. */
+  readonly cover: boolean
+  readonly paper: Paper
+  /** The firm's own sheet and style; empty for ours. */
+  readonly template: Template
+  /** The firm's mark as a `data:` address. */
+  readonly logo?: string
   readonly language: Language
   /** First eight hex digits of the source's SHA-256, grouped in fours. */
   readonly sourceMark: string

@@ -42,7 +42,7 @@ const headings: Readonly<Record<Want, string>> = {
 export function explainWant(want: Want, level: LevelWork, request: Request, context: Context): readonly Piece[] {
   const made = answer(want, level, request, context)
   const pieces: readonly Piece[] = made.ok ? made.value : [{ kind: 'fault', diagnostics: made.because }]
-  return request.whole ? [{ kind: 'heading', text: context.words(headings[want]) }, ...pieces] : pieces
+  return request.whole ? [{ kind: 'heading', id: '', text: context.words(headings[want]) }, ...pieces] : pieces
 }
 
 function answer(want: Want, level: LevelWork, request: Request, context: Context): Result<readonly Piece[]> {

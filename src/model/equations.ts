@@ -12,6 +12,7 @@ import type { Value } from '../base/value.ts'
 import type { Block } from '../read/block.ts'
 import { diagnose, part, type Text, trimmed } from '../read/text.ts'
 import { exprDiagnostic, headUnit, stated, workExpr } from './cell.ts'
+import { isLimit } from './limits.ts'
 import type { Scope } from './scope.ts'
 
 export interface Equation {
@@ -63,6 +64,7 @@ export function readEquations(blocks: readonly Block[]): ReadonlyMap<Text, Resul
   const read = new Map<Text, Result<Equation>>()
   for (const block of blocks)
     for (const line of block.lines) {
+      if (isLimit(line)) continue
       const equation = readEquation(line)
       const before = equation.ok ? first.get(equation.value.name.text) : undefined
       if (equation.ok && !before) first.set(equation.value.name.text, equation.value.name)

@@ -1,7 +1,7 @@
 /** Small parts that several pieces share, and what they are set with. */
 import type { Source } from '../base/span.ts'
+import { linesInWords } from '../base/span.ts'
 import type { Tex } from '../base/tex.ts'
-import { linesInWords } from './body.ts'
 import { escapeHtml } from './escape.ts'
 import { type Typesetter, withoutDigitGroups } from './typeset.ts'
 

@@ -41,10 +41,10 @@ const figureHtml = ({
 
 const noteHtml = ({ text }: Note): string => `<p class="note">${pageText(text)}</p>`
 
-function headingHtml({ text }: Heading, { level }: Setting): string {
+function headingHtml({ id, text }: Heading, { level }: Setting): string {
   const number = /^\d+(?:\.\d+)*(?=\s)/.exec(text)?.[0] ?? ''
   const marked = number === '' ? '' : `<span class="hn">${number}</span>`
-  return `<h${level} class="part">${marked}${pageText(text.slice(number.length))}</h${level}>`
+  return `<h${level} class="part"${idAttribute(id)}>${marked}${pageText(text.slice(number.length))}</h${level}>`
 }
 
 function registerHtml({ id, title, items }: Register, { level }: Setting): string {
@@ -53,8 +53,7 @@ function registerHtml({ id, title, items }: Register, { level }: Setting): strin
       `<li>${pageText(text)}${detail === '' ? '' : ` <span class="detail">${pageText(detail)}</span>`}</li>`,
   )
   return `<section class="register"${idAttribute(id)}>
-<h${level} class="part">${pageText(title)}</h${level}>
-<ol>
+${title === '' ? '' : `<h${level} class="part">${pageText(title)}</h${level}>\n`}<ol>
 ${list.join('\n')}
 </ol>
 </section>`

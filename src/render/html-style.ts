@@ -24,7 +24,13 @@ export function styleOf({ sheet, body, asset }: Styled, classes: ReadonlySet<str
     ...(hasCode(body) ? ['KaTeX_Typewriter-Regular'] : []),
   ])
   const faces = [...text, ...[...math].sort()].map(name => asset(`faces/${name}.css`))
-  return [...faces, mathRules(asset('katex.css'), classes), asset('sheet.css'), paperRules(sheet)].join('\n')
+  return [
+    ...faces,
+    mathRules(asset('katex.css'), classes),
+    asset('sheet.css'),
+    sheet.template.css ?? '',
+    paperRules(sheet),
+  ].join('\n')
 }
 
 const hasCode = (body: readonly BodyPart[]): boolean =>
@@ -32,13 +38,19 @@ const hasCode = (body: readonly BodyPart[]): boolean =>
 
 /** What each printed sheet carries in its margins. The first sheet has the plate, and does without a head. */
 function paperRules(sheet: Sheet): string {
-  const { titleBlock, language } = sheet
-  const head = [titleBlock.project, titleBlock.title].filter(part => part !== '').join(', ')
-  const tail = [titleBlock.number, titleBlock.revision === '' ? '' : `Rev. ${titleBlock.revision}`]
-    .filter(part => part !== '')
-    .join(' · ')
+  const { project, title, number, revision, date, by, checked } = sheet.titleBlock
+  const joined = (mark: string, ...parts: readonly string[]) => parts.filter(part => part !== '').join(mark)
+  const issue = joined(' · ', number, revision === '' ? '' : `Rev. ${revision}`, date)
+  const people = joined(', ', by === '' ? '' : `by ${by}`, checked === '' ? '' : `checked ${checked}`)
+  const boxes: Readonly<Record<string, string>> = {
+    'top-left': cssString(joined(', ', project, title)),
+    'top-right': cssString(issue),
+    'bottom-left': cssString(joined('\n', people, markOf(sheet))),
+    'bottom-center': cssString(CAUTION),
+  }
+  const rules = Object.entries(boxes).map(([box, content]) => `@${box}{content:${content}}`)
   const draft = sheet.draft
     ? `@page{@top-center{content:${cssString(`DRAFT · ${draftWords(sheet)}`)};box-sizing:border-box;width:76mm;height:7mm;margin:9mm auto 5mm;padding:0;border:1pt solid #000;vertical-align:middle;text-align:center;font-weight:600}}`
     : ''
-  return `@page{size:${language === 'en-US' ? 'letter' : 'A4'};@top-left{content:${cssString(head)}}@top-right{content:${cssString(tail)}}@bottom-left{content:${cssString(markOf(sheet))}}@bottom-center{content:${cssString(CAUTION)}}}@page:first{@top-left{content:none}@top-right{content:none}}${draft}`
+  return `@page{size:${sheet.paper};${rules.join('')}}@page:first{@top-left{content:none}@top-right{content:none}}${draft}`
 }

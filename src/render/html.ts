@@ -1,11 +1,14 @@
 /** The page: one HTML file that needs nothing beside it. */
 import type { Source } from '../base/span.ts'
-import type { TitleBlock } from '../explain/sheet.ts'
-import { escapeHtml } from './escape.ts'
+import type { Sheet, TitleBlock } from '../explain/sheet.ts'
+import { escapeHtml, pageText } from './escape.ts'
 import { bodyHtml } from './html-body.ts'
-import { bannerHtml, plateHtml } from './html-plate.ts'
+import type { Setting } from './html-parts.ts'
+import { bannerHtml, coverHtml, logoHtml, plateHtml } from './html-plate.ts'
+import { contentsHtml, criteriaHtml, revisionsHtml, summaryHtml } from './html-preface.ts'
 import { type Styled, styleOf } from './html-style.ts'
 import { CAUTION, markOf } from './imprint.ts'
+import { fillTemplate } from './template.ts'
 import { createTypesetter, type ShapeCache } from './typeset.ts'
 
 export interface Page extends Styled {
@@ -19,26 +22,58 @@ export function renderHtml(page: Page): string {
   const { sheet, asset } = page
   const { titleBlock, language } = sheet
   const typesetter = createTypesetter(page.shapes)
-  const body = bodyHtml(page.body, { typesetter, source: page.source, level: 2 })
-  return fillTemplate(asset('sheet.html'), {
+  const setting = { typesetter, source: page.source, level: 2 }
+  const body = fillTemplate(sheet.template.html ?? asset('sheet.html'), {
+    ...escaped(titleBlock),
+    banner: bannerHtml(sheet),
+    logo: logoHtml(sheet),
+    plate: plateOf(sheet, setting),
+    preface: [summaryHtml, contentsHtml, ...(sheet.cover ? [] : [revisionsHtml])]
+      .map(part => part(sheet.preface))
+      .join('\n'),
+    body: bodyHtml(page.body, setting),
+    mark: escapeHtml(markOf(sheet)),
+    caution: CAUTION,
+  })
+  return fillPage(asset('page.html'), {
     language,
     title: escapeHtml(documentTitle(titleBlock)),
     generator: escapeHtml(`Platemark ${sheet.version}`),
     style: styleOf(page, typesetter.classes()),
-    banner: bannerHtml(sheet),
-    plate: plateHtml(titleBlock),
-    body,
-    mark: escapeHtml(markOf(sheet)),
-    caution: CAUTION,
+    sheet: body,
   })
 }
 
-/** Puts the fields in place in one pass, so that nothing put in is read as a field again. */
-function fillTemplate(template: string, fields: Readonly<Record<string, string>>): string {
-  return template.replace(/\{\{(\w+)\}\}/g, (_, name: string) => {
-    const value = fields[name]
-    if (value === undefined) throw new Error(`the template asks for an unknown field: ${name}`)
-    return value
+function plateOf(sheet: Sheet, setting: Setting): string {
+  const logo = logoHtml(sheet)
+  if (!sheet.cover) return plateHtml(sheet.titleBlock, logo)
+  return coverHtml(
+    sheet,
+    logo,
+    criteriaHtml(sheet.preface, setting) + revisionsHtml(sheet.preface),
+    CAUTION,
+    escapeHtml(markOf(sheet)),
+  )
+}
+
+const escaped = (block: TitleBlock): TitleBlock => ({
+  title: pageText(block.title),
+  project: pageText(block.project),
+  location: pageText(block.location),
+  number: pageText(block.number),
+  revision: pageText(block.revision),
+  date: pageText(block.date),
+  by: pageText(block.by),
+  checked: pageText(block.checked),
+  standard: pageText(block.standard),
+})
+
+/** Puts the parts in place in one pass, so that nothing put in is read as a part again. */
+function fillPage(page: string, parts: Readonly<Record<string, string>>): string {
+  return page.replace(/\{\{(\w+)\}\}/g, (_, name: string) => {
+    const part = parts[name]
+    if (part === undefined) throw new Error(`the page asks for an unknown part: ${name}`)
+    return part
   })
 }
 

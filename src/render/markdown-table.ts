@@ -1,9 +1,9 @@
 /** A table of the calculation as a GFM table. */
 import type { List, ListItem, PhrasingContent, RootContent, TableCell, TableRow } from 'mdast'
+import { linesInWords } from '../base/span.ts'
 import { joinTex } from '../base/tex.ts'
 import { unitOnPage } from '../base/unit.ts'
 import type { Column, ColumnFormula, Row, Table } from '../explain/sheet.ts'
-import { linesInWords } from './body.ts'
 import { paragraph, strong, text } from './markdown-parts.ts'
 import { inlineMath } from './math-nodes.ts'
 

@@ -1,12 +1,13 @@
 /** The sheet as a Markdown tree: readable as text, and drawn by any viewer that knows GFM and mathematics. */
 import type { Heading, ListItem, Paragraph, RootContent } from 'mdast'
 import type { Source } from '../base/span.ts'
+import { linesInWords } from '../base/span.ts'
 import { joinTex, texSource } from '../base/tex.ts'
-import type { Check, Equation, Figure, Piece, Register, Sheet, TitleBlock } from '../explain/sheet.ts'
-import { linesInWords } from './body.ts'
-import { CAUTION, draftWords, markOf } from './imprint.ts'
+import type { Check, Equation, Figure, Piece, Register, Sheet } from '../explain/sheet.ts'
+import { CAUTION, markOf } from './imprint.ts'
 import { faultNodes } from './markdown-fault.ts'
 import { anchor, heading, paragraph, plain, strong, text } from './markdown-parts.ts'
+import { prefaceNodes, titleNodes } from './markdown-preface.ts'
 import { tableNodes } from './markdown-table.ts'
 import { mathBlock } from './math-nodes.ts'
 
@@ -32,7 +33,7 @@ export function pieceNodes(piece: Piece, setting: MarkdownSetting): readonly Roo
     case 'note':
       return [paragraph(text(piece.text))]
     case 'heading':
-      return [heading(piece.text, setting.level)]
+      return [...anchor(piece.id), heading(piece.text, setting.level)]
     case 'register':
       return registerNodes(piece, setting)
     case 'fault':
@@ -40,40 +41,15 @@ export function pieceNodes(piece: Piece, setting: MarkdownSetting): readonly Roo
   }
 }
 
-/** The whole document: title block, the body as given, and the closing lines. */
+/** The whole document: what stands before it, the body as given, and the closing lines. */
 export function documentNodes(sheet: Sheet, body: readonly RootContent[]): readonly RootContent[] {
-  return [...titleNodes(sheet), ...body, { type: 'thematicBreak' }, paragraph(text(`${CAUTION} ${markOf(sheet)}.`))]
-}
-
-function titleNodes(sheet: Sheet): readonly RootContent[] {
-  const { titleBlock, draft } = sheet
-  const { title, project } = titleBlock
-  const fields = fieldsOf(titleBlock)
-  const banner: RootContent = {
-    type: 'blockquote',
-    children: [paragraph(strong('Draft'), text(`: ${draftWords(sheet)}`))],
-  }
   return [
-    heading(title || project || 'Calculation', 1),
-    ...(fields === '' ? [] : [paragraph(text(fields))]),
-    ...(draft ? [banner] : []),
+    ...titleNodes(sheet),
+    ...prefaceNodes(sheet.preface),
+    ...body,
+    { type: 'thematicBreak' },
+    paragraph(text(`${CAUTION} ${markOf(sheet)}.`)),
   ]
-}
-
-function fieldsOf({ title, project, number, revision, date, standard, by, checked }: TitleBlock): string {
-  const fields: readonly (readonly [string, string])[] = [
-    ['Project', title === '' ? '' : project],
-    ['No.', number],
-    ['Revision', revision],
-    ['Date', date],
-    ['Standard', standard],
-    ['By', by],
-    ['Checked', checked],
-  ]
-  return fields
-    .filter(([, value]) => value !== '')
-    .map(([name, value]) => `${name} ${value}`)
-    .join(' · ')
 }
 
 function equationNodes({
@@ -132,7 +108,7 @@ function registerNodes({ id, title, items }: Register, { level }: MarkdownSettin
   )
   return [
     ...anchor(id),
-    heading(title, level),
+    ...(title === '' ? [] : [heading(title, level)]),
     { type: 'list', ordered: true, start: 1, spread: false, children: list },
   ]
 }

@@ -1,9 +1,9 @@
 /** The document as stretches of prose and of pieces, ready for any format. */
 import type { RootContent } from 'mdast'
 import type { Quotes } from '../explain/blocks.ts'
-import type { Numbered } from '../explain/number.ts'
+import type { HeadingMark, Numbered } from '../explain/number.ts'
 import type { Piece } from '../explain/sheet.ts'
-import { withNumber, withQuotes } from './quotes.ts'
+import { withMark, withQuotes } from './quotes.ts'
 import { withoutActive } from './safe.ts'
 
 /** A stretch of the document: the engineer's own nodes, or the pieces that a block became. */
@@ -13,7 +13,7 @@ export type Part =
 
 export function partsOf(
   items: readonly Numbered<RootContent>[],
-  headings: ReadonlyMap<RootContent, string>,
+  headings: ReadonlyMap<RootContent, HeadingMark>,
   quotes: Quotes,
 ): readonly Part[] {
   const parts: ({ readonly kind: 'prose'; readonly nodes: RootContent[] } | Extract<Part, { kind: 'pieces' }>)[] = []
@@ -23,7 +23,7 @@ export function partsOf(
       continue
     }
     const quoted = withQuotes(item.key, quotes)
-    const numbered = quoted.type === 'heading' ? withNumber(quoted, headings.get(item.key)) : quoted
+    const numbered = quoted.type === 'heading' ? withMark(quoted, headings.get(item.key)) : quoted
     const nodes = withoutActive(numbered)
     const last = parts.at(-1)
     if (last?.kind === 'prose') last.nodes.push(...nodes)

@@ -1,6 +1,7 @@
 /** Puts quoted results, and the numbers of headings, into the tree of the prose. */
 import type { Heading, PhrasingContent, RootContent, Text } from 'mdast'
 import type { Quoted, Quotes } from '../explain/blocks.ts'
+import type { HeadingMark } from '../explain/number.ts'
 import { fragment } from './escape.ts'
 
 /** The same node with its quotes put in; nodes without quotes stay the same objects. */
@@ -39,8 +40,13 @@ function inPlace(quoted: Quoted, linked: boolean): PhrasingContent {
   }
 }
 
-/** A heading with its number before its words. */
-export const withNumber = (heading: Heading, number: string | undefined): Heading =>
-  number === undefined
+/** A heading with its number before its words, and its anchor. */
+export const withMark = (heading: Heading, mark: HeadingMark | undefined): Heading =>
+  mark === undefined
     ? heading
-    : { ...heading, children: [{ type: 'text', value: `${number} ` }, ...heading.children] }
+    : {
+        ...heading,
+        children:
+          mark.number === '' ? heading.children : [{ type: 'text', value: `${mark.number} ` }, ...heading.children],
+        data: { ...heading.data, hProperties: { id: mark.id } },
+      }

@@ -1,9 +1,9 @@
 import { describe, expect, test } from 'vitest'
 import type { Diagnostic } from '../../src/base/diagnostic.ts'
-import { sourceOf } from '../../src/base/span.ts'
+import { linesInWords, sourceOf } from '../../src/base/span.ts'
 import { numeral, tex } from '../../src/base/tex.ts'
 import type { Sheet } from '../../src/explain/sheet.ts'
-import { type BodyPart, linesInWords } from '../../src/render/body.ts'
+import type { BodyPart } from '../../src/render/body.ts'
 import { cssString, fragment, pageText } from '../../src/render/escape.ts'
 import { renderHtml } from '../../src/render/html.ts'
 import { createShapeCache } from '../../src/render/typeset.ts'
@@ -32,7 +32,7 @@ describe('the page', () => {
     expect(rendered([prose('<h1 id="a">3.2 Loads</h1><h2>Wind</h2>')])).toContain(
       '<h2 id="a"><span class="hn">3.2</span> Loads</h2><h3>Wind</h3>',
     )
-    expect(rendered([prose('<h3>Loads</h3>'), { kind: 'heading', text: 'Roof' }])).toContain(
+    expect(rendered([prose('<h3>Loads</h3>'), { kind: 'heading', id: '', text: 'Roof' }])).toContain(
       '<h3 class="part">Roof</h3>',
     )
   })
@@ -143,13 +143,23 @@ describe('the page', () => {
     expect(page).toContain('@bottom-center{content:"To be reviewed by the engineer of record; local codes govern."}')
   })
 
-  test('takes the paper of its language', () => {
+  test('takes the paper that the sheet asks for', () => {
     expect(page).toContain('@page{size:letter')
-    expect(rendered([], { language: 'en-GB' })).toContain('@page{size:A4')
+    expect(rendered([], { paper: 'A4' })).toContain('@page{size:A4')
   })
 
   test('leaves out a field of the plate that was not given, except those that are signed', () => {
-    const empty = { title: '', project: '', number: '', revision: '', date: '', by: '', checked: '', standard: '' }
+    const empty = {
+      title: '',
+      project: '',
+      location: '',
+      number: '',
+      revision: '',
+      date: '',
+      by: '',
+      checked: '',
+      standard: '',
+    }
     const bare = rendered([], { titleBlock: empty })
     expect(bare).not.toContain('<dt>Revision</dt>')
     expect(bare).toContain('<dt>Checked</dt>')
@@ -279,7 +289,7 @@ describe('text from the document', () => {
       sourceLines: [],
     },
     { kind: 'note', text: hostile },
-    { kind: 'heading', text: hostile },
+    { kind: 'heading', id: '', text: hostile },
     { kind: 'register', id: hostile, title: hostile, items: [{ text: hostile, detail: hostile }] },
     { kind: 'fault', diagnostics: [diagnostic] },
   ]
@@ -288,6 +298,7 @@ describe('text from the document', () => {
     const titleBlock = {
       title: hostile,
       project: hostile,
+      location: hostile,
       number: hostile,
       revision: hostile,
       date: hostile,
@@ -296,7 +307,14 @@ describe('text from the document', () => {
       standard: hostile,
     }
     const hostileSheet: Sheet = {
+      ...sheet,
       titleBlock,
+      preface: {
+        contents: [{ id: hostile, number: hostile, text: hostile, depth: 0 }],
+        checks: [],
+        criteria: undefined,
+        revisions: [{ revision: hostile, date: hostile, by: hostile, checked: hostile, note: hostile }],
+      },
       language: 'en-US',
       sourceMark: hostile,
       version: hostile,

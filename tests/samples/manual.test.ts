@@ -12,6 +12,7 @@ import { compileText } from '../../src/compile.ts'
 import { documentWants, wants } from '../../src/explain/request.ts'
 import { readChoices } from '../../src/model/front.ts'
 import { type Host, publish } from '../../src/publish.ts'
+import { noFrontMatter } from '../../src/read/front.ts'
 import { laterTopics, topics } from '../../src/read/topics.ts'
 
 const root = fileURLToPath(new URL('../..', import.meta.url))
@@ -86,7 +87,9 @@ describe('the manual tells of', () => {
     const section = chapter('01-documents').split('## Front matter')[1]?.split('\n## ')[0] ?? ''
     const told = [...section.matchAll(/^\| `([a-z]+)` /gm)].map(([, name]) => name ?? '')
     const entries = new Map(told.map(name => [name, { text: 'US', span: { start: 0, end: 1 } }]))
-    const unknown = readChoices({ entries, faults: [] }).faults.filter(({ rule }) => rule === 'front-matter-unknown')
+    const unknown = readChoices({ ...noFrontMatter, entries }).faults.filter(
+      ({ rule }) => rule === 'front-matter-unknown',
+    )
     expect(unknown.map(({ message }) => message)).toEqual([])
     expect(told.toSorted()).toEqual(entryNames().toSorted())
   })
@@ -115,18 +118,25 @@ describe('the manual tells of', () => {
 /** The names that the front matter is read by, as the program offers them. */
 function entryNames(): readonly string[] {
   const source = read('src/model/front.ts')
-  const lists = [...source.matchAll(/const (?:plainKeys|keys)[^=]*= \[([^\]]*)\]/g)].map(([, list]) => list ?? '')
+  const lists = [...source.matchAll(/const (?:printedKeys|listKeys|keys)[^=]*= \[([^\]]*)\]/g)].map(
+    ([, list]) => list ?? '',
+  )
   return lists.join().match(/(?<=')[a-z]+(?=')/g) ?? []
 }
 
-/** Rules by the calls that make a diagnostic; those of the two choices and the three missing givens are composed. */
+/** Rules by the calls that make a diagnostic; those of the choices and the three missing givens are composed. */
 function rulesIn(source: string): readonly string[] {
   const calls = [
     /'(?:error|warning)',\s*'([a-z]+(?:-[a-z0-9]+)+)'/g,
     /(?:fault|stop)\(\s*'([a-z]+(?:-[a-z0-9]+)+)'/g,
     /rule: '([a-z]+(?:-[a-z0-9]+)+)'/g,
   ].flatMap(pattern => [...source.matchAll(pattern)].map(([, rule]) => rule ?? ''))
-  const composed = ['units-unknown', 'language-unknown', 'areas-missing', 'walls-missing', 'forces-missing']
+  const composed = [
+    ...['units', 'language', 'paper', 'cover', 'contents'].map(key => `${key}-unknown`),
+    'areas-missing',
+    'walls-missing',
+    'forces-missing',
+  ]
   return [...new Set([...calls, ...composed])]
 }
 
