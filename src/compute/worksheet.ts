@@ -12,7 +12,7 @@ import type { Choices } from '../model/front.ts'
 import type { Givens } from '../model/givens.ts'
 import { type Grid, readGrid } from '../model/grid.ts'
 import { type LevelLine, readLevels } from '../model/levels.ts'
-import { isLimit, type Limit, workLimit } from '../model/limits.ts'
+import { type Limit, limitLines, workLimit } from '../model/limits.ts'
 import type { Assumption, Scope } from '../model/scope.ts'
 import type { Block } from '../read/block.ts'
 import type { Text } from '../read/text.ts'
@@ -90,9 +90,10 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
 
   const lines = readEquations(givens.equations)
   const limits = new Map<Text, () => Result<Limit>>(
-    givens.equations
-      .flatMap(({ lines }) => lines.filter(isLimit))
-      .map(line => [line, scope.ledger.once(`check ${line.text}`, line.span, () => workLimit(line, scope))]),
+    limitLines(givens.equations.flatMap(({ lines }) => lines)).map(([line, ordinal]) => [
+      line,
+      scope.ledger.once(`check ${line.text}`, line.span, () => workLimit(line, ordinal, scope)),
+    ]),
   )
   const equations = new Map<string, () => Result<Value>>()
   const bodies = new Map<string, Equation>()

@@ -1,8 +1,6 @@
 /** Every block and quote of a document, explained: what the page puts in its place. */
 import type { Code, Heading, Nodes, RootContent, Text as TextNode } from 'mdast'
 import type { Diagnostic } from '../base/diagnostic.ts'
-import { unitText } from '../base/unit.ts'
-import { printed, type Value } from '../base/value.ts'
 import type { Worksheet } from '../compute/worksheet.ts'
 import { levelNameOf } from '../model/givens.ts'
 import { isLimit } from '../model/limits.ts'
@@ -12,12 +10,12 @@ import { diagnose } from '../read/text.ts'
 import type { Context } from './context.ts'
 import { explainValue } from './equation.ts'
 import { explainGiven } from './given.ts'
+import { limitPiece } from './limit.ts'
 import { type Numbered, topDepth } from './number.ts'
 import { explainQuote } from './quote.ts'
 import { explainRegister } from './registers.ts'
 import { type DocumentWant, isDocumentWant, type Request, readRequest } from './request.ts'
-import { shownCheck } from './shears.ts'
-import type { Check, Piece, Quote, Register } from './sheet.ts'
+import type { Piece, Quote, Register } from './sheet.ts'
 import { explainWant } from './workings.ts'
 
 export interface Explained {
@@ -80,31 +78,6 @@ function equationPieces(block: Block, sheet: Worksheet, context: Context): reado
     context.cited.add(value.value.id)
     return { ...equation, reference: line.comment }
   })
-}
-
-/** A check of the engineer's own: the comment says what it is, and after a semicolon where its limit is from. */
-function limitPiece(line: Block['lines'][number], sheet: Worksheet, context: Context): Piece {
-  const limit = sheet.limit(line)
-  if (!limit.ok) return { kind: 'fault', diagnostics: limit.because }
-  const { demand, capacity, ratio } = limit.value
-  for (const value of [demand, capacity, ratio]) context.roots.set(value.id, value)
-  const [what = '', ...reference] = line.comment.split(';')
-  const inUnit = (value: Value) => value.si / demand.unit.scale
-  const check: Check = {
-    kind: 'check',
-    id: `${demand.id}.check`,
-    what: what.trim() === '' ? line.text : what.trim(),
-    demand: printed(demand, context.language),
-    capacity: printed(capacity, context.language),
-    numbers: { demand: inUnit(demand), capacity: inUnit(capacity), unit: unitText(demand.unit) },
-    ratio: ratio.si,
-    ratioPrinted: printed(ratio, context.language),
-    ok: ratio.si <= 1,
-    reference: reference.join(';').trim(),
-    sourceLines: context.lines([line.span]),
-  }
-  context.check(check)
-  return shownCheck(check, context)
 }
 
 /** A quote with the place it leads to, or the words that stand where it would be. */

@@ -18,6 +18,8 @@ const SIGN = /<=|>=|≤|≥|<|(?<!-)>/
 export const isLimit = ({ text }: Text): boolean => SIGN.test(text)
 
 export interface Limit {
+  /** Tells this check from others of the same demand; ids of its own begin with it. */
+  readonly id: string
   readonly demand: Value
   readonly capacity: Value
   /** Demand over capacity. */
@@ -26,8 +28,11 @@ export interface Limit {
 
 const FORM = 'Write demand <= capacity, each the name of a value or a quantity, and say what is checked in a comment.'
 
-/** @param line one for which `isLimit` holds */
-export function workLimit(line: Text, scope: Scope): Result<Limit> {
+/**
+ * @param line one for which `isLimit` holds
+ * @param ordinal 1 for the first check of its demand, 2 for the next
+ */
+export function workLimit(line: Text, ordinal: number, scope: Scope): Result<Limit> {
   const [sign = ''] = SIGN.exec(line.text) ?? []
   const at = line.text.indexOf(sign)
   if (sign !== '<=' && sign !== '≤') {
@@ -35,13 +40,24 @@ export function workLimit(line: Text, scope: Scope): Result<Limit> {
     return bad([diagnose('error', 'limit-sign', span, `a check is not written with ${sign}`, FORM)])
   }
   const [left, right] = [trimmed(part(line, 0, at)), trimmed(part(line, at + sign.length))]
-  const demand = sideOf(left, `limit.${left.text}`, scope)
+  const id = ordinal === 1 ? left.text : `${left.text}.${ordinal}`
   const sides = together({
-    demand,
-    capacity: sideOf(right, demand.ok ? `${demand.value.id}.limit` : `limit.${right.text}`, scope),
+    demand: sideOf(left, `${id}.demand`, scope),
+    capacity: sideOf(right, `${id}.limit`, scope),
   })
   if (!sides.ok) return sides
-  return compared(line, sides.value.demand, sides.value.capacity)
+  return compared(line, id, sides.value.demand, sides.value.capacity)
+}
+
+/** The checks among some lines, each with how many of its demand come up to it. */
+export function limitLines<T extends Text>(lines: readonly T[]): readonly (readonly [T, number])[] {
+  const seen = new Map<string, number>()
+  return lines.filter(isLimit).map(line => {
+    const demand = trimmed(part(line, 0, line.text.search(SIGN))).text
+    const ordinal = (seen.get(demand) ?? 0) + 1
+    seen.set(demand, ordinal)
+    return [line, ordinal]
+  })
 }
 
 /** A value by its name, or a quantity as it stands. */
@@ -71,7 +87,7 @@ function sideOf(side: Text, id: string, scope: Scope): Result<Value> {
 
 const isPlain = ({ kind }: Expr): boolean => kind === 'quantity' || kind === 'number'
 
-function compared({ span }: Text, demand: Value, capacity: Value): Result<Limit> {
+function compared({ span }: Text, id: string, demand: Value, capacity: Value): Result<Limit> {
   if (!sameDimension(demand.unit.dimension, capacity.unit.dimension)) {
     const [one, other] = [demand, capacity].map(({ unit }) => dimensionInWords(unit.dimension))
     return bad([
@@ -95,14 +111,13 @@ function compared({ span }: Text, demand: Value, capacity: Value): Result<Limit>
         'A check compares sizes: take abs(…) of a value that has a sign, on a line of its own.',
       ),
     ])
-  const ratio = ratioOf(demand, capacity)
-  return good({ demand, capacity, ratio })
+  return good({ id, demand, capacity, ratio: ratioOf(`${id}.ratio`, demand, capacity) })
 }
 
 const RATIO = sym('r', 'D/C', 'number')
 const over = parseExpr('D/C')
 
-function ratioOf(demand: Value, capacity: Value): Value {
+function ratioOf(id: string, demand: Value, capacity: Value): Value {
   if (!over.ok) throw new Error('the ratio of a check does not parse')
   const symbols = new Map([
     ['D', sym('D', demand.tex || 'D', 'number')],
@@ -114,7 +129,7 @@ function ratioOf(demand: Value, capacity: Value): Value {
     ['C', capacity],
   ])
   return {
-    id: `${demand.id}.ratio`,
+    id,
     tex: RATIO.tex,
     si: demand.si / capacity.si,
     unit: NO_UNIT,
