@@ -41,7 +41,7 @@ export function compileTree(tree: Root, source: Source, nearby: Nearby = nothing
     sketchPlan(sheet, level, caseName, choices),
   )
   const worked = explainBlocks(document, sheet, context)
-  const quotes = explainQuotes(document, sheet, context)
+  const quotes = explainQuotes(document, sheet, context, worked)
   const diagnostics = sorted([
     ...document.faults,
     ...nestedBlocks(document),

@@ -80,13 +80,20 @@ export type Quoted = { readonly within: QuoteMark['within'] } & (
 /** The quotes of each text of the prose, in order. */
 export type Quotes = ReadonlyMap<TextNode, readonly Quoted[]>
 
-export function explainQuotes({ quotes }: Document, sheet: Worksheet, context: Context): Quotes {
+/** @param worked what the page shows, where a quote may lead */
+export function explainQuotes(
+  { quotes }: Document,
+  sheet: Worksheet,
+  context: Context,
+  worked: ReadonlyMap<Code, readonly Piece[]>,
+): Quotes {
+  const shown = new Set([...worked.values()].flat().flatMap(piece => ('id' in piece ? [piece.id] : [])))
   const found = new Map<TextNode, Quoted[]>()
   for (const mark of quotes) {
     const quote = explainQuote(mark, sheet.scope, context)
     const { within, node, id } = mark
     const quoted: Quoted = quote.ok
-      ? { within, quote: quote.value, place: context.placeOf(quote.value.id) }
+      ? { within, quote: quote.value, place: context.placeOf(quote.value.id, shown) }
       : { within, missing: `${id.text}: not worked`, faults: quote.because }
     found.set(node, [...(found.get(node) ?? []), quoted])
   }

@@ -17,12 +17,11 @@ export function tableNodes({
   formulas,
   sourceLines,
 }: Table): readonly RootContent[] {
-  const lines = linesInWords(sourceLines)
-  const title = [number === '' ? '' : `Table ${number}.`, caption].filter(part => part !== '').join(' ')
+  const words = [caption, linesInWords(sourceLines)].filter(part => part !== '').join(' · ')
   const above = [
     ...anchor(id),
-    ...(title === '' ? [] : [strong(title)]),
-    ...(lines === '' ? [] : [text(title === '' ? lines : ` ${lines}`)]),
+    ...(number === '' ? [] : [strong(`Table ${number}.`)]),
+    ...(words === '' ? [] : [text(number === '' ? words : ` ${words}`)]),
   ]
   const body = rows.map(row => rowNode(row, columns.length))
   return [

@@ -107,8 +107,8 @@ function equationNodes(equation: Equation): readonly RootContent[] {
     assumes.length === 0 ? '' : `assumes ${assumes.join('; ')}`,
     linesInWords(sourceLines),
   ].filter(part => part !== '')
-  const name = number === '' ? [] : [strong(`Equation ${number}`)]
-  const from = origin.length === 0 ? [] : [text(`${name.length > 0 ? ': ' : ''}${origin.join(' · ')}`)]
+  const name = number === '' ? [] : [strong(`Equation ${number}.`)]
+  const from = origin.length === 0 ? [] : [text(`${name.length > 0 ? ' ' : ''}${origin.join(' · ')}`)]
   const above = [...anchor(id), ...name, ...from]
   return [
     ...(above.length === 0 ? [] : [paragraph(...above)]),
