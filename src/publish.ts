@@ -1,5 +1,6 @@
 /** A compiled document as files: the page, the expanded Markdown with its figures, the results. */
 import type { Root, RootContent } from 'mdast'
+import { gfmAutolinkLiteralFromMarkdown } from 'mdast-util-gfm-autolink-literal'
 import remarkFrontmatter from 'remark-frontmatter'
 import remarkGfm from 'remark-gfm'
 import remarkStringify from 'remark-stringify'
@@ -96,7 +97,13 @@ function markdown(compiled: Compiled, stem: string, draft: boolean, host: Host):
   const body = bodyNodes(parts.map(withoutFront), liftOf(parts), { source, figureFile })
   const sheet = sheetOf(compiled, host.version, host.sha256(source.text), draft)
   const root: Root = { type: 'root', children: [...documentNodes(sheet, body)] }
+  linkAddresses(root)
   return [{ name: `${stem}.md`, text: writer.stringify(root) }, ...beside]
+}
+
+/** An address in our own text is a link to every reader of Markdown, escaped or not; written as one it stays as it is. */
+const linkAddresses = (root: Root): void => {
+  for (const transform of gfmAutolinkLiteralFromMarkdown().transforms ?? []) transform(root)
 }
 
 const withoutFront = (part: Part): Part =>

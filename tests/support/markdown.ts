@@ -27,7 +27,10 @@ const plain = unified().use(remarkParse).use(remarkGfm).use(remarkStringify, sty
 
 /** A reader that knows formulas, and one that does not. */
 export const readers = {
-  knowing: { parse: (text: string): Root => knowing.parse(text), write: (tree: Root): string => knowing.stringify(tree) },
+  knowing: {
+    parse: (text: string): Root => knowing.parse(text),
+    write: (tree: Root): string => knowing.stringify(tree),
+  },
   plain: { parse: (text: string): Root => plain.parse(text), write: (tree: Root): string => plain.stringify(tree) },
 } as const
 
