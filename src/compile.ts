@@ -53,9 +53,9 @@ export function compileTree(tree: Root, source: Source, nearby: Nearby = nothing
   const context = new Context(choices.language, source, basis, (level, caseName) =>
     sketchPlan(sheet, level, caseName, choices),
   )
-  const { worked, asked } = explainBlocks(document, sheet, context)
+  const { worked, asked, shown } = explainBlocks(document, sheet, context)
   const template = readTemplate(choices.template, nearby)
-  const quotes = explainQuotes(document, sheet, context)
+  const quotes = explainQuotes(document, sheet, context, shown)
   const diagnostics = sorted([
     ...document.faults,
     ...nestedBlocks(document),
@@ -69,7 +69,7 @@ export function compileTree(tree: Root, source: Source, nearby: Nearby = nothing
   const own = itemsOf(document, worked, diagnostics)
   const all = [...own, ...closingItems(closingOf(asked, sheet, context), own)]
   const { items, headings, contents } = numberItems(all, id => context.anchor(id))
-  const preface = prefaceOf(contents, asked, choices, sheet, context)
+  const preface = prefaceOf(contents, { asked, shown }, choices, sheet, context)
   return {
     source,
     nearby,

@@ -1,14 +1,14 @@
 /** The package as a library: the compiler, and a plugin for any unified pipeline. */
 
 import { fileURLToPath } from 'node:url'
-import type { Html, Root, RootContent } from 'mdast'
+import type { Root, RootContent } from 'mdast'
 import type { Processor } from 'unified'
 import type { VFile } from 'vfile'
 import { positionOf, sourceOf } from './base/span.ts'
 import { type Compiled, compileText, compileTree } from './compile.ts'
 import { hostAt } from './host.ts'
 import type { Host } from './publish.ts'
-import { pieceNodes } from './render/markdown.ts'
+import { bodyNodes } from './render/markdown-body.ts'
 import { markdownSettings } from './render/math-nodes.ts'
 
 export type { Diagnostic } from './base/diagnostic.ts'
@@ -39,15 +39,7 @@ export function remarkPlatemark(this: Processor): (tree: Root, file: VFile) => R
   }
 }
 
-function nodesOf({ parts, source }: Compiled): RootContent[] {
-  return parts.flatMap((part): readonly RootContent[] => {
-    if (part.kind === 'prose') return part.nodes
-    return part.pieces.flatMap((piece): readonly RootContent[] => {
-      if (piece.kind === 'figure') return [{ type: 'html', value: piece.svg } satisfies Html]
-      return pieceNodes(piece, { source, level: 3, figureFile: () => '' })
-    })
-  })
-}
+const nodesOf = ({ parts, source }: Compiled): RootContent[] => [...bodyNodes(parts, 0, { source })]
 
 function report({ source, diagnostics }: Compiled, file: VFile): void {
   for (const { rule, severity, message, help, at } of diagnostics) {

@@ -1,16 +1,18 @@
 /** A compiled document as files: the page, the expanded Markdown with its figures, the results. */
 import type { Root, RootContent } from 'mdast'
+import { gfmAutolinkLiteralFromMarkdown } from 'mdast-util-gfm-autolink-literal'
 import remarkFrontmatter from 'remark-frontmatter'
 import remarkGfm from 'remark-gfm'
 import remarkStringify from 'remark-stringify'
 import { unified } from 'unified'
 import { type Compiled, sheetOf } from './compile.ts'
 import type { Figure } from './explain/sheet.ts'
+import { besideNames } from './render/beside.ts'
 import type { BodyPart } from './render/body.ts'
 import { renderHtml } from './render/html.ts'
 import { renderJson } from './render/json.ts'
-import { documentNodes, pieceNodes } from './render/markdown.ts'
-import { anchor } from './render/markdown-parts.ts'
+import { documentNodes } from './render/markdown.ts'
+import { bodyNodes, liftOf } from './render/markdown-body.ts'
 import { markdownSettings } from './render/math-nodes.ts'
 import type { Part } from './render/parts.ts'
 import { isDefinition, proseHtml } from './render/prose.ts'
@@ -85,42 +87,27 @@ const writer = unified()
 
 function markdown(compiled: Compiled, stem: string, draft: boolean, host: Host): readonly OutputFile[] {
   const { parts, source } = compiled
-  const figures: OutputFile[] = []
+  const beside: OutputFile[] = []
+  const nameOf = besideNames(stem)
   const figureFile = ({ id, svg }: Figure): string => {
-    const name = `${stem}.${id.replace(/[^\p{L}\p{N}.-]+/gu, '-')}.svg`
-    figures.push({ name, text: `${svg}\n` })
-    return encodeURI(name)
+    const name = nameOf(id, 'svg')
+    beside.push({ name, text: `${svg}\n` })
+    return encodeURIComponent(name)
   }
-  const lift = liftOf(parts)
-  const setting = { source, level: 3, figureFile } as const
-  const nodes = parts.flatMap((part): readonly RootContent[] =>
-    part.kind === 'pieces'
-      ? part.pieces.flatMap(piece => pieceNodes(piece, setting))
-      : part.nodes.filter(({ type }) => type !== 'yaml').flatMap(node => [...anchorOf(node), lowered(node, lift)]),
-  )
+  const body = bodyNodes(parts.map(withoutFront), liftOf(parts), { source, figureFile })
   const sheet = sheetOf(compiled, host.version, host.sha256(source.text), draft)
-  const root: Root = { type: 'root', children: [...documentNodes(sheet, nodes)] }
-  return [{ name: `${stem}.md`, text: writer.stringify(root) }, ...figures]
+  const root: Root = { type: 'root', children: [...documentNodes(sheet, body)] }
+  linkAddresses(root)
+  return [{ name: `${stem}.md`, text: writer.stringify(root) }, ...beside]
 }
 
-/** The anchor of a heading, which the contents lead to. */
-function anchorOf(node: RootContent): readonly RootContent[] {
-  const id: unknown = node.type === 'heading' ? node.data?.hProperties?.id : undefined
-  return typeof id === 'string' ? anchor(id) : []
+/** An address in our own text is a link to every reader of Markdown, escaped or not; written as one it stays as it is. */
+const linkAddresses = (root: Root): void => {
+  for (const transform of gfmAutolinkLiteralFromMarkdown().transforms ?? []) transform(root)
 }
 
-/** The title is the only heading of the first level; those of the document stand below it. */
-function liftOf(parts: readonly Part[]): number {
-  const depths = parts.flatMap(part => (part.kind === 'prose' ? part.nodes.flatMap(depthOf) : []))
-  return depths.length === 0 ? 0 : 2 - Math.min(...depths)
-}
-
-const depthOf = (node: RootContent): readonly number[] => (node.type === 'heading' ? [node.depth] : [])
-
-const depths = [1, 2, 3, 4, 5, 6] as const
-
-const lowered = (node: RootContent, lift: number): RootContent =>
-  node.type === 'heading' ? { ...node, depth: depths[Math.min(6, node.depth + lift) - 1] ?? 6 } : node
+const withoutFront = (part: Part): Part =>
+  part.kind === 'prose' ? { ...part, nodes: part.nodes.filter(({ type }) => type !== 'yaml') } : part
 
 function results({ source, choices, context, checks, diagnostics }: Compiled, host: Host): string {
   return renderJson({

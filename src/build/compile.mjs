@@ -86,10 +86,22 @@ await Promise.all([
   copyFile(`${root}src/build/launcher.cjs`, `${dist}/platemark.cjs`),
   copyFile(`${root}src/render/results.schema.json`, `${dist}/results.schema.json`),
 ])
+await Promise.all(['command', ...Object.keys(apart)].map(name => spellOut(`${dist}/${name}.cjs`)))
 await chmod(`${dist}/platemark.cjs`, 0o755)
 await writeFile(`${dist}/assets/shapes.txt`, await packedShapes())
 await rm(`${dist}/pack.mjs`)
 await writeCodeCaches()
+
+/**
+ * The launcher reads a file as Latin-1, which is right for plain ASCII only, and patterns keep their
+ * signs through `charset`.
+ * @param {string} file
+ */
+async function spellOut(file) {
+  const code = await readFile(file, 'utf8')
+  const spelt = (/** @type {string} */ unit) => `\\u${unit.charCodeAt(0).toString(16).padStart(4, '0')}`
+  await writeFile(file, code.replace(/[^\0-\x7f]/g, spelt))
+}
 
 /** The shapes of the samples' formulas, which nearly all are formulas of every document. */
 async function packedShapes() {

@@ -23,6 +23,8 @@ export interface Explained {
   readonly worked: ReadonlyMap<Code, readonly Piece[]>
   /** The lists of the whole document that some working asks for. */
   readonly asked: ReadonlySet<DocumentWant>
+  /** Ids of all that the pieces show. */
+  readonly shown: ReadonlySet<string>
 }
 
 /** The pieces of every working and equation block; lists of the whole document come last, since they tell of the rest. */
@@ -44,7 +46,8 @@ export function explainBlocks({ blocks }: Document, sheet: Worksheet, context: C
     if (request.ok && request.value.wants.some(isDocumentWant))
       worked.set(node, workingPieces(block, request.value, sheet, context))
   const wants = requests.flatMap(([, , request]) => (request.ok ? request.value.wants : []))
-  return { worked, asked: new Set(wants.filter(isDocumentWant)) }
+  const ids = [...worked.values()].flat().flatMap(piece => ('id' in piece ? [piece.id] : []))
+  return { worked, asked: new Set(wants.filter(isDocumentWant)), shown: new Set(ids) }
 }
 
 function workingPieces(block: Block, request: Request, sheet: Worksheet, context: Context): readonly Piece[] {
@@ -89,13 +92,19 @@ export type Quoted = { readonly within: QuoteMark['within'] } & (
 /** The quotes of each text of the prose, in order. */
 export type Quotes = ReadonlyMap<TextNode, readonly Quoted[]>
 
-export function explainQuotes({ quotes }: Document, sheet: Worksheet, context: Context): Quotes {
+/** @param worked what the page shows, where a quote may lead */
+export function explainQuotes(
+  { quotes }: Document,
+  sheet: Worksheet,
+  context: Context,
+  shown: ReadonlySet<string>,
+): Quotes {
   const found = new Map<TextNode, Quoted[]>()
   for (const mark of quotes) {
     const quote = explainQuote(mark, sheet.scope, context)
     const { within, node, id } = mark
     const quoted: Quoted = quote.ok
-      ? { within, quote: quote.value, place: context.placeOf(quote.value.id) }
+      ? { within, quote: quote.value, place: context.placeOf(quote.value.id, shown) }
       : { within, missing: `${id.text}: not worked`, faults: quote.because }
     found.set(node, [...(found.get(node) ?? []), quoted])
   }

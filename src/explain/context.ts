@@ -64,10 +64,10 @@ export class Context {
     this.tables.push({ anchor, table })
   }
 
-  /** Where a value is printed, or undefined when it is not. */
-  placeOf(id: string): string | undefined {
-    if (this.anchors.has(id)) return id
-    return this.tables.find(({ table }) => table.has(id))?.anchor
+  /** Where a value is printed among the ids that the page shows, or undefined when it is not. */
+  placeOf(id: string, shown: ReadonlySet<string>): string | undefined {
+    if (shown.has(id)) return id
+    return this.tables.find(({ anchor, table }) => shown.has(anchor) && table.has(id))?.anchor
   }
 
   /** Source lines of some places, each once, ascending. */

@@ -85,12 +85,13 @@ export function topDepth<P>(items: readonly Numbered<P>[]): number | undefined {
   return sections.length === 0 ? undefined : Math.min(...sections)
 }
 
-/** Words as they stand in an address: `center-of-mass`. */
+/** The address of a heading as repository views make it: `center-of-mass`. */
 const slug = (text: string): string =>
   text
     .toLowerCase()
-    .replace(/[^\p{L}\p{N}]+/gu, '-')
-    .replace(/^-|-$/g, '') || 'section'
+    .replace(/[^\p{L}\p{M}\p{N}\p{Pc} -]/gu, '')
+    .trim()
+    .replaceAll(' ', '-') || 'section'
 
 /** @param parted true when workings bring headings of their own */
 const loneTitle = ([first, ...rest]: readonly number[], parted: boolean): boolean =>

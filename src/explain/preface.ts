@@ -1,6 +1,7 @@
 /** What a document carries before and after its own text, unless it places it itself. */
 import type { Worksheet } from '../compute/worksheet.ts'
 import type { Choices } from '../model/front.ts'
+import type { Explained } from './blocks.ts'
 import type { Context } from './context.ts'
 import { explainCriteria } from './criteria.ts'
 import type { ContentsEntry } from './number.ts'
@@ -11,10 +12,9 @@ import type { Preface, Register } from './sheet.ts'
 /** Fewer sections than this are seen at a glance. */
 const FEW = 4
 
-/** @param asked the lists that the document places itself */
 export function prefaceOf(
   contents: readonly ContentsEntry[],
-  asked: ReadonlySet<DocumentWant>,
+  { asked, shown }: Pick<Explained, 'asked' | 'shown'>,
   choices: Choices,
   sheet: Worksheet,
   context: Context,
@@ -25,7 +25,7 @@ export function prefaceOf(
     contents: isListed ? contents : [],
     checks: asked.has('checks')
       ? []
-      : worstFirst(context.checks).map(check => ({ check, place: context.placeOf(check.id) })),
+      : worstFirst(context.checks).map(check => ({ check, place: context.placeOf(check.id, shown) })),
     criteria: cover && !asked.has('criteria') ? explainCriteria(sheet, context) : undefined,
     revisions,
   }

@@ -1,6 +1,16 @@
 /** Small nodes that the Markdown of every piece is built from. */
-import type { BlockContent, Heading, Html, Paragraph, PhrasingContent, Strong, Text } from 'mdast'
-import { escapeHtml } from './escape.ts'
+import type {
+  BlockContent,
+  Heading,
+  Html,
+  Link,
+  Paragraph,
+  PhrasingContent,
+  Strong,
+  TableCell,
+  TableRow,
+  Text,
+} from 'mdast'
 
 /** Text on one line: a break inside it would end the paragraph it stands in. */
 export const text = (value: string): Text => ({ type: 'text', value: oneLine(value) })
@@ -18,6 +28,29 @@ export const heading = (value: string, depth: Heading['depth']): Heading => ({
   children: [text(plain(value))],
 })
 
-/** Markdown has no ids of its own; this is the only HTML that is written. */
+/**
+ * The id of a piece in Markdown. Repository views put a prefix before an id and look it up again, which
+ * holds for plain signs only: any other goes in by its code, `:5b:`, so that no two ids become one.
+ */
+export const anchorId = (id: string): string =>
+  id.replace(/[^A-Za-z0-9._+-]/gu, sign => `:${(sign.codePointAt(0) ?? 0).toString(16)}:`)
+
+/** Markdown has no ids of its own; this is the only HTML that is written. It stands in a line with other text. */
 export const anchor = (id: string): readonly Html[] =>
-  id === '' ? [] : [{ type: 'html', value: `<a id="${escapeHtml(oneLine(id))}"></a>` }]
+  id === ''
+    ? []
+    : [
+        { type: 'html', value: `<a id="${anchorId(id)}">` },
+        { type: 'html', value: '</a>' },
+      ]
+
+export const linkTo = (id: string, words: string): Link => ({
+  type: 'link',
+  url: `#${anchorId(id)}`,
+  children: [text(words)],
+})
+
+export const rowOf = (cells: readonly (readonly PhrasingContent[])[]): TableRow => ({
+  type: 'tableRow',
+  children: cells.map((children): TableCell => ({ type: 'tableCell', children: [...children] })),
+})

@@ -1,9 +1,9 @@
 /** Title block, draft banner, summary of checks, contents and revisions as Markdown. */
 import type { ListItem, RootContent } from 'mdast'
-import type { ContentsEntry, Preface, Revision, Sheet, SummaryCheck, Table, TitleBlock } from '../explain/sheet.ts'
-import { fragment } from './escape.ts'
+import type { ContentsEntry, Preface, Revision, Sheet, Table, TitleBlock } from '../explain/sheet.ts'
 import { draftWords } from './imprint.ts'
-import { heading, paragraph, strong, text } from './markdown-parts.ts'
+import { checksNode } from './markdown-check.ts'
+import { heading, linkTo, paragraph, strong, text } from './markdown-parts.ts'
 import { tableNodes } from './markdown-table.ts'
 
 export function titleNodes(sheet: Sheet): readonly RootContent[] {
@@ -41,7 +41,15 @@ function fieldsOf(block: TitleBlock): string {
 export function prefaceNodes({ checks, contents, criteria, revisions }: Preface): readonly RootContent[] {
   return [
     ...(criteria === undefined ? [] : tableNodes(criteria)),
-    ...(checks.length === 0 ? [] : [paragraph(strong('Checks, the worst first')), list(checks.map(checkItem))]),
+    ...(checks.length === 0
+      ? []
+      : [
+          paragraph(strong('Checks, the worst first')),
+          checksNode(
+            checks.map(({ check }) => check),
+            check => checks.find(each => each.check === check)?.place,
+          ),
+        ]),
     ...(contents.length === 0 ? [] : [paragraph(strong('Contents')), contentsList(contents)]),
     ...(revisions.length === 0 ? [] : tableNodes(revisionTable(revisions))),
   ]
@@ -60,21 +68,11 @@ const item = (...children: Parameters<typeof paragraph>): ListItem => ({
   children: [paragraph(...children)],
 })
 
-const linked = (place: string | undefined, words: string) =>
-  place === undefined ? text(words) : { type: 'link' as const, url: fragment(place), children: [text(words)] }
-
-const checkItem = ({ check, place }: SummaryCheck): ListItem =>
-  item(
-    linked(place, check.what),
-    text(`: ${check.demand} ${check.ok ? '≤' : '>'} ${check.capacity}, ratio ${check.ratioPrinted}, `),
-    strong(check.ok ? 'OK' : 'NG'),
-  )
-
 /** Sections, each with its parts below it. */
 function contentsList(contents: readonly ContentsEntry[]): RootContent {
   const items: ListItem[] = []
   for (const entry of contents.filter(({ depth }) => depth <= 1)) {
-    const words = linked(entry.id, `${entry.number} ${entry.text}`.trim())
+    const words = linkTo(entry.id, `${entry.number} ${entry.text}`.trim())
     const last = items.at(-1)
     if (entry.depth === 0 || !last) items.push(item(words))
     else {

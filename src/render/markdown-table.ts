@@ -1,13 +1,14 @@
 /** A table of the calculation as a GFM table. */
-import type { List, ListItem, PhrasingContent, RootContent, TableCell, TableRow } from 'mdast'
+import type { List, ListItem, PhrasingContent, RootContent, TableRow } from 'mdast'
 import { linesInWords } from '../base/span.ts'
 import { joinTex } from '../base/tex.ts'
 import { unitOnPage } from '../base/unit.ts'
 import type { Column, ColumnFormula, Row, Table } from '../explain/sheet.ts'
-import { paragraph, strong, text } from './markdown-parts.ts'
+import { anchor, paragraph, rowOf, strong, text } from './markdown-parts.ts'
 import { inlineMath } from './math-nodes.ts'
 
 export function tableNodes({
+  id,
   number,
   caption,
   columns,
@@ -16,12 +17,15 @@ export function tableNodes({
   formulas,
   sourceLines,
 }: Table): readonly RootContent[] {
-  const lines = linesInWords(sourceLines)
-  const title = [number === '' ? '' : `Table ${number}.`, caption].filter(part => part !== '').join(' ')
-  const below = [...(title === '' ? [] : [strong(title)]), ...(lines === '' ? [] : [text(` ${lines}`)])]
+  const words = [caption, linesInWords(sourceLines)].filter(part => part !== '').join(' · ')
+  const above = [
+    ...anchor(id),
+    ...(number === '' ? [] : [strong(`Table ${number}.`)]),
+    ...(words === '' ? [] : [text(number === '' ? words : ` ${words}`)]),
+  ]
   const body = rows.map(row => rowNode(row, columns.length))
   return [
-    ...(below.length === 0 ? [] : [paragraph(...below)]),
+    ...(above.length === 0 ? [] : [paragraph(...above)]),
     {
       type: 'table',
       align: columns.map(({ align }) => align),
@@ -55,11 +59,6 @@ const boldCell = (cell: string): PhrasingContent[] => (cell.trim() === '' ? [] :
 
 const padded = (cells: readonly string[], width: number): readonly string[] =>
   Array.from({ length: width }, (_, i) => cells[i] ?? '')
-
-const rowOf = (cells: readonly PhrasingContent[][]): TableRow => ({
-  type: 'tableRow',
-  children: cells.map((children): TableCell => ({ type: 'tableCell', children })),
-})
 
 function formulaList(formulas: readonly ColumnFormula[]): List {
   const children = formulas.map(({ symbol, formula, reference }): ListItem => {

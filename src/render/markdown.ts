@@ -1,23 +1,45 @@
 /** The sheet as a Markdown tree: readable as text, and drawn by any viewer that knows GFM and mathematics. */
-import type { Heading, ListItem, Paragraph, RootContent } from 'mdast'
+import type { Heading, ListItem, RootContent } from 'mdast'
 import type { Source } from '../base/span.ts'
 import { linesInWords } from '../base/span.ts'
-import { joinTex, texSource } from '../base/tex.ts'
+import { joinTex } from '../base/tex.ts'
 import type { Check, Equation, Figure, Piece, Register, Sheet } from '../explain/sheet.ts'
 import { CAUTION, markOf } from './imprint.ts'
+import { checksNode } from './markdown-check.ts'
 import { faultNodes } from './markdown-fault.ts'
-import { anchor, heading, paragraph, plain, strong, text } from './markdown-parts.ts'
+import { anchor, paragraph, plain, strong, text } from './markdown-parts.ts'
 import { prefaceNodes, titleNodes } from './markdown-preface.ts'
 import { tableNodes } from './markdown-table.ts'
 import { mathBlock } from './math-nodes.ts'
+import { markdownTex } from './math-source.ts'
 
 export interface MarkdownSetting {
   /** The text that diagnostics point into. */
   readonly source: Source
   /** Depth of a heading inside a working. */
   readonly level: Heading['depth']
-  /** Where the picture of a figure is put, relative to the document. */
-  readonly figureFile: (figure: Figure) => string
+  /** Where the drawing of a figure is put, relative to the document; without it the drawing itself is put in. */
+  readonly figureFile?: (figure: Figure) => string
+}
+
+/** Pieces in order; checks that follow each other share a table. */
+export function piecesNodes(pieces: readonly Piece[], setting: MarkdownSetting): readonly RootContent[] {
+  const out: RootContent[] = []
+  let checks: Check[] = []
+  const closeChecks = () => {
+    if (checks.length > 0) out.push(checksNode(checks))
+    checks = []
+  }
+  for (const piece of pieces) {
+    if (piece.kind === 'check') {
+      checks.push(piece)
+      continue
+    }
+    closeChecks()
+    out.push(...pieceNodes(piece, setting))
+  }
+  closeChecks()
+  return out
 }
 
 export function pieceNodes(piece: Piece, setting: MarkdownSetting): readonly RootContent[] {
@@ -25,15 +47,15 @@ export function pieceNodes(piece: Piece, setting: MarkdownSetting): readonly Roo
     case 'equation':
       return equationNodes(piece)
     case 'table':
-      return [...anchor(piece.id), ...tableNodes(piece)]
+      return tableNodes(piece)
     case 'figure':
       return figureNodes(piece, setting)
     case 'check':
-      return [checkNode(piece)]
+      return [checksNode([piece])]
     case 'note':
       return [paragraph(text(piece.text))]
     case 'heading':
-      return [...anchor(piece.id), heading(piece.text, setting.level)]
+      return titledNodes(piece.id, piece.text, setting.level)
     case 'register':
       return registerNodes(piece, setting)
     case 'fault':
@@ -52,51 +74,44 @@ export function documentNodes(sheet: Sheet, body: readonly RootContent[]): reado
   ]
 }
 
-function equationNodes({
-  id,
-  number,
-  symbol,
-  lines,
-  result,
-  reference,
-  assumes,
-  sourceLines,
-}: Equation): readonly RootContent[] {
-  const rows = [...lines, result].map((tex, i) => texSource(joinTex(i === 0 ? symbol : '', ' &= ', tex)).trim())
+/** A link leads to the line above the formula, so that the formula is in view. */
+function equationNodes(equation: Equation): readonly RootContent[] {
+  const { id, number, symbol, lines, result, reference, assumes, sourceLines } = equation
+  const rows = [...lines, result].map((tex, i) => markdownTex(joinTex(i === 0 ? symbol : '', ' &= ', tex)))
   const origin = [
     reference,
     assumes.length === 0 ? '' : `assumes ${assumes.join('; ')}`,
     linesInWords(sourceLines),
   ].filter(part => part !== '')
-  const name = number === '' ? [] : [strong(`Equation ${number}`)]
-  const below = [...name, ...(origin.length === 0 ? [] : [text(`${name.length > 0 ? ': ' : ''}${origin.join(' · ')}`)])]
+  const name = number === '' ? [] : [strong(`Equation ${number}.`)]
+  const from = origin.length === 0 ? [] : [text(`${name.length > 0 ? ' ' : ''}${origin.join(' · ')}`)]
+  const above = [...anchor(id), ...name, ...from]
   return [
-    ...anchor(id),
-    mathBlock(`\\begin{aligned}\n${rows.join(' \\\\\n')}\n\\end{aligned}`),
-    ...(below.length === 0 ? [] : [paragraph(...below)]),
+    ...(above.length === 0 ? [] : [paragraph(...above)]),
+    mathBlock(`\\begin{aligned}\n${rows.join(' \\cr\n')}\n\\end{aligned}`),
   ]
 }
 
 function figureNodes(figure: Figure, { figureFile }: MarkdownSetting): readonly RootContent[] {
-  const { id, number, caption, alternative } = figure
-  const name = number === '' ? [] : [strong(`Figure ${number}`), text(' ')]
+  const { id, number, caption, alternative, svg } = figure
+  const name = number === '' ? [] : [strong(`Figure ${number}.`), text(' ')]
+  const title = number === '' && caption === '' ? [] : [...name, text(caption)]
+  if (figureFile === undefined)
+    return [
+      { type: 'html', value: svg },
+      ...(id === '' && title.length === 0 ? [] : [paragraph(...anchor(id), ...title)]),
+    ]
   return [
-    ...anchor(id),
-    paragraph({ type: 'image', url: figureFile(figure), alt: plain(alternative) }),
-    paragraph(...name, text(caption)),
+    paragraph(...anchor(id), { type: 'image', url: figureFile(figure), alt: plain(alternative) }),
+    ...(title.length === 0 ? [] : [paragraph(...title)]),
   ]
 }
 
-function checkNode({ id, what, demand, capacity, ratioPrinted, ok, reference, sourceLines }: Check): Paragraph {
-  const origin = [reference, linesInWords(sourceLines)].filter(part => part !== '').join(' · ')
-  return paragraph(
-    ...anchor(id),
-    strong(what),
-    text(`: ${demand} ${ok ? '≤' : '>'} ${capacity}, ratio ${ratioPrinted}, `),
-    strong(ok ? 'OK' : 'NG'),
-    ...(origin === '' ? [] : [text(` (${origin})`)]),
-  )
-}
+/** A heading that links lead to; the anchor alone where it has no words. */
+const titledNodes = (id: string, title: string, depth: Heading['depth']): readonly RootContent[] =>
+  title === ''
+    ? [paragraph(...anchor(id))].filter(({ children }) => children.length > 0)
+    : [{ type: 'heading', depth, children: [...anchor(id), text(plain(title))] }]
 
 function registerNodes({ id, title, items }: Register, { level }: MarkdownSetting): readonly RootContent[] {
   const list = items.map(
@@ -106,9 +121,5 @@ function registerNodes({ id, title, items }: Register, { level }: MarkdownSettin
       children: [paragraph(text(item.detail === '' ? item.text : `${item.text} (${item.detail})`))],
     }),
   )
-  return [
-    ...anchor(id),
-    ...(title === '' ? [] : [heading(title, level)]),
-    { type: 'list', ordered: true, start: 1, spread: false, children: list },
-  ]
+  return [...titledNodes(id, title, level), { type: 'list', ordered: true, start: 1, spread: false, children: list }]
 }

@@ -4,7 +4,8 @@
  */
 import type { Literal } from 'mdast'
 import type { Options } from 'remark-stringify'
-import { type Tex, texSource } from '../base/tex.ts'
+import type { Tex } from '../base/tex.ts'
+import { markdownTex } from './math-source.ts'
 
 export interface MathBlock extends Literal {
   type: 'math'
@@ -29,11 +30,7 @@ declare module 'mdast' {
 
 export const mathBlock = (source: string): MathBlock => ({ type: 'math', value: source })
 
-/** A formula in a line. Bars are spelt out, since a bare one would end the cell of a table. */
-export function inlineMath(tex: Tex): InlineMath {
-  const value = texSource(tex).replaceAll('\\|', '\\Vert ').replaceAll('|', '\\vert ').replace(/\s+/g, ' ').trim()
-  return { type: 'inlineMath', value }
-}
+export const inlineMath = (tex: Tex): InlineMath => ({ type: 'inlineMath', value: markdownTex(tex) })
 
 const writeMath = (node: MathBlock): string => `$$\n${node.value.replace(/\n\s*\n/g, '\n')}\n$$`
 const writeInlineMath = (node: InlineMath): string => `$${node.value}$`

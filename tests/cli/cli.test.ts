@@ -65,6 +65,20 @@ describe('exit codes', () => {
   })
 })
 
+describe('signs beyond ASCII', () => {
+  test('are read by the command as they are by the tests: raised digits, a centred dot, a double prime', () => {
+    put('a.md', '```equations\nA = 12 ft² + 3 ft·ft -> ft^2\nL = 5″ -> in\n```\n')
+    expect(run('build', 'a.md', '--to', 'json')).toMatchObject({ status: 0, stderr: '' })
+    expect(JSON.parse(read('a.json')).values.A.printed).toBe('15 ft²')
+  })
+
+  test('stand in no file of the command, which is read as Latin-1', () => {
+    const files = readdirSync(join(root, 'dist')).filter(name => name.endsWith('.cjs') && name !== 'platemark.cjs')
+    expect(files).toContain('command.cjs')
+    for (const name of files) expect(readFileSync(join(root, 'dist', name), 'utf8')).toMatch(/^[\0-\x7f]*$/)
+  })
+})
+
 describe('what a build writes', () => {
   test('a page beside its source, and nothing else', () => {
     put('a.md', sound)
@@ -162,7 +176,7 @@ describe('what cannot be read or written is said in plain words', () => {
 
   test('a file of 10 MB', () => {
     put('a.md', `${sound}${'x'.repeat(10 * 1024 * 1024)}`)
-    expect(run('check', 'a.md').stderr).toContain('10.0 MB; 5 MB are read')
+    expect(run('check', 'a.md').stderr).toContain('10 MB; 5 MB are read')
   })
 
   test('an output folder that cannot be made', () => {
