@@ -14,6 +14,7 @@ import { gather } from './model/givens.ts'
 import { readDocument } from './read/document.ts'
 import { parseMarkdown } from './read/markdown.ts'
 import { type Nearby, nothingNearby } from './read/nearby.ts'
+import type { Pictures } from './read/pictures.ts'
 import { type Part, partsOf } from './render/parts.ts'
 
 export interface Compiled {
@@ -22,6 +23,7 @@ export interface Compiled {
   readonly nearby: Nearby
   readonly choices: Choices
   readonly parts: readonly Part[]
+  readonly pictures: Pictures
   readonly context: Context
   readonly checks: readonly Check[]
   /** In the order of the source, each once. */
@@ -33,7 +35,7 @@ export function compileText(path: string, text: string, nearby: Nearby = nothing
 }
 
 export function compileTree(tree: Root, source: Source, nearby: Nearby = nothingNearby): Compiled {
-  const document = readDocument(tree, source)
+  const document = readDocument(tree, source, nearby)
   const choices = readChoices(document.front)
   const sheet = worksheet(gather([...document.blocks.values()]), choices)
   const given = sheet.readAll()
@@ -51,12 +53,13 @@ export function compileTree(tree: Root, source: Source, nearby: Nearby = nothing
     ...quoteFaults(quotes),
     ...sheet.warnings(),
   ])
-  const { items, headings } = numberItems(itemsOf(document, worked, diagnostics))
+  const { items, headings, pictures } = numberItems(itemsOf(document, worked, diagnostics))
   return {
     source,
     nearby,
     choices,
-    parts: partsOf(items, headings, quotes),
+    parts: partsOf(items, headings, pictures, quotes),
+    pictures: document.pictures,
     context,
     checks: context.checks,
     diagnostics,

@@ -5,6 +5,8 @@ import type { Piece } from './sheet.ts'
 export type Numbered<P> =
   | { readonly kind: 'heading'; readonly depth: number; readonly text: string; readonly key: P }
   | { readonly kind: 'pieces'; readonly pieces: readonly Piece[]; readonly key: P }
+  /** A picture of the engineer's own with a title, which is numbered with the figures. */
+  | { readonly kind: 'picture'; readonly key: P }
   | { readonly kind: 'other'; readonly key: P }
 
 /**
@@ -14,11 +16,13 @@ export type Numbered<P> =
 export function numberItems<P>(items: readonly Numbered<P>[]): {
   readonly items: readonly Numbered<P>[]
   readonly headings: ReadonlyMap<P, string>
+  readonly pictures: ReadonlyMap<P, string>
 } {
   const depths = items.flatMap(item => (item.kind === 'heading' ? [item.depth] : []))
   const parted = items.some(item => item.kind === 'pieces' && item.pieces.some(({ kind }) => kind === 'heading'))
   const top = Math.min(...(loneTitle(depths, parted) ? depths.slice(1) : depths), 6)
   const headings = new Map<P, string>()
+  const pictures = new Map<P, string>()
   const counts: number[] = []
   const within = { equation: 0, table: 0, figure: 0 }
   /** The number of the next heading at a level below the top. */
@@ -40,25 +44,29 @@ export function numberItems<P>(items: readonly Numbered<P>[]): {
             : numberPiece(piece, counts[0] ?? 0, within),
         ),
       }
+    if (item.kind === 'picture') pictures.set(item.key, numberOf('figure', counts[0] ?? 0, within))
     if (item.kind === 'heading' && item.depth >= top) {
       below = item.depth - top + 1
       if (!/^\d/.test(item.text)) headings.set(item.key, next(item.depth - top))
     }
     return item
   })
-  return { items: numbered, headings }
+  return { items: numbered, headings, pictures }
 }
 
 /** @param parted true when workings bring headings of their own */
 const loneTitle = ([first, ...rest]: readonly number[], parted: boolean): boolean =>
   first !== undefined && (rest.length > 0 || parted) && rest.every(depth => depth > first)
 
-function numberPiece(
-  piece: Piece,
-  section: number,
-  within: { equation: number; table: number; figure: number },
-): Piece {
+type Counts = { equation: number; table: number; figure: number }
+
+function numberPiece(piece: Piece, section: number, within: Counts): Piece {
   if (piece.kind !== 'equation' && piece.kind !== 'table' && piece.kind !== 'figure') return piece
-  within[piece.kind]++
-  return { ...piece, number: section === 0 ? String(within[piece.kind]) : `${section}.${within[piece.kind]}` }
+  return { ...piece, number: numberOf(piece.kind, section, within) }
+}
+
+/** The next number of a kind within its section. */
+function numberOf(kind: keyof Counts, section: number, within: Counts): string {
+  within[kind]++
+  return section === 0 ? String(within[kind]) : `${section}.${within[kind]}`
 }
