@@ -23,6 +23,8 @@ import { gather } from './model/givens.ts'
 import { readDocument } from './read/document.ts'
 import { parseMarkdown } from './read/markdown.ts'
 import { type Nearby, nothingNearby } from './read/nearby.ts'
+import type { Pictures } from './read/pictures.ts'
+import { readLogo } from './render/logo.ts'
 import { type Part, partsOf } from './render/parts.ts'
 import { readTemplate } from './render/template.ts'
 
@@ -33,7 +35,9 @@ export interface Compiled {
   readonly choices: Choices
   readonly preface: Preface
   readonly template: Template
+  readonly logo: string | undefined
   readonly parts: readonly Part[]
+  readonly pictures: Pictures
   readonly context: Context
   readonly checks: readonly Check[]
   /** In the order of the source, each once. */
@@ -45,7 +49,7 @@ export function compileText(path: string, text: string, nearby: Nearby = nothing
 }
 
 export function compileTree(tree: Root, source: Source, nearby: Nearby = nothingNearby): Compiled {
-  const document = readDocument(tree, source)
+  const document = readDocument(tree, source, nearby)
   const choices = readChoices(document.front)
   const sheet = worksheet(gather([...document.blocks.values()]), choices)
   const given = sheet.readAll()
@@ -55,6 +59,7 @@ export function compileTree(tree: Root, source: Source, nearby: Nearby = nothing
   )
   const { worked, asked, shown } = explainBlocks(document, sheet, context)
   const template = readTemplate(choices.template, nearby)
+  const logo = readLogo(choices.logo, nearby)
   const quotes = explainQuotes(document, sheet, context, shown)
   const diagnostics = sorted([
     ...document.faults,
@@ -65,10 +70,11 @@ export function compileTree(tree: Root, source: Source, nearby: Nearby = nothing
     ...quoteFaults(quotes),
     ...sheet.warnings(),
     ...(template.ok ? [] : template.because),
+    ...(logo.ok ? [] : logo.because),
   ])
   const own = itemsOf(document, worked, diagnostics)
   const all = [...own, ...closingItems(closingOf(asked, sheet, context), own)]
-  const { items, headings, contents } = numberItems(all, id => context.anchor(id))
+  const { items, headings, pictures, contents } = numberItems(all, id => context.anchor(id))
   const preface = prefaceOf(contents, { asked, shown }, choices, sheet, context)
   return {
     source,
@@ -76,7 +82,9 @@ export function compileTree(tree: Root, source: Source, nearby: Nearby = nothing
     choices,
     preface,
     template: template.ok ? template.value : {},
-    parts: partsOf(items, headings, quotes),
+    logo: logo.ok ? logo.value : undefined,
+    parts: partsOf(items, headings, pictures, quotes),
+    pictures: document.pictures,
     context,
     checks: context.checks,
     diagnostics,
@@ -85,7 +93,7 @@ export function compileTree(tree: Root, source: Source, nearby: Nearby = nothing
 
 /** What every page carries around its body. */
 export function sheetOf(
-  { choices, preface, template, diagnostics }: Compiled,
+  { choices, preface, template, logo, diagnostics }: Compiled,
   version: string,
   sha256: string,
   draft: boolean,
@@ -96,6 +104,7 @@ export function sheetOf(
     cover: choices.cover,
     paper: choices.paper,
     template,
+    logo,
     language: choices.language,
     sourceMark: `${sha256.slice(0, 4)} ${sha256.slice(4, 8)}`,
     version,

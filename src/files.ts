@@ -13,6 +13,7 @@ import {
 import { dirname, extname, join, relative, resolve } from 'node:path'
 import type { Diagnostic } from './base/diagnostic.ts'
 import { bad, good, type Outcome } from './base/outcome.ts'
+import type { OutputFile } from './publish.ts'
 import type { Nearby } from './read/nearby.ts'
 
 /** A document to be built. */
@@ -59,7 +60,7 @@ export function readText(path: string): Outcome<string, TextFault> {
     if (size > LARGEST)
       return bad({
         rule: 'file-too-large',
-        message: `this file has ${megabytes(size)} MB; ${LARGEST / 1048576} MB are read`,
+        message: `this file has ${megabytes(size)} MB; ${megabytes(LARGEST)} MB are read`,
         help: 'Split the document.',
         ...faultOfWhole,
       })
@@ -79,8 +80,12 @@ export const nearbyOf = (path: string): Nearby => ({
   read: name => {
     try {
       const file = resolve(dirname(path), name)
-      const { size } = statSync(file)
-      if (size > LARGEST) return bad(`it has ${megabytes(size)} MB; ${LARGEST / 1048576} MB are read`)
+      const found = statSync(file)
+      if (found.isDirectory()) return bad('it is a folder')
+      // A device or a pipe might never end.
+      if (!found.isFile()) return bad('it is not a file')
+      const { size } = found
+      if (size > LARGEST) return bad(`it has ${megabytes(size)} MB; ${megabytes(LARGEST)} MB are read`)
       return good(readFileSync(file))
     } catch (error) {
       return bad(reason(error))
@@ -88,7 +93,7 @@ export const nearbyOf = (path: string): Nearby => ({
   },
 })
 
-const megabytes = (size: number): string => (size / 1048576).toFixed(1)
+const megabytes = (size: number): string => String(Number((size / 1048576).toFixed(1)))
 
 function decode(bytes: Uint8Array): Outcome<string, TextFault> {
   try {
@@ -101,18 +106,15 @@ function decode(bytes: Uint8Array): Outcome<string, TextFault> {
 }
 
 /** Writes each file whole or not at all: a reader never sees half of one. */
-export function writeWhole(
-  folder: string,
-  files: readonly { readonly name: string; readonly text: string }[],
-): Outcome<undefined> {
+export function writeWhole(folder: string, files: readonly OutputFile[]): Outcome<undefined> {
   if (files.length === 0) return good(undefined)
   let workshop: string | undefined
   try {
     mkdirSync(folder, { recursive: true })
     workshop = mkdtempSync(join(folder, '.platemark-'))
-    for (const { name, text } of files) {
-      mkdirSync(dirname(join(workshop, name)), { recursive: true })
-      writeFileSync(join(workshop, name), text)
+    for (const file of files) {
+      mkdirSync(dirname(join(workshop, file.name)), { recursive: true })
+      writeFileSync(join(workshop, file.name), file.bytes ?? file.text)
     }
     for (const { name } of files) renameSync(join(workshop, name), join(folder, name))
     return good(undefined)

@@ -8,6 +8,7 @@ import { positionOf, sourceOf } from './base/span.ts'
 import { type Compiled, compileText, compileTree } from './compile.ts'
 import { hostAt } from './host.ts'
 import type { Host } from './publish.ts'
+import { leftAlone } from './read/nearby.ts'
 import { bodyNodes } from './render/markdown-body.ts'
 import { markdownSettings } from './render/math-nodes.ts'
 
@@ -33,7 +34,7 @@ export function remarkPlatemark(this: Processor): (tree: Root, file: VFile) => R
   extensions.push(markdownSettings)
   Reflect.set(data, 'toMarkdownExtensions', extensions)
   return (tree, file) => {
-    const compiled = compileTree(tree, sourceOf(file.path ?? 'document.md', String(file)))
+    const compiled = compileTree(tree, sourceOf(file.path ?? 'document.md', String(file)), leftAlone)
     report(compiled, file)
     return { type: 'root', children: nodesOf(compiled) }
   }

@@ -7,6 +7,7 @@ import remarkStringify from 'remark-stringify'
 import { unified } from 'unified'
 import { type Compiled, sheetOf } from './compile.ts'
 import type { Figure } from './explain/sheet.ts'
+import type { PlacedPicture } from './read/pictures.ts'
 import { besideNames } from './render/beside.ts'
 import type { BodyPart } from './render/body.ts'
 import { renderHtml } from './render/html.ts'
@@ -15,6 +16,7 @@ import { documentNodes } from './render/markdown.ts'
 import { bodyNodes, liftOf } from './render/markdown-body.ts'
 import { markdownSettings } from './render/math-nodes.ts'
 import type { Part } from './render/parts.ts'
+import { onlyPictured, picturesBeside, picturesInPage } from './render/pictures.ts'
 import { isDefinition, proseHtml } from './render/prose.ts'
 import { unpackShapes } from './render/shape-pack.ts'
 import { createShapeCache, type ShapeCache } from './render/typeset.ts'
@@ -34,7 +36,9 @@ export type Format = 'html' | 'md' | 'json'
 
 export interface OutputFile {
   readonly name: string
+  /** Empty where the file is a picture, which has `bytes`. */
   readonly text: string
+  readonly bytes?: Uint8Array
 }
 
 /** @param stem name of the document without its ending */
@@ -70,9 +74,12 @@ function page(compiled: Compiled, draft: boolean, host: Host): string {
   return renderHtml({ sheet, body: bodyOf(compiled), source, asset: host.asset, shapes: shapesOf(host) })
 }
 
-function bodyOf({ parts }: Compiled): readonly BodyPart[] {
-  const definitions = definitionsIn(parts)
-  return parts.flatMap((part, i): readonly BodyPart[] =>
+function bodyOf({ parts, pictures }: Compiled): readonly BodyPart[] {
+  const shown = parts.map(
+    (part): Part => (part.kind === 'prose' ? { ...part, nodes: picturesInPage(part.nodes, pictures) } : part),
+  )
+  const definitions = definitionsIn(shown)
+  return shown.flatMap((part, i): readonly BodyPart[] =>
     part.kind === 'pieces' ? part.pieces : [{ kind: 'prose', html: proseHtml(part.nodes, definitions, `note-${i}`) }],
   )
 }
@@ -94,7 +101,24 @@ function markdown(compiled: Compiled, stem: string, draft: boolean, host: Host):
     beside.push({ name, text: `${svg}\n` })
     return encodeURIComponent(name)
   }
-  const body = bodyNodes(parts.map(withoutFront), liftOf(parts), { source, figureFile })
+  const copies = new Map<string, string>()
+  const pictureFile = ({ path, picture }: PlacedPicture): string => {
+    const known = copies.get(path)
+    const name = known ?? nameOf(stemOf(path), picture.kind === 'jpeg' ? 'jpg' : picture.kind)
+    if (known === undefined) beside.push({ name, text: '', bytes: picture.bytes })
+    copies.set(path, name)
+    return encodeURIComponent(name)
+  }
+  const gone = onlyPictured(parts.flatMap(part => (part.kind === 'prose' ? part.nodes : [])))
+  const isBody = (node: RootContent) =>
+    node.type !== 'yaml' && !(node.type === 'definition' && gone.has(node.identifier))
+  const shown = parts.map(
+    (part): Part =>
+      part.kind === 'prose'
+        ? { ...part, nodes: picturesBeside(part.nodes.filter(isBody), compiled.pictures, pictureFile) }
+        : part,
+  )
+  const body = bodyNodes(shown, liftOf(shown), { source, figureFile })
   const sheet = sheetOf(compiled, host.version, host.sha256(source.text), draft)
   const root: Root = { type: 'root', children: [...documentNodes(sheet, body)] }
   linkAddresses(root)
@@ -106,8 +130,8 @@ const linkAddresses = (root: Root): void => {
   for (const transform of gfmAutolinkLiteralFromMarkdown().transforms ?? []) transform(root)
 }
 
-const withoutFront = (part: Part): Part =>
-  part.kind === 'prose' ? { ...part, nodes: part.nodes.filter(({ type }) => type !== 'yaml') } : part
+/** Name of a file without its folders and its ending. */
+const stemOf = (path: string): string => path.replace(/^.*[\\/]/s, '').replace(/\.[^.]*$/, '') || 'picture'
 
 function results({ source, choices, context, checks, diagnostics }: Compiled, host: Host): string {
   return renderJson({

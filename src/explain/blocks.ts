@@ -161,7 +161,7 @@ export function itemsOf(
     const item: Numbered<RootContent> =
       node.type === 'heading'
         ? { kind: 'heading', depth: node.depth, text: headingText(node), key: node }
-        : { kind: 'other', key: node }
+        : { kind: isFigure(node, document) ? 'picture' : 'other', key: node }
     return box.length === 0 ? [item] : [item, { kind: 'pieces', pieces: box, key: node }]
   })
 }
@@ -184,6 +184,13 @@ export function closingItems(
 }
 
 const depths = [1, 2, 3, 4, 5, 6] as const
+
+/** A paragraph of one picture that has a title. */
+function isFigure(node: RootContent, { pictures }: Document): boolean {
+  const [only, ...more] = node.type === 'paragraph' ? node.children : []
+  if (only === undefined || more.length > 0) return false
+  return (only.type === 'image' || only.type === 'imageReference') && (pictures.get(only)?.title ?? '') !== ''
+}
 
 /** A box with the faults of a node that its pieces do not show; warnings stand only beside what was given. */
 function boxFor(

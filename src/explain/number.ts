@@ -21,11 +21,15 @@ export interface ContentsEntry {
 export type Numbered<P> =
   | { readonly kind: 'heading'; readonly depth: number; readonly text: string; readonly key: P }
   | { readonly kind: 'pieces'; readonly pieces: readonly Piece[]; readonly key: P }
+  /** A picture of the engineer's own with a title, which is numbered with the figures. */
+  | { readonly kind: 'picture'; readonly key: P }
   | { readonly kind: 'other'; readonly key: P }
 
 export interface NumberedDocument<P> {
   readonly items: readonly Numbered<P>[]
   readonly headings: ReadonlyMap<P, HeadingMark>
+  /** Numbers of the engineer's own figures. */
+  readonly pictures: ReadonlyMap<P, string>
   readonly contents: readonly ContentsEntry[]
 }
 
@@ -38,6 +42,7 @@ export interface NumberedDocument<P> {
 export function numberItems<P>(items: readonly Numbered<P>[], anchor: (id: string) => string): NumberedDocument<P> {
   const top = topDepth(items) ?? 6
   const headings = new Map<P, HeadingMark>()
+  const pictures = new Map<P, string>()
   const contents: ContentsEntry[] = []
   const counts: number[] = []
   const within = { equation: 0, table: 0, figure: 0 }
@@ -63,6 +68,7 @@ export function numberItems<P>(items: readonly Numbered<P>[], anchor: (id: strin
           piece.kind === 'heading' ? numberHeading(piece) : numberPiece(piece, counts[0] ?? 0, within),
         ),
       }
+    if (item.kind === 'picture') pictures.set(item.key, numberOf('figure', counts[0] ?? 0, within))
     if (item.kind === 'heading') {
       const id = anchor(slug(item.text))
       const own = /^\d+(?:\.\d+)*\.?(?=\s)/.exec(item.text)?.[0] ?? ''
@@ -74,7 +80,7 @@ export function numberItems<P>(items: readonly Numbered<P>[], anchor: (id: strin
     }
     return item
   })
-  return { items: numbered, headings, contents }
+  return { items: numbered, headings, pictures, contents }
 }
 
 /** Depth of the headings that begin a section, the lone title set aside; undefined where there are none. */
@@ -97,12 +103,15 @@ const slug = (text: string): string =>
 const loneTitle = ([first, ...rest]: readonly number[], parted: boolean): boolean =>
   first !== undefined && (rest.length > 0 || parted) && rest.every(depth => depth > first)
 
-function numberPiece(
-  piece: Piece,
-  section: number,
-  within: { equation: number; table: number; figure: number },
-): Piece {
+type Counts = { equation: number; table: number; figure: number }
+
+function numberPiece(piece: Piece, section: number, within: Counts): Piece {
   if (piece.kind !== 'equation' && piece.kind !== 'table' && piece.kind !== 'figure') return piece
-  within[piece.kind]++
-  return { ...piece, number: section === 0 ? String(within[piece.kind]) : `${section}.${within[piece.kind]}` }
+  return { ...piece, number: numberOf(piece.kind, section, within) }
+}
+
+/** The next number of a kind within its section. */
+function numberOf(kind: keyof Counts, section: number, within: Counts): string {
+  within[kind]++
+  return section === 0 ? String(within[kind]) : `${section}.${within[kind]}`
 }

@@ -162,7 +162,7 @@ export interface Sheet {
   /** The firm's own sheet and style; empty for ours. */
   readonly template: Template
   /** The firm's mark as a `data:` address. */
-  readonly logo?: string
+  readonly logo?: string | undefined
   readonly language: Language
   /** First eight hex digits of the source's SHA-256, grouped in fours. */
   readonly sourceMark: string

@@ -9,6 +9,8 @@ import { lineOf, lineText, type Source } from '../base/span.ts'
 import { type Block, readBlock } from './block.ts'
 import { type FrontMatter, noFrontMatter, readFront } from './front.ts'
 import { isSafeLink } from './links.ts'
+import { type Nearby, nothingNearby } from './nearby.ts'
+import { type PictureNode, type Pictures, readPictures } from './pictures.ts'
 import { diagnose, type Text } from './text.ts'
 import { isTopic, laterTopics, topics } from './topics.ts'
 
@@ -27,13 +29,17 @@ export interface Document {
   readonly front: FrontMatter
   readonly blocks: ReadonlyMap<Code, Block>
   readonly quotes: readonly QuoteMark[]
+  readonly pictures: Pictures
   readonly faults: readonly Diagnostic[]
 }
 
-export function readDocument(tree: Root, source: Source): Document {
+export function readDocument(tree: Root, source: Source, nearby: Nearby = nothingNearby): Document {
   const faults: Diagnostic[] = []
   const blocks = new Map<Code, Block>()
   const quotes: QuoteMark[] = []
+  const links: (Link | Definition)[] = []
+  const definitions: Definition[] = []
+  const shown: PictureNode[] = []
   let front = noFrontMatter
   const cut = visit(tree, node => {
     if (isYaml(node) && front === noFrontMatter) front = readFront(yamlText(node))
@@ -41,18 +47,26 @@ export function readDocument(tree: Root, source: Source): Document {
       const block = blockOf(node, source, faults)
       if (block) blocks.set(node, block)
     } else if (isHtml(node)) faults.push(...htmlLeftOut(node))
-    else if (isLink(node) && !isSafeLink(node.url)) faults.push(linkLeftOut(node))
-    else if (node.type === 'image' || node.type === 'imageReference') faults.push(imageLeftOut(node))
+    else if (isLink(node)) {
+      if (node.type === 'definition') definitions.push(node)
+      links.push(node)
+    } else if (isPicture(node)) shown.push(node)
     else if (isText(node)) quotes.push(...quotesIn(node, source))
   })
-  faults.push(...cut.map(nestedTooDeep))
-  return { source, tree, front, blocks, quotes, faults }
+  // What defines nothing but a picture is no link, and the picture tells of it.
+  const pictured = new Set(shown.flatMap(node => (node.type === 'imageReference' ? [node.identifier] : [])))
+  const isLeftOut = (node: Link | Definition) =>
+    !isSafeLink(node.url) && !(node.type === 'definition' && pictured.has(node.identifier))
+  const { pictures, faults: pictureFaults } = readPictures(shown, definitions, nearby)
+  faults.push(...links.filter(isLeftOut).map(linkLeftOut), ...pictureFaults, ...cut.map(nestedTooDeep))
+  return { source, tree, front, blocks, quotes, pictures, faults }
 }
 
 const isYaml = (node: Node): node is Yaml => node.type === 'yaml'
 const isCode = (node: Node): node is Code => node.type === 'code'
 const isHtml = (node: Node): node is Html => node.type === 'html'
 const isLink = (node: Node): node is Link | Definition => node.type === 'link' || node.type === 'definition'
+const isPicture = (node: Node): node is PictureNode => node.type === 'image' || node.type === 'imageReference'
 const isText = (node: Node): node is TextNode => node.type === 'text'
 
 /** Lists and quotations within each other beyond this are no document; the tree is cut there. */
@@ -181,16 +195,6 @@ const linkLeftOut = (node: Link | Definition): Diagnostic =>
     `this link leads to ${node.url.slice(0, 40)}, which a page does not open`,
     'A link leads to http, https, mailto or a place in the document.',
   )
-
-function imageLeftOut(node: Node): Diagnostic {
-  return diagnose(
-    'warning',
-    'image-left-out',
-    { start: startOf(node), end: endOf(node) },
-    'pictures are not set by this version',
-    'The page shows its description in place of it.',
-  )
-}
 
 const QUOTE = /\{\{\s*([^{}|]*?)\s*(?:\|\s*([^{}]*?)\s*)?\}\}/g
 

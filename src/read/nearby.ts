@@ -11,3 +11,6 @@ export interface Nearby {
 
 /** Where a text stands alone, as in a pipeline that has no folder. */
 export const nothingNearby: Nearby = { read: () => bad('files beside the document are not read here') }
+
+/** For a pipeline that looks after its pictures itself: they stay in the tree as they are, and nothing is said of them. */
+export const leftAlone: Nearby = { read: () => bad('files beside the document are left to the pipeline') }

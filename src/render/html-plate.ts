@@ -63,10 +63,8 @@ const signatureHtml = (label: string, name: string): string => `<div class="sign
 </div>`
 
 /** The firm's mark, as a picture that can neither run nor call for anything. */
-export const logoHtml = ({ logo, titleBlock }: Sheet): string =>
-  logo === undefined
-    ? ''
-    : `<img class="logo" src="${escapeHtml(logo)}" alt="${titleBlock.by === '' ? 'Mark of the firm' : ''}">\n`
+export const logoHtml = ({ logo }: Sheet): string =>
+  logo === undefined ? '' : `<img class="logo" src="${escapeHtml(logo)}" alt="Mark of the firm">\n`
 
 export function bannerHtml(sheet: Sheet): string {
   return sheet.draft ? `<p class="draft" role="note"><b>Draft</b> ${draftWords(sheet)}</p>` : ''

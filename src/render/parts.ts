@@ -3,6 +3,7 @@ import type { RootContent } from 'mdast'
 import type { Quotes } from '../explain/blocks.ts'
 import type { HeadingMark, Numbered } from '../explain/number.ts'
 import type { Piece } from '../explain/sheet.ts'
+import { withFigure } from './pictures.ts'
 import { withMark, withQuotes } from './quotes.ts'
 import { withoutActive } from './safe.ts'
 
@@ -14,6 +15,7 @@ export type Part =
 export function partsOf(
   items: readonly Numbered<RootContent>[],
   headings: ReadonlyMap<RootContent, HeadingMark>,
+  figures: ReadonlyMap<RootContent, string>,
   quotes: Quotes,
 ): readonly Part[] {
   const parts: ({ readonly kind: 'prose'; readonly nodes: RootContent[] } | Extract<Part, { kind: 'pieces' }>)[] = []
@@ -24,7 +26,7 @@ export function partsOf(
     }
     const quoted = withQuotes(item.key, quotes)
     const numbered = quoted.type === 'heading' ? withMark(quoted, headings.get(item.key)) : quoted
-    const nodes = withoutActive(numbered)
+    const nodes = withoutActive(withFigure(numbered, figures.get(item.key)))
     const last = parts.at(-1)
     if (last?.kind === 'prose') last.nodes.push(...nodes)
     else parts.push({ kind: 'prose', nodes: [...nodes] })

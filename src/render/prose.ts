@@ -5,13 +5,15 @@ import { toHtml } from 'hast-util-to-html'
 import type { Nodes, Root, RootContent } from 'mdast'
 import { toHast } from 'mdast-util-to-hast'
 
-/** Links may lead out of the page; nothing is fetched from anywhere. */
+/** Links may lead out of the page; nothing is fetched from anywhere, and a picture holds itself. */
 const schema: Schema = {
   ...defaultSchema,
   clobber: [],
-  protocols: { ...defaultSchema.protocols, src: [] },
+  tagNames: [...(defaultSchema.tagNames ?? []), 'figure', 'figcaption'],
+  protocols: { ...defaultSchema.protocols, src: ['data'] },
   attributes: {
     ...defaultSchema.attributes,
+    figure: [['className', 'picture']],
     a: [
       'href',
       'ariaDescribedBy',

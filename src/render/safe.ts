@@ -1,12 +1,10 @@
-/** Takes out of the prose what could act on a page or call for another file; the reader of the source was told. */
+/** Takes out of the prose what could act on a page; the reader of the source was told. Pictures: see `pictures.ts`. */
 import type { PhrasingContent, RootContent } from 'mdast'
 import { isSafeLink } from '../read/links.ts'
 
 /** The nodes that may stand in place of one: itself, what it holds, its words, or nothing. */
 export function withoutActive(node: RootContent): readonly RootContent[] {
   if (node.type === 'html') return []
-  if (node.type === 'image' || node.type === 'imageReference')
-    return [{ type: 'emphasis', children: [{ type: 'text', value: node.alt ?? '' }] }]
   if (node.type === 'definition' && !isSafeLink(node.url)) return []
   if (!('children' in node)) return [node]
   const children = (node.children as RootContent[]).flatMap(withoutActive)
