@@ -71,9 +71,16 @@ export function picturesInPage(nodes: readonly RootContent[], pictures: Pictures
   return nodes.flatMap(node => shown(node, pictures, showing))
 }
 
-/** So that the page does not move when the picture comes. */
-const sizeOf = (size: PlacedPicture['picture']['size']) =>
-  size === undefined ? {} : { width: Math.max(1, Math.round(size.width)), height: Math.max(1, Math.round(size.height)) }
+/** Height of the tallest picture in CSS pixels: 180 mm on paper, which every sheet has. */
+const TALLEST = 680
+
+/** So that the page does not move when the picture comes, and a tall one stays within a sheet. */
+function sizeOf(size: PlacedPicture['picture']['size']): { readonly width?: number; readonly height?: number } {
+  if (size === undefined) return {}
+  const scale = Math.min(1, TALLEST / size.height)
+  const whole = (length: number) => Math.max(1, Math.round(scale * length))
+  return { width: whole(size.width), height: whole(size.height) }
+}
 
 const paragraph = (children: readonly PhrasingContent[]): Paragraph => ({ type: 'paragraph', children: [...children] })
 

@@ -9,6 +9,7 @@ import { fileURLToPath } from 'node:url'
 import { describe, expect, test } from 'vitest'
 import { longForm } from '../../src/base/report.ts'
 import { type Compiled, compileText } from '../../src/compile.ts'
+import { nearbyOf } from '../../src/files.ts'
 import { publish } from '../../src/publish.ts'
 import { asset } from '../render/assets.ts'
 
@@ -20,7 +21,8 @@ const folders = (parent: string) =>
     .map(({ name }) => join(parent, name))
 
 function compiled(folder: string): Compiled {
-  return compileText('input.md', readFileSync(join(here, folder, 'input.md'), 'utf8'))
+  const path = join(here, folder, 'input.md')
+  return compileText('input.md', readFileSync(path, 'utf8'), nearbyOf(path))
 }
 
 const messages = ({ source, diagnostics }: Compiled): string =>

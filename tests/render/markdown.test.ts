@@ -6,7 +6,7 @@ import { unified } from 'unified'
 import { describe, expect, test } from 'vitest'
 import { tex } from '../../src/base/tex.ts'
 import type { Piece } from '../../src/explain/sheet.ts'
-import { documentNodes, type MarkdownSetting, pieceNodes } from '../../src/render/markdown.ts'
+import { documentNodes, type MarkdownSetting, pieceNodes, piecesNodes } from '../../src/render/markdown.ts'
 import { markdownSettings } from '../../src/render/math-nodes.ts'
 import { body, sheet, source } from './fixture.ts'
 
@@ -34,18 +34,14 @@ const textOf = (node: Node): string =>
       ? (node as Parents).children.map(textOf).join('')
       : ''
 
-const whole = written(
-  documentNodes(
-    sheet,
-    pieces.flatMap(piece => pieceNodes(piece, setting)),
-  ),
-)
+const whole = written(documentNodes(sheet, piecesNodes(pieces, setting)))
 
 describe('the Markdown of a sheet', () => {
   test('reads back with as many tables, formulas, pictures and quotations as the sheet has', () => {
     const count = (kind: Piece['kind']) => pieces.filter(piece => piece.kind === kind).length
     const tree = parsed(whole)
-    expect(all(tree, 'table')).toHaveLength(count('table'))
+    // The checks follow one another, and share a table.
+    expect(all(tree, 'table')).toHaveLength(count('table') + 1)
     expect(all(tree, 'image')).toHaveLength(count('figure'))
     expect(all(tree, 'blockquote')).toHaveLength(1 + 2)
     expect(whole.match(/^\$\$$/gm)).toHaveLength(2 * count('equation'))
@@ -59,33 +55,32 @@ describe('the Markdown of a sheet', () => {
     expect(whole).toContain('| $k$ (kip/in)')
     expect(whole).toContain('**W1** (governs)')
     expect(whole).toMatch(/\| \*\*Sum\*\* +\|/)
-    expect(whole).toContain('**Table 2.1. Walls along y and their shares of 62 kip, case EY.** lines 31–34')
-    expect(whole).toContain('$V_{\\text{d}}=F\\,\\frac{k}{\\sum k}$ — rigid diaphragm')
+    expect(whole).toContain('**Table 2.1.** Walls along y and their shares of 62 kip, case EY. · lines 31–34')
+    expect(whole).toContain('$V_{\\text{d}}=F\\thinspace\\frac{k}{\\sum k}$ — rigid diaphragm')
   })
 
-  test('aligns an equation at its equals signs, with its origin below', () => {
+  test('aligns an equation at its equals signs, with its origin above', () => {
     const equation = pieces.find(piece => piece.kind === 'equation' && piece.id === 'roof.e.x')
     expect(equation === undefined ? '' : ofPiece(equation)).toBe(
       [
-        '<a id="roof.e.x"></a>',
+        '<a id="roof.e.x"></a>**Equation 2.4.** ASCE 7-22 §12.8.4.1',
         '',
         '$$',
         '\\begin{aligned}',
-        'e_{x} &= x_{\\text{m}}-x_{\\text{r}} \\\\',
-        '&= 34.20\\ \\mathrm{ft}-19.92\\ \\mathrm{ft} \\\\',
+        'e_{x} &= x_{\\text{m}}-x_{\\text{r}} \\cr',
+        '&= 34.20\\ \\mathrm{ft}-19.92\\ \\mathrm{ft} \\cr',
         '&= \\mathbf{14.28}\\ \\mathrm{ft}',
         '\\end{aligned}',
         '$$',
-        '',
-        '**Equation 2.4**: ASCE 7-22 §12.8.4.1',
         '',
       ].join('\n'),
     )
   })
 
-  test('says the verdict of a check in words', () => {
-    expect(whole).toContain(
-      '**Story drift at grid D, along y**: 0.61 in > 0.58 in, ratio 1.05, **NG** (ASCE 7-22 §12.12.1 · line 52)',
+  test('says demand, capacity, ratio and verdict of a check in words', () => {
+    expect(whole).toMatch(/^\| Check +\| Demand \| Capacity \| Ratio \| Verdict \| From +\|$/m)
+    expect(whole).toMatch(
+      /^\| <a id="[^"]+"><\/a>Story drift at grid D, along y +\| +0\.61 in \| +> 0\.58 in \| +1\.05 \| \*\*NG\*\* +\| ASCE 7-22 §12\.12\.1 · line 52 +\|$/m,
     )
   })
 
