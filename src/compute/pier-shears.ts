@@ -21,25 +21,33 @@ const share = formula({
 
 /** V of the parts of each strip, from the shear of the wall: one table a strip, outer ones first. */
 export interface PierShears {
-  readonly name: string
-  readonly carried: Value
+  /** The strip; absent where openings of full height part the wall and its parts stand side by side. */
+  readonly strip?: string
   readonly K: Value
+  /** k, V_s and V of each part. */
   readonly table: Tabulation
+  /** The sum of its V, which is what it carries. */
+  readonly total: Value
 }
 
 /** @param shear the wall's own */
 export function workPierShears(pierced: Pierced, shear: Value, level: string, display: Display): readonly PierShears[] {
   const id = `${level}.wall.${pierced.wall}`
   const found: PierShears[] = []
-  const shares = (name: string, parts: Tabulation, K: Value, V_s: Value): void => {
+  const shares = (strip: string | undefined, parts: Tabulation, K: Value, V_s: Value): void => {
     const table = new Tabulation(parts.rows, (row, key) => `${id}.pier.${row}.${key}`, display)
       .takeColumn(parts.column('k'))
-      .work(share, { V_s, k: 'k', K }, 'V', [pierced.wall])
-    found.push({ name, carried: V_s, K, table })
+      .take(
+        carried,
+        parts.rows.map(() => V_s),
+      )
+      .work(share, { V_s: 'V_s', k: 'k', K }, 'V', [pierced.wall])
+    const total = table.sum('V', V, `${id}.${strip === undefined ? 'across' : `strip.${strip}`}.V`)
+    found.push({ ...(strip === undefined ? {} : { strip }), K, table, total })
     for (const each of pierced.strips.filter(({ of }) => parts.rows.includes(of ?? '')))
       shares(each.name, each.parts, each.K, table.column('V').cell(parts.rows.indexOf(each.of ?? '')))
   }
-  if (pierced.across) shares(pierced.wall, pierced.across, pierced.k, shear)
+  if (pierced.across) shares(undefined, pierced.across, pierced.k, shear)
   else
     for (const each of pierced.strips.filter(({ of }) => of === undefined)) shares(each.name, each.parts, each.K, shear)
   return found

@@ -9,9 +9,11 @@ import { caseOnPage } from '../compute/cases.ts'
 import type { Displacement } from '../compute/displacement.ts'
 import type { CaseResult, Distribution } from '../compute/distribution.ts'
 import type { LevelWork } from '../compute/level.ts'
+import { pierShearsOf } from '../compute/pier-shears.ts'
 import { diagnose } from '../read/text.ts'
 import type { Context } from './context.ts'
 import { explainMass, explainPolarMoment } from './mass.ts'
+import { explainPierShears } from './piers.ts'
 import type { Request, Want } from './request.ts'
 import { explainEccentricity, explainRigidity, explainStiffness } from './rigidity.ts'
 import {
@@ -155,7 +157,7 @@ function shears(want: ShearWant, level: LevelWork, request: Request, context: Co
     case 'wall shears':
       return wallShears(level, distribution, cases, walls, request, context)
     case 'design shears':
-      return good(explainDesignShears(distribution, walls, detail, context))
+      return designShears(level, distribution, walls, request, context)
     case 'equilibrium':
       return good(explainEquilibrium(distribution, detail, display, context))
     case 'displacement': {
@@ -167,6 +169,25 @@ function shears(want: ShearWant, level: LevelWork, request: Request, context: Co
       return good(explainDisplacement(level.name, moved.value, shown, detail, display, context))
     }
   }
+}
+
+/** The design shears, and in full detail what the piers of each wall shown take of its own. */
+function designShears(
+  level: LevelWork,
+  distribution: Distribution,
+  walls: readonly string[],
+  { detail }: Request,
+  context: Context,
+): Result<readonly Piece[]> {
+  const worked = explainDesignShears(distribution, walls, detail, context)
+  if (detail !== 'full') return good(worked)
+  const piers = flatAll(
+    walls.map(wall => {
+      const shears = pierShearsOf(level, wall) ?? good([])
+      return shears.ok ? good(explainPierShears(level.name, wall, shears.value, context)) : shears
+    }),
+  )
+  return piers.ok ? good([...worked, ...piers.value]) : piers
 }
 
 /** The shears of each case asked for, and in full detail the plan that shows them. */
