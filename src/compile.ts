@@ -5,6 +5,7 @@ import { sorted } from './base/report.ts'
 import { type Source, sourceOf } from './base/span.ts'
 import { worksheet } from './compute/worksheet.ts'
 import { sketchPlan } from './draw/sketch.ts'
+import { sketchElevation } from './draw/sketch-elevation.ts'
 import { explainBlocks, explainQuotes, faultsIn, itemsOf, nestedBlocks, quoteFaults } from './explain/blocks.ts'
 import { Context } from './explain/context.ts'
 import { numberItems } from './explain/number.ts'
@@ -37,8 +38,11 @@ export function compileTree(tree: Root, source: Source, nearby: Nearby = nothing
   const choices = readChoices(document.front)
   const sheet = worksheet(gather([...document.blocks.values()]), choices)
   const given = sheet.readAll()
-  const context = new Context(choices.language, source, (level, caseName) =>
-    sketchPlan(sheet, level, caseName, choices),
+  const context = new Context(
+    choices.language,
+    source,
+    (level, caseName) => sketchPlan(sheet, level, caseName, choices),
+    (level, wall, caseName) => sketchElevation(sheet, level, wall, caseName, choices),
   )
   const worked = explainBlocks(document, sheet, context)
   const quotes = explainQuotes(document, sheet, context)

@@ -7,16 +7,25 @@ import { lineOf, type Source, type Span } from '../base/span.ts'
 import type { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
 import type { LevelWork } from '../compute/level.ts'
+import type { Wall } from '../model/walls.ts'
 import type { Check, Figure } from './sheet.ts'
 
 /** Draws a level's plan; `caseName` asks for the shears of one case in place of the design shears. */
 export type Sketch = (level: LevelWork, caseName: string | undefined) => Result<Pick<Figure, 'svg' | 'alternative'>>
+
+/** Draws a wall's elevation; `caseName` asks for the shear of one case in place of the design shear. */
+export type Elevation = (
+  level: LevelWork,
+  wall: Wall,
+  caseName: string | undefined,
+) => Result<Pick<Figure, 'svg' | 'alternative'>>
 
 /** Gathers, over the whole document, what its lists and its JSON are made of. */
 export class Context {
   readonly language: Language
   readonly source: Source
   readonly sketch: Sketch
+  readonly elevation: Elevation
   /** Every value that was printed: the roots of the trace. */
   readonly roots = new Map<string, Value>()
   /** Every formula that was printed, in order. */
@@ -25,10 +34,11 @@ export class Context {
   private readonly anchors = new Map<string, number>()
   private readonly tables: { readonly anchor: string; readonly table: Tabulation }[] = []
 
-  constructor(language: Language, source: Source, sketch: Sketch) {
+  constructor(language: Language, source: Source, sketch: Sketch, elevation: Elevation) {
     this.language = language
     this.source = source
     this.sketch = sketch
+    this.elevation = elevation
   }
 
   /** Our own words in the document's spelling. */

@@ -64,7 +64,7 @@ function inShort({ wall, strips, across }: Pierced): string {
     ? `Openings of full height part wall ${about} into ${across.rows.join(', ')}, side by side.`
     : `Wall ${about} has openings.`
   if (strips.length === 0) return parts
-  return `${parts} Its deflection under one force is that of the solid wall, less that of each solid strip as high as the openings in it, plus that of the piers in the strip together. A pier that holds openings is worked in the same way.`
+  return `${parts} Under one force a wall or pier with openings deflects as its solid outline does, less each solid strip as high as the openings in it, plus the piers of that strip together.`
 }
 
 /** What each row of an outline table holds or stands in. */
