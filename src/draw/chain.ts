@@ -2,7 +2,7 @@
 import type { Edge } from './dimensions.ts'
 import type { Field } from './field.ts'
 import type { Point } from './geometry.ts'
-import { type Lettering, lettering, letteringBox, setLettering } from './label.ts'
+import { type Ground, type Lettering, lettering, letteringBox, setLettering } from './label.ts'
 import { element, type SceneNode, words } from './scene.ts'
 import { spread } from './spread.ts'
 
@@ -120,7 +120,7 @@ function bayText(bay: Bay, out: Chain['out'], edge: Edge, field: Field): readonl
     Math.abs(place - at) < 0.5
       ? [edge.at(at, out.chain + 5), edge.at(at, out.turned)]
       : [edge.at(at, out.chain + 5), edge.at(at, out.turned - jog), edge.at(place, out.turned)]
-  return [line(leader), ...set(text, edge.at(place, out.turned + text.width / 2), edge.across, field)]
+  return [line(leader), ...set(text, edge.at(place, out.turned + text.width / 2), edge.across, field, 'paper')]
 }
 
 /** The whole length: along its line where there is room, else past its end. */
@@ -142,7 +142,8 @@ function wholeLine(
   return [...dimensionLine(marks, out, edge, field), ...set(text, at, edge.follow, field)]
 }
 
-function set(text: Lettering, at: Point, angle: number, field: Field): readonly SceneNode[] {
+/** @param ground paper where the line of an end of the wall may pass below the text */
+function set(text: Lettering, at: Point, angle: number, field: Field, ground: Ground = 'clear'): readonly SceneNode[] {
   field.addText(letteringBox(text, at, angle))
-  return setLettering(text, at, angle, 'clear')
+  return setLettering(text, at, angle, ground)
 }

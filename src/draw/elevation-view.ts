@@ -27,7 +27,7 @@ export interface ElevationView {
   /** Grid lines that the wall meets. */
   readonly grid: readonly { readonly name: string; readonly at: number }[]
   /** Levels at or above its head and at its foot, named and with their elevation where it is known. */
-  readonly levels: readonly { readonly text: string; readonly at: number }[]
+  readonly levels: readonly { readonly name: string; readonly elevation: string; readonly at: number }[]
   /** The shear along the head; without a direction it acts either way. */
   readonly shear?: { readonly printed: string; readonly toward?: 'start' | 'end'; readonly governs: boolean }
   /** Lines of words below: its name, then what it is made of and how it is seen. */

@@ -19,12 +19,12 @@ import { drawScaleBar } from './scalebar.ts'
 import { element, layer, type SceneNode, serialise, words } from './scene.ts'
 import { arrangeStems, type Stem } from './stems.ts'
 import { rootClass, textStyles } from './style.ts'
-import { shorten, wrap } from './textwidth.ts'
+import { shorten, textWidth, wrap } from './textwidth.ts'
 
 const tallest = 340
 const narrowest = 420
-/** Leaders this long always find free ground, above the wall or below it. */
-const farthest = 6000
+/** A longer leader would be harder to follow than the table of piers or the block of openings. */
+const farthest = 90
 const quarterTurn = Math.PI / 2
 const pastWall = 10
 const bubbleHeight = 21
@@ -51,7 +51,7 @@ interface Frame {
 
 /** @returns the whole `<svg>` element; the same view gives the same bytes */
 export function drawElevation(view: ElevationView): string {
-  const levels = view.levels.map(({ text, at }) => ({ at, letters: lettering('dimension', 150, text) }))
+  const levels = view.levels.map(({ name, elevation, at }) => ({ at, letters: levelLetters(name, elevation) }))
   const frame = frameOf(view, Math.max(0, ...levels.map(({ letters }) => letters.width)))
   const field = new Field(besideSheet / 2, frame.width - besideSheet / 2)
   const sheet: Sheet = { field, groundAt: groundOf(view, frame), farthest }
@@ -65,15 +65,19 @@ export function drawElevation(view: ElevationView): string {
     ...(view.shear ? [shearPlacing(view.shear, frame)] : []),
     ...view.openings.map(each => openingPlacing(each.name, each.size, boundsOf(each, frame))),
     ...view.piers.map(each => pierPlacing(each.name, boundsOf(each, frame))),
-  ].flatMap(placing => place(sheet, placing) ?? [])
-  const notes = [...view.notes, ...notesOf(view, bottom.leftOut + side.leftOut, stems ? 0 : view.grid.length)]
+  ].map(placing => place(sheet, placing))
+  const unnamed = labels.filter(nodes => nodes === undefined).length
+  const notes = [...view.notes, ...notesOf(view, unnamed, bottom.leftOut + side.leftOut, stems ? 0 : view.grid.length)]
   const held = field.bounds() ?? frame.face
   const footer = drawFooter(view, notes, frame, held.y1 + 22)
   return serialise(
     picture(view, { x0: 0, y0: held.y0 - besideSheet, x1: frame.width, y1: footer.bottom }, style, [
       ...layer('pm-walls', face),
       ...layer('pm-axes', [...grid, ...levelLines, ...chains]),
-      ...layer('pm-labels', labels),
+      ...layer(
+        'pm-labels',
+        labels.flatMap(nodes => nodes ?? []),
+      ),
       ...layer('pm-footer', footer.nodes),
     ]),
   )
@@ -137,14 +141,14 @@ function drawFace(view: ElevationView, frame: Frame, field: Field): readonly Sce
     })
   }
   const outline = cornersOf(frame.face)
-  edgesOf(frame.face, priceOfCrossing.edge)
+  edgesOf(frame.face, Number.POSITIVE_INFINITY)
   const piers = view.piers.map(pier => {
     edgesOf(boundsOf(pier, frame), priceOfCrossing.seam)
     return path('pm-pier', cornersOf(boundsOf(pier, frame)), ' Z')
   })
   const openings = view.openings.flatMap(opening => {
     const bounds = boundsOf(opening, frame)
-    edgesOf(bounds, priceOfCrossing.edge)
+    edgesOf(bounds, Number.POSITIVE_INFINITY)
     const [a, b, c, d] = cornersOf(bounds)
     if (!a || !b || !c || !d) return []
     field.addLine({ a, b: c }, 1)
@@ -194,6 +198,19 @@ function chainsOf({ length, height, openings, dimension }: ElevationView, frame:
     frame.face.y1 + 10,
   )
   return { bottom, side } satisfies Record<string, Chain>
+}
+
+const widestLevel = 150
+
+/**
+ * The name as far as there is room for it before its elevation. It is set apart as a text of its own direction, so
+ * that a name from right to left does not turn the figures round.
+ */
+function levelLetters(name: string, elevation: string): Lettering {
+  if (elevation === '') return lettering('dimension', widestLevel, name)
+  const tail = `, ${elevation}`
+  const { text } = shorten(name, textStyles.dimension, widestLevel - textWidth(tail, textStyles.dimension))
+  return lettering('dimension', 2 * widestLevel, `\u2068${text}\u2069${tail}`)
 }
 
 /** A line past the right end of the wall, its words on it; those of the foot stand below. */
@@ -296,10 +313,11 @@ function arrowsOf(at: Point, length: number, toward: 'start' | 'end' | undefined
   return toward === undefined ? [right, left] : [toward === 'end' ? right : left]
 }
 
-function notesOf({ language }: ElevationView, dimensions: number, grid: number): readonly string[] {
+function notesOf({ language }: ElevationView, names: number, dimensions: number, grid: number): readonly string[] {
   const count = (n: number, one: string, many: string): readonly string[] =>
     n === 0 ? [] : [inLanguage(n === 1 ? `1 ${one}` : `${n} ${many}`, language)]
   return [
+    ...count(names, 'name is left out for want of room.', 'names are left out for want of room.'),
     ...count(dimensions, 'dimension is left out for want of room.', 'dimensions are left out for want of room.'),
     ...count(grid, 'grid line is left out for want of room.', 'grid lines are left out for want of room.'),
   ]

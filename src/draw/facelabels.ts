@@ -8,7 +8,7 @@ const widestName = 130
 
 const middleOf = ({ x0, y0, x1, y1 }: Bounds): Point => ({ x: (x0 + x1) / 2, y: (y0 + y1) / 2 })
 
-/** Name over size, level or turned, in the opening if either fits, else beside it or at the end of a leader. */
+/** Name over size, level or turned, in the opening if either fits, else above or below it, else the name alone. */
 export function openingPlacing(name: string, size: string, bounds: Bounds): Placing {
   const both = lettering('area', widestName, name, size)
   const room = Math.max(18, Math.min(widestName, Math.max(bounds.x1 - bounds.x0, bounds.y1 - bounds.y0) - 8))
@@ -18,12 +18,18 @@ export function openingPlacing(name: string, size: string, bounds: Bounds): Plac
     ...spotsIn(both, bounds, -quarterTurn, 1),
     ...(whole(narrow, size) ? [...spotsIn(narrow, bounds, 0, 2), ...spotsIn(narrow, bounds, -quarterTurn, 3)] : []),
   ]
-  const at = middleOf(bounds)
-  const beside = [
-    { x: at.x, y: bounds.y0 - both.height / 2 - 1 },
-    { x: at.x, y: bounds.y1 + both.height / 2 + 1 },
-  ].map((spot, idx) => labelSpot(both, spot, 0, 6 + idx))
-  return { near: [...inside, ...beside], anchors: [at], free: spot => labelSpot(both, spot, 0, 0) }
+  // The chains tell the size again, so a name alone will do where both find no room.
+  const alone = lettering('area', room, name)
+  const short = [...spotsIn(alone, bounds, 0, 8), ...spotsIn(alone, bounds, -quarterTurn, 9)]
+  const free = (at: Point): Spot => labelSpot(lettering('area', widestName, name, size), at, 0, 0)
+  return { near: [...inside, ...beside(both, bounds, 6), ...short], anchors: [middleOf(bounds)], free }
+}
+
+/** Above the rectangle and below it. */
+function beside(letters: Lettering, bounds: Bounds, price: number): readonly Spot[] {
+  const { x } = middleOf(bounds)
+  const away = letters.height / 2 + 1
+  return [bounds.y0 - away, bounds.y1 + away].map((y, idx) => labelSpot(letters, { x, y }, 0, price + idx))
 }
 
 /** The size of an opening is never cut short; its name may be. */
@@ -32,7 +38,11 @@ const whole = ({ lines }: Lettering, size: string): boolean => lines.at(-1)?.tex
 /** The name of a pier, about its middle; turned where it is too narrow. */
 export function pierPlacing(name: string, bounds: Bounds): Placing {
   const letters = lettering('wall', widestName, name)
-  const near = [...spotsIn(letters, bounds, 0, 0), ...spotsIn(letters, bounds, -quarterTurn, 2)]
+  const near = [
+    ...spotsIn(letters, bounds, 0, 0),
+    ...spotsIn(letters, bounds, -quarterTurn, 2),
+    ...beside(letters, bounds, 4),
+  ]
   return { near, anchors: [middleOf(bounds)], free: at => labelSpot(letters, at, 0, 0) }
 }
 

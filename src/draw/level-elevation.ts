@@ -92,14 +92,13 @@ function gridOn({ wall, line, grid }: WallPicture): ElevationView['grid'] {
 
 /** Its own level at its elevation, or at the head where elevations are not known; what it stands on at the foot. */
 function levelsOf({ level, language, height, elevations }: WallPicture): ElevationView['levels'] {
-  if (!elevations) return [{ text: level, at: height.si }]
+  if (!elevations) return [{ name: level, elevation: '', at: height.si }]
   const { own, below } = elevations
   const rise = own.si - (below.at?.si ?? 0)
-  const told = (name: string, at: string) => `${name}, ${at}`
   const zero = onPage(asTyped(0), own.unit, language)
   return [
-    { text: told(level, `+${printed(own, language)}`), at: Math.max(rise, 0) },
-    { text: told(below.name, below.at ? `+${printed(below.at, language)}` : `±${zero}`), at: 0 },
+    { name: level, elevation: `+${printed(own, language)}`, at: Math.max(rise, 0) },
+    { name: below.name, elevation: below.at ? `+${printed(below.at, language)}` : `±${zero}`, at: 0 },
   ]
 }
 
