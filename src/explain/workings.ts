@@ -141,9 +141,13 @@ function elevations(level: LevelWork, request: Request, context: Context): Resul
     const wall = walls.find(wall => wall.name === name)
     if (!wall) return []
     const drawn = cases.value.map(each => elevation(level, wall, each?.case.name, context))
-    return request.detail === 'full' ? [...drawn, pierTable(level, name, display, context)] : drawn
+    const answers = request.detail === 'full' ? [...drawn, pierTable(level, name, display, context)] : drawn
+    // A wall that cannot be drawn does not keep the others from their place.
+    return answers.flatMap((made): readonly Piece[] =>
+      made.ok ? made.value : [{ kind: 'fault', diagnostics: made.because }],
+    )
   })
-  return flatAll(pieces)
+  return good(pieces)
 }
 
 function elevation(

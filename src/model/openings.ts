@@ -54,10 +54,10 @@ export function readOpenings(
   walls: readonly Wall[],
   scope: Scope,
 ): Result<readonly Opening[]> {
-  const read = all(blocks.flatMap(block => rowsOf(block).map(record => readRow(record, level, walls, scope))))
-  if (!read.ok) return read
+  const read = blocks.flatMap(block => rowsOf(block).map(record => readRow(record, level, walls, scope)))
+  const rows = read.flatMap(row => (row.ok ? [row.value] : []))
   const faults = walls.flatMap(wall => {
-    const mine = read.value.filter(row => row.wall === wall)
+    const mine = rows.filter(row => row.wall === wall)
     const repeated = duplicates(
       mine.map(({ name }) => name),
       'opening',
@@ -65,7 +65,9 @@ export function readOpenings(
     const openings = mine.map(({ opening }) => opening)
     return [...repeated, ...openings.flatMap((one, i) => overlaps(one, openings.slice(0, i)))]
   })
-  return faults.length > 0 ? bad(faults) : good(read.value.map(({ opening }) => opening))
+  const done = all(read)
+  if (!done.ok || faults.length > 0) return bad([...(done.ok ? [] : done.because), ...faults])
+  return good(rows.map(({ opening }) => opening))
 }
 
 function rowsOf(block: Block): readonly Result<RowOf>[] {
@@ -174,6 +176,7 @@ function outsideWall(opening: Opening, wall: Wall, display: Display): Diagnostic
 function overlaps(one: Opening, before: readonly Opening[]): readonly Diagnostic[] {
   const other = before.find(
     each =>
+      each.name !== one.name &&
       overlap(one.left.si, one.width.si, each.left.si, each.width.si) &&
       overlap(one.sill.si, one.height.si, each.sill.si, each.height.si),
   )
