@@ -50,7 +50,8 @@ const edges = {
   h: formula({ gives: h, body: 'z_2 - z_1', of: [position.z1, position.z2], source: GEOMETRY }),
 }
 
-export const METHOD = 'solid wall less strips plus piers: Taly, p. 7.26, Method B; TI 809-04, App. H, example H1'
+const SIDE_BY_SIDE = 'stiffnesses side by side add up: Taly, Example 7.7'
+const METHOD = 'solid wall less strips plus piers: Taly, p. 7.26, Method B; TI 809-04, App. H, example H1'
 const assumes = [
   'piers beside openings, and the solid strips that they take the place of, are held at both ends',
   'what is solid above and below a strip of openings does not turn',
@@ -73,6 +74,21 @@ function exchange(names: readonly string[]): Formula {
   const made = formula({ gives: k, body: `1/(1/k_o${terms.join('')})`, of: [solid, ...of], source: METHOD, assumes })
   exchanges.set(names.join(), made)
   return made
+}
+
+/** A longer sum is told by its sign and its table. */
+const SPELT_OUT = 6
+
+/** Stiffnesses of what stands side by side, as a sum of its terms. */
+function sumOf(parts: Tabulation, of: typeof k, id: string, about: readonly string[]): Value {
+  const value = parts.sum('k', of, id)
+  const tex = texAbout(of.tex, ...about)
+  if (value.origin.kind !== 'worked') return { ...value, tex }
+  const { formula: summed, inputs } = value.origin.step
+  const { inShort = '', ...terms } = summed
+  const told = { ...terms, source: SIDE_BY_SIDE }
+  const shown: Formula = parts.rows.length > SPELT_OUT ? { ...told, inShort } : told
+  return { ...value, tex, origin: { kind: 'worked', step: { formula: shown, inputs } } }
 }
 
 /** A pier as drawn and tabulated. */
@@ -212,9 +228,7 @@ class Works {
           ),
     ].flatMap(table => table ?? [])
     const across = alone ? undefined : this.sideBySide(parts)
-    const total = alone
-      ? this.exchanged(alone, undefined)
-      : { ...required(across).sum('k', k, `${around.id}.k`), tex: texAbout(k.tex, wall.name) }
+    const total = alone ? this.exchanged(alone, undefined) : sumOf(required(across), k, `${around.id}.k`, [wall.name])
     if (!alone) this.steps.push(total)
     return {
       wall: wall.name,
@@ -299,7 +313,7 @@ class Works {
     const inputs: Record<string, Value> = { k_o: group === undefined ? this.wholeWall() : this.cell(part, 'k_o') }
     for (const each of part.strips) {
       inputs[`k_s${this.name(each)}`] = this.cell(each, 'k_s')
-      inputs[`K_${this.name(each)}`] = this.sumOf(each, group)
+      inputs[`K_${this.name(each)}`] = this.piersOf(each, group)
     }
     const about = group === undefined ? [this.wall.name] : [group, this.wall.name]
     const own = group === undefined ? id : `${id}.pier.${group}`
@@ -317,13 +331,10 @@ class Works {
     return value
   }
 
-  private sumOf(each: Strip, of: string | undefined): Value {
+  private piersOf(each: Strip, of: string | undefined): Value {
     const name = this.name(each)
     const parts = this.sideBySide(each.parts)
-    const K = {
-      ...parts.sum('k', sum, `${this.around.id}.strip.${name}.K`),
-      tex: texAbout(sum.tex, name, this.wall.name),
-    }
+    const K = sumOf(parts, sum, `${this.around.id}.strip.${name}.K`, [name, this.wall.name])
     this.strips.push({ name, face: each.face, ...(of === undefined ? {} : { of }), parts, K })
     this.steps.push(K)
     return K

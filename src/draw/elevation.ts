@@ -221,7 +221,7 @@ function drawLevel(
 ): readonly SceneNode[] {
   const height = y(at)
   const line = {
-    a: { x: at > 0 ? face.x0 - 6 : face.x1 + 6, y: height },
+    a: { x: face.x1 + 6, y: height },
     b: { x: face.x1 + 12 + letters.width, y: height },
   }
   const middle = {
