@@ -6,7 +6,8 @@ import { good } from '../base/outcome.ts'
 import { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
 import type { LevelWork } from './level.ts'
-import { type Pierced, sum } from './pierced.ts'
+import { sum } from './pier-formulas.ts'
+import type { Pierced } from './pierced.ts'
 import { k, V } from './symbols.ts'
 
 const carried = sym('V_s', 'V_s', 'force')
@@ -16,7 +17,7 @@ const share = formula({
   gives: V,
   body: 'V_s*k/K',
   of: [carried, k, sum],
-  source: 'piers side by side share shear by stiffness: Taly, p. 7.36',
+  source: 'piers side by side share shear by stiffness: Taly, Design of Reinforced Masonry Structures, p. 7.36',
 })
 
 /** V of the parts of each strip, from the shear of the wall: one table a strip, outer ones first. */

@@ -13,83 +13,19 @@
  *   Taly, Example 7.7. That a pier with openings is worked as a wall of its own, and that each of
  *   several strips is exchanged for its piers, is the same step again (derived).
  */
-import { type Formula, formula, sym } from '../base/formula.ts'
 import type { Display } from '../base/kind.ts'
 import type { Result } from '../base/ledger.ts'
 import { good } from '../base/outcome.ts'
 import { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
-import { shownAs, texAbout, work } from '../base/work.ts'
+import { shownAs, work } from '../base/work.ts'
 import type { Construction, Ends } from '../model/construction.ts'
 import type { Opening } from '../model/openings.ts'
 import type { BuiltWall } from '../model/walls.ts'
-import { elastic, h, type Moduli, stiffnessOf } from './stiffness.ts'
+import { edges, exchange, foot, giving, position, solid, start, strip, sum, sumOf } from './pier-formulas.ts'
+import { elastic, type Moduli, stiffnessOf } from './stiffness.ts'
 import { type Face, type Hole, layOut, type Part, type Strip } from './strips.ts'
-import { k, L } from './symbols.ts'
-
-const position = {
-  a1: sym('a_1', 'a_1', 'length'),
-  a2: sym('a_2', 'a_2', 'length'),
-  z1: sym('z_1', 'z_1', 'length'),
-  z2: sym('z_2', 'z_2', 'length'),
-}
-const start = sym('a', 'a', 'length')
-const foot = sym('z', 'z', 'length')
-const left = sym('l', '\\ell', 'length')
-const sill = sym('s', 's', 'length')
-const width = sym('b', 'b', 'length')
-const solid = sym('k_o', 'k_o', 'stiffness')
-const strip = sym('k_s', 'k_s', 'stiffness')
-export const sum = sym('K', 'K', 'stiffness')
-
-const GEOMETRY = 'geometry'
-const edges = {
-  right: formula({ gives: position.a2, body: 'l + b', of: [left, width], source: GEOMETRY }),
-  head: formula({ gives: position.z2, body: 's + h', of: [sill, h], source: GEOMETRY }),
-  L: formula({ gives: L, body: 'a_2 - a_1', of: [position.a1, position.a2], source: GEOMETRY }),
-  h: formula({ gives: h, body: 'z_2 - z_1', of: [position.z1, position.z2], source: GEOMETRY }),
-}
-
-const SIDE_BY_SIDE = 'stiffnesses side by side add up: Taly, Example 7.7'
-const METHOD = 'solid wall less strips plus piers: Taly, p. 7.26, Method B; TI 809-04, App. H, example H1'
-const assumes = [
-  'piers beside openings, and the solid strips that they take the place of, are held at both ends',
-  'what is solid above and below a strip of openings does not turn',
-]
-
-/** Another letter for what a formula gives. */
-const giving = (of: Formula, gives: typeof k): Formula => ({ ...of, gives })
-
-const exchanges = new Map<string, Formula>()
-
-/** 1/k of what holds these strips, each with its letters. */
-function exchange(names: readonly string[]): Formula {
-  const known = exchanges.get(names.join())
-  if (known) return known
-  const of = names.flatMap(name => [
-    sym(`k_s${name}`, texAbout(strip.tex, name), 'stiffness'),
-    sym(`K_${name}`, texAbout(sum.tex, name), 'stiffness'),
-  ])
-  const terms = names.map(name => ` - 1/k_s${name} + 1/K_${name}`)
-  const made = formula({ gives: k, body: `1/(1/k_o${terms.join('')})`, of: [solid, ...of], source: METHOD, assumes })
-  exchanges.set(names.join(), made)
-  return made
-}
-
-/** A longer sum is told by its sign and its table. */
-const SPELT_OUT = 6
-
-/** Stiffnesses of what stands side by side, as a sum of its terms. */
-function sumOf(parts: Tabulation, of: typeof k, id: string, about: readonly string[]): Value {
-  const value = parts.sum('k', of, id)
-  const tex = texAbout(of.tex, ...about)
-  if (value.origin.kind !== 'worked') return { ...value, tex }
-  const { formula: summed, inputs } = value.origin.step
-  const { inShort = '', ...terms } = summed
-  const told = { ...terms, source: SIDE_BY_SIDE }
-  const shown: Formula = parts.rows.length > SPELT_OUT ? { ...told, inShort } : told
-  return { ...value, tex, origin: { kind: 'worked', step: { formula: shown, inputs } } }
-}
+import { k } from './symbols.ts'
 
 /** A pier as drawn and tabulated. */
 export interface Pier {

@@ -4,30 +4,26 @@
  */
 import { inLanguage } from '../base/language.ts'
 import { thinArrow } from './arrows.ts'
-import { bubbleName } from './axis.ts'
 import { type Chain, drawChain, layoutChain } from './chain.ts'
 import type { Edge } from './dimensions.ts'
+import { boundsOf, type Frame, frameOf, groundOf } from './elevation-frame.ts'
+import { drawFace, drawGrid, drawLevel, levelLetters, stemsOf } from './elevation-parts.ts'
 import type { ElevationView } from './elevation-view.ts'
 import { openingPlacing, pierPlacing } from './facelabels.ts'
 import { Field } from './field.ts'
-import { besideSheet, sheetWidth } from './frame.ts'
+import { besideSheet } from './frame.ts'
 import { type Bounds, box, type Point } from './geometry.ts'
-import { type Lettering, lettering, letteringBox, setLettering, startText } from './label.ts'
+import { lettering, letteringBox, setLettering, startText } from './label.ts'
 import { picture } from './picture.ts'
-import { type Placing, place, priceOfCrossing, type Sheet, type Spot } from './placement.ts'
+import { type Placing, place, type Sheet, type Spot } from './placement.ts'
 import { drawScaleBar } from './scalebar.ts'
-import { element, layer, type SceneNode, serialise, words } from './scene.ts'
-import { arrangeStems, type Stem } from './stems.ts'
+import { element, layer, type SceneNode, serialise } from './scene.ts'
 import { rootClass, textStyles } from './style.ts'
-import { shorten, textWidth, wrap } from './textwidth.ts'
+import { shorten, wrap } from './textwidth.ts'
 
-const tallest = 340
-const narrowest = 420
 /** A longer leader would be harder to follow than the table of piers or the block of openings. */
 const farthest = 90
 const quarterTurn = Math.PI / 2
-const pastWall = 10
-const bubbleHeight = 21
 
 const style = [
   ['.pm-face', 'fill:var(--paper,#fffdf8);stroke:none'],
@@ -39,15 +35,6 @@ const style = [
 ]
   .map(([selector, body]) => `.${rootClass} ${selector}{${body}}`)
   .join('')
-
-/** Where the wall lies on the sheet. */
-interface Frame {
-  readonly width: number
-  readonly scale: number
-  readonly face: Bounds
-  readonly x: (metres: number) => number
-  readonly y: (metres: number) => number
-}
 
 /** @returns the whole `<svg>` element; the same view gives the same bytes */
 export function drawElevation(view: ElevationView): string {
@@ -83,89 +70,6 @@ export function drawElevation(view: ElevationView): string {
   )
 }
 
-/** The margins hold the widest that may stand in them, so that the scale does not hang on what is drawn. */
-function frameOf({ length, height, levels, openings, dimension }: ElevationView, widestLevel: number): Frame {
-  const sizes = [height, ...openings.flatMap(({ low, high }) => [low, high - low, height - high])]
-  const widest = Math.max(...sizes.map(size => lettering('dimension', 120, dimension(size)).width))
-  const left = besideSheet + 96 + widest
-  const right = besideSheet + 14 + Math.max(widestLevel, 20)
-  const top = Math.max(height, ...levels.map(({ at }) => at))
-  const scale = Math.min((sheetWidth - left - right) / length, tallest / top)
-  const width = Math.min(sheetWidth, Math.max(narrowest, left + right + length * scale))
-  const x0 = left + (width - left - right - length * scale) / 2
-  return {
-    width,
-    scale,
-    face: { x0, y0: -height * scale, x1: x0 + length * scale, y1: 0 },
-    x: metres => x0 + metres * scale,
-    y: metres => -metres * scale,
-  }
-}
-
-const boundsOf = (
-  {
-    left,
-    right,
-    low,
-    high,
-  }: { readonly left: number; readonly right: number; readonly low: number; readonly high: number },
-  { x, y }: Frame,
-): Bounds => ({ x0: x(left), y0: y(high), x1: x(right), y1: y(low) })
-
-const holds = ({ x0, y0, x1, y1 }: Bounds, { x, y }: Point): boolean => x > x0 && x < x1 && y > y0 && y < y1
-
-function groundOf(view: ElevationView, frame: Frame): Sheet['groundAt'] {
-  const piers = view.piers.map(pier => boundsOf(pier, frame))
-  return at => (piers.some(pier => holds(pier, at)) ? 'wash' : 'paper')
-}
-
-const cornersOf = ({ x0, y0, x1, y1 }: Bounds): readonly Point[] => [
-  { x: x0, y: y1 },
-  { x: x1, y: y1 },
-  { x: x1, y: y0 },
-  { x: x0, y: y0 },
-]
-
-const path = (className: string, points: readonly Point[], closed = ''): SceneNode =>
-  element('path', {
-    class: className,
-    d: `${points.map(({ x, y }, idx) => words(idx === 0 ? 'M' : 'L', x, y)).join(' ')}${closed}`,
-  })
-
-/** Outline, piers, openings with their crosses. */
-function drawFace(view: ElevationView, frame: Frame, field: Field): readonly SceneNode[] {
-  const edgesOf = (bounds: Bounds, price: number): void => {
-    const corners = cornersOf(bounds)
-    corners.forEach((a, idx) => {
-      field.addLine({ a, b: corners[(idx + 1) % 4] ?? a }, price)
-    })
-  }
-  const outline = cornersOf(frame.face)
-  edgesOf(frame.face, Number.POSITIVE_INFINITY)
-  const piers = view.piers.map(pier => {
-    edgesOf(boundsOf(pier, frame), priceOfCrossing.seam)
-    return path('pm-pier', cornersOf(boundsOf(pier, frame)), ' Z')
-  })
-  const openings = view.openings.flatMap(opening => {
-    const bounds = boundsOf(opening, frame)
-    edgesOf(bounds, Number.POSITIVE_INFINITY)
-    const [a, b, c, d] = cornersOf(bounds)
-    if (!a || !b || !c || !d) return []
-    field.addLine({ a, b: c }, 1)
-    field.addLine({ a: b, b: d }, 1)
-    return [
-      path('pm-void', cornersOf(bounds), ' Z'),
-      element('path', { class: 'pm-crossed', d: words('M', a.x, a.y, 'L', c.x, c.y, 'M', b.x, b.y, 'L', d.x, d.y) }),
-    ]
-  })
-  const { x0, x1, y1 } = frame.face
-  const foot = path('pm-foot', [
-    { x: x0 - 6, y: y1 },
-    { x: x1 + 6, y: y1 },
-  ])
-  return [path('pm-face', outline, ' Z'), ...piers, path('pm-face-edge', outline, ' Z'), ...openings, foot]
-}
-
 const bottomEdge = ({ y0, y1 }: Bounds): Edge => ({
   at: (along, out) => ({ x: along, y: y1 + out }),
   follow: 0,
@@ -198,86 +102,6 @@ function chainsOf({ length, height, openings, dimension }: ElevationView, frame:
     frame.face.y1 + 10,
   )
   return { bottom, side } satisfies Record<string, Chain>
-}
-
-const widestLevel = 150
-
-/**
- * The name as far as there is room for it before its elevation. It is set apart as a text of its own direction, so
- * that a name from right to left does not turn the figures round.
- */
-function levelLetters(name: string, elevation: string): Lettering {
-  if (elevation === '') return lettering('dimension', widestLevel, name)
-  const tail = `, ${elevation}`
-  const { text } = shorten(name, textStyles.dimension, widestLevel - textWidth(tail, textStyles.dimension))
-  return lettering('dimension', 2 * widestLevel, `\u2068${text}\u2069${tail}`)
-}
-
-/** A line past the right end of the wall, its words on it; those of the foot stand below. */
-function drawLevel(
-  { at, letters }: { readonly at: number; readonly letters: Lettering },
-  { y, face }: Frame,
-  field: Field,
-): readonly SceneNode[] {
-  const height = y(at)
-  const line = {
-    a: { x: face.x1 + 6, y: height },
-    b: { x: face.x1 + 12 + letters.width, y: height },
-  }
-  const middle = {
-    x: face.x1 + 10 + letters.width / 2,
-    y: height + (at > 0 ? -1 : 1) * (letters.height / 2),
-  }
-  field.addLine(line, Number.POSITIVE_INFINITY)
-  field.addText(letteringBox(letters, middle))
-  return [path('pm-level', [line.a, line.b]), ...setLettering(letters, middle, 0, 'clear')]
-}
-
-/** Room between the head of the wall and the bubbles, where the shear is shown. */
-const shearRoom = 44
-
-function stemsOf({ grid }: ElevationView, { x, width }: Frame): readonly Stem[] | undefined {
-  const stops = [...grid]
-    .sort((a, b) => a.at - b.at || (a.name < b.name ? -1 : 1))
-    .map(({ name, at }) => ({ name, at: x(at), metres: at }))
-  const bubble = Math.max(bubbleHeight, ...stops.map(({ name }) => bubbleName(name).width + 5))
-  return arrangeStems(stops, {
-    bubble,
-    gaps: [],
-    low: besideSheet + bubble / 2,
-    high: width - besideSheet - bubble / 2,
-  })
-}
-
-function drawGrid(view: ElevationView, stems: readonly Stem[], frame: Frame, field: Field): readonly SceneNode[] {
-  const top = frame.y(Math.max(view.height, ...view.levels.map(({ at }) => at))) - shearRoom
-  return stems.flatMap(({ stop, place, row }) => {
-    const letters = bubbleName(stop.name)
-    const at = { x: place, y: top - 14 - row * (bubbleHeight + 4) - bubbleHeight / 2 }
-    const width = Math.max(bubbleHeight, letters.width + 5)
-    const points = [
-      { x: stop.at, y: frame.face.y1 + pastWall },
-      { x: stop.at, y: top },
-      { x: place, y: top - 10 },
-      { x: place, y: at.y + bubbleHeight / 2 },
-    ]
-    points.slice(1).forEach((b, idx) => {
-      field.addLine({ a: points[idx] ?? b, b }, priceOfCrossing.gridLine)
-    })
-    field.addText(box(at, width, bubbleHeight))
-    return [
-      path('pm-gridline', points),
-      element('rect', {
-        class: 'pm-bubble',
-        x: at.x - width / 2,
-        y: at.y - bubbleHeight / 2,
-        width,
-        height: bubbleHeight,
-        rx: bubbleHeight / 2,
-      }),
-      ...setLettering(letters, at, 0, 'clear'),
-    ]
-  })
 }
 
 const arrowGap = 9
