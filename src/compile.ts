@@ -5,6 +5,7 @@ import { sorted } from './base/report.ts'
 import { type Source, sourceOf } from './base/span.ts'
 import { worksheet } from './compute/worksheet.ts'
 import { sketchPlan } from './draw/sketch.ts'
+import { sketchElevation } from './draw/sketch-elevation.ts'
 import {
   closingItems,
   explainBlocks,
@@ -54,9 +55,10 @@ export function compileTree(tree: Root, source: Source, nearby: Nearby = nothing
   const sheet = worksheet(gather([...document.blocks.values()]), choices)
   const given = sheet.readAll()
   const basis = { standard: choices.titleBlock.standard, system: choices.system }
-  const context = new Context(choices.language, source, basis, (level, caseName) =>
-    sketchPlan(sheet, level, caseName, choices),
-  )
+  const context = new Context(choices.language, source, basis, {
+    plan: (level, caseName) => sketchPlan(sheet, level, caseName, choices),
+    elevation: (level, wall, caseName) => sketchElevation(sheet, level, wall, caseName, choices),
+  })
   const { worked, asked, shown } = explainBlocks(document, sheet, context)
   const template = readTemplate(choices.template, nearby)
   const logo = readLogo(choices.logo, nearby)

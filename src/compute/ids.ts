@@ -6,6 +6,8 @@ import type { Value, Word } from '../base/value.ts'
 import type { Construction } from '../model/construction.ts'
 import type { Distribution } from './distribution.ts'
 import type { LevelWork } from './level.ts'
+import { pierShearsOf } from './pier-shears.ts'
+import type { Pierced } from './pierced.ts'
 import type { Moduli } from './stiffness.ts'
 
 type Found = Result<Value | Word> | undefined
@@ -28,8 +30,8 @@ function cellOf(table: Tabulation | undefined, row: string | undefined, keys: re
 
 export function levelValue(level: LevelWork, path: readonly string[]): Found {
   const [head, ...rest] = path
-  const [a, b, c] = rest
-  if (rest.length > 3) return undefined
+  const [a, b, c, d] = rest
+  if (rest.length > (head === 'wall' ? 4 : 3)) return undefined
   switch (head) {
     case 'area':
     case 'perimeter':
@@ -70,7 +72,7 @@ export function levelValue(level: LevelWork, path: readonly string[]): Found {
     case 'storey':
       return from(level.distribution(), ({ storey }) => axisOf(storey, a))
     case 'wall':
-      return wallValue(level, a ?? '', b, c)
+      return wallValue(level, a ?? '', b, c, d)
     case 'T':
     case 'u':
     case 'v':
@@ -121,11 +123,20 @@ function caseValue(level: LevelWork, what: 'T' | 'u' | 'v' | 'phi', name: string
   })
 }
 
-function wallValue(level: LevelWork, wall: string, key: string | undefined, caseName: string | undefined): Found {
+function wallValue(
+  level: LevelWork,
+  wall: string,
+  key: string | undefined,
+  caseName: string | undefined,
+  part: string | undefined,
+): Found {
   const walls = level.walls()
   if (!walls.ok) return walls
   const given = walls.value.find(({ name }) => name === wall)
   if (!given) return undefined
+  if (key === 'opening' || key === 'pier' || key === 'strip' || key === 'solid')
+    return piercedValue(level, wall, [key, caseName ?? '', part ?? ''])
+  if (part !== undefined) return undefined
   switch (key) {
     case 'k':
       return level.stiffness(wall)
@@ -154,6 +165,38 @@ function wallValue(level: LevelWork, wall: string, key: string | undefined, case
     default:
       return undefined
   }
+}
+
+/** A part of a wall with openings: `solid`, or an opening, a pier or a strip with one of its own values. */
+function piercedValue(level: LevelWork, wall: string, [what, name, key]: readonly [string, string, string]): Found {
+  if (what === 'opening') {
+    const found = openingValue(level, wall, name, key)
+    if (found) return found
+  }
+  if (what === 'pier' && key === 'V') return pierShear(level, wall, name)
+  const id = `${level.name}.wall.${wall}.${[what, name, key].filter(word => word !== '').join('.')}`
+  const cut = level.pierced(wall)
+  if (!cut) return undefined
+  return from(cut, pierced => pierced && valuesOf(pierced).find(value => value.id === id))
+}
+
+function openingValue(level: LevelWork, wall: string, name: string, key: string): Found {
+  return from(level.openings(), all => {
+    const found = all.find(opening => opening.wall === wall && opening.name === name)
+    return key === 'left' || key === 'sill' || key === 'width' || key === 'height' ? found?.[key] : undefined
+  })
+}
+
+function pierShear(level: LevelWork, wall: string, name: string): Found {
+  const shears = pierShearsOf(level, wall)
+  return shears && from(shears, all => all.map(({ table }) => cellOf(table, name, ['V'])).find(value => value))
+}
+
+/** Every value that a wall with openings is worked through. */
+function valuesOf({ holes, held, whole, groups, stripTable, steps }: Pierced): readonly Value[] {
+  const tables = [held, whole, stripTable, ...groups].flatMap(table => table ?? [])
+  const cells = tables.flatMap(({ rows, columns }) => columns.flatMap(({ cell }) => rows.map((_, i) => cell(i))))
+  return [...holes.flatMap(({ a2, z2 }) => [a2, z2]), ...cells, ...steps]
 }
 
 function shearValue(level: LevelWork, wall: string, key: string, caseName: string): Found {

@@ -15,8 +15,9 @@ import { type Forces, readForces } from '../model/forces.ts'
 import type { LevelGivens } from '../model/givens.ts'
 import type { Grid } from '../model/grid.ts'
 import { type LineLoad, type PointLoad, readLineLoads, readPointLoads } from '../model/loads.ts'
+import { type Opening, readOpenings } from '../model/openings.ts'
 import type { Scope } from '../model/scope.ts'
-import { readStiffness, readWalls, type Wall } from '../model/walls.ts'
+import { type BuiltWall, readStiffness, readWalls, type Wall } from '../model/walls.ts'
 import type { Block } from '../read/block.ts'
 import { diagnose } from '../read/text.ts'
 import { type Displacement, workDisplacement } from './displacement.ts'
@@ -32,6 +33,8 @@ import {
   wallOutside,
 } from './level-faults.ts'
 import { type Mass, workMass } from './mass.ts'
+import { drawnOnly } from './opening-faults.ts'
+import { type Pierced, workPierced } from './pierced.ts'
 import { type Plan, workPlan } from './plan.ts'
 import { type Rigidity, type Spring, workRigidity } from './rigidity.ts'
 import { type Moduli, type WallLine, workLine, workModuli, workStiffness } from './stiffness.ts'
@@ -60,9 +63,12 @@ export interface LevelWork {
   readonly plan: () => Result<Plan>
   readonly mass: () => Result<Mass>
   readonly walls: () => Result<readonly Wall[]>
+  readonly openings: () => Result<readonly Opening[]>
   readonly line: (name: string) => Result<WallLine> | undefined
   readonly moduli: (construction: string) => Result<Moduli>
   readonly stiffness: (name: string) => Result<Value> | undefined
+  /** Strips and piers of a built wall with openings; a value of undefined for any other wall. */
+  readonly pierced: (name: string) => Result<Pierced | undefined> | undefined
   readonly springs: () => Result<readonly Spring[]>
   readonly rigidity: () => Result<Rigidity>
   readonly eccentricity: () => Result<Eccentricity>
@@ -126,6 +132,11 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     return readWalls(givens.walls, name, grid.value, scope)
   })
 
+  const openings = once('openings', (): Result<readonly Opening[]> => {
+    const given = givens.openings.length > 0 ? walls() : good([])
+    return given.ok ? readOpenings(givens.openings, name, given.value, scope) : given
+  })
+
   const wallOf = (wall: string) => {
     const all = walls()
     return all.ok ? all.value.find(({ name }) => name === wall) : undefined
@@ -164,7 +175,41 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
   }
 
   const workWallStiffness = (wall: Wall): Result<Value> => {
+    const cut = piercedFor(wall)
+    if (!cut.ok) return cut
+    if (cut.value) return good(cut.value.k)
     if (wall.kind === 'stated') return readStiffness(wall, name, scope)
+    const parts = partsOf(wall)
+    if (!parts.ok) return parts
+    return good(workStiffness(wall, lineFor(wall).L, parts.value.construction, parts.value.moduli, name, scope.display))
+  }
+
+  const piercings = new Map<string, () => Result<Pierced | undefined>>()
+  const piercedFor = (wall: Wall): Result<Pierced | undefined> => {
+    let known = piercings.get(wall.name)
+    if (!known) {
+      known = once(`wall.${wall.name}.openings`, () => workPiercedWall(wall), wall.span)
+      piercings.set(wall.name, known)
+    }
+    return known()
+  }
+
+  const workPiercedWall = (wall: Wall): Result<Pierced | undefined> => {
+    const given = openings()
+    if (!given.ok) return given
+    const mine = given.value.filter(opening => opening.wall === wall.name)
+    if (mine.length === 0) return good(undefined)
+    if (wall.kind === 'stated') {
+      scope.assume(drawnOnly(wall.name))
+      return good(undefined)
+    }
+    const parts = partsOf(wall)
+    if (!parts.ok) return parts
+    const { construction, moduli } = parts.value
+    return workPierced(wall, lineFor(wall).L, mine, construction, moduli, name, scope.display)
+  }
+
+  const partsOf = (wall: BuiltWall) => {
     const { text, span } = wall.construction
     const read = around.construction(text)
     if (!read)
@@ -177,9 +222,7 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
           suggestion(text, around.constructionNames, 'construction'),
         ),
       ])
-    const parts = together({ construction: read(), moduli: moduli(text) })
-    if (!parts.ok) return parts
-    return good(workStiffness(wall, lineFor(wall).L, parts.value.construction, parts.value.moduli, name, scope.display))
+    return together({ construction: read(), moduli: moduli(text) })
   }
 
   const springs = once('walls.k', (): Result<readonly Spring[]> => {
@@ -272,6 +315,7 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     plan,
     mass,
     walls,
+    openings,
     line: wall => {
       const found = wallOf(wall)
       return found && good(lineFor(found))
@@ -280,6 +324,10 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     stiffness: wall => {
       const found = wallOf(wall)
       return found && stiffnessFor(found)
+    },
+    pierced: wall => {
+      const found = wallOf(wall)
+      return found && piercedFor(found)
     },
     springs,
     rigidity,

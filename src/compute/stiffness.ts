@@ -1,11 +1,11 @@
 /** Stiffness of a wall from its construction, length and height. */
 
-import { formula, sym } from '../base/formula.ts'
+import { type Formula, formula, sym } from '../base/formula.ts'
 import type { Display } from '../base/kind.ts'
 import { verbatim } from '../base/language.ts'
 import type { Value } from '../base/value.ts'
 import { work } from '../base/work.ts'
-import type { Construction } from '../model/construction.ts'
+import type { Construction, Ends } from '../model/construction.ts'
 import type { Assumption } from '../model/scope.ts'
 import type { BuiltWall, Wall } from '../model/walls.ts'
 import { segment } from './segment.ts'
@@ -15,7 +15,7 @@ const E = sym('E', 'E', 'modulus')
 const G = sym('G', 'G', 'modulus')
 const nu = sym('nu', '\\nu', 'number')
 const t = sym('t', 't', 'thickness')
-const h = sym('h', 'h', 'length')
+export const h = sym('h', 'h', 'length')
 const fm = sym('fm', "f'_{m}", 'strength')
 const fc = sym('fc', "f'_{c}", 'strength')
 
@@ -176,13 +176,20 @@ export function workStiffness(
   wall: BuiltWall,
   length: Value,
   construction: Construction,
-  { E, G, commonShear }: Moduli,
+  moduli: Moduli,
   level: string,
   display: Display,
 ): Value {
-  const inputs = { E, t: construction.t, h: wall.height, L: length }
-  const id = `${level}.wall.${wall.name}.k`
-  if (commonShear) return work(id, wallStiffness[construction.ends], inputs, display, [wall.name])
-  const formula = construction.ends === 'cantilever' ? wallStiffness.cantileverWithG : wallStiffness.fixedWithG
-  return work(id, formula, { ...inputs, G }, display, [wall.name])
+  const inputs = { ...elastic(construction, moduli), h: wall.height, L: length }
+  return work(`${level}.wall.${wall.name}.k`, stiffnessOf(construction.ends, moduli), inputs, display, [wall.name])
 }
+
+/** The formula of a solid rectangle: G has a letter of its own where it is not 0.4 E. */
+export function stiffnessOf(ends: Ends, { commonShear }: Moduli): Formula {
+  if (commonShear) return wallStiffness[ends]
+  return ends === 'cantilever' ? wallStiffness.cantileverWithG : wallStiffness.fixedWithG
+}
+
+/** What its formula needs beside the height and the length. */
+export const elastic = ({ t }: Construction, { E, G, commonShear }: Moduli): Readonly<Record<string, Value>> =>
+  commonShear ? { E, t } : { E, G, t }

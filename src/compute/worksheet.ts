@@ -204,9 +204,10 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
       grid,
       levelLines,
       ...constructions.values(),
-      ...levels.flatMap(({ givens, areas, mass, walls, springs, forces }) => [
+      ...levels.flatMap(({ givens, areas, mass, walls, openings, springs, forces }) => [
         ...(givens.areas.length > 0 ? [areas, mass] : []),
         ...(givens.walls.length > 0 ? [walls, springs] : []),
+        ...(givens.openings.length > 0 ? [openings] : []),
         forces,
       ]),
     ]

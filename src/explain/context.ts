@@ -8,10 +8,18 @@ import { lineOf, type Source, type Span } from '../base/span.ts'
 import type { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
 import type { LevelWork } from '../compute/level.ts'
+import type { Wall } from '../model/walls.ts'
 import type { Check, Figure, TitleBlock } from './sheet.ts'
 
-/** Draws a level's plan; `caseName` asks for the shears of one case in place of the design shears. */
-export type Sketch = (level: LevelWork, caseName: string | undefined) => Result<Pick<Figure, 'svg' | 'alternative'>>
+type Drawn = Result<Pick<Figure, 'svg' | 'alternative'>>
+
+/** What draws the figures of a document. */
+export interface Sketch {
+  /** A level's plan; `caseName` asks for the shears of one case in place of the design shears. */
+  readonly plan: (level: LevelWork, caseName: string | undefined) => Drawn
+  /** A wall's elevation; `caseName` asks for the shear of one case in place of the design shear. */
+  readonly elevation: (level: LevelWork, wall: Wall, caseName: string | undefined) => Drawn
+}
 
 /** What the front matter says of the calculation as a whole. */
 export type Basis = Pick<TitleBlock, 'standard'> & { readonly system: System }

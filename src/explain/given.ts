@@ -11,6 +11,7 @@ const titles: Readonly<Record<string, string>> = {
   'point-loads': 'Point loads',
   construction: 'Construction',
   walls: 'Walls',
+  openings: 'Openings in walls',
   forces: 'Forces',
 }
 

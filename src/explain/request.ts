@@ -18,6 +18,7 @@ export const wants = [
   'torsion',
   'wall shears',
   'design shears',
+  'elevations',
   'displacement',
   'equilibrium',
 ] as const

@@ -12,6 +12,7 @@ import { k, L } from '../compute/symbols.ts'
 import type { Wall } from '../model/walls.ts'
 import type { Context } from './context.ts'
 import { explainValue } from './equation.ts'
+import { explainPierced } from './piers.ts'
 import type { Detail } from './request.ts'
 import type { Piece } from './sheet.ts'
 import { explainTable } from './table.ts'
@@ -76,9 +77,13 @@ function stiffnessSteps(
   const wall = walls.find(wall => wall.name === name)
   if (!spring || !wall) return []
   if (detail === 'result' || wall.kind === 'stated') return [explainValue(spring.k, context)]
-  return [spring.L, ...moduliOf(level.moduli(wall.construction.text)), spring.k].map(value =>
+  const before = [spring.L, ...moduliOf(level.moduli(wall.construction.text))].map(value =>
     explainValue(value, context),
   )
+  const cut = level.pierced(name)
+  return cut?.ok && cut.value
+    ? [...before, ...explainPierced(level.name, cut.value, context)]
+    : [...before, explainValue(spring.k, context)]
 }
 
 /** The moduli that were worked; stated ones stand in their given block. */

@@ -1,6 +1,7 @@
 /** Answers what a working asks for, from the results. */
 
 import type { Diagnostic } from '../base/diagnostic.ts'
+import type { Display } from '../base/kind.ts'
 import { verbatim } from '../base/language.ts'
 import { all, type Result, together } from '../base/ledger.ts'
 import { suggestion } from '../base/near.ts'
@@ -9,9 +10,12 @@ import { caseOnPage } from '../compute/cases.ts'
 import type { Displacement } from '../compute/displacement.ts'
 import type { CaseResult, Distribution } from '../compute/distribution.ts'
 import type { LevelWork } from '../compute/level.ts'
+import { pierShearsOf } from '../compute/pier-shears.ts'
+import type { Wall } from '../model/walls.ts'
 import { diagnose } from '../read/text.ts'
 import type { Context } from './context.ts'
 import { explainMass, explainPolarMoment } from './mass.ts'
+import { explainPierShears, explainPierTable } from './piers.ts'
 import type { Request, Want } from './request.ts'
 import { explainEccentricity, explainRigidity, explainStiffness } from './rigidity.ts'
 import {
@@ -34,6 +38,7 @@ const headings: Readonly<Record<Want, string>> = {
   torsion: 'Torsion',
   'wall shears': 'Wall shears',
   'design shears': 'Design shears',
+  elevations: 'Elevations',
   displacement: 'Displacement',
   equilibrium: 'Equilibrium',
 }
@@ -42,7 +47,10 @@ const headings: Readonly<Record<Want, string>> = {
 export function explainWant(want: Want, level: LevelWork, request: Request, context: Context): readonly Piece[] {
   const made = answer(want, level, request, context)
   const pieces: readonly Piece[] = made.ok ? made.value : [{ kind: 'fault', diagnostics: made.because }]
-  return request.whole ? [{ kind: 'heading', id: '', text: context.words(headings[want]) }, ...pieces] : pieces
+  // A part of the whole calculation that this level has nothing of is passed over.
+  return request.whole && pieces.length > 0
+    ? [{ kind: 'heading', id: '', text: context.words(headings[want]) }, ...pieces]
+    : pieces
 }
 
 function answer(want: Want, level: LevelWork, request: Request, context: Context): Result<readonly Piece[]> {
@@ -78,6 +86,8 @@ function answer(want: Want, level: LevelWork, request: Request, context: Context
       const acting = forces.value ? level.acting() : undefined
       return good(explainEccentricity(eccentricity.value, acting?.ok ? acting.value : undefined, context))
     }
+    case 'elevations':
+      return request.whole && level.givens.openings.length === 0 ? good([]) : elevations(level, request, context)
     case 'torsion':
     case 'wall shears':
     case 'design shears':
@@ -102,7 +112,7 @@ function flatAll(parts: readonly Result<readonly Piece[]>[]): Result<readonly Pi
 
 /** The plan with the design shears, or with those of one case and the force where it acts. */
 function figure(level: LevelWork, caseName: string | undefined, context: Context): Result<readonly Piece[]> {
-  const made = context.sketch(level, caseName)
+  const made = context.sketch.plan(level, caseName)
   if (!made.ok) return made
   const shears = hasShears(level)
   const what = !shears
@@ -115,6 +125,54 @@ function figure(level: LevelWork, caseName: string | undefined, context: Context
   const drawing: Piece = { kind: 'figure', id: context.anchor(id), number: '', caption, ...made.value }
   const missing = notDrawn(level)
   return good(missing.length > 0 ? [drawing, { kind: 'fault', diagnostics: missing }] : [drawing])
+}
+
+/** An elevation of each wall asked for, or of each that has openings, with the piers that it names. */
+function elevations(level: LevelWork, request: Request, context: Context): Result<readonly Piece[]> {
+  const parts = together({ walls: level.walls(), openings: level.openings(), display: level.display() })
+  if (!parts.ok) return parts
+  const { walls, openings, display } = parts.value
+  const open = walls.filter(({ name }) => openings.some(({ wall }) => wall === name)).map(({ name }) => name)
+  const shown = request.walls.length > 0 || open.length === 0 ? wallsShown(level, request) : good(open)
+  const cases = request.caseName ? casesShown(level, request) : good([undefined])
+  if (!shown.ok) return shown
+  if (!cases.ok) return cases
+  const pieces = shown.value.flatMap(name => {
+    const wall = walls.find(wall => wall.name === name)
+    if (!wall) return []
+    const drawn = cases.value.map(each => elevation(level, wall, each?.case.name, context))
+    const answers = request.detail === 'full' ? [...drawn, pierTable(level, name, display, context)] : drawn
+    // A wall that cannot be drawn does not keep the others from their place.
+    return answers.flatMap((made): readonly Piece[] =>
+      made.ok ? made.value : [{ kind: 'fault', diagnostics: made.because }],
+    )
+  })
+  return good(pieces)
+}
+
+function elevation(
+  level: LevelWork,
+  wall: Wall,
+  caseName: string | undefined,
+  context: Context,
+): Result<readonly Piece[]> {
+  const made = context.sketch.elevation(level, wall, caseName)
+  if (!made.ok) return made
+  const about = `Elevation of wall ${verbatim(wall.name)} of ${verbatim(level.name)}.`
+  const what = !hasShears(level) ? '' : caseName ? ` Shear of case ${caseOnPage(caseName)}.` : ' Design shear.'
+  const id = `${level.name}.elevation.${wall.name}${caseName ? `.${caseName}` : ''}`
+  return good([
+    { kind: 'figure', id: context.anchor(id), number: '', caption: context.words(about + what), ...made.value },
+  ])
+}
+
+function pierTable(level: LevelWork, wall: string, display: Display, context: Context): Result<readonly Piece[]> {
+  const cut = level.pierced(wall) ?? good(undefined)
+  if (!cut.ok) return cut
+  if (!cut.value) return good([])
+  const shears = hasShears(level) ? (pierShearsOf(level, wall) ?? good([])) : good([])
+  if (!shears.ok) return shears
+  return good([explainPierTable(level.name, cut.value, shears.value, display, context)])
 }
 
 /** Why a sketch lacks a centre or the shears, where what they follow from was given. */
@@ -155,7 +213,7 @@ function shears(want: ShearWant, level: LevelWork, request: Request, context: Co
     case 'wall shears':
       return wallShears(level, distribution, cases, walls, request, context)
     case 'design shears':
-      return good(explainDesignShears(distribution, walls, detail, context))
+      return designShears(level, distribution, walls, request, context)
     case 'equilibrium':
       return good(explainEquilibrium(distribution, detail, display, context))
     case 'displacement': {
@@ -167,6 +225,25 @@ function shears(want: ShearWant, level: LevelWork, request: Request, context: Co
       return good(explainDisplacement(level.name, moved.value, shown, detail, display, context))
     }
   }
+}
+
+/** The design shears, and in full detail what the piers of each wall shown take of its own. */
+function designShears(
+  level: LevelWork,
+  distribution: Distribution,
+  walls: readonly string[],
+  { detail }: Request,
+  context: Context,
+): Result<readonly Piece[]> {
+  const worked = explainDesignShears(distribution, walls, detail, context)
+  if (detail !== 'full') return good(worked)
+  const piers = flatAll(
+    walls.map(wall => {
+      const shears = pierShearsOf(level, wall) ?? good([])
+      return shears.ok ? good(explainPierShears(level.name, wall, shears.value, context)) : shears
+    }),
+  )
+  return piers.ok ? good([...worked, ...piers.value]) : piers
 }
 
 /** The shears of each case asked for, and in full detail the plan that shows them. */

@@ -11,6 +11,7 @@ export interface LevelGivens {
   readonly lineLoads: readonly Block[]
   readonly pointLoads: readonly Block[]
   readonly walls: readonly Block[]
+  readonly openings: readonly Block[]
   readonly forces: readonly Block[]
 }
 
@@ -27,7 +28,7 @@ export interface Givens {
   readonly strays: (topic: string) => readonly Diagnostic[]
 }
 
-const perLevel = ['areas', 'line-loads', 'point-loads', 'walls', 'forces'] as const
+const perLevel = ['areas', 'line-loads', 'point-loads', 'walls', 'openings', 'forces'] as const
 const ONLY_LEVEL = 'level'
 
 export function gather(blocks: readonly Block[]): Givens {
@@ -55,6 +56,7 @@ export function gather(blocks: readonly Block[]): Givens {
       lineLoads: on('line-loads'),
       pointLoads: on('point-loads'),
       walls: on('walls'),
+      openings: on('openings'),
       forces: on('forces'),
     }
   })

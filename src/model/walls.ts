@@ -19,6 +19,8 @@ interface Placed {
   readonly name: string
   readonly from: Corner
   readonly to: Corner
+  /** True where the end written first, its start, is `to`. */
+  readonly reversed: boolean
   /** Its row, and within it the cells of its two ends. */
   readonly span: Span
   readonly place: Span
@@ -120,10 +122,10 @@ const UPRIGHT = 1e-9
  * A wall's own direction has a positive x part, or points up when it is parallel
  * to y, whichever end was written first: the sign of its shear follows from it.
  */
-function directed(a: Corner, b: Corner): { readonly from: Corner; readonly to: Corner } {
+function directed(a: Corner, b: Corner): Pick<Placed, 'from' | 'to' | 'reversed'> {
   const [dx, dy] = [b.x.si - a.x.si, b.y.si - a.y.si]
   const upright = Math.abs(dx) <= UPRIGHT * Math.abs(dy)
-  return (upright ? dy > 0 : dx > 0) ? { from: a, to: b } : { from: b, to: a }
+  return (upright ? dy > 0 : dx > 0) ? { from: a, to: b, reversed: false } : { from: b, to: a, reversed: true }
 }
 
 function readHeight(record: RowOf, name: string, level: string, scope: Scope): Result<Value> {

@@ -247,7 +247,17 @@ const homes: readonly Home[] = [
   },
   {
     text: chapter('05-values'),
-    names: { LEVEL: 'roof', NAME: 'CONC', AREA: 'Shaft', WALL: 'S1', CASE: 'EY-', CORNER: 'C1' },
+    names: {
+      LEVEL: 'roof',
+      NAME: 'CONC',
+      AREA: 'Shaft',
+      WALL: 'N1',
+      CASE: 'EY-',
+      CORNER: 'C1',
+      OPENING: 'D1',
+      PIER: 'G1',
+      STRIP: 'S1',
+    },
   },
   { text: chapter('04-workings'), names: { LEVEL: 'roof', AREA: 'Porch', WALL: 'P', CASE: 'EY', NAME: 'CMU8' } },
   { text: chapter('03-building'), names: { LEVEL: 'loft' } },
