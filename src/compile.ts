@@ -4,7 +4,7 @@ import type { Diagnostic } from './base/diagnostic.ts'
 import { sorted } from './base/report.ts'
 import { type Source, sourceOf } from './base/span.ts'
 import { worksheet } from './compute/worksheet.ts'
-import { sketchPlan } from './draw/sketch.ts'
+import { sketchDisplaced, sketchPlan, sketchStoreys } from './draw/sketch.ts'
 import { explainBlocks, explainQuotes, faultsIn, itemsOf, nestedBlocks, quoteFaults } from './explain/blocks.ts'
 import { Context } from './explain/context.ts'
 import { numberItems } from './explain/number.ts'
@@ -37,9 +37,11 @@ export function compileTree(tree: Root, source: Source, nearby: Nearby = nothing
   const choices = readChoices(document.front)
   const sheet = worksheet(gather([...document.blocks.values()]), choices)
   const given = sheet.readAll()
-  const context = new Context(choices.language, source, (level, caseName) =>
-    sketchPlan(sheet, level, caseName, choices),
-  )
+  const context = new Context(choices.language, source, {
+    plan: (level, caseName) => sketchPlan(sheet, level, caseName, choices),
+    displaced: (level, displacement) => sketchDisplaced(level, displacement, choices),
+    storeys: storeys => sketchStoreys(storeys, choices),
+  })
   const worked = explainBlocks(document, sheet, context)
   const quotes = explainQuotes(document, sheet, context)
   const diagnostics = sorted([

@@ -1,12 +1,16 @@
 /** What stands below the plan: scale bar, legend and notes. */
 import { inLanguage } from '../base/language.ts'
+import { arrowKey } from './arrowkey.ts'
+import { shortestArrow } from './arrows.ts'
 import type { Centres } from './centres.ts'
 import type { Field } from './field.ts'
 import { besideSheet, type Frame } from './frame.ts'
-import { drawLegend, type LegendEntry } from './legend.ts'
+import { drawLegend, type LegendEntry, symbolOf } from './legend.ts'
 import { drawScaleBar } from './scalebar.ts'
 import type { SceneNode } from './scene.ts'
 import type { PlanView } from './view.ts'
+import { arrowLength } from './walllabels.ts'
+import type { WallLook } from './walls.ts'
 
 export function notesOf(view: PlanView, leftOut: number, unnamed: number): readonly string[] {
   const count = (n: number, one: string, many: string): readonly string[] =>
@@ -29,18 +33,31 @@ export function notesOf(view: PlanView, leftOut: number, unnamed: number): reado
 export function legendOf(
   view: PlanView,
   centres: Centres,
-  { legs, shears }: { readonly legs: boolean; readonly shears: boolean },
+  { legs, shears, look }: { readonly legs: boolean; readonly shears: boolean; readonly look: WallLook },
 ): readonly LegendEntry[] {
   const own = (text: string): string => inLanguage(text, view.language)
   return [
-    ...(shears ? [{ symbol: 'shear' as const, text: view.legend.shear }] : []),
+    ...(shears ? shearEntries(view, look) : []),
     ...(view.walls.some(({ governs }) => governs)
-      ? [{ symbol: 'governs' as const, text: own('wall that governs') }]
+      ? [{ symbol: symbolOf.governs, text: own('wall that governs') }]
       : []),
-    ...(centres.force ? [{ symbol: 'force' as const, text: view.legend.force }] : []),
-    ...(centres.mass ? [{ symbol: 'centreOfMass' as const, text: view.legend.centreOfMass }] : []),
-    ...(centres.rigidity ? [{ symbol: 'centreOfRigidity' as const, text: view.legend.centreOfRigidity }] : []),
-    ...(legs ? [{ symbol: 'eccentricity' as const, text: own('eccentricity') }] : []),
+    ...(centres.force ? [{ symbol: symbolOf.force, text: view.legend.force }] : []),
+    ...(centres.mass ? [{ symbol: symbolOf.centreOfMass, text: view.legend.centreOfMass }] : []),
+    ...(centres.rigidity ? [{ symbol: symbolOf.centreOfRigidity, text: view.legend.centreOfRigidity }] : []),
+    ...(legs ? [{ symbol: symbolOf.eccentricity, text: own('eccentricity') }] : []),
+  ]
+}
+
+/** What an arrow means, its scale by one of a round figure, and what an arrowhead alone means where there is one. */
+function shearEntries(view: PlanView, look: WallLook): readonly LegendEntry[] {
+  const key = arrowKey(look.greatest, look.longestArrow, view.forceUnit, view.language)
+  const bare = view.walls.some(({ shear }) => {
+    const length = arrowLength(shear?.value ?? 0, look)
+    return length > 0 && length < shortestArrow
+  })
+  return [
+    { symbol: symbolOf.arrow(key?.length ?? 24), text: view.legend.shear + (key ? `; this arrow: ${key.text}` : '') },
+    ...(bare ? [{ symbol: symbolOf.bareHead, text: 'too small for its arrow to scale' }] : []),
   ]
 }
 

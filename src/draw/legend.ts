@@ -1,5 +1,5 @@
 /** Below the plan: the scale bar, the meaning of each symbol drawn, and what had to be left out. */
-import { broadArrow, thinArrow } from './arrows.ts'
+import { bareHead, broadArrow, thinArrow } from './arrows.ts'
 import type { Point } from './geometry.ts'
 import { startText } from './label.ts'
 import { element, type SceneNode, words } from './scene.ts'
@@ -8,10 +8,9 @@ import { lozenge, quarteredCircle } from './symbols.ts'
 import { textWidth, wrap } from './textwidth.ts'
 import { wallFrame } from './walls.ts'
 
-export type MarkName = 'shear' | 'centreOfMass' | 'centreOfRigidity' | 'force' | 'eccentricity' | 'governs'
-
 export interface LegendEntry {
-  readonly symbol: MarkName
+  /** Drawn about a point, within `symbolWidth` of the left edge of its row. */
+  readonly symbol: (at: Point) => readonly SceneNode[]
   readonly text: string
 }
 
@@ -20,7 +19,9 @@ export interface Footer {
   readonly bottom: number
 }
 
-const symbolWidth = 34
+/** Where texts begin, and the middle of the symbols before them. */
+const symbolWidth = 46
+const symbolMiddle = 19
 const columnGap = 24
 const rowHeight = 20
 const textRow = 18
@@ -39,7 +40,7 @@ export function drawLegend(entries: readonly LegendEntry[], notes: readonly stri
     for (let idx = column * rows; idx < Math.min(entries.length, (column + 1) * rows); idx++) {
       const [entry, lines] = [entries[idx], texts[idx] ?? []]
       if (entry === undefined) continue
-      nodes.push(...drawEntry(entry.symbol, lines, { x: at.x + column * columnWidth, y }))
+      nodes.push(...drawEntry(entry, lines, { x: at.x + column * columnWidth, y }))
       y += rowHeight + (lines.length - 1) * textRow
     }
     bottom = Math.max(bottom, y)
@@ -53,31 +54,36 @@ function withNotes(nodes: readonly SceneNode[], notes: readonly string[], at: Po
   return { nodes: [...nodes, ...set], bottom: at.y + lines.length * textRow }
 }
 
-function drawEntry(symbol: MarkName, lines: readonly string[], at: Point): readonly SceneNode[] {
+function drawEntry({ symbol }: LegendEntry, lines: readonly string[], at: Point): readonly SceneNode[] {
   const texts = lines.map((line, idx) => startText(line, 'legend', { x: at.x + symbolWidth, y: at.y + idx * textRow }))
-  return [...drawSymbol(symbol, { x: at.x + 13, y: at.y }), ...texts]
+  return [...symbol({ x: at.x + symbolMiddle, y: at.y }), ...texts]
 }
 
-function drawSymbol(symbol: MarkName, at: Point): readonly SceneNode[] {
-  switch (symbol) {
-    case 'shear':
-      return [thinArrow(at, 0, 24)]
-    case 'centreOfMass':
-      return quarteredCircle(at, 6)
-    case 'centreOfRigidity':
-      return lozenge(at, 7)
-    case 'force':
-      return [broadArrow({ x: at.x + 14, y: at.y }, 0, 28)]
-    case 'eccentricity':
-      return [
-        element('path', {
-          class: 'pm-legs',
-          d: words('M', at.x - 12, at.y + 5, 'L', at.x + 12, at.y + 5, 'L', at.x + 12, at.y - 6),
-        }),
-      ]
-    case 'governs':
-      return governingSymbol(at)
-  }
+/** The symbols of a plan, about the middle of their place. */
+export const symbolOf = {
+  centreOfMass: (at: Point) => quarteredCircle(at, 6),
+  centreOfRigidity: (at: Point) => lozenge(at, 7),
+  force: ({ x, y }: Point) => [broadArrow({ x: x + 14, y }, 0, 28)],
+  eccentricity: ({ x, y }: Point) => [
+    element('path', { class: 'pm-legs', d: words('M', x - 12, y + 5, 'L', x + 12, y + 5, 'L', x + 12, y - 6) }),
+  ],
+  governs: governingSymbol,
+  arrow: (length: number) => (at: Point) => [thinArrow(at, 0, length)],
+  /** A piece of a line as the drawing has it. */
+  line:
+    (className: string) =>
+    ({ x, y }: Point) => [element('path', { class: className, d: words('M', x - 16, y, 'L', x + 16, y) })],
+  /** A length of a diagram between two strokes. */
+  width: (length: number) => (at: Point) => [widthSymbol(at, length)],
+  bareHead: (at: Point) => [bareHead(at, 0)],
+} as const
+
+function widthSymbol({ x, y }: Point, length: number): SceneNode {
+  const [a, b] = [x - length / 2, x + length / 2]
+  return element('path', {
+    class: 'pm-step-line',
+    d: words('M', a, y - 5, 'L', a, y + 5, 'M', b, y - 5, 'L', b, y + 5, 'M', a, y, 'L', b, y),
+  })
 }
 
 function governingSymbol({ x, y }: Point): readonly SceneNode[] {

@@ -11,13 +11,13 @@ import { drawAxis, leftEdge, topEdge } from './dimensions.ts'
 import { Field } from './field.ts'
 import { drawFooter, legendOf, notesOf } from './footer.ts'
 import { besideSheet, type Frame } from './frame.ts'
-import { type Bounds, box } from './geometry.ts'
+import { box } from './geometry.ts'
 import { layOut } from './layout.ts'
 import { centresOf, patchesOf } from './onsheet.ts'
 import { type Placing, place, placePair, type Sheet } from './placement.ts'
-import { element, layer, type SceneNode, serialise, words } from './scene.ts'
+import { layer, type SceneNode } from './scene.ts'
 import { drawOpenings, drawSlab, groundOf } from './slab.ts'
-import { rootClass, stylesheet } from './style.ts'
+import { svgOf } from './svg.ts'
 import { northPoint, northReach } from './symbols.ts'
 import type { PlanView } from './view.ts'
 import { namePlacing, shearPlacing } from './walllabels.ts'
@@ -39,13 +39,13 @@ export function drawPlan(view: PlanView): string {
     farthest,
   }
   const look = lookOf(view.walls, frame.scale)
-  const lines = wallLines(view.walls, frame.toSheet, look)
+  const lines = wallLines(view.walls, frame.toSheet, frame.scale, look)
   const { centres, beyond } = centresOf(view, frame)
 
   const slab = [...drawSlab(patches.areas, field), ...drawOpenings(patches.openings, field)]
   const axes = [...drawAxis(top, topEdge(frame.plan), field), ...drawAxis(left, leftEdge(frame.plan), field)]
   const north = drawNorth(view, frame, top, field)
-  const walls = drawWalls(lines, look, field)
+  const walls = drawWalls(lines, field)
   const marks = drawCentres(centres, field)
   const governing = lines.filter(({ wall }) => wall.governs)
 
@@ -67,7 +67,7 @@ export function drawPlan(view: PlanView): string {
     view,
     frame,
     field,
-    legendOf(view, centres, { legs: marks.legs, shears: thorough.shears || others.shears }),
+    legendOf(view, centres, { legs: marks.legs, shears: thorough.shears || others.shears, look }),
     notes,
   )
   const drawn = [
@@ -79,7 +79,7 @@ export function drawPlan(view: PlanView): string {
     ...north,
     ...layer('pm-footer', footer.nodes),
   ]
-  return serialise(root(view, drawn, { x0: 0, y0: footer.top, x1: frame.width, y1: footer.bottom }))
+  return svgOf(view, drawn, { x0: 0, y0: footer.top, x1: frame.width, y1: footer.bottom })
 }
 
 function drawNorth(view: PlanView, { width }: Frame, top: AxisLayout, field: Field): readonly SceneNode[] {
@@ -112,35 +112,4 @@ function setAll(sheet: Sheet, groups: readonly (readonly Placing[])[]): Labels {
     leftOut: set.filter(({ nodes }) => nodes === undefined).length,
     shears: set.some(({ nodes, shows }) => nodes !== undefined && shows === 'shear'),
   }
-}
-
-function root(view: PlanView, drawn: readonly SceneNode[], { x0, y0, x1, y1 }: Bounds): SceneNode {
-  const id = `${rootClass}-${hash(`${view.title}\n${view.description}`)}`
-  const size = { width: x1 - x0, height: y1 - y0 }
-  return element(
-    'svg',
-    {
-      xmlns: 'http://www.w3.org/2000/svg',
-      class: rootClass,
-      viewBox: words(x0, y0, size.width, size.height),
-      ...size,
-      role: 'img',
-      lang: view.language,
-      'aria-labelledby': `${id}-title ${id}-desc`,
-    },
-    [
-      element('title', { id: `${id}-title` }, [view.title]),
-      element('desc', { id: `${id}-desc` }, [view.description]),
-      element('style', {}, [stylesheet]),
-      element('rect', { class: 'pm-sheet', x: x0, y: y0, ...size }),
-      ...drawn,
-    ],
-  )
-}
-
-/** FNV-1a: short, the same everywhere, and used for nothing but telling sketches on one page apart. */
-function hash(text: string): string {
-  let sum = 0x811c9dc5
-  for (const sign of text) sum = Math.imul(sum ^ (sign.codePointAt(0) ?? 0), 0x01000193)
-  return (sum >>> 0).toString(16).padStart(8, '0')
 }

@@ -90,7 +90,8 @@ function cornersOf(bounds: Bounds | undefined): readonly Point[] {
   ]
 }
 
-function closed(outline: readonly Point[]): string {
+/** A closed path. */
+export function closed(outline: readonly Point[]): string {
   return outline.length === 0 ? '' : `${outline.map(({ x, y }, idx) => words(idx === 0 ? 'M' : 'L', x, y)).join(' ')} Z`
 }
 

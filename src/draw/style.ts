@@ -67,9 +67,19 @@ const rules: readonly (readonly [string, string])[] = [
   ['.pm-dimension', `fill:none;stroke:${soft};stroke-width:.7`],
   ['.pm-tick', `fill:none;stroke:${ink};stroke-width:1.2`],
   ['.pm-wall', `fill:none;stroke:${ink}`],
+  ['.pm-wall-core', `fill:none;stroke:${paper}`],
+  ['.pm-wall-tint', 'opacity:.24'],
   ['.pm-governs', `fill:none;stroke:${ink};stroke-width:1`],
   ['.pm-shear', `fill:none;stroke:${copper};stroke-width:1.5`],
   ['.pm-force', `fill:${paper};stroke:${copper};stroke-width:1.8;stroke-linejoin:miter`],
+  ['.pm-rest', `fill:none;stroke:${ink};stroke-width:.7;stroke-dasharray:5 3.5`],
+  ['.pm-rest-wall', `fill:none;stroke:${soft};stroke-width:2.4;stroke-dasharray:5 3.5`],
+  ['.pm-wall-sample', `fill:none;stroke:${ink};stroke-width:4`],
+  ['.pm-level', `fill:none;stroke:${soft};stroke-width:.6;stroke-dasharray:7 4`],
+  ['.pm-ground', `fill:none;stroke:${ink};stroke-width:2`],
+  ['.pm-mast', `fill:none;stroke:${ink};stroke-width:3`],
+  ['.pm-step', `fill:${wash};stroke:${ink};stroke-width:1.2;stroke-linejoin:miter`],
+  ['.pm-step-line', `fill:none;stroke:${ink};stroke-width:.8`],
   ['.pm-leader', `fill:none;stroke:${soft};stroke-width:.6`],
   ['.pm-leader-end', `fill:${soft};stroke:none`],
   ['.pm-mark', `fill:${paper};stroke:${ink};stroke-width:1.4`],
@@ -91,6 +101,13 @@ const textRules = (Object.keys(textStyles) as TextRole[]).map(role => {
   ] as const
 })
 
-export const stylesheet = [...rules, ...textRules]
-  .map(([selector, body]) => `.${rootClass} ${selector}{${body}}`)
-  .join('')
+/** The rules of the classes that a drawing uses, and of no others. */
+export function stylesheetOf(classes: ReadonlySet<string>): string {
+  return [...rules, ...textRules]
+    .filter(([selector]) => {
+      const name = /\.([a-z-]+)$/.exec(selector)?.[1]
+      return name === undefined || classes.has(name)
+    })
+    .map(([selector, body]) => `.${rootClass} ${selector}{${body}}`)
+    .join('')
+}

@@ -12,8 +12,9 @@ import { explainGiven } from './given.ts'
 import type { Numbered } from './number.ts'
 import { explainQuote } from './quote.ts'
 import { explainRegister } from './registers.ts'
-import { isDocumentWant, type Request, readRequest } from './request.ts'
+import { isBuildingWant, isDocumentWant, type Request, readRequest } from './request.ts'
 import type { Piece, Quote } from './sheet.ts'
+import { explainStoreys } from './storeys.ts'
 import { explainWant } from './workings.ts'
 
 /** The pieces of every working and equation block; lists of the whole document come last, since they tell of the rest. */
@@ -46,7 +47,9 @@ function workingPieces(block: Block, request: Request, sheet: Worksheet, context
   const level = sheet.levels.find(({ name }) => name === levelNameOf(block, names))
   return request.wants.flatMap((want): readonly Piece[] => {
     if (isDocumentWant(want)) return explainRegister(want, sheet.assumptions(), context)
-    return level
+    if (isBuildingWant(want) && (level || !block.about))
+      return explainStoreys(sheet, block.about && level, request, context)
+    return level && !isBuildingWant(want)
       ? explainWant(want, level, request, context)
       : [{ kind: 'fault', diagnostics: [noLevel(block, names)] }]
   })

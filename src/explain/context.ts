@@ -6,11 +6,22 @@ import type { Result } from '../base/ledger.ts'
 import { lineOf, type Source, type Span } from '../base/span.ts'
 import type { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
+import type { Displacement } from '../compute/displacement.ts'
 import type { LevelWork } from '../compute/level.ts'
+import type { Storeys } from '../compute/storeys.ts'
 import type { Check, Figure } from './sheet.ts'
 
-/** Draws a level's plan; `caseName` asks for the shears of one case in place of the design shears. */
-export type Sketch = (level: LevelWork, caseName: string | undefined) => Result<Pick<Figure, 'svg' | 'alternative'>>
+type Drawn = Result<Pick<Figure, 'svg' | 'alternative'>>
+
+/** What draws the figures of a document. */
+export interface Sketch {
+  /** A level's plan; `caseName` asks for the shears of one case in place of the design shears. */
+  readonly plan: (level: LevelWork, caseName: string | undefined) => Drawn
+  /** A level as it moves in a case. */
+  readonly displaced: (level: LevelWork, displacement: Displacement) => Drawn
+  /** Storey forces and shears of the building. */
+  readonly storeys: (storeys: Storeys) => Drawn
+}
 
 /** Gathers, over the whole document, what its lists and its JSON are made of. */
 export class Context {

@@ -1,6 +1,7 @@
 /** Answers what a working asks for, from the results. */
 
 import type { Diagnostic } from '../base/diagnostic.ts'
+import type { Display } from '../base/kind.ts'
 import { verbatim } from '../base/language.ts'
 import { all, type Result, together } from '../base/ledger.ts'
 import { suggestion } from '../base/near.ts'
@@ -35,6 +36,7 @@ const headings: Readonly<Record<Want, string>> = {
   'wall shears': 'Wall shears',
   'design shears': 'Design shears',
   displacement: 'Displacement',
+  'displaced shape': 'Displaced shape',
   equilibrium: 'Equilibrium',
 }
 
@@ -82,6 +84,7 @@ function answer(want: Want, level: LevelWork, request: Request, context: Context
     case 'wall shears':
     case 'design shears':
     case 'displacement':
+    case 'displaced shape':
     case 'equilibrium':
       return shears(want, level, request, context)
   }
@@ -102,7 +105,7 @@ function flatAll(parts: readonly Result<readonly Piece[]>[]): Result<readonly Pi
 
 /** The plan with the design shears, or with those of one case and the force where it acts. */
 function figure(level: LevelWork, caseName: string | undefined, context: Context): Result<readonly Piece[]> {
-  const made = context.sketch(level, caseName)
+  const made = context.sketch.plan(level, caseName)
   if (!made.ok) return made
   const shears = hasShears(level)
   const what = !shears
@@ -135,7 +138,7 @@ function hasShears(level: LevelWork): boolean {
   return forces.ok && forces.value !== undefined && level.distribution().ok
 }
 
-type ShearWant = 'torsion' | 'wall shears' | 'design shears' | 'displacement' | 'equilibrium'
+type ShearWant = 'torsion' | 'wall shears' | 'design shears' | 'displacement' | 'displaced shape' | 'equilibrium'
 
 function shears(want: ShearWant, level: LevelWork, request: Request, context: Context): Result<readonly Piece[]> {
   const { detail } = request
@@ -158,15 +161,42 @@ function shears(want: ShearWant, level: LevelWork, request: Request, context: Co
       return good(explainDesignShears(distribution, walls, detail, context))
     case 'equilibrium':
       return good(explainEquilibrium(distribution, detail, display, context))
-    case 'displacement': {
-      const moved = level.displacements()
-      if (!moved.ok) return moved
-      const size = (each: Displacement) => Math.abs(each.governing.value.si)
-      const worst = moved.value.reduce((a, b) => (size(b) > size(a) ? b : a))
-      const shown = request.caseName ? moved.value.filter(({ result }) => cases.includes(result)) : [worst]
-      return good(explainDisplacement(level.name, moved.value, shown, detail, display, context))
-    }
+    case 'displacement':
+    case 'displaced shape':
+      return displacement(want, level, cases, request, display, context)
   }
+}
+
+/** The displacements of the case asked for, or of the one with the largest, and in full detail their sketch. */
+function displacement(
+  want: 'displacement' | 'displaced shape',
+  level: LevelWork,
+  cases: readonly CaseResult[],
+  { detail, caseName }: Request,
+  display: Display,
+  context: Context,
+): Result<readonly Piece[]> {
+  const moved = level.displacements()
+  if (!moved.ok) return moved
+  const size = (each: Displacement) => Math.abs(each.governing.value.si)
+  const worst = moved.value.reduce((a, b) => (size(b) > size(a) ? b : a))
+  const shown = caseName ? moved.value.filter(({ result }) => cases.includes(result)) : [worst]
+  const worked =
+    want === 'displacement' ? explainDisplacement(level.name, moved.value, shown, detail, display, context) : []
+  if (want === 'displacement' && detail !== 'full') return good(worked)
+  const drawn = flatAll(shown.map(each => displacedFigure(level, each, context)))
+  return drawn.ok ? good([...worked, ...drawn.value]) : drawn
+}
+
+function displacedFigure(level: LevelWork, displacement: Displacement, context: Context): Result<readonly Piece[]> {
+  const made = context.sketch.displaced(level, displacement)
+  if (!made.ok) return made
+  const { name } = displacement.result.case
+  const id = context.anchor(`${level.name}.displaced.${name}`)
+  const caption = context.words(
+    `Displaced shape of ${verbatim(level.name)} in case ${caseOnPage(name)}, drawn larger by the factor in its key.`,
+  )
+  return good([{ kind: 'figure', id, number: '', caption, ...made.value }])
 }
 
 /** The shears of each case asked for, and in full detail the plan that shows them. */
