@@ -32,7 +32,7 @@ export function bareHead(middle: Point, angle: number): SceneElement {
 export const scaledArrow = (middle: Point, angle: number, length: number): SceneElement =>
   length < shortestArrow ? bareHead(middle, angle) : thinArrow(middle, angle, length)
 
-export const shortestArrow = 10
+export const shortestArrow = 7
 
 /** How wide `broadArrow` is across its head. */
 export const broadArrowWidth = 18

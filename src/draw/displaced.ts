@@ -10,6 +10,7 @@ import { scaledArrow, shortestArrow } from './arrows.ts'
 import { drawMarked, type Force, pointPlacing } from './centres.ts'
 import type { DisplacedView, MovedPoint } from './displacedview.ts'
 import { Field } from './field.ts'
+import { besideBar, lower } from './footer.ts'
 import { besideSheet, type Frame, frameOf } from './frame.ts'
 import { add, between, boundsOfPoints, distance, type Point, sidesOf, strokeBox, times, toward } from './geometry.ts'
 import { lettering } from './label.ts'
@@ -63,7 +64,7 @@ export function drawDisplaced(view: DisplacedView): string {
   const field = new Field(besideSheet / 2, frame.width - besideSheet / 2)
   const rest = view.outline.map(ring => ring.map(frame.toSheet))
   const moved = view.outline.map(ring => ring.map(p => frame.toSheet(displaced(p))))
-  for (const side of [...rest, ...moved].flatMap(sidesOf)) field.addLine(side, priceOfCrossing.edge)
+  for (const side of [...rest, ...moved].flatMap(sidesOf)) field.addLine(side, priceOfCrossing.legs)
 
   const restWalls = view.walls.map(({ from, to }) => ({ a: frame.toSheet(from), b: frame.toSheet(to) }))
   const lines = view.walls.map(
@@ -181,13 +182,15 @@ function drawFoot(view: DisplacedView, frame: Frame, field: Field, factor: numbe
   const y = Math.max(held.y1, frame.plan.y1 + 14) + 24
   const x = 24
   const bar = drawScaleBar({ x, y }, frame.scale * view.scaleUnit.metres, view.scaleUnit.name, view.language)
-  const beside = x + bar.width + 40
   const entries = entriesOf(view, frame, factor)
   const notes =
     leftOut === 0
       ? []
       : [inLanguage(`${leftOut} ${leftOut === 1 ? 'name is' : 'names are'} left out for want of room.`, view.language)]
-  const legend = drawLegend(entries, notes, { x: beside, y }, frame.width - 16 - beside)
+  const legend = lower(
+    drawLegend(entries, notes, { x, y: y + 40 }, frame.width - 16 - x),
+    besideBar(entries, notes, { x: x + bar.width + 40, y }, frame.width - 16),
+  )
   return {
     nodes: [...bar.nodes, ...legend.nodes],
     top: held.y0 - besideSheet,
@@ -204,9 +207,11 @@ function entriesOf(view: DisplacedView, { scale }: Frame, factor: number): reado
   return [
     { symbol: symbolOf.line('pm-rest'), text: own('at rest') },
     { symbol: symbolOf.line('pm-wall-sample'), text: own(`displaced${times}`) },
-    ...(moves ? [{ symbol: symbolOf.arrow(moves.length), text: own(`displacement; this arrow: ${moves.text}`) }] : []),
+    ...(moves
+      ? [{ symbol: symbolOf.arrow(moves.length), text: own(`displacement x, y; this arrow: ${moves.text}`) }]
+      : []),
     ...(force ? [{ symbol: symbolOf.force, text: forceWords }] : []),
-    { symbol: symbolOf.centreOfMass, text: own('centre of mass, and how it moves along x, y') },
-    { symbol: symbolOf.centreOfRigidity, text: own('centre of rigidity, and rotation') },
+    { symbol: symbolOf.centreOfMass, text: own('centre of mass') },
+    { symbol: symbolOf.centreOfRigidity, text: own('centre of rigidity, rotation φ') },
   ]
 }

@@ -28,24 +28,44 @@ const textRow = 18
 
 /** Sets entries in as many columns as the room takes, then the notes in full width. */
 export function drawLegend(entries: readonly LegendEntry[], notes: readonly string[], at: Point, room: number): Footer {
-  const texts = entries.map(({ text }) => wrap(text, textStyles.legend, room - symbolWidth))
-  const widest = Math.max(0, ...texts.flat().map(line => textWidth(line, textStyles.legend)))
-  const columnWidth = symbolWidth + widest + columnGap
-  const columns = Math.max(1, Math.min(entries.length, Math.floor((room + columnGap) / columnWidth)))
-  const rows = Math.ceil(entries.length / columns)
-  const nodes: SceneNode[] = []
+  const set = entries.map(({ symbol, text }): SetEntry => {
+    const lines = wrap(text, textStyles.legend, room - symbolWidth)
+    const widest = Math.max(...lines.map(line => textWidth(line, textStyles.legend)))
+    return { symbol, lines, width: symbolWidth + widest + columnGap }
+  })
+  let x = at.x
   let bottom = at.y
-  for (let column = 0; column < columns; column++) {
+  const nodes = columnsOf(set, room + columnGap).flatMap(column => {
     let y = at.y
-    for (let idx = column * rows; idx < Math.min(entries.length, (column + 1) * rows); idx++) {
-      const [entry, lines] = [entries[idx], texts[idx] ?? []]
-      if (entry === undefined) continue
-      nodes.push(...drawEntry(entry, lines, { x: at.x + column * columnWidth, y }))
-      y += rowHeight + (lines.length - 1) * textRow
-    }
+    const drawn = column.flatMap(entry => {
+      const own = drawEntry(entry, { x, y })
+      y += rowHeight + (entry.lines.length - 1) * textRow
+      return own
+    })
+    x += widthOf(column)
     bottom = Math.max(bottom, y)
-  }
+    return drawn
+  })
   return withNotes(nodes, notes, { x: at.x, y: bottom }, room)
+}
+
+interface SetEntry extends Pick<LegendEntry, 'symbol'> {
+  readonly lines: readonly string[]
+  readonly width: number
+}
+
+const widthOf = (column: readonly SetEntry[]): number => Math.max(...column.map(({ width }) => width))
+
+/** As many columns as stand side by side in the room, each as wide as its own widest entry. */
+function columnsOf(entries: readonly SetEntry[], room: number): readonly (readonly SetEntry[])[] {
+  for (let count = entries.length; count > 1; count--) {
+    const rows = Math.ceil(entries.length / count)
+    const columns = Array.from({ length: Math.ceil(entries.length / rows) }, (_, idx) =>
+      entries.slice(idx * rows, (idx + 1) * rows),
+    )
+    if (columns.reduce((sum, column) => sum + widthOf(column), 0) <= room) return columns
+  }
+  return entries.length === 0 ? [] : [entries]
 }
 
 function withNotes(nodes: readonly SceneNode[], notes: readonly string[], at: Point, room: number): Footer {
@@ -54,7 +74,7 @@ function withNotes(nodes: readonly SceneNode[], notes: readonly string[], at: Po
   return { nodes: [...nodes, ...set], bottom: at.y + lines.length * textRow }
 }
 
-function drawEntry({ symbol }: LegendEntry, lines: readonly string[], at: Point): readonly SceneNode[] {
+function drawEntry({ symbol, lines }: SetEntry, at: Point): readonly SceneNode[] {
   const texts = lines.map((line, idx) => startText(line, 'legend', { x: at.x + symbolWidth, y: at.y + idx * textRow }))
   return [...symbol({ x: at.x + symbolMiddle, y: at.y }), ...texts]
 }

@@ -10,7 +10,7 @@ import type { Plan } from '../compute/plan.ts'
 import type { Rigidity } from '../compute/rigidity.ts'
 import type { Corner, Grid } from '../model/grid.ts'
 import type { Wall } from '../model/walls.ts'
-import type { PlanPoint, PlanView, PlanWall } from './view.ts'
+import type { PlanPoint, PlanPointLoad, PlanView, PlanWall } from './view.ts'
 
 export interface LevelPicture {
   readonly level: string
@@ -50,6 +50,7 @@ export function planView(picture: LevelPicture): PlanView {
       load: loads.get(name) ?? '',
     })),
     openings: plan.openings.map(({ name, outline }) => ({ name, outline: outline.map(planPoint) })),
+    pointLoads: pointLoadsOf(mass, language),
     walls: wallsOf(picture, drawn),
     gridX: grid.x.map(({ name, at }) => ({ name, at: at.si })),
     gridY: grid.y.map(({ name, at }) => ({ name, at: at.si })),
@@ -71,10 +72,19 @@ export function planView(picture: LevelPicture): PlanView {
   }
 }
 
+function pointLoadsOf(mass: Mass | undefined, language: Language): readonly PlanPointLoad[] {
+  const points = mass?.points
+  if (points === undefined) return []
+  return points.rows.map((name, i) => {
+    const cell = (column: string) => points.column(column).cell(i)
+    return { name, at: { x: cell('x').si, y: cell('y').si }, load: printed(cell('W'), language) }
+  })
+}
+
 /** Both coordinates with one unit: `23.89, 15.76 ft`. */
 export function pair({ x, y }: Corner, language: Language): string {
   const decimals = columnDecimals([shown(x), shown(y)])
-  const print = (value: Value) => numeralOnPage(fixed(shown(value), decimals), language)
+  const print = (value: Value) => (shown(value) === 0 ? '0' : numeralOnPage(fixed(shown(value), decimals), language))
   return `${print(x)}, ${print(y)} ${unitOnPage(unitText(x.unit))}`
 }
 

@@ -5,21 +5,23 @@
  * a place of its own, the most important first.
  */
 import { areaPlacing, openingPlacing } from './arealabels.ts'
-import type { AxisLayout } from './axis.ts'
+import { type AxisLayout, besidePlan } from './axis.ts'
 import { drawCentres } from './centres.ts'
-import { drawAxis, leftEdge, topEdge } from './dimensions.ts'
+import { bottomEdge, drawAxis, leftEdge, rightEdge, topEdge } from './dimensions.ts'
 import { Field } from './field.ts'
 import { drawFooter, legendOf, notesOf } from './footer.ts'
 import { besideSheet, type Frame } from './frame.ts'
 import { box } from './geometry.ts'
 import { layOut } from './layout.ts'
-import { centresOf, patchesOf } from './onsheet.ts'
+import { drawPointLoads, hatchLoads, loadEntries, loadGroups, pointLoadPlacing, pointLoadSymbol } from './loads.ts'
+import { centresOf, patchesOf, pointMarksOf } from './onsheet.ts'
 import { type Placing, place, placePair, type Sheet } from './placement.ts'
 import { layer, type SceneNode } from './scene.ts'
-import { drawOpenings, drawSlab, groundOf } from './slab.ts'
+import { drawEdges, drawOpenings, groundOf, washOf } from './slab.ts'
 import { svgOf } from './svg.ts'
 import { northPoint, northReach } from './symbols.ts'
 import type { PlanView } from './view.ts'
+import { drawWallChain, type WallChains } from './wallchain.ts'
 import { namePlacing, shearPlacing } from './walllabels.ts'
 import { drawWalls, lookOf, type WallLine, type WallLook, wallLines } from './walls.ts'
 
@@ -30,7 +32,7 @@ const farthest = 6000
 
 /** @returns the whole `<svg>` element; the same view gives the same bytes */
 export function drawPlan(view: PlanView): string {
-  const { frame, top, left } = layOut(view)
+  const { frame, top, left, chains } = layOut(view)
   const field = new Field(besideSheet / 2, frame.width - besideSheet / 2)
   const patches = patchesOf(view, frame)
   const sheet: Sheet = {
@@ -38,14 +40,21 @@ export function drawPlan(view: PlanView): string {
     groundAt: groundOf(patches.areas, patches.openings),
     farthest,
   }
+  const groups = loadGroups(patches.areas)
   const look = lookOf(view.walls, frame.scale)
   const lines = wallLines(view.walls, frame.toSheet, frame.scale, look)
   const { centres, beyond } = centresOf(view, frame)
 
-  const slab = [...drawSlab(patches.areas, field), ...drawOpenings(patches.openings, field)]
-  const axes = [...drawAxis(top, topEdge(frame.plan), field), ...drawAxis(left, leftEdge(frame.plan), field)]
+  const edges = [...drawEdges(patches.areas, field), ...drawOpenings(patches.openings, field)]
+  const axes = [
+    ...drawAxis(top, topEdge(frame.plan), field),
+    ...drawAxis(left, leftEdge(frame.plan), field),
+    ...drawChains(chains, frame, field),
+  ]
   const north = drawNorth(view, frame, top, field)
   const walls = drawWalls(lines, field)
+  const pointMarks = pointMarksOf(view, frame)
+  const pointLoads = drawPointLoads(pointMarks, field)
   const marks = drawCentres(centres, field)
   const governing = lines.filter(({ wall }) => wall.governs)
 
@@ -56,30 +65,48 @@ export function drawPlan(view: PlanView): string {
   const others = setAll({ ...sheet, farthest: view.walls.length > manyWalls ? 0 : farthest }, [
     ...lines.filter(({ wall }) => !wall.governs).map(line => placingsOf(line, look, sheet)),
     ...patches.openings.map(opening => [openingPlacing(opening)]),
+    ...pointMarks.map(mark => [pointLoadPlacing(mark)]),
     ...patches.areas.map(area => [areaPlacing(area, patches.openings)]),
   ])
 
   const notes = [
     ...beyond,
-    ...notesOf(view, thorough.leftOut + others.leftOut, top.unnamed.length + left.unnamed.length),
+    ...notesOf(view, {
+      leftOut: thorough.leftOut + others.leftOut,
+      unnamed: top.unnamed.length + left.unnamed.length,
+      crowded: chains.crowded,
+    }),
   ]
   const footer = drawFooter(
     view,
     frame,
     field,
-    legendOf(view, centres, { legs: marks.legs, shears: thorough.shears || others.shears, look }),
+    [
+      ...legendOf(view, centres, { legs: marks.legs, shears: thorough.shears || others.shears, look }),
+      ...(pointMarks.length > 0 ? [{ symbol: pointLoadSymbol, text: 'point load' }] : []),
+      ...loadEntries(groups),
+    ],
     notes,
   )
   const drawn = [
-    ...layer('pm-slab', slab),
+    ...layer('pm-slab', [...washOf(patches.areas), ...hatchLoads(groups, patches.openings, field.texts()), ...edges]),
     ...layer('pm-axes', axes),
     ...layer('pm-walls', walls),
+    ...layer('pm-loads', pointLoads),
     ...layer('pm-centres', marks.nodes),
     ...layer('pm-labels', [...thorough.nodes, ...others.nodes]),
     ...north,
     ...layer('pm-footer', footer.nodes),
   ]
   return svgOf(view, drawn, { x0: 0, y0: footer.top, x1: frame.width, y1: footer.bottom })
+}
+
+function drawChains(chains: WallChains, { plan }: Frame, field: Field): readonly SceneNode[] {
+  const edges = { top: topEdge, bottom: bottomEdge, left: leftEdge, right: rightEdge } as const
+  return (['top', 'bottom', 'left', 'right'] as const).flatMap(name => {
+    const chain = chains[name]
+    return chain === undefined ? [] : drawWallChain(chain, edges[name](plan), besidePlan, field)
+  })
 }
 
 function drawNorth(view: PlanView, { width }: Frame, top: AxisLayout, field: Field): readonly SceneNode[] {

@@ -17,8 +17,8 @@ import { textWidth } from './textwidth.ts'
 
 const besideSheet = 8
 /** Names and elevations stand left of this. */
-const namesEnd = 168
-const leastFigureRoom = 74
+const namesEnd = 152
+const leastFigureRoom = 64
 const arrowRoom = 54
 const shearRoom = 74
 const gap = 14
@@ -179,7 +179,7 @@ function drawPanel(view: StoreyView, axis: Axis, left: number, heights: Heights)
   const mast = left + arrowRoom
   const zero = mast + gap - scale.low
   const heads = [
-    startText(own(`Along ${axis}`), 'wall', { x: left - 68, y: headY }),
+    startText(own(`Along ${axis}`), 'wall', { x: left - 58, y: headY }),
     endText(own('force'), 'legend', { x: mast, y: headY + 15 }),
     startText(own('storey shear'), 'legend', { x: mast + gap, y: headY + 15 }),
   ]

@@ -22,6 +22,13 @@ export interface PlanArea {
   readonly load: string
 }
 
+/** A load that acts at a point. */
+export interface PlanPointLoad {
+  readonly name: string
+  readonly at: PlanPoint
+  readonly load: string
+}
+
 export interface PlanOpening {
   readonly name: string
   readonly outline: Outline
@@ -50,6 +57,7 @@ export interface PlanView {
   readonly language: Language
   readonly areas: readonly PlanArea[]
   readonly openings: readonly PlanOpening[]
+  readonly pointLoads?: readonly PlanPointLoad[]
   readonly walls: readonly PlanWall[]
   readonly gridX: readonly GridLine[]
   readonly gridY: readonly GridLine[]
