@@ -47,9 +47,7 @@ const turnedRow = 16
 const rowOfText = 18
 /** From the chain to the band of figures that are led there. */
 const bandOfLed = rowOfText + 9
-/** Figures that are led may stand this far past the ends of the chain. */
-const pastEnds = 16
-/** More of them on one edge cost the walls themselves their room. */
+/** More figures led on one edge cost the walls themselves their room. */
 const mostLed = 5
 /** More walls than this are not found by dimensions. */
 const manyWalls = 60
@@ -127,6 +125,9 @@ function chainOf(
   if (bays.every(({ from, to, turned }) => !turned || to.at - from.at >= turnedRow))
     return { bays, led: false, depth: Math.max(rowOfText, widest) + 3 }
   const turned = bays.filter(bay => bay.turned)
+  // Above and to the left grid lines run on past the chain, and no figure stands on one.
+  const stemmed = edge === 'top' || edge === 'left'
+  const pastEnds = stemmed ? -turnedRow / 2 : turnedRow
   if (turned.length > mostLed || turned.length * turnedRow > high - low + 2 * pastEnds) return 'crowded'
   const places = spread(
     turned.map(({ place }) => place),
@@ -134,6 +135,8 @@ function chainOf(
     low - pastEnds,
     high + pastEnds,
   )
+  const onLine = (place: number) => axis.fixed.some(at => Math.abs(axis.toSheet(at) - place) < turnedRow / 2 - 0.01)
+  if (stemmed && places.some(onLine)) return 'crowded'
   const placed = new Map(turned.map((bay, idx) => [bay, places[idx] ?? bay.place]))
   return {
     bays: bays.map(bay => ({ ...bay, place: placed.get(bay) ?? bay.place })),
