@@ -7,11 +7,11 @@
 import { inLanguage } from '../base/language.ts'
 import { arrowKey } from './arrowkey.ts'
 import { scaledArrow, shortestArrow } from './arrows.ts'
-import { drawMarked, type Force, pointPlacing } from './centres.ts'
+import { type Centres, drawMarked, type Force, pointPlacing } from './centres.ts'
 import type { DisplacedView, MovedPoint } from './displacedview.ts'
 import { Field } from './field.ts'
-import { besideBar, lower } from './footer.ts'
-import { besideSheet, type Frame, frameOf } from './frame.ts'
+import { besideBar, type FooterDrawn, lower } from './footer.ts'
+import { besideSheet, type Frame, frameOf, isWithin } from './frame.ts'
 import { add, between, boundsOfPoints, distance, type Point, sidesOf, strokeBox, times, toward } from './geometry.ts'
 import { lettering } from './label.ts'
 import { drawLegend, type LegendEntry, symbolOf } from './legend.ts'
@@ -81,15 +81,16 @@ export function drawDisplaced(view: DisplacedView): string {
 
   const patches = moved.map(outline => ({ name: '', load: '', outline }))
   const sheet: Sheet = { field, groundAt: groundOf(patches, []), farthest }
-  const turn = drawTurn(view, frame, field)
-  const marks = drawMarked(centresOf(view, frame), field)
+  const { centres, beyond } = centresOf(view, frame)
+  const turn = centres.rigidity ? drawTurn(view, frame, field) : []
+  const marks = drawMarked(centres, field)
   const moves = [view.mass, view.corner].map(point => drawMove(point, displaced, frame, field))
   const named = setAll(
     { ...sheet, farthest: view.walls.length > manyWalls ? 0 : farthest },
     lines.map(line => namePlacing(line, sheet)),
   )
   const labels = setAll(sheet, [...marks.labels, cornerPlacing(view.corner, frame.toSheet(displaced(view.corner.at)))])
-  const footer = drawFoot(view, frame, field, factor, named.leftOut)
+  const footer = drawFoot(view, frame, field, factor, centres, [...beyond, ...leftOutNotes(view, named.leftOut)])
   const nodes = [
     ...layer('pm-slab', [
       element('path', { class: 'pm-wash', 'fill-rule': 'evenodd', d: moved.map(closed).join(' ') }),
@@ -114,17 +115,30 @@ export function drawDisplaced(view: DisplacedView): string {
   return svgOf(view, nodes, { x0: 0, y0: footer.top, x1: frame.width, y1: footer.bottom })
 }
 
-function centresOf(view: DisplacedView, { toSheet }: Frame): Parameters<typeof drawMarked>[0] {
+/** The marks that lie on the sheet, and for each that lies beyond it a line that tells what it would. */
+function centresOf(
+  view: DisplacedView,
+  { toSheet, plan }: Frame,
+): { readonly centres: Centres; readonly beyond: readonly string[] } {
   const { force, mass, centre, printed } = view
+  const onSheet = (p: PlanPoint): boolean => isWithin(toSheet(p), plan, 3)
   const acts: Force | undefined = force && {
     at: toSheet(force.at),
     angle: Math.atan2(-force.y, force.x),
     text: force.printed,
   }
+  const text = `CR ${printed.centre}`
+  const more = `φ = ${printed.rotation}`
   return {
-    mass: { at: toSheet(mass.at), text: `${mass.name} ${mass.printed}` },
-    rigidity: { at: toSheet(centre.at), text: `CR ${printed.centre}`, more: `φ = ${printed.rotation}` },
-    ...(acts ? { force: acts } : {}),
+    centres: {
+      mass: { at: toSheet(mass.at), text: `${mass.name} ${mass.printed}` },
+      ...(onSheet(centre.at) ? { rigidity: { at: toSheet(centre.at), text, more } } : {}),
+      ...(force && acts && onSheet(force.at) ? { force: acts } : {}),
+    },
+    beyond: [
+      ...(onSheet(centre.at) ? [] : [`Beyond the sketch: ${text}, ${more}`]),
+      ...(force && !onSheet(force.at) ? [`Acts beyond the sketch: ${force.printed}`] : []),
+    ],
   }
 }
 
@@ -176,17 +190,25 @@ function setAll(
   return { nodes: set.flatMap(nodes => nodes ?? []), leftOut: set.filter(nodes => nodes === undefined).length }
 }
 
+function leftOutNotes({ language }: DisplacedView, leftOut: number): readonly string[] {
+  if (leftOut === 0) return []
+  return [inLanguage(`${leftOut} ${leftOut === 1 ? 'name is' : 'names are'} left out for want of room.`, language)]
+}
+
 /** The scale of the plan, what each line is, and the scale of the displacements. */
-function drawFoot(view: DisplacedView, frame: Frame, field: Field, factor: number, leftOut: number) {
+function drawFoot(
+  view: DisplacedView,
+  frame: Frame,
+  field: Field,
+  factor: number,
+  centres: Centres,
+  notes: readonly string[],
+): FooterDrawn {
   const held = field.bounds() ?? frame.plan
   const y = Math.max(held.y1, frame.plan.y1 + 14) + 24
   const x = 24
   const bar = drawScaleBar({ x, y }, frame.scale * view.scaleUnit.metres, view.scaleUnit.name, view.language)
-  const entries = entriesOf(view, frame, factor)
-  const notes =
-    leftOut === 0
-      ? []
-      : [inLanguage(`${leftOut} ${leftOut === 1 ? 'name is' : 'names are'} left out for want of room.`, view.language)]
+  const entries = entriesOf(view, frame, factor, centres)
   const legend = lower(
     drawLegend(entries, notes, { x, y: y + 40 }, frame.width - 16 - x),
     besideBar(entries, notes, { x: x + bar.width + 40, y }, frame.width - 16),
@@ -198,8 +220,13 @@ function drawFoot(view: DisplacedView, frame: Frame, field: Field, factor: numbe
   }
 }
 
-function entriesOf(view: DisplacedView, { scale }: Frame, factor: number): readonly LegendEntry[] {
-  const { language, displacementUnit, forceWords, force } = view
+function entriesOf(
+  view: DisplacedView,
+  { scale }: Frame,
+  factor: number,
+  { force, rigidity }: Centres,
+): readonly LegendEntry[] {
+  const { language, displacementUnit, forceWords } = view
   const own = (text: string): string => inLanguage(text, language)
   const room = 1000 * scale
   const moves = factor === 1 ? undefined : arrowKey(room / scale / factor, room, displacementUnit, language)
@@ -212,6 +239,6 @@ function entriesOf(view: DisplacedView, { scale }: Frame, factor: number): reado
       : []),
     ...(force ? [{ symbol: symbolOf.force, text: forceWords }] : []),
     { symbol: symbolOf.centreOfMass, text: own('centre of mass') },
-    { symbol: symbolOf.centreOfRigidity, text: own('centre of rigidity, rotation φ') },
+    ...(rigidity ? [{ symbol: symbolOf.centreOfRigidity, text: own('centre of rigidity, rotation φ') }] : []),
   ]
 }

@@ -17,10 +17,10 @@ import { textWidth } from './textwidth.ts'
 
 const besideSheet = 8
 /** Names and elevations stand left of this. */
-const namesEnd = 152
+const namesEnd = 172
 const leastFigureRoom = 64
 const arrowRoom = 54
-const shearRoom = 74
+const shearRoom = 66
 const gap = 14
 const panelGap = 8
 /** Levels nearer than this on the sheet have their texts moved apart, and led to their lines. */
