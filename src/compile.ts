@@ -4,7 +4,7 @@ import type { Diagnostic } from './base/diagnostic.ts'
 import { sorted } from './base/report.ts'
 import { type Source, sourceOf } from './base/span.ts'
 import { worksheet } from './compute/worksheet.ts'
-import { sketchPlan } from './draw/sketch.ts'
+import { sketchDisplaced, sketchPlan, sketchStoreys } from './draw/sketch.ts'
 import { sketchElevation } from './draw/sketch-elevation.ts'
 import {
   closingItems,
@@ -58,6 +58,8 @@ export function compileTree(tree: Root, source: Source, nearby: Nearby = nothing
   const context = new Context(choices.language, source, basis, {
     plan: (level, caseName) => sketchPlan(sheet, level, caseName, choices),
     elevation: (level, wall, caseName) => sketchElevation(sheet, level, wall, caseName, choices),
+    displaced: (level, displacement) => sketchDisplaced(level, displacement, choices),
+    storeys: storeys => sketchStoreys(storeys, choices),
   })
   const { worked, asked, shown } = explainBlocks(document, sheet, context)
   const template = readTemplate(choices.template, nearby)

@@ -92,7 +92,12 @@ const ownForce = {
 }
 
 /** The force of the level itself, or the sum from the levels at and above it. */
-export function storeyShear(level: string, axis: Axis, acting: readonly Acting[], display: Display): Value {
+export function storeyShear(
+  level: string,
+  axis: Axis,
+  acting: readonly Pick<Acting, 'level' | 'force'>[],
+  display: Display,
+): Value {
   const from = acting.flatMap(({ level, force }) => (force[axis] ? [{ level, value: force[axis] }] : []))
   const [only, ...more] = from
   const id = `${level}.storey.${axis}`

@@ -1,7 +1,7 @@
 /** The whole building at work: every value by its id, each worked when it is first asked for. */
 import type { Diagnostic } from '../base/diagnostic.ts'
 import { namesIn } from '../base/expr.ts'
-import { Ledger, type Result } from '../base/ledger.ts'
+import { all, Ledger, type Result } from '../base/ledger.ts'
 import { bad, good } from '../base/outcome.ts'
 import type { Span } from '../base/span.ts'
 import type { Value, Word } from '../base/value.ts'
@@ -18,6 +18,8 @@ import type { Block } from '../read/block.ts'
 import type { Text } from '../read/text.ts'
 import { constructionValue, levelIds, levelValue } from './ids.ts'
 import { type LevelWork, levelWork } from './level.ts'
+import { topicMissing } from './level-faults.ts'
+import { type LoadedLevel, type Storeys, workStoreys } from './storeys.ts'
 
 /** A value that a cell works from others, and the place of the cell. */
 export interface StatedCell {
@@ -30,6 +32,8 @@ export interface Worksheet {
   readonly grid: () => Result<Grid>
   readonly levels: readonly LevelWork[]
   readonly levelLines: () => Result<readonly LevelLine[]>
+  /** Forces and storey shears of every level. */
+  readonly storeys: () => Result<Storeys>
   readonly constructions: ReadonlyMap<string, () => Result<Construction>>
   /** The value of each line of the equation blocks, by its place. */
   readonly equation: (line: Text) => Result<Value>
@@ -87,6 +91,28 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
       },
     }),
   )
+
+  const storeys = ledger.once('storeys', levels[0]?.anchor ?? nowhere, (): Result<Storeys> => {
+    const stated = levelLines()
+    if (!stated.ok) return stated
+    const loaded = all(
+      stated.value.flatMap(({ name, elevation }): readonly Result<LoadedLevel>[] => {
+        const level = levels.find(other => other.name === name)
+        if (!level) return []
+        const forces = level.forces()
+        if (!forces.ok) return [forces]
+        if (!forces.value) return [bad(forcesMissing(level))]
+        return [good({ level: name, ...(elevation ? { elevation } : {}), force: forces.value })]
+      }),
+    )
+    return loaded.ok ? good(workStoreys(loaded.value, scope.display)) : loaded
+  })
+
+  /** A block of forces that found no level is the cause of what this one lacks. */
+  function forcesMissing({ name, anchor }: LevelWork): readonly Diagnostic[] {
+    const strays = givens.strays('forces')
+    return strays.length > 0 ? strays : [topicMissing(name, 'forces', anchor)]
+  }
 
   const lines = readEquations(givens.equations)
   const limits = new Map<Text, () => Result<Limit>>(
@@ -176,6 +202,7 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
     grid,
     levels,
     levelLines,
+    storeys,
     constructions,
     equationLines: [...lines.keys()],
     equation: line => {

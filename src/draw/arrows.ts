@@ -16,6 +16,24 @@ export function thinArrow(middle: Point, angle: number, length: number): SceneEl
   return element('path', { class: 'pm-shear', d })
 }
 
+/** What is too small for a shaft to scale has its barbs alone, which tell its direction. */
+export function bareHead(middle: Point, angle: number): SceneElement {
+  const u = toward(angle)
+  const tip = add(middle, times(u, barb / 2))
+  const neck = add(tip, times(u, -barb))
+  const [left, right] = [add(neck, times(normal(u), halfBarb)), add(neck, times(normal(u), -halfBarb))]
+  return element('path', {
+    class: 'pm-shear',
+    d: words('M', left.x, left.y, 'L', tip.x, tip.y, 'L', right.x, right.y),
+  })
+}
+
+/** An arrow to scale, or its head alone where it would be shorter than `shortestArrow`. */
+export const scaledArrow = (middle: Point, angle: number, length: number): SceneElement =>
+  length < shortestArrow ? bareHead(middle, angle) : thinArrow(middle, angle, length)
+
+export const shortestArrow = 7
+
 /** How wide `broadArrow` is across its head. */
 export const broadArrowWidth = 18
 const broadHead = 15

@@ -44,10 +44,12 @@ export interface AxisInput {
   /** How far stems may stray along the axis. */
   readonly low: number
   readonly high: number
+  /** Depth of a chain of wall ends between the plan and the grid's own. */
+  readonly inner: number
 }
 
 /** Room kept beside the plan for names of the outermost walls. */
-const besidePlan = 36
+export const besidePlan = 36
 const rowOfText = 18
 const bubbleSize = 21
 const widestBubble = 66
@@ -94,7 +96,7 @@ function complete(
     ...overall,
     endsOnly,
     bubble,
-    out: distances(stems, bays, whole !== undefined, bubble.out),
+    out: distances(stems, bays, whole !== undefined, bubble.out, input.inner),
   }
 }
 
@@ -137,15 +139,22 @@ export const bubbleName = (name: string): Lettering => lettering('bubble', wides
  * Outward from the plan: the chain, its turned texts, the whole length, the bubbles.
  * Where stems jog, the whole length is taken inside the chain, where they still run true.
  */
-function distances(stems: readonly Stem[], bays: readonly Bay[], whole: boolean, bubbleOut: number): Distances {
+function distances(
+  stems: readonly Stem[],
+  bays: readonly Bay[],
+  whole: boolean,
+  bubbleOut: number,
+  inner: number,
+): Distances {
   const jogs = stems.some(({ stop, place }) => Math.abs(place - stop.at) > 0.5)
   const turnedWidth = Math.max(0, ...bays.map(bay => (bay.set === 'turned' ? bay.text.width : 0)))
-  const chain = besidePlan + (jogs && whole ? rowOfText + 4 : 0)
-  const past = bays.length > 0 ? chain + rowOfText : 6
+  const first = besidePlan + inner
+  const chain = first + (jogs && whole ? rowOfText + 4 : 0)
+  const past = bays.length > 0 ? chain + rowOfText : inner > 0 ? first : 6
   const jogTo = jogs ? past + 12 : past
   const turned = jogs ? jogTo + 1 : chain + 4
   const afterTexts = Math.max(jogTo, turned + turnedWidth + 1)
-  const overall = jogs ? besidePlan : afterTexts + 3
+  const overall = jogs ? first : afterTexts + 3
   const bubbles = whole && !jogs ? overall + rowOfText : afterTexts + 2
   const rowStep = bubbleOut + 4
   const rows = Math.max(0, ...stems.map(({ row }) => row + 1))

@@ -11,6 +11,8 @@ import { circleRadius, lozenge, lozengeReach, openLozenge, quarteredCircle } fro
 export interface Mark {
   readonly at: Point
   readonly text: string
+  /** A second line. */
+  readonly more?: string
 }
 
 export interface Force {
@@ -40,19 +42,26 @@ export interface Centres {
   readonly force?: Force
 }
 
-export function drawCentres({ mass, rigidity, force }: Centres, field: Field): CentresDrawn {
+export function drawCentres(centres: Centres, field: Field): CentresDrawn {
+  const { mass, rigidity, force } = centres
   const gap = mass && rigidity ? distance(mass.at, rigidity.at) : Number.POSITIVE_INFINITY
   const legs = mass && rigidity && gap > touching ? legsBetween(mass.at, rigidity.at, force) : []
-  for (const mark of [mass, rigidity]) if (mark) field.addInk(markBox(mark.at, gap))
+  const marked = drawMarked(centres, field)
   legs.slice(1).forEach((b, idx) => {
     field.addLine({ a: legs[idx] ?? b, b }, priceOfCrossing.legs)
   })
+  return { nodes: [...drawLegs(legs), ...marked.nodes], labels: marked.labels, legs: legs.length > 0 }
+}
+
+/** The marks of the centres and the arrow of the force, without the legs between them. */
+export function drawMarked({ mass, rigidity, force }: Centres, field: Field): Omit<CentresDrawn, 'legs'> {
+  const gap = mass && rigidity ? distance(mass.at, rigidity.at) : Number.POSITIVE_INFINITY
+  for (const mark of [mass, rigidity]) if (mark) field.addInk(markBox(mark.at, gap))
   const arrow = force === undefined ? [] : drawForce(force, mass?.at, rigidity?.at, field)
   const labels = [mass, rigidity].flatMap(mark => (mark ? [markPlacing(mark, gap)] : []))
   return {
-    nodes: [...drawLegs(legs), ...arrow, ...drawMarks(mass?.at, rigidity?.at, gap)],
+    nodes: [...arrow, ...drawMarks(mass?.at, rigidity?.at, gap)],
     labels: force === undefined ? labels : [...labels, forcePlacing(force, mass?.at, rigidity?.at)],
-    legs: legs.length > 0,
   }
 }
 
@@ -86,14 +95,18 @@ function markBox(at: Point, gap: number): ReturnType<typeof box> {
   return box(at, 2 * reach, 2 * reach)
 }
 
-function markPlacing({ at, text }: Mark, gap: number): Placing {
-  const letters = lettering('centre', widestLabel, text)
-  const reach = markBox(at, gap).halfWidth
+function markPlacing({ at, text, more = '' }: Mark, gap: number): Placing {
+  return pointPlacing(lettering('centre', widestLabel, text, more), at, markBox(at, gap).halfWidth)
+}
+
+/** A label about a point, clear of what lies within `reach` of it. */
+export function pointPlacing(letters: Lettering, at: Point, reach: number): Placing {
   const around = aroundPoint(at, reach + 2, letters.width / 2, letters.height / 2)
   return {
     near: around.map((p, idx) => labelSpot(towards(letters, p, at), p, 0, idx * 0.8)),
     anchors: [at],
     free: p => labelSpot(towards(letters, p, at), p, 0, 0),
+    reach,
   }
 }
 

@@ -18,6 +18,8 @@ export interface Edge {
   readonly depth: number
   /** Which end of a dimension line has free ground beyond it: before the first stop, or past the last. */
   readonly freeEnd: 'before' | 'past'
+  /** Whether text above a line, as it is read, lies farther out or nearer to the plan. */
+  readonly textOut: 1 | -1
 }
 
 const quarterTurn = Math.PI / 2
@@ -26,12 +28,20 @@ const tick = 3.6
 
 export function topEdge(plan: Bounds): Edge {
   const at = (along: number, out: number): Point => ({ x: along, y: plan.y0 - out })
-  return { at, follow: 0, across: -quarterTurn, depth: plan.y1 - plan.y0, freeEnd: 'before' }
+  return { at, follow: 0, across: -quarterTurn, depth: plan.y1 - plan.y0, freeEnd: 'before', textOut: 1 }
 }
 
 export function leftEdge(plan: Bounds): Edge {
   const at = (along: number, out: number): Point => ({ x: plan.x0 - out, y: along })
-  return { at, follow: -quarterTurn, across: 0, depth: plan.x1 - plan.x0, freeEnd: 'past' }
+  return { at, follow: -quarterTurn, across: 0, depth: plan.x1 - plan.x0, freeEnd: 'past', textOut: 1 }
+}
+
+export function bottomEdge(plan: Bounds): Edge {
+  return { ...topEdge(plan), at: (along, out) => ({ x: along, y: plan.y1 + out }), textOut: -1 }
+}
+
+export function rightEdge(plan: Bounds): Edge {
+  return { ...leftEdge(plan), at: (along, out) => ({ x: plan.x1 + out, y: along }), textOut: -1 }
 }
 
 /** Draws the edge and takes its place in the field. */

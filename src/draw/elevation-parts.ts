@@ -79,7 +79,7 @@ export function drawLevel(
   }
   field.addLine(line, Number.POSITIVE_INFINITY)
   field.addText(letteringBox(letters, middle))
-  return [path('pm-level', [line.a, line.b]), ...setLettering(letters, middle, 0, 'clear')]
+  return [path('pm-level-line', [line.a, line.b]), ...setLettering(letters, middle, 0, 'clear')]
 }
 
 /** Room between the head of the wall and the bubbles, where the shear is shown. */

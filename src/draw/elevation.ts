@@ -14,27 +14,16 @@ import { Field } from './field.ts'
 import { besideSheet } from './frame.ts'
 import { type Bounds, box, type Point } from './geometry.ts'
 import { lettering, letteringBox, setLettering, startText } from './label.ts'
-import { picture } from './picture.ts'
 import { type Placing, place, type Sheet, type Spot } from './placement.ts'
 import { drawScaleBar } from './scalebar.ts'
-import { element, layer, type SceneNode, serialise } from './scene.ts'
-import { rootClass, textStyles } from './style.ts'
+import { element, layer, type SceneNode } from './scene.ts'
+import { textStyles } from './style.ts'
+import { svgOf } from './svg.ts'
 import { shorten, wrap } from './textwidth.ts'
 
 /** A longer leader would be harder to follow than the table of piers or the block of openings. */
 const farthest = 90
 const quarterTurn = Math.PI / 2
-
-const style = [
-  ['.pm-face', 'fill:var(--paper,#fffdf8);stroke:none'],
-  ['.pm-face-edge', 'fill:none;stroke:var(--ink,#1d1c1a);stroke-width:1.8;stroke-linejoin:miter'],
-  ['.pm-pier', 'fill:var(--wash,#f5efe3);stroke:var(--soft,#6b675f);stroke-width:.5'],
-  ['.pm-void', 'fill:var(--paper,#fffdf8);stroke:var(--ink,#1d1c1a);stroke-width:1.3'],
-  ['.pm-foot', 'fill:none;stroke:var(--ink,#1d1c1a);stroke-width:2.4'],
-  ['.pm-level', 'fill:none;stroke:var(--soft,#6b675f);stroke-width:.8'],
-]
-  .map(([selector, body]) => `.${rootClass} ${selector}{${body}}`)
-  .join('')
 
 /** @returns the whole `<svg>` element; the same view gives the same bytes */
 export function drawElevation(view: ElevationView): string {
@@ -44,7 +33,7 @@ export function drawElevation(view: ElevationView): string {
   const sheet: Sheet = { field, groundAt: groundOf(view, frame), farthest }
   const face = drawFace(view, frame, field)
   const { bottom, side } = chainsOf(view, frame)
-  const chains = [...drawChain(bottom, bottomEdge(frame.face), field), ...drawChain(side, leftEdge(frame.face), field)]
+  const chains = [...drawChain(bottom, belowFace(frame.face), field), ...drawChain(side, besideFace(frame.face), field)]
   const levelLines = levels.flatMap(level => drawLevel(level, frame, field))
   const stems = stemsOf(view, frame)
   const grid = drawGrid(view, stems ?? [], frame, field)
@@ -57,8 +46,9 @@ export function drawElevation(view: ElevationView): string {
   const notes = [...view.notes, ...notesOf(view, unnamed, bottom.leftOut + side.leftOut, stems ? 0 : view.grid.length)]
   const held = field.bounds() ?? frame.face
   const footer = drawFooter(view, notes, frame, held.y1 + 22)
-  return serialise(
-    picture(view, { x0: 0, y0: held.y0 - besideSheet, x1: frame.width, y1: footer.bottom }, style, [
+  return svgOf(
+    view,
+    [
       ...layer('pm-walls', face),
       ...layer('pm-axes', [...grid, ...levelLines, ...chains]),
       ...layer(
@@ -66,24 +56,27 @@ export function drawElevation(view: ElevationView): string {
         labels.flatMap(nodes => nodes ?? []),
       ),
       ...layer('pm-footer', footer.nodes),
-    ]),
+    ],
+    { x0: 0, y0: held.y0 - besideSheet, x1: frame.width, y1: footer.bottom },
   )
 }
 
-const bottomEdge = ({ y0, y1 }: Bounds): Edge => ({
+const belowFace = ({ y0, y1 }: Bounds): Edge => ({
   at: (along, out) => ({ x: along, y: y1 + out }),
   follow: 0,
   across: -quarterTurn,
   depth: y1 - y0,
   freeEnd: 'before',
+  textOut: 1,
 })
 
-const leftEdge = ({ x0, x1 }: Bounds): Edge => ({
+const besideFace = ({ x0, x1 }: Bounds): Edge => ({
   at: (along, out) => ({ x: x0 - out, y: along }),
   follow: -quarterTurn,
   across: 0,
   depth: x1 - x0,
   freeEnd: 'before',
+  textOut: 1,
 })
 
 function chainsOf({ length, height, openings, dimension }: ElevationView, frame: Frame) {

@@ -47,6 +47,7 @@ export class Field {
   /** Text and ink apart from thin lines: they refuse a label at once, and most labels on a crowded sheet are refused. */
   private readonly solid: Cells = new Map()
   private readonly thin: Cells = new Map()
+  private readonly set: Box[] = []
   private held: Bounds | undefined
   private question = 0
 
@@ -57,6 +58,7 @@ export class Field {
   ) {}
 
   addText(box: Box): void {
+    this.set.push(box)
     this.add({ kind: 'text', box, price: Number.POSITIVE_INFINITY })
   }
 
@@ -105,6 +107,11 @@ export class Field {
       sum += kind === 'ink' ? leaderOverInk : isAlong(box, line) ? leaderAlongLine : leaderOverLine
     }
     return sum
+  }
+
+  /** Boxes of all texts set so far, in the order in which they were set. */
+  texts(): readonly Box[] {
+    return this.set
   }
 
   /** Everything drawn so far lies within. */

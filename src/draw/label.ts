@@ -57,6 +57,11 @@ export function startText(text: string, role: TextRole, at: Point): SceneElement
   return textElement({ text }, `pm-start pm-t-${role}`, { x: at.x, y: at.y + textStyles[role].size * baselineDrop }, 0)
 }
 
+/** A text that ends at `at`, in the same way. */
+export function endText(text: string, role: TextRole, at: Point): SceneElement {
+  return textElement({ text }, `pm-end pm-t-${role}`, { x: at.x, y: at.y + textStyles[role].size * baselineDrop }, 0)
+}
+
 function textElement({ text, full }: Fitted, className: string, at: Point, angle: number): SceneElement {
   const place =
     angle === 0

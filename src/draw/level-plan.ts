@@ -10,7 +10,7 @@ import type { Plan } from '../compute/plan.ts'
 import type { Rigidity } from '../compute/rigidity.ts'
 import type { Corner, Grid } from '../model/grid.ts'
 import type { Wall } from '../model/walls.ts'
-import type { PlanPoint, PlanView, PlanWall } from './view.ts'
+import type { PlanPoint, PlanPointLoad, PlanView, PlanWall } from './view.ts'
 
 export interface LevelPicture {
   readonly level: string
@@ -19,6 +19,8 @@ export interface LevelPicture {
   readonly grid: Grid
   readonly plan: Plan
   readonly walls: readonly Wall[]
+  /** Thickness of a construction, where it can be read. */
+  readonly thickness?: (construction: string) => Value | undefined
   readonly mass?: Mass
   readonly rigidity?: Rigidity
   readonly distribution?: Distribution
@@ -26,14 +28,15 @@ export interface LevelPicture {
   readonly caseName?: string
 }
 
-const point = ({ x, y }: Corner): PlanPoint => ({ x: x.si, y: y.si })
+export const planPoint = ({ x, y }: Corner): PlanPoint => ({ x: x.si, y: y.si })
 
 export function planView(picture: LevelPicture): PlanView {
   const { level, language, system, grid, plan, mass, rigidity, distribution, caseName } = picture
   const words = (text: string) => inLanguage(text, language)
   const drawn = distribution?.cases.find(each => each.case.name === caseName)
   const scale = system === 'US' ? unit('ft') : unit('m')
-  const unitOfShear = distribution ? unitOnPage(unitText(distribution.design.column('V').cell(0).unit)) : ''
+  const forceUnit = distribution?.design.column('V').cell(0).unit
+  const unitOfShear = forceUnit ? unitOnPage(unitText(forceUnit)) : ''
   const loads = new Map(
     mass?.areas?.rows.map((row, i) => [row, printed(required(mass.areas?.column('w').cell(i)), language)]) ?? [],
   )
@@ -41,17 +44,23 @@ export function planView(picture: LevelPicture): PlanView {
     title: words(`Plan of ${verbatim(level)}`),
     description: words(describe(picture)),
     language,
-    areas: plan.areas.map(({ name, outline }) => ({ name, outline: outline.map(point), load: loads.get(name) ?? '' })),
-    openings: plan.openings.map(({ name, outline }) => ({ name, outline: outline.map(point) })),
+    areas: plan.areas.map(({ name, outline }) => ({
+      name,
+      outline: outline.map(planPoint),
+      load: loads.get(name) ?? '',
+    })),
+    openings: plan.openings.map(({ name, outline }) => ({ name, outline: outline.map(planPoint) })),
+    pointLoads: pointLoadsOf(mass, language),
     walls: wallsOf(picture, drawn),
     gridX: grid.x.map(({ name, at }) => ({ name, at: at.si })),
     gridY: grid.y.map(({ name, at }) => ({ name, at: at.si })),
-    ...(mass ? { centreOfMass: { at: point(mass), printed: pair(mass, language) } } : {}),
-    ...(rigidity ? { centreOfRigidity: { at: point(rigidity), printed: pair(rigidity, language) } } : {}),
+    ...(mass ? { centreOfMass: { at: planPoint(mass), printed: pair(mass, language) } } : {}),
+    ...(rigidity ? { centreOfRigidity: { at: planPoint(rigidity), printed: pair(rigidity, language) } } : {}),
     ...(drawn && mass && rigidity ? { force: forceOf(drawn, rigidity, mass, language) } : {}),
     ...(grid.north ? { north: grid.north.si } : {}),
     dimension: metres => onPage(asTyped(metres / scale.scale), scale, language),
     scaleUnit: { metres: scale.scale, name: system === 'US' ? 'ft' : 'm' },
+    ...(forceUnit ? { forceUnit: { si: forceUnit.scale, name: unitOfShear } } : {}),
     legend: {
       shear: drawn
         ? `shear of a wall in ${caseOnPage(drawn.case.name)}, ${unitOfShear}`
@@ -63,19 +72,39 @@ export function planView(picture: LevelPicture): PlanView {
   }
 }
 
+function pointLoadsOf(mass: Mass | undefined, language: Language): readonly PlanPointLoad[] {
+  const points = mass?.points
+  if (points === undefined) return []
+  return points.rows.map((name, i) => {
+    const cell = (column: string) => points.column(column).cell(i)
+    return { name, at: { x: cell('x').si, y: cell('y').si }, load: printed(cell('W'), language) }
+  })
+}
+
 /** Both coordinates with one unit: `23.89, 15.76 ft`. */
-function pair({ x, y }: Corner, language: Language): string {
+export function pair({ x, y }: Corner, language: Language): string {
   const decimals = columnDecimals([shown(x), shown(y)])
-  const print = (value: Value) => numeralOnPage(fixed(shown(value), decimals), language)
+  const print = (value: Value) => (shown(value) === 0 ? '0' : numeralOnPage(fixed(shown(value), decimals), language))
   return `${print(x)}, ${print(y)} ${unitOnPage(unitText(x.unit))}`
 }
 
-function wallsOf({ walls, distribution, language }: LevelPicture, drawn: CaseResult | undefined): readonly PlanWall[] {
+function wallsOf(
+  { walls, distribution, language, thickness }: LevelPicture,
+  drawn: CaseResult | undefined,
+): readonly PlanWall[] {
   const column = drawn?.walls.column('V') ?? distribution?.design.column('V')
   const decimals =
     column && distribution ? columnDecimals(distribution.design.rows.map((_, i) => shown(column.cell(i)))) : 0
-  return walls.map(({ name, from, to }, i): PlanWall => {
-    const placed = { name, from: point(from), to: point(to), governs: distribution?.governingWall === i }
+  return walls.map((wall, i): PlanWall => {
+    const { name, from, to } = wall
+    const t = wall.kind === 'built' ? thickness?.(wall.construction.text) : undefined
+    const placed = {
+      name,
+      from: planPoint(from),
+      to: planPoint(to),
+      ...(t ? { thickness: t.si } : {}),
+      governs: distribution?.governingWall === i,
+    }
     if (!column) return placed
     const value = column.cell(i)
     return {
@@ -92,7 +121,12 @@ function wallsOf({ walls, distribution, language }: LevelPicture, drawn: CaseRes
  * The storey shear of a case on the line where it acts, which its moment about the centre of rigidity tells: with
  * several levels that is the resultant of their forces. Along its line it is drawn at the centre of mass.
  */
-function forceOf({ case: { axis }, shear, moment }: CaseResult, rigidity: Rigidity, mass: Mass, language: Language) {
+export function forceOf(
+  { case: { axis }, shear, moment }: CaseResult,
+  rigidity: Rigidity,
+  mass: Mass,
+  language: Language,
+) {
   const off = moment.si / shear.si
   const at = axis === 'x' ? { x: mass.x.si, y: rigidity.y.si - off } : { x: rigidity.x.si + off, y: mass.y.si }
   return {

@@ -2,6 +2,7 @@
 import type { Centres, Force, Mark } from './centres.ts'
 import { type Frame, isWithin } from './frame.ts'
 import type { Point } from './geometry.ts'
+import type { PointMark } from './loads.ts'
 import type { Patch } from './slab.ts'
 import type { PlanView } from './view.ts'
 
@@ -14,6 +15,9 @@ export function patchesOf(
     openings: view.openings.map(({ name, outline }) => ({ name, load: '', outline: outline.map(toSheet) })),
   }
 }
+
+export const pointMarksOf = ({ pointLoads = [] }: PlanView, { toSheet, plan }: Frame): readonly PointMark[] =>
+  pointLoads.map(({ name, load, at }) => ({ name, load, at: toSheet(at) })).filter(({ at }) => isWithin(at, plan, 3))
 
 /** The centres that lie on the sheet; for each that lies beyond it, a line that says so. */
 export function centresOf(

@@ -33,6 +33,8 @@ export interface Placing {
   /** Where a leader may end, and the label at the other end of it. */
   readonly anchors: readonly Point[]
   readonly free: (at: Point, anchor: Point) => Spot
+  /** A leader ends this far from its anchor: at the rim of the mark that it names. */
+  readonly reach?: number
   /** What the legend has to explain once it is set. */
   readonly shows?: 'shear'
 }
@@ -45,11 +47,15 @@ export interface Sheet {
   readonly farthest: number
 }
 
+interface Leader extends Segment {
+  readonly dot: boolean
+}
+
 interface Choice {
   readonly spot: Spot
   readonly price: number
   /** From the label to the thing it names. */
-  readonly leader?: Segment
+  readonly leader?: Leader
 }
 
 /** What a label pays for lying across a thin line of each sort. */
@@ -167,28 +173,29 @@ function outward(sheet: Sheet, placing: Placing, inHand = Number.POSITIVE_INFINI
       for (const anchor of placing.anchors) {
         const spot = placing.free(add(anchor, away), anchor)
         const own = atLeast + priceOf(sheet.field, spot)
-        if (own < Math.min(best?.price ?? inHand, inHand)) best = cheaper(best, led(sheet.field, spot, anchor, own))
+        if (own < Math.min(best?.price ?? inHand, inHand))
+          best = cheaper(best, led(sheet.field, spot, anchor, placing.reach ?? 0, own))
       }
     }
   }
   return best
 }
 
-function led(field: Field, spot: Spot, anchor: Point, price: number): Choice {
-  const start = leaderStart(spot, anchor)
+function led(field: Field, spot: Spot, named: Point, reach: number, price: number): Choice {
+  const start = leaderStart(spot, named)
+  const anchor = add(named, times(direction(named, start), Math.min(reach, distance(named, start))))
   // The last of it lies on the thing itself, which is no crossing.
   const short = { a: start, b: add(anchor, times(direction(anchor, start), Math.min(6, distance(anchor, start)))) }
   const total = price + Math.min(field.leaderPrice(short), leaderOverText)
-  return { spot, price: total, leader: { a: start, b: anchor } }
+  return { spot, price: total, leader: { a: start, b: anchor, dot: reach === 0 } }
 }
 
-function drawLeader(field: Field, { a, b }: Segment): readonly SceneNode[] {
+/** It ends in a dot on what has extent, and plainly at the rim of a mark. */
+function drawLeader(field: Field, { a, b, dot }: Leader): readonly SceneNode[] {
   if (distance(a, b) < 4) return []
   field.addLine({ a, b }, priceOfCrossing.leader)
-  return [
-    element('path', { class: 'pm-leader', d: words('M', a.x, a.y, 'L', b.x, b.y) }),
-    element('circle', { class: 'pm-leader-end', cx: b.x, cy: b.y, r: 1.5 }),
-  ]
+  const line = element('path', { class: 'pm-leader', d: words('M', a.x, a.y, 'L', b.x, b.y) })
+  return dot ? [line, element('circle', { class: 'pm-leader-end', cx: b.x, cy: b.y, r: 1.5 })] : [line]
 }
 
 function leaderStart(spot: Spot, anchor: Point): Point {

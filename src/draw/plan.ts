@@ -5,21 +5,23 @@
  * a place of its own, the most important first.
  */
 import { areaPlacing, openingPlacing } from './arealabels.ts'
-import type { AxisLayout } from './axis.ts'
+import { type AxisLayout, besidePlan } from './axis.ts'
 import { drawCentres } from './centres.ts'
-import { drawAxis, leftEdge, topEdge } from './dimensions.ts'
+import { bottomEdge, drawAxis, leftEdge, rightEdge, topEdge } from './dimensions.ts'
 import { Field } from './field.ts'
 import { drawFooter, legendOf, notesOf } from './footer.ts'
 import { besideSheet, type Frame } from './frame.ts'
-import { type Bounds, box } from './geometry.ts'
+import { box } from './geometry.ts'
 import { layOut } from './layout.ts'
-import { centresOf, patchesOf } from './onsheet.ts'
+import { drawPointLoads, hatchLoads, loadEntries, loadGroups, pointLoadPlacing, pointLoadSymbol } from './loads.ts'
+import { centresOf, patchesOf, pointMarksOf } from './onsheet.ts'
 import { type Placing, place, placePair, type Sheet } from './placement.ts'
-import { element, layer, type SceneNode, serialise, words } from './scene.ts'
-import { drawOpenings, drawSlab, groundOf } from './slab.ts'
-import { rootClass, stylesheet } from './style.ts'
+import { layer, type SceneNode } from './scene.ts'
+import { drawEdges, drawOpenings, groundOf, washOf } from './slab.ts'
+import { svgOf } from './svg.ts'
 import { northPoint, northReach } from './symbols.ts'
 import type { PlanView } from './view.ts'
+import { drawWallChain, type WallChains } from './wallchain.ts'
 import { namePlacing, shearPlacing } from './walllabels.ts'
 import { drawWalls, lookOf, type WallLine, type WallLook, wallLines } from './walls.ts'
 
@@ -30,7 +32,7 @@ const farthest = 6000
 
 /** @returns the whole `<svg>` element; the same view gives the same bytes */
 export function drawPlan(view: PlanView): string {
-  const { frame, top, left } = layOut(view)
+  const { frame, top, left, chains } = layOut(view)
   const field = new Field(besideSheet / 2, frame.width - besideSheet / 2)
   const patches = patchesOf(view, frame)
   const sheet: Sheet = {
@@ -38,14 +40,21 @@ export function drawPlan(view: PlanView): string {
     groundAt: groundOf(patches.areas, patches.openings),
     farthest,
   }
+  const groups = loadGroups(patches.areas)
   const look = lookOf(view.walls, frame.scale)
-  const lines = wallLines(view.walls, frame.toSheet, look)
+  const lines = wallLines(view.walls, frame.toSheet, frame.scale, look)
   const { centres, beyond } = centresOf(view, frame)
 
-  const slab = [...drawSlab(patches.areas, field), ...drawOpenings(patches.openings, field)]
-  const axes = [...drawAxis(top, topEdge(frame.plan), field), ...drawAxis(left, leftEdge(frame.plan), field)]
+  const edges = [...drawEdges(patches.areas, field), ...drawOpenings(patches.openings, field)]
+  const axes = [
+    ...drawAxis(top, topEdge(frame.plan), field),
+    ...drawAxis(left, leftEdge(frame.plan), field),
+    ...drawChains(chains, frame, field),
+  ]
   const north = drawNorth(view, frame, top, field)
-  const walls = drawWalls(lines, look, field)
+  const walls = drawWalls(lines, field)
+  const pointMarks = pointMarksOf(view, frame)
+  const pointLoads = drawPointLoads(pointMarks, field)
   const marks = drawCentres(centres, field)
   const governing = lines.filter(({ wall }) => wall.governs)
 
@@ -56,30 +65,48 @@ export function drawPlan(view: PlanView): string {
   const others = setAll({ ...sheet, farthest: view.walls.length > manyWalls ? 0 : farthest }, [
     ...lines.filter(({ wall }) => !wall.governs).map(line => placingsOf(line, look, sheet)),
     ...patches.openings.map(opening => [openingPlacing(opening)]),
+    ...pointMarks.map(mark => [pointLoadPlacing(mark)]),
     ...patches.areas.map(area => [areaPlacing(area, patches.openings)]),
   ])
 
   const notes = [
     ...beyond,
-    ...notesOf(view, thorough.leftOut + others.leftOut, top.unnamed.length + left.unnamed.length),
+    ...notesOf(view, {
+      leftOut: thorough.leftOut + others.leftOut,
+      unnamed: top.unnamed.length + left.unnamed.length,
+      crowded: chains.crowded,
+    }),
   ]
   const footer = drawFooter(
     view,
     frame,
     field,
-    legendOf(view, centres, { legs: marks.legs, shears: thorough.shears || others.shears }),
+    [
+      ...legendOf(view, centres, { legs: marks.legs, shears: thorough.shears || others.shears, look }),
+      ...(pointMarks.length > 0 ? [{ symbol: pointLoadSymbol, text: 'point load' }] : []),
+      ...loadEntries(groups),
+    ],
     notes,
   )
   const drawn = [
-    ...layer('pm-slab', slab),
+    ...layer('pm-slab', [...washOf(patches.areas), ...hatchLoads(groups, patches.openings, field.texts()), ...edges]),
     ...layer('pm-axes', axes),
     ...layer('pm-walls', walls),
+    ...layer('pm-loads', pointLoads),
     ...layer('pm-centres', marks.nodes),
     ...layer('pm-labels', [...thorough.nodes, ...others.nodes]),
     ...north,
     ...layer('pm-footer', footer.nodes),
   ]
-  return serialise(root(view, drawn, { x0: 0, y0: footer.top, x1: frame.width, y1: footer.bottom }))
+  return svgOf(view, drawn, { x0: 0, y0: footer.top, x1: frame.width, y1: footer.bottom })
+}
+
+function drawChains(chains: WallChains, { plan }: Frame, field: Field): readonly SceneNode[] {
+  const edges = { top: topEdge, bottom: bottomEdge, left: leftEdge, right: rightEdge } as const
+  return (['top', 'bottom', 'left', 'right'] as const).flatMap(name => {
+    const chain = chains[name]
+    return chain === undefined ? [] : drawWallChain(chain, edges[name](plan), besidePlan, field)
+  })
 }
 
 function drawNorth(view: PlanView, { width }: Frame, top: AxisLayout, field: Field): readonly SceneNode[] {
@@ -112,35 +139,4 @@ function setAll(sheet: Sheet, groups: readonly (readonly Placing[])[]): Labels {
     leftOut: set.filter(({ nodes }) => nodes === undefined).length,
     shears: set.some(({ nodes, shows }) => nodes !== undefined && shows === 'shear'),
   }
-}
-
-function root(view: PlanView, drawn: readonly SceneNode[], { x0, y0, x1, y1 }: Bounds): SceneNode {
-  const id = `${rootClass}-${hash(`${view.title}\n${view.description}`)}`
-  const size = { width: x1 - x0, height: y1 - y0 }
-  return element(
-    'svg',
-    {
-      xmlns: 'http://www.w3.org/2000/svg',
-      class: rootClass,
-      viewBox: words(x0, y0, size.width, size.height),
-      ...size,
-      role: 'img',
-      lang: view.language,
-      'aria-labelledby': `${id}-title ${id}-desc`,
-    },
-    [
-      element('title', { id: `${id}-title` }, [view.title]),
-      element('desc', { id: `${id}-desc` }, [view.description]),
-      element('style', {}, [stylesheet]),
-      element('rect', { class: 'pm-sheet', x: x0, y: y0, ...size }),
-      ...drawn,
-    ],
-  )
-}
-
-/** FNV-1a: short, the same everywhere, and used for nothing but telling sketches on one page apart. */
-function hash(text: string): string {
-  let sum = 0x811c9dc5
-  for (const sign of text) sum = Math.imul(sum ^ (sign.codePointAt(0) ?? 0), 0x01000193)
-  return (sum >>> 0).toString(16).padStart(8, '0')
 }

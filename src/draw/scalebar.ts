@@ -25,8 +25,12 @@ export function drawScaleBar(at: Point, unitsPerSheet: number, unit: string, lan
   const half = (whole * unitsPerSheet) / 2
   const bar = (x: number, className: string): SceneNode =>
     element('rect', { class: className, x, y: at.y - thickness / 2, width: half, height: thickness })
-  const last = lettering('scale', 120, unit === '' ? plain(whole, language) : `${plain(whole, language)} ${unit}`)
-  const middle = lettering('scale', 60, plain(whole / 2, language))
+  const last = lettering(
+    'scale',
+    120,
+    unit === '' ? plainFigure(whole, language) : `${plainFigure(whole, language)} ${unit}`,
+  )
+  const middle = lettering('scale', 60, plainFigure(whole / 2, language))
   const figures = [lettering('scale', 60, '0'), middle, last]
   const tight = middle.width / 2 + Math.max(middle.width, last.width) / 2 > half
   const texts = figures.flatMap((letters, idx) =>
@@ -39,7 +43,7 @@ export function drawScaleBar(at: Point, unitsPerSheet: number, unit: string, lan
 }
 
 /** Half of a round length needs one figure more than the length itself, and no more. */
-function plain(value: number, language: Language): string {
+export function plainFigure(value: number, language: Language): string {
   const figures = Number(value.toPrecision(3))
   const [whole = '0', part] = figures < 1e-6 ? [String(figures)] : String(figures).split('.')
   const grouped = whole.length > 4 ? whole.replace(/\B(?=(\d{3})+$)/g, digitGroup(language)) : whole

@@ -30,8 +30,8 @@ export function groundOf(areas: readonly Patch[], openings: readonly Patch[]): (
   }
 }
 
-/** One wash for all areas: a firm edge about the whole, thin seams where areas meet. */
-export function drawSlab(areas: readonly Patch[], field: Field): readonly SceneNode[] {
+/** A firm edge about the whole, thin seams where areas meet. */
+export function drawEdges(areas: readonly Patch[], field: Field): readonly SceneNode[] {
   const sides = areas.flatMap(({ outline }) => sidesOf(outline))
   const pieces = sides.flatMap(side =>
     cut(
@@ -43,12 +43,12 @@ export function drawSlab(areas: readonly Patch[], field: Field): readonly SceneN
   const edges = pieces.filter(piece => !isSeam(piece, areas))
   for (const seam of seams) field.addLine(seam, priceOfCrossing.seam)
   for (const edge of edges) field.addLine(edge, priceOfCrossing.edge)
-  return [
-    ...areas.map(({ outline }) => element('path', { class: 'pm-wash', d: closed(outline) })),
-    ...lines('pm-seam', seams),
-    ...lines('pm-edge', edges),
-  ]
+  return [...lines('pm-seam', seams), ...lines('pm-edge', edges)]
 }
+
+/** One wash for all areas. */
+export const washOf = (areas: readonly Patch[]): readonly SceneNode[] =>
+  areas.map(({ outline }) => element('path', { class: 'pm-wash', d: closed(outline) }))
 
 /** Slab on both sides of it. */
 function isSeam({ a, b }: Segment, areas: readonly Patch[]): boolean {
@@ -90,7 +90,8 @@ function cornersOf(bounds: Bounds | undefined): readonly Point[] {
   ]
 }
 
-function closed(outline: readonly Point[]): string {
+/** A closed path. */
+export function closed(outline: readonly Point[]): string {
   return outline.length === 0 ? '' : `${outline.map(({ x, y }, idx) => words(idx === 0 ? 'M' : 'L', x, y)).join(' ')} Z`
 }
 

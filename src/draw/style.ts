@@ -58,6 +58,11 @@ const rules: readonly (readonly [string, string])[] = [
   ['.pm-over-wash', `paint-order:stroke;stroke:${wash};stroke-width:3.5;stroke-linejoin:round`],
   ['.pm-sheet', `fill:${paper}`],
   ['.pm-wash', `fill:${wash};stroke:none`],
+  ['.pm-hatch', `fill:none;stroke:${soft};stroke-width:.5;opacity:.62`],
+  ['.pm-hatch-dashed', 'stroke-dasharray:5 4'],
+  ['.pm-swatch', `fill:${wash};stroke:${soft};stroke-width:.8`],
+  ['.pm-load', `fill:${paper};stroke:${ink};stroke-width:1.1`],
+  ['.pm-load-cross', `fill:none;stroke:${ink};stroke-width:1.1`],
   ['.pm-edge', `fill:none;stroke:${soft};stroke-width:1;stroke-linecap:square`],
   ['.pm-seam', `fill:none;stroke:${soft};stroke-width:.45`],
   ['.pm-opening', `fill:${paper};stroke:${soft};stroke-width:.9`],
@@ -65,11 +70,28 @@ const rules: readonly (readonly [string, string])[] = [
   ['.pm-gridline', `fill:none;stroke:${soft};stroke-width:.6;stroke-dasharray:12 3 2 3`],
   ['.pm-bubble', `fill:${paper};stroke:${ink};stroke-width:1`],
   ['.pm-dimension', `fill:none;stroke:${soft};stroke-width:.7`],
+  ['.pm-witness', `fill:none;stroke:${soft};stroke-width:.5`],
   ['.pm-tick', `fill:none;stroke:${ink};stroke-width:1.2`],
   ['.pm-wall', `fill:none;stroke:${ink}`],
+  ['.pm-wall-core', `fill:none;stroke:${paper}`],
+  ['.pm-wall-tint', 'opacity:.24'],
   ['.pm-governs', `fill:none;stroke:${ink};stroke-width:1`],
   ['.pm-shear', `fill:none;stroke:${copper};stroke-width:1.5`],
   ['.pm-force', `fill:${paper};stroke:${copper};stroke-width:1.8;stroke-linejoin:miter`],
+  ['.pm-rest', `fill:none;stroke:${ink};stroke-width:.7;stroke-dasharray:5 3.5`],
+  ['.pm-rest-wall', `fill:none;stroke:${soft};stroke-width:2.4;stroke-dasharray:5 3.5`],
+  ['.pm-wall-sample', `fill:none;stroke:${ink};stroke-width:4`],
+  ['.pm-level', `fill:none;stroke:${soft};stroke-width:.6;stroke-dasharray:7 4`],
+  ['.pm-ground', `fill:none;stroke:${ink};stroke-width:2`],
+  ['.pm-mast', `fill:none;stroke:${ink};stroke-width:3`],
+  ['.pm-step', `fill:${wash};stroke:${ink};stroke-width:1.2;stroke-linejoin:miter`],
+  ['.pm-step-line', `fill:none;stroke:${ink};stroke-width:.8`],
+  ['.pm-face', `fill:${paper};stroke:none`],
+  ['.pm-face-edge', `fill:none;stroke:${ink};stroke-width:1.8;stroke-linejoin:miter`],
+  ['.pm-pier', `fill:${wash};stroke:${soft};stroke-width:.5`],
+  ['.pm-void', `fill:${paper};stroke:${ink};stroke-width:1.3`],
+  ['.pm-foot', `fill:none;stroke:${ink};stroke-width:2.4`],
+  ['.pm-level-line', `fill:none;stroke:${soft};stroke-width:.8`],
   ['.pm-leader', `fill:none;stroke:${soft};stroke-width:.6`],
   ['.pm-leader-end', `fill:${soft};stroke:none`],
   ['.pm-mark', `fill:${paper};stroke:${ink};stroke-width:1.4`],
@@ -91,6 +113,13 @@ const textRules = (Object.keys(textStyles) as TextRole[]).map(role => {
   ] as const
 })
 
-export const stylesheet = [...rules, ...textRules]
-  .map(([selector, body]) => `.${rootClass} ${selector}{${body}}`)
-  .join('')
+/** The rules of the classes that a drawing uses, and of no others. */
+export function stylesheetOf(classes: ReadonlySet<string>): string {
+  return [...rules, ...textRules]
+    .filter(([selector]) => {
+      const name = /\.([a-z-]+)$/.exec(selector)?.[1]
+      return name === undefined || classes.has(name)
+    })
+    .map(([selector, body]) => `.${rootClass} ${selector}{${body}}`)
+    .join('')
+}

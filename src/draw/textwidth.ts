@@ -52,9 +52,12 @@ function characterWidth(sign: string, style: TextStyle): number {
   return sign === '…' ? 1 : 0.76
 }
 
+/** White space, apart from what holds the groups of a number together. */
+const space = /[^\S\u00a0\u2009\u202f]+/gu
+
 /** The text as long as it may be, or as much of its beginning as fits before an ellipsis. */
 export function shorten(text: string, style: TextStyle, room: number): Fitted {
-  const plain = text.replace(/\s+/gu, ' ').trim()
+  const plain = text.replace(space, ' ').trim()
   if (textWidth(plain, style) <= room) return plain === text ? { text } : { text: plain, full: text }
   const signs = Array.from(plain)
   let width = textWidth('…', style)
@@ -73,7 +76,7 @@ export function shorten(text: string, style: TextStyle, room: number): Fitted {
 export function wrap(text: string, style: TextStyle, room: number): readonly string[] {
   const lines: string[] = []
   let line = ''
-  for (const word of text.split(/\s+/u)) {
+  for (const word of text.split(space)) {
     const longer = line === '' ? word : `${line} ${word}`
     if (line !== '' && textWidth(longer, style) > room) {
       lines.push(line)

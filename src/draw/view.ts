@@ -5,6 +5,7 @@
  * are radians, counter-clockwise from +x. Every text is ready to be set.
  */
 import type { Language } from '../base/language.ts'
+import type { FigureUnit } from './arrowkey.ts'
 
 export interface PlanPoint {
   readonly x: number
@@ -21,6 +22,13 @@ export interface PlanArea {
   readonly load: string
 }
 
+/** A load that acts at a point. */
+export interface PlanPointLoad {
+  readonly name: string
+  readonly at: PlanPoint
+  readonly load: string
+}
+
 export interface PlanOpening {
   readonly name: string
   readonly outline: Outline
@@ -30,6 +38,8 @@ export interface PlanWall {
   readonly name: string
   readonly from: PlanPoint
   readonly to: PlanPoint
+  /** In metres, about the line from end to end; none where the wall is but a stated stiffness. */
+  readonly thickness?: number
   /** Shear that the wall takes in the case drawn, in newtons, positive from `from` to `to`; none before shears are worked. */
   readonly shear?: { readonly value: number; readonly printed: string }
   readonly governs: boolean
@@ -47,6 +57,7 @@ export interface PlanView {
   readonly language: Language
   readonly areas: readonly PlanArea[]
   readonly openings: readonly PlanOpening[]
+  readonly pointLoads?: readonly PlanPointLoad[]
   readonly walls: readonly PlanWall[]
   readonly gridX: readonly GridLine[]
   readonly gridY: readonly GridLine[]
@@ -60,6 +71,8 @@ export interface PlanView {
   readonly dimension: (metres: number) => string
   /** Metres in one unit of the scale bar, and that unit's name. */
   readonly scaleUnit: { readonly metres: number; readonly name: string }
+  /** The unit of the shears, for the key of their arrows. */
+  readonly forceUnit?: FigureUnit
   /** Words of the legend, such as `design shear of a wall, kip`. */
   readonly legend: {
     readonly shear: string

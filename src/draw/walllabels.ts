@@ -1,11 +1,10 @@
 /** Names and shears of walls: where each would like to be. */
-import { thinArrow } from './arrows.ts'
+import { scaledArrow, shortestArrow } from './arrows.ts'
 import { add, between, box, direction, distance, normal, type Point, times, toward } from './geometry.ts'
 import { type Lettering, lettering, letteringBox, readableAngle, setLettering } from './label.ts'
 import { labelSpot, type Placing, type Sheet, type Spot } from './placement.ts'
 import type { WallLine, WallLook } from './walls.ts'
 
-const shortestArrow = 12
 /** A name may be as long as its wall within these limits. */
 const shortestName = 110
 const longestName = 220
@@ -107,7 +106,7 @@ export function shearPlacing(line: WallLine, look: WallLook, sheet: Sheet): Plac
 /** In proportion to the greatest; a shear too small to print has no arrow. */
 export function arrowLength(value: number, { greatest, longestArrow }: WallLook): number {
   if (Math.abs(value) <= 1e-9 * greatest) return 0
-  return Math.max(shortestArrow, (Math.abs(value) / greatest) * longestArrow)
+  return (Math.abs(value) / greatest) * longestArrow
 }
 
 const arrowRoom = 9
@@ -129,10 +128,11 @@ function inLine(line: WallLine, { letters, angle, length }: Shear, first: 1 | -1
   const width = letters.width
   const u = toward(angle)
   const places = besideWall(line, line.half + 0.5 + letters.height / 2, first, stations)
+  const long = Math.max(length, shortestArrow)
   return places.flatMap(({ at, price }) =>
     [1, -1].map(order => {
       const arrow = { at: add(at, times(u, (order * width) / 2)), angle, length }
-      const figureAt = add(at, times(u, (-order * length) / 2))
+      const figureAt = add(at, times(u, (-order * long) / 2))
       return shearSpot(letters, figureAt, readableAngle(angle), arrow, price + 3.5 - order / 2)
     }),
   )
@@ -154,9 +154,9 @@ function shearSpot(
   return {
     price,
     texts: [letteringBox(letters, at, turned)],
-    ink: arrow === undefined ? [] : [box(arrow.at, arrow.length, arrowRoom - 2, arrow.angle)],
+    ink: arrow === undefined ? [] : [box(arrow.at, Math.max(arrow.length, shortestArrow), arrowRoom - 2, arrow.angle)],
     draw: ground => [
-      ...(arrow === undefined ? [] : [thinArrow(arrow.at, arrow.angle, arrow.length)]),
+      ...(arrow === undefined ? [] : [scaledArrow(arrow.at, arrow.angle, arrow.length)]),
       ...setLettering(letters, at, turned, ground),
     ],
   }

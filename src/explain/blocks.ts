@@ -14,8 +14,9 @@ import { limitPiece } from './limit.ts'
 import { type Numbered, topDepth } from './number.ts'
 import { explainQuote } from './quote.ts'
 import { explainRegister } from './registers.ts'
-import { type DocumentWant, isDocumentWant, type Request, readRequest } from './request.ts'
+import { type DocumentWant, isBuildingWant, isDocumentWant, type Request, readRequest } from './request.ts'
 import type { Piece, Quote, Register } from './sheet.ts'
+import { explainStoreys } from './storeys.ts'
 import { explainWant } from './workings.ts'
 
 export interface Explained {
@@ -55,7 +56,9 @@ function workingPieces(block: Block, request: Request, sheet: Worksheet, context
   const level = sheet.levels.find(({ name }) => name === levelNameOf(block, names))
   return request.wants.flatMap((want): readonly Piece[] => {
     if (isDocumentWant(want)) return explainRegister(want, sheet, context)
-    return level
+    if (isBuildingWant(want) && (level || !block.about))
+      return explainStoreys(sheet, block.about && level, request, context)
+    return level && !isBuildingWant(want)
       ? explainWant(want, level, request, context)
       : [{ kind: 'fault', diagnostics: [noLevel(block, names)] }]
   })

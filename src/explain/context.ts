@@ -7,7 +7,9 @@ import type { Result } from '../base/ledger.ts'
 import { lineOf, type Source, type Span } from '../base/span.ts'
 import type { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
+import type { Displacement } from '../compute/displacement.ts'
 import type { LevelWork } from '../compute/level.ts'
+import type { Storeys } from '../compute/storeys.ts'
 import type { Wall } from '../model/walls.ts'
 import type { Check, Figure, TitleBlock } from './sheet.ts'
 
@@ -19,6 +21,10 @@ export interface Sketch {
   readonly plan: (level: LevelWork, caseName: string | undefined) => Drawn
   /** A wall's elevation; `caseName` asks for the shear of one case in place of the design shear. */
   readonly elevation: (level: LevelWork, wall: Wall, caseName: string | undefined) => Drawn
+  /** A level as it moves in a case. */
+  readonly displaced: (level: LevelWork, displacement: Displacement) => Drawn
+  /** Storey forces and shears of the building. */
+  readonly storeys: (storeys: Storeys) => Drawn
 }
 
 /** What the front matter says of the calculation as a whole. */

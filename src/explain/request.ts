@@ -20,23 +20,32 @@ export const wants = [
   'design shears',
   'elevations',
   'displacement',
+  'displaced shape',
   'equilibrium',
 ] as const
 
 export type Want = (typeof wants)[number]
 
+/** What tells of all levels at once; a level, where one is named, is worked in full. */
+export const buildingWants = ['storey shears'] as const
+export type BuildingWant = (typeof buildingWants)[number]
+
 /** Lists of the whole document rather than of a level. */
 export const documentWants = ['criteria', 'checks', 'assumptions', 'references'] as const
 export type DocumentWant = (typeof documentWants)[number]
 
-/** All of a level in order. */
+/** All of a level in order; the displaced shape comes with the displacement. */
 const WHOLE = 'whole calculation'
+const parts: readonly Want[] = wants.filter(want => want !== 'displaced shape')
+
+export type AnyWant = Want | BuildingWant | DocumentWant
+const every: readonly AnyWant[] = [...wants, ...buildingWants, ...documentWants]
 
 const details = ['full', 'table', 'result'] as const
 export type Detail = (typeof details)[number]
 
 export interface Request {
-  readonly wants: readonly (Want | DocumentWant)[]
+  readonly wants: readonly AnyWant[]
   /** True when the parts need headings to tell them apart. */
   readonly whole: boolean
   readonly detail: Detail
@@ -57,7 +66,7 @@ export function readRequest(block: Block): Result<Request> {
         'working-empty',
         block.info,
         'this working asks for nothing',
-        `Name what it shows: ${[WHOLE, ...wants, ...documentWants].join(', ')}.`,
+        `Name what it shows: ${[WHOLE, ...every].join(', ')}.`,
       ),
     )
   if (block.table)
@@ -84,10 +93,10 @@ export function readRequest(block: Block): Result<Request> {
   })
 }
 
-function wantOf(line: Text, faults: Diagnostic[]): readonly (Want | DocumentWant)[] {
+function wantOf(line: Text, faults: Diagnostic[]): readonly AnyWant[] {
   const words = toBritish(line.text.toLowerCase()).replace(/\s+/g, ' ')
-  if (words === WHOLE) return wants
-  const known = [...wants, ...documentWants].find(want => want === words)
+  if (words === WHOLE) return parts
+  const known = every.find(want => want === words)
   if (known) return [known]
   faults.push(
     diagnose(
@@ -95,7 +104,7 @@ function wantOf(line: Text, faults: Diagnostic[]): readonly (Want | DocumentWant
       'unknown-working',
       line.span,
       `${line.text} is not something that can be shown`,
-      suggestion(words, [WHOLE, ...wants, ...documentWants], 'working'),
+      suggestion(words, [WHOLE, ...every], 'working'),
     ),
   )
   return []
@@ -117,5 +126,6 @@ function readDetail(setting: Text | undefined, faults: Diagnostic[]): Detail {
   return found ?? 'full'
 }
 
-export const isDocumentWant = (want: Want | DocumentWant): want is DocumentWant =>
-  documentWants.some(other => other === want)
+export const isBuildingWant = (want: AnyWant): want is BuildingWant => buildingWants.some(other => other === want)
+
+export const isDocumentWant = (want: AnyWant): want is DocumentWant => documentWants.some(other => other === want)

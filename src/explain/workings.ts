@@ -40,6 +40,7 @@ const headings: Readonly<Record<Want, string>> = {
   'design shears': 'Design shears',
   elevations: 'Elevations',
   displacement: 'Displacement',
+  'displaced shape': 'Displaced shape',
   equilibrium: 'Equilibrium',
 }
 
@@ -92,6 +93,7 @@ function answer(want: Want, level: LevelWork, request: Request, context: Context
     case 'wall shears':
     case 'design shears':
     case 'displacement':
+    case 'displaced shape':
     case 'equilibrium':
       return shears(want, level, request, context)
   }
@@ -193,7 +195,7 @@ function hasShears(level: LevelWork): boolean {
   return forces.ok && forces.value !== undefined && level.distribution().ok
 }
 
-type ShearWant = 'torsion' | 'wall shears' | 'design shears' | 'displacement' | 'equilibrium'
+type ShearWant = 'torsion' | 'wall shears' | 'design shears' | 'displacement' | 'displaced shape' | 'equilibrium'
 
 function shears(want: ShearWant, level: LevelWork, request: Request, context: Context): Result<readonly Piece[]> {
   const { detail } = request
@@ -216,14 +218,9 @@ function shears(want: ShearWant, level: LevelWork, request: Request, context: Co
       return designShears(level, distribution, walls, request, context)
     case 'equilibrium':
       return good(explainEquilibrium(distribution, detail, display, context))
-    case 'displacement': {
-      const moved = level.displacements()
-      if (!moved.ok) return moved
-      const size = (each: Displacement) => Math.abs(each.governing.value.si)
-      const worst = moved.value.reduce((a, b) => (size(b) > size(a) ? b : a))
-      const shown = request.caseName ? moved.value.filter(({ result }) => cases.includes(result)) : [worst]
-      return good(explainDisplacement(level.name, moved.value, shown, detail, display, context))
-    }
+    case 'displacement':
+    case 'displaced shape':
+      return displacement(want, level, cases, request, display, context)
   }
 }
 
@@ -244,6 +241,38 @@ function designShears(
     }),
   )
   return piers.ok ? good([...worked, ...piers.value]) : piers
+}
+
+/** The displacements of the case asked for, or of the one with the largest, and in full detail their sketch. */
+function displacement(
+  want: 'displacement' | 'displaced shape',
+  level: LevelWork,
+  cases: readonly CaseResult[],
+  { detail, caseName }: Request,
+  display: Display,
+  context: Context,
+): Result<readonly Piece[]> {
+  const moved = level.displacements()
+  if (!moved.ok) return moved
+  const size = (each: Displacement) => Math.abs(each.governing.value.si)
+  const worst = moved.value.reduce((a, b) => (size(b) > size(a) ? b : a))
+  const shown = caseName ? moved.value.filter(({ result }) => cases.includes(result)) : [worst]
+  const worked =
+    want === 'displacement' ? explainDisplacement(level.name, moved.value, shown, detail, display, context) : []
+  if (want === 'displacement' && detail !== 'full') return good(worked)
+  const drawn = flatAll(shown.map(each => displacedFigure(level, each, context)))
+  return drawn.ok ? good([...worked, ...drawn.value]) : drawn
+}
+
+function displacedFigure(level: LevelWork, displacement: Displacement, context: Context): Result<readonly Piece[]> {
+  const made = context.sketch.displaced(level, displacement)
+  if (!made.ok) return made
+  const { name } = displacement.result.case
+  const id = context.anchor(`${level.name}.displaced.${name}`)
+  const caption = context.words(
+    `Displaced shape of ${verbatim(level.name)} in case ${caseOnPage(name)}, drawn larger by the factor in its key.`,
+  )
+  return good([{ kind: 'figure', id, number: '', caption, ...made.value }])
 }
 
 /** The shears of each case asked for, and in full detail the plan that shows them. */

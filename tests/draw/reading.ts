@@ -1,5 +1,5 @@
 /** Reads a sketch back from its bytes, without help from the code that drew it, except for the estimate of text widths. */
-import { type Box, box } from '../../src/draw/geometry.ts'
+import { type Box, boundsOfBox, box, boxesMeet } from '../../src/draw/geometry.ts'
 import { type TextRole, textStyles } from '../../src/draw/style.ts'
 import { textWidth } from '../../src/draw/textwidth.ts'
 
@@ -117,4 +117,40 @@ export function firstStroke(e: ReadElement): readonly [number, number, number, n
     .filter(word => !/[A-Z]/.test(word))
     .map(Number)
   return [x0, y0, x1, y1]
+}
+
+export interface ReadPoint {
+  readonly x: number
+  readonly y: number
+}
+
+/** The corners of a path of straight strokes. */
+export function pathPoints(e: ReadElement | undefined): readonly ReadPoint[] {
+  const numbers = (e?.attributes.d ?? '')
+    .split(' ')
+    .filter(word => !/[A-Z]/.test(word))
+    .map(Number)
+  return numbers.flatMap((x, idx) => (idx % 2 === 0 ? [{ x, y: numbers[idx + 1] ?? Number.NaN }] : []))
+}
+
+export const apart = (a: ReadPoint | undefined, b: ReadPoint | undefined): number =>
+  a && b ? Math.hypot(a.x - b.x, a.y - b.y) : Number.NaN
+
+/** Pairs of texts that overlap. */
+export function overlapsOf(root: ReadElement): readonly string[] {
+  const texts = textsOf(root).filter(({ text }) => text.trim() !== '')
+  return texts.flatMap((a, idx) =>
+    texts.slice(idx + 1).flatMap(b => (boxesMeet(a.box, b.box) ? [`${a.text} / ${b.text}`] : [])),
+  )
+}
+
+export const viewBox = (root: ReadElement): readonly number[] => (root.attributes.viewBox ?? '').split(' ').map(Number)
+
+/** Texts that leave the sheet. */
+export function offSheet(root: ReadElement): readonly string[] {
+  const [x = 0, y = 0, width = 0, height = 0] = viewBox(root)
+  return textsOf(root).flatMap(({ text, box }) => {
+    const { x0, y0, x1, y1 } = boundsOfBox(box)
+    return x0 >= x - 1 && y0 >= y - 1 && x1 <= x + width + 1 && y1 <= y + height + 1 ? [] : [text]
+  })
 }
