@@ -69,7 +69,9 @@ describe('the manual tells of', () => {
   test('everything that a working may ask for, with a section of its own', () => {
     const headings = [...chapter('04-workings').matchAll(/^## (.+)$/gm)].map(([, text]) => text ?? '')
     const lists = chapter('04-workings').split('## The lists of the document')[1] ?? ''
-    expect([...wants, ...buildingWants].map(want => inLanguage(want, 'en-US')).filter(want => !headings.includes(want))).toEqual([])
+    expect(
+      [...wants, ...buildingWants].map(want => inLanguage(want, 'en-US')).filter(want => !headings.includes(want)),
+    ).toEqual([])
     expect(documentWants.filter(want => !lists.includes(`- \`${want}\`:`))).toEqual([])
   })
 
