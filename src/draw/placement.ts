@@ -65,6 +65,7 @@ export const priceOfCrossing = {
   seam: 8,
   opening: 40,
   leader: Number.POSITIVE_INFINITY,
+  witness: 4,
   legs: 60,
 } as const
 

@@ -184,7 +184,7 @@ function witnessLine(end: Point, foot: Point, field: Field): SceneNode {
   const away = { x: Math.sign(Math.round(foot.x - end.x)), y: Math.sign(Math.round(foot.y - end.y)) }
   const a = add(end, times(away, 7))
   const b = add(foot, times(away, 4))
-  field.addLine({ a, b }, priceOfCrossing.gridLine)
+  field.addLine({ a, b }, priceOfCrossing.witness)
   return element('path', { class: 'pm-witness', d: words('M', a.x, a.y, 'L', b.x, b.y) })
 }
 

@@ -10,6 +10,12 @@ import type { Case } from '../../src/compute/cases.ts'
 import { wallShears } from '../../src/compute/distribution.ts'
 import { type Rigidity, type Spring, workRigidity } from '../../src/compute/rigidity.ts'
 import { k, c as letterC, s as letterS, T, u0, V, v0, x, y } from '../../src/compute/symbols.ts'
+import { drawDisplaced } from '../../src/draw/displaced.ts'
+import { drawPlan } from '../../src/draw/plan.ts'
+import { drawStoreys } from '../../src/draw/storeys.ts'
+import { displacedBuildings } from '../draw/displacedviews.ts'
+import { storeyBuildings } from '../draw/storeyviews.ts'
+import { buildings } from '../draw/views.ts'
 
 export { default as katex } from 'katex'
 export { sourceOf } from '../../src/base/span.ts'
@@ -22,6 +28,21 @@ export { publish } from '../../src/publish.ts'
 export { readDocument } from '../../src/read/document.ts'
 export { parseMarkdown } from '../../src/read/markdown.ts'
 export { createTypesetter } from '../../src/render/typeset.ts'
+
+/** Drawings that the bench makes again and again, by name. */
+export const drawings: readonly (readonly [string, () => string])[] = [
+  ['plan of eight walls, hatched and dimensioned', () => drawPlan(planOf('ropewalk'))],
+  ['plan of forty walls', () => drawPlan(planOf('hostel'))],
+  ['displaced shape', () => drawDisplaced(required(displacedBuildings.both))],
+  ['storeys of thirty levels', () => drawStoreys(required(storeyBuildings.thirtyLevels))],
+]
+
+const planOf = (name: string) => required(buildings[name])
+
+function required<T>(found: T | undefined): T {
+  if (found === undefined) throw new Error('the bench draws a building that there is not')
+  return found
+}
 
 const display = { system: 'US', relative: false } as const
 

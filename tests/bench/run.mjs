@@ -93,6 +93,18 @@ async function walls({ manyWalls, shearsInCases }) {
   row('direct, torsional and total', [min, median], `aim 5 ms: ${(median / 5).toFixed(2)}`)
 }
 
+/** @param {typeof import('./inside.ts')} inside */
+async function drawn({ drawings }) {
+  const bench = new Bench({ time: 500, warmupTime: 300 })
+  for (const [name, draw] of drawings) bench.add(name, () => void draw())
+  await bench.run()
+  head('Drawings, warm')
+  for (const [name] of drawings) {
+    const { min, median } = latency(bench, name)
+    row(name, [min, median], '')
+  }
+}
+
 /** Where the time of a long document goes, in one process, the first time it is done. @param {typeof import('./inside.ts')} inside */
 function phases({ parseMarkdown, readDocument, sourceOf, compileTree, publish, worksheet, gather, readChoices }) {
   const text = longDocument(200, 2000)
@@ -235,6 +247,7 @@ try {
   longCold()
   await equations(inside)
   await walls(inside)
+  await drawn(inside)
   phases(inside)
   manyWalls()
   tooLarge()
