@@ -132,10 +132,11 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     return readWalls(givens.walls, name, grid.value, scope)
   })
 
-  const openings = once('openings', (): Result<readonly Opening[]> => {
+  const readAllOpenings = (): Result<readonly Opening[]> => {
     const given = givens.openings.length > 0 ? walls() : good([])
     return given.ok ? readOpenings(givens.openings, name, given.value, scope) : given
-  })
+  }
+  const openings = once('openings', readAllOpenings, givens.openings[0]?.info)
 
   const wallOf = (wall: string) => {
     const all = walls()

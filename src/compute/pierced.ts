@@ -37,7 +37,6 @@ export interface Pier {
 
 export interface StripOfPiers {
   readonly name: string
-  readonly face: Face
   /** The pier that it is part of; absent where it is part of the wall itself. */
   readonly of?: string
   /** k of its parts, by their names. */
@@ -271,7 +270,7 @@ class Works {
     const name = this.name(each)
     const parts = this.sideBySide(each.parts)
     const K = sumOf(parts, sum, `${this.around.id}.strip.${name}.K`, [name, this.wall.name])
-    this.strips.push({ name, face: each.face, ...(of === undefined ? {} : { of }), parts, K })
+    this.strips.push({ name, ...(of === undefined ? {} : { of }), parts, K })
     this.steps.push(K)
     return K
   }

@@ -34,9 +34,8 @@ export function elevationView(picture: WallPicture): ElevationView {
   const { level, language, system, wall, height, line, openings, pierced } = picture
   const words = (text: string) => inLanguage(text, language)
   const scale = system === 'US' ? unit('ft') : unit('m')
-  // Nothing finer than a tenth of a millimetre is dimensioned.
-  const dimension = (metres: number) =>
-    onPage(asTyped(Number((metres / scale.scale).toFixed(system === 'US' ? 3 : 4))), scale, language)
+  // Nothing finer than a millimetre, or a thousandth of a foot, is dimensioned.
+  const dimension = (metres: number) => onPage(asTyped(Number((metres / scale.scale).toFixed(3))), scale, language)
   return {
     title: words(`Elevation of wall ${verbatim(wall.name)} of ${verbatim(level)}`),
     description: words(describe(picture, dimension)),
