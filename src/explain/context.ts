@@ -19,6 +19,8 @@ export class Context {
   readonly sketch: Sketch
   /** Every value that was printed: the roots of the trace. */
   readonly roots = new Map<string, Value>()
+  /** Values that are printed and can be traced, but are no part of the results: the limits of checks, the subjects of words. */
+  readonly besides = new Map<string, Value>()
   /** Every formula that was printed, in order. */
   readonly formulas = new Set<Formula>()
   private readonly checked = new Map<string, Check>()

@@ -1,21 +1,22 @@
 /** A check on one line: what, demand against capacity, a bar, the ratio and the verdict in words. */
 import type { Check } from '../explain/sheet.ts'
-import { escapeHtml, pageText } from './escape.ts'
-import { idAttribute, sourceHtml } from './html-parts.ts'
+import { pageText } from './escape.ts'
+import { markedText } from './html-marks.ts'
+import { idAttribute, type Setting, sourceHtml } from './html-parts.ts'
 
 /** The bar ends at this ratio; the limit stands at 1. */
 const BAR_END = 1.25
 
-export function checkHtml(check: Check): string {
-  const { id, what, demand, capacity, ratio, ratioPrinted, ok, reference, sourceLines } = check
+export function checkHtml(check: Check, { marks }: Setting): string {
+  const { id, ids, what, demand, capacity, ratio, ratioPrinted, ok, reference, sourceLines } = check
   const origin = [reference === '' ? '' : `<span>${pageText(reference)}</span>`, sourceHtml(sourceLines)].filter(
     part => part !== '',
   )
   return `<li class="check ${ok ? 'ok' : 'ng'}"${idAttribute(id)}>
 <span class="what">${pageText(what)}${origin.length === 0 ? '' : `<span class="from">${origin.join(' ')}</span>`}</span>
-<span class="demand">${pageText(demand)}</span><span class="sign">${ok ? '≤' : '&gt;'}</span><span class="capacity">${pageText(capacity)}</span>
+<span class="demand">${markedText(demand, ids?.demand, marks)}</span><span class="sign">${ok ? '≤' : '&gt;'}</span><span class="capacity">${markedText(capacity, ids?.capacity, marks)}</span>
 <span class="bar" aria-hidden="true"><i style="width:${barLength(ratio)}%"></i></span>
-<span class="ratio"><span class="unseen">ratio </span>${escapeHtml(ratioPrinted)}</span><span class="verdict">${ok ? 'OK' : 'NG'}</span>
+<span class="ratio"><span class="unseen">ratio </span>${markedText(ratioPrinted, ids?.ratio, marks)}</span><span class="verdict">${ok ? 'OK' : 'NG'}</span>
 </li>`
 }
 

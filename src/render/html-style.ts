@@ -24,7 +24,13 @@ export function styleOf({ sheet, body, asset }: Styled, classes: ReadonlySet<str
     ...(hasCode(body) ? ['KaTeX_Typewriter-Regular'] : []),
   ])
   const faces = [...text, ...[...math].sort()].map(name => asset(`faces/${name}.css`))
-  return [...faces, mathRules(asset('katex.css'), classes), asset('sheet.css'), paperRules(sheet)].join('\n')
+  return [
+    ...faces,
+    mathRules(asset('katex.css'), classes),
+    asset('sheet.css'),
+    asset('trace.css'),
+    paperRules(sheet),
+  ].join('\n')
 }
 
 const hasCode = (body: readonly BodyPart[]): boolean =>
