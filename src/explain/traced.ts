@@ -10,7 +10,7 @@ import { letter, typeset } from '../base/typeset.ts'
 import { type Origin, printed, type Value } from '../base/value.ts'
 import type { Context } from './context.ts'
 import { type Run, runsOf } from './letter.ts'
-import { everyValue } from './trace.ts'
+import { nearestValues } from './trace.ts'
 
 export interface TracedFormula {
   /** The right side in letters. */
@@ -32,7 +32,7 @@ export interface TracedValue {
   readonly words: string
   /** Index of its formula. */
   readonly formula?: number
-  /** Indices of the values put in, in the order of the formula's symbols. */
+  /** Indices of the values put in, in the order of the formula's symbols; -1 for one that is left out. */
   readonly inputs: readonly number[]
   /** Lines of the source where the engineer wrote it, from 1, ascending. */
   readonly lines: readonly number[]
@@ -46,19 +46,15 @@ export interface Traced {
   readonly lines: ReadonlyMap<number, string>
 }
 
-/** Everything printed, and all that it rests on. */
-export function traced(context: Context): Traced {
-  const all = everyValue([...context.besides.values(), ...context.roots.values()])
+/** The trace of a page of this many values is as large as the page; what lies deeper is left to the command. */
+export const MOST_VALUES = 20_000
+
+/** What is printed and all that it rests on, or no more than `most` of it, nearest to what is printed. */
+export function traced(context: Context, most: number = MOST_VALUES): Traced {
+  const all = nearestValues([...context.besides.values(), ...context.roots.values()], most)
   const indexOf = new Map(all.map(({ id }, i) => [id, i]))
-  const formulas = new Map<string, { readonly index: number; readonly formula: TracedFormula }>()
+  const formulas = new Formulas(context)
   const lines = new Map<number, string>()
-  const keep = (value: Value, formula: Formula): number => {
-    const made = tracedFormula(value, formula, context)
-    const key = JSON.stringify([texSource(made.letters), made.reference, made.assumes, made.symbols])
-    const held = formulas.get(key) ?? { index: formulas.size, formula: made }
-    formulas.set(key, held)
-    return held.index
-  }
   const values = all.map((value): TracedValue => {
     const { origin } = value
     const own = context.lines(ownSpans(origin))
@@ -74,19 +70,59 @@ export function traced(context: Context): Traced {
     if (origin.kind !== 'worked') return { ...base, inputs: [] }
     const { formula, inputs } = origin.step
     const used = [...formula.symbols.keys()].flatMap(name => inputs.get(name) ?? [])
-    return { ...base, formula: keep(value, formula), inputs: used.flatMap(({ id }) => indexOf.get(id) ?? []) }
+    return {
+      ...base,
+      formula: formulas.indexOf(formula, inputs),
+      inputs: used.map(({ id }) => indexOf.get(id) ?? -1),
+    }
   })
   return {
     values,
-    formulas: [...formulas.values()].map(({ formula }) => formula),
+    formulas: formulas.all(),
     lines: new Map([...lines].sort(([a], [b]) => a - b)),
   }
 }
 
-function tracedFormula({ origin }: Value, formula: Formula, context: Context): TracedFormula {
+/** The formulas of a document, each told once however many values it gives. */
+class Formulas {
+  /** By the formula itself; told with the letters of the inputs, and with its own. */
+  private readonly known = new Map<Formula, { ofInputs?: number; own?: number }>()
+  private readonly told = new Map<string, number>()
+  private readonly list: TracedFormula[] = []
+  private readonly context: Context
+
+  constructor(context: Context) {
+    this.context = context
+  }
+
+  all(): readonly TracedFormula[] {
+    return this.list
+  }
+
+  indexOf(formula: Formula, inputs: ReadonlyMap<string, Value>): number {
+    const known = this.known.get(formula) ?? {}
+    this.known.set(formula, known)
+    const alike = [...formula.symbols.values()].every(({ name, tex }) => inputs.get(name)?.tex === tex)
+    if (alike) {
+      known.ofInputs ??= this.tell(tracedFormula(formula, this.context))
+      return known.ofInputs
+    }
+    const symbols = () => [...formula.symbols.values()].map(({ tex }) => runsOf(tex))
+    known.own ??= this.tell({ ...tracedFormula(formula, this.context), symbols: symbols() })
+    return known.own
+  }
+
+  private tell(formula: TracedFormula): number {
+    const key = JSON.stringify({ ...formula, letters: texSource(formula.letters) })
+    const index = this.told.get(key) ?? this.list.length
+    if (index === this.list.length) this.list.push(formula)
+    this.told.set(key, index)
+    return index
+  }
+}
+
+function tracedFormula(formula: Formula, context: Context): TracedFormula {
   const { body, symbols, inShort, source, assumes } = formula
-  const inputs = origin.kind === 'worked' ? origin.step.inputs : new Map<string, Value>()
-  const own = [...symbols].every(([name, { tex }]) => inputs.get(name)?.tex === tex)
   const letters =
     inShort === undefined
       ? typeset(body, name => letter(symbols.get(name)?.tex ?? name), context.language)
@@ -96,7 +132,6 @@ function tracedFormula({ origin }: Value, formula: Formula, context: Context): T
     text: inShort === undefined ? plain(body, name => name) : source,
     reference: context.words(source),
     assumes: assumes.map(text => context.words(text)),
-    ...(own ? {} : { symbols: [...symbols.values()].map(({ tex }) => runsOf(tex)) }),
   }
 }
 
@@ -130,7 +165,8 @@ export function ownSpans(origin: Origin): readonly Span[] {
 const LONGEST = 400
 
 function excerpt(source: Source, line: number): string {
-  const text = lineText(source, line).trim()
+  // Columns of a table are padded for the eye that reads them below each other.
+  const text = lineText(source, line).trim().replace(/\s+/g, ' ')
   return text.length > LONGEST ? `${text.slice(0, LONGEST)}…` : text
 }
 

@@ -1,14 +1,19 @@
 /** The page's trace, read from its island: values by id, and which results rest on each. */
 import type { Island, IslandFormula, IslandLetter, IslandValue } from '../render/island.ts'
+import type { Piece } from '../render/markup.ts'
 
-export type { IslandLetter, IslandValue }
+export type { IslandLetter, IslandValue, Piece }
 
 export interface Data {
   readonly find: (id: string) => IslandValue | undefined
   /** The values put in, each with the letter that the formula has for it. */
   readonly inputs: (value: IslandValue) => readonly Input[]
+  /** How many of the values put in the page does not carry. */
+  readonly missing: (value: IslandValue) => number
   readonly uses: (id: string) => readonly IslandValue[]
   readonly formula: (value: IslandValue) => IslandFormula | undefined
+  /** The pieces of a formula as it was set when the page was made. */
+  readonly pieces: (formula: IslandFormula) => readonly Piece[]
   /** Values that the engineer wrote, which a value comes down to; each once, in the order of the walk. */
   readonly roots: (value: IslandValue) => readonly IslandValue[]
   readonly line: (number: number) => string
@@ -19,7 +24,7 @@ export interface Input {
   readonly value: IslandValue
 }
 
-export function readData({ values, formulas, lines }: Island): Data {
+export function readData({ values, formulas, pieces, lines }: Island): Data {
   const byId = new Map(values.map(value => [value[0], value]))
   const usesOf = new Map<string, Set<IslandValue>>()
   for (const value of values)
@@ -30,7 +35,7 @@ export function readData({ values, formulas, lines }: Island): Data {
 
   function inputs(value: IslandValue): readonly Input[] {
     if (value[3] !== 'worked') return []
-    const symbols = formulas[value[5]]?.[3]
+    const symbols = formulas[value[5]]?.[4]
     return value[6].flatMap((at, i) => {
       const input = values[at]
       return input ? [{ letter: symbols?.[i] ?? input[1], value: input }] : []
@@ -57,8 +62,10 @@ export function readData({ values, formulas, lines }: Island): Data {
   return {
     find: id => byId.get(id),
     inputs,
+    missing: value => (value[3] === 'worked' ? value[6].filter(at => at === -1).length : 0),
     uses: id => [...(usesOf.get(id) ?? [])],
     formula: value => (value[3] === 'worked' ? formulas[value[5]] : undefined),
+    pieces: ([set]) => set.flatMap(at => pieces.slice(at, at + 1)),
     roots,
     line: number => lines[number] ?? '',
   }

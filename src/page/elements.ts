@@ -1,5 +1,5 @@
 /** Elements made from plain texts; nothing is ever read as markup. */
-import type { IslandLetter } from './data.ts'
+import type { IslandLetter, Piece } from './data.ts'
 
 type Content = Node | string
 
@@ -31,3 +31,25 @@ export const letter = (runs: IslandLetter): HTMLElement =>
       return make(place === place.toLowerCase() ? `${tag}.trace-slope` : tag, run.slice(1))
     }),
   )
+
+const SVG = 'http://www.w3.org/2000/svg'
+
+/** A formula from the pieces that it was set in. */
+export function formula(pieces: readonly Piece[]): DocumentFragment {
+  const whole = document.createDocumentFragment()
+  const open: (Element | DocumentFragment)[] = [whole]
+  for (const [name, text, ...attributes] of pieces) {
+    if (name === '/') open.pop()
+    else {
+      const element = /^(?:svg|path)$/.test(name) ? document.createElementNS(SVG, name) : document.createElement(name)
+      for (let i = 0; i < attributes.length; i += 2) {
+        const key = attributes[i] ?? ''
+        if (key !== 'xmlns') element.setAttribute(key, attributes[i + 1] ?? '')
+      }
+      open.at(-1)?.append(element)
+      open.push(element)
+    }
+    if (text !== '') open.at(-1)?.append(text)
+  }
+  return whole
+}

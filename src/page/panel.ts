@@ -1,6 +1,6 @@
 /** The panel: what one value is, what it rests on, what rests on it, and the way that led here. */
 import type { Data, Input, IslandValue } from './data.ts'
-import { button, letter, make } from './elements.ts'
+import { button, formula, letter, make } from './elements.ts'
 import { nameOf, placeOf } from './places.ts'
 
 /** What can be done from the panel. */
@@ -24,7 +24,12 @@ export function contents(walk: readonly string[], data: Data, acts: Acts): reado
     make(
       'div.trace-body',
       make('section.trace-what', ...what(value, data, acts)),
-      make('section.trace-rests', ...list('Rests on', inputs, data, acts), ...origins(value, inputs, data, acts)),
+      make(
+        'section.trace-rests',
+        ...list('Rests on', inputs, data, acts),
+        ...leftOut(data.missing(value)),
+        ...origins(value, inputs, data, acts),
+      ),
       make(
         'section.trace-uses',
         ...(uses.length > 0
@@ -51,8 +56,14 @@ function bar(walk: readonly string[], data: Data, acts: Acts): HTMLElement {
   })
   const way = make('nav', make('ol.trace-walk', ...steps))
   way.setAttribute('aria-label', 'Way walked')
-  const back = walk.length > 1 ? [button('.trace-back', () => acts.back(walk.length - 2), 'Back')] : []
-  return make('div.trace-bar', ...back, way, button('.trace-close', acts.close, 'Close'))
+  const close = button('.trace-close', acts.close, 'Close')
+  if (walk.length < 2) return make('div.trace-bar', make('p', 'Trace'), close)
+  return make(
+    'div.trace-bar',
+    button('.trace-back', () => acts.back(walk.length - 2), 'Back'),
+    way,
+    close,
+  )
 }
 
 function what(value: IslandValue, data: Data, acts: Acts): readonly Node[] {
@@ -63,7 +74,7 @@ function what(value: IslandValue, data: Data, acts: Acts): readonly Node[] {
     title,
     make('p.trace-id', make('code', id)),
     ...place(id, acts),
-    ...formula(value, data),
+    ...worked(value, data),
     ...clause(value, data),
     ...(lines.length > 0 ? [make('ul.trace-lines', ...lines.map(line => sourceLine(line, data, 'li')))] : []),
   ]
@@ -80,15 +91,13 @@ function place(id: string, acts: Acts): readonly Node[] {
   ]
 }
 
-/** The formula as it was set when the page was made. */
-function formula(value: IslandValue, data: Data): readonly Node[] {
-  const template = document.querySelector<HTMLTemplateElement>('template.trace-formulas')
+/** The letter and the formula that gives it. */
+function worked(value: IslandValue, data: Data): readonly Node[] {
   const told = data.formula(value)
-  const set = value[3] === 'worked' ? template?.content.children[value[5]]?.firstElementChild : undefined
-  if (!set || !told) return []
-  const box = make('div.trace-formula', document.importNode(set, true))
+  if (!told) return []
+  const box = make('div.trace-formula', formula(data.pieces(told)))
   box.setAttribute('role', 'img')
-  box.setAttribute('aria-label', told[0])
+  box.setAttribute('aria-label', told[1])
   return [make('div.trace-line', letter(value[1]), make('span.trace-is', '='), box)]
 }
 
@@ -101,7 +110,7 @@ function clause(value: IslandValue, data: Data): readonly Node[] {
     case 'default':
       return [make('p.trace-clause', `Assumed: ${value[5]}`)]
     case 'worked': {
-      const [, reference = '', assumes = []] = data.formula(value) ?? []
+      const [, , reference = '', assumes = []] = data.formula(value) ?? []
       return [
         make('p.trace-clause', reference),
         ...(assumes.length > 0 ? [make('p.trace-soft', `Assumes ${assumes.join('; ')}.`)] : []),
@@ -128,6 +137,12 @@ function entryOf({ letter: runs, value }: Input, data: Data, acts: Acts): HTMLEl
       : make('span.trace-source', make('code', id))
   return button('.trace-entry', () => acts.walk(id), letter(runs), ' ', make('b', printed), ' ', below)
 }
+
+/** A page of very many values does not carry them all. */
+const leftOut = (count: number): readonly Node[] =>
+  count === 0
+    ? []
+    : [make('p.trace-soft', `${count} more, which this page is too large to carry: ask platemark trace for them.`)]
 
 /** The engineer's own values that it all comes down to, where they are not its inputs already. */
 function origins(value: IslandValue, inputs: readonly Input[], data: Data, acts: Acts): readonly Node[] {

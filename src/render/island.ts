@@ -1,9 +1,7 @@
-/**
- * What the page's own script reads: the trace as JSON, and the formulas of it, set and out of sight. Without
- * scripts neither is seen.
- */
+/** What the page's own script reads: the trace as JSON, with its formulas set. Without scripts it is not seen. */
 import type { Run } from '../explain/letter.ts'
 import type { Traced, TracedValue } from '../explain/traced.ts'
+import { createPieces, type Piece } from './markup.ts'
 import type { Typesetter } from './typeset.ts'
 
 /** Runs of a letter, each after a sign of where it stands: on the line, below, above; a capital for upright. */
@@ -30,8 +28,9 @@ export type IslandValue =
       words: string,
     ]
 
-/** `symbols` are left out where they are the letters of the inputs themselves. */
+/** `set` is the formula by the numbers of its pieces; `symbols` are left out where they are the letters of the inputs. */
 export type IslandFormula = readonly [
+  set: readonly number[],
   text: string,
   reference: string,
   assumes: readonly string[],
@@ -41,18 +40,17 @@ export type IslandFormula = readonly [
 export interface Island {
   readonly values: readonly IslandValue[]
   readonly formulas: readonly IslandFormula[]
+  readonly pieces: readonly Piece[]
   /** Text of the source lines by their numbers. */
   readonly lines: Readonly<Record<number, string>>
 }
 
 /**
- * The data, the formulas in a template, in the order of the data, and the script.
+ * The data and the script.
  * @param script runs as it stands; the page's policy names it by its hash
  */
 export function islandHtml(traced: Traced, typesetter: Typesetter, script: string): string {
-  const formulas = traced.formulas.map(({ letters }) => `<span>${typesetter.html(letters, 'display')}</span>`)
-  return `<script type="application/json" class="trace-data">${inScript(JSON.stringify(islandOf(traced)))}</script>
-<template class="trace-formulas">${formulas.join('')}</template>
+  return `<script type="application/json" class="trace-data">${inScript(JSON.stringify(islandOf(traced, typesetter)))}</script>
 <script>${script}</script>`
 }
 
@@ -60,13 +58,18 @@ export function islandHtml(traced: Traced, typesetter: Typesetter, script: strin
 const inScript = (json: string): string =>
   json.replace(/[<\u2028\u2029]/g, sign => `\\u${sign.charCodeAt(0).toString(16).padStart(4, '0')}`)
 
-export const islandOf = ({ values, formulas, lines }: Traced): Island => ({
-  values: values.map(islandValue),
-  formulas: formulas.map(({ text, reference, assumes, symbols }) =>
-    symbols ? [text, reference, assumes, symbols.map(islandLetter)] : [text, reference, assumes],
-  ),
-  lines: Object.fromEntries(lines),
-})
+export function islandOf({ values, formulas, lines }: Traced, typesetter: Typesetter): Island {
+  const pieces = createPieces()
+  return {
+    values: values.map(islandValue),
+    formulas: formulas.map(({ letters, text, reference, assumes, symbols }): IslandFormula => {
+      const set = pieces.pack(typesetter.html(letters, 'display'))
+      return symbols ? [set, text, reference, assumes, symbols.map(islandLetter)] : [set, text, reference, assumes]
+    }),
+    pieces: pieces.all(),
+    lines: Object.fromEntries(lines),
+  }
+}
 
 function islandValue({ value, letter, printed, kind, lines, formula, inputs, words }: TracedValue): IslandValue {
   const { id } = value
