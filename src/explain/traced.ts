@@ -9,7 +9,6 @@ import { type Tex, tex, texSource } from '../base/tex.ts'
 import { letter, typeset } from '../base/typeset.ts'
 import { type Origin, printed, type Value } from '../base/value.ts'
 import type { Context } from './context.ts'
-import { type Run, runsOf } from './letter.ts'
 import { nearestValues } from './trace.ts'
 
 export interface TracedFormula {
@@ -19,13 +18,12 @@ export interface TracedFormula {
   readonly text: string
   readonly reference: string
   readonly assumes: readonly string[]
-  /** The formula's own letters for its inputs, in order. Absent where they are the letters of the inputs themselves. */
-  readonly symbols?: readonly (readonly Run[])[]
+  /** The formula's own letters for its inputs in TeX, in order. Absent where they are the letters of the inputs themselves. */
+  readonly symbols?: readonly string[]
 }
 
 export interface TracedValue {
   readonly value: Value
-  readonly letter: readonly Run[]
   readonly printed: string
   readonly kind: Origin['kind']
   /** What is said of a value that no formula gives: how it was measured, or what was assumed. */
@@ -61,7 +59,6 @@ export function traced(context: Context, most: number = MOST_VALUES): Traced {
     for (const line of own) lines.set(line, excerpt(context.source, line))
     const base = {
       value,
-      letter: runsOf(value.tex),
       printed: printed(value, context.language),
       kind: origin.kind,
       words: context.words(wordsOf(origin)),
@@ -107,7 +104,7 @@ class Formulas {
       known.ofInputs ??= this.tell(tracedFormula(formula, this.context))
       return known.ofInputs
     }
-    const symbols = () => [...formula.symbols.values()].map(({ tex }) => runsOf(tex))
+    const symbols = () => [...formula.symbols.values()].map(({ tex }) => tex)
     known.own ??= this.tell({ ...tracedFormula(formula, this.context), symbols: symbols() })
     return known.own
   }

@@ -1,8 +1,7 @@
 /** The page's trace, read from its island: values by id, and which results rest on each. */
-import type { Island, IslandFormula, IslandLetter, IslandValue } from '../render/island.ts'
-import type { Piece } from '../render/markup.ts'
+import type { Island, IslandFormula, IslandValue } from '../render/island.ts'
 
-export type { IslandLetter, IslandValue, Piece }
+export type { IslandValue }
 
 export interface Data {
   readonly find: (id: string) => IslandValue | undefined
@@ -13,14 +12,15 @@ export interface Data {
   readonly uses: (id: string) => readonly IslandValue[]
   readonly formula: (value: IslandValue) => IslandFormula | undefined
   /** The pieces of a formula as it was set when the page was made. */
-  readonly pieces: (formula: IslandFormula) => readonly Piece[]
+  readonly pieces: (formula: IslandFormula) => readonly string[]
   /** Values that the engineer wrote, which a value comes down to; each once, in the order of the walk. */
   readonly roots: (value: IslandValue) => readonly IslandValue[]
   readonly line: (number: number) => string
 }
 
 export interface Input {
-  readonly letter: IslandLetter
+  /** In TeX. */
+  readonly letter: string
   readonly value: IslandValue
 }
 

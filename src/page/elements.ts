@@ -1,5 +1,5 @@
-/** Elements made from plain texts; nothing is ever read as markup. */
-import type { IslandLetter, Piece } from './data.ts'
+/** Elements made from plain texts; nothing is ever read as markup by the browser. */
+import { runsOf } from '../explain/letter.ts'
 
 type Content = Node | string
 
@@ -19,37 +19,39 @@ export function button(kind: string, act: () => void, ...contents: readonly Cont
   return element
 }
 
-const tags: Readonly<Record<string, string>> = { l: 'span', b: 'sub', a: 'sup' }
+const tags = { line: 'span', below: 'sub', above: 'sup' } as const
 
 /** A letter with what stands below and above it. */
-export const letter = (runs: IslandLetter): HTMLElement =>
+export const letter = (tex: string): HTMLElement =>
   make(
     'span.trace-letter',
-    ...runs.map(run => {
-      const place = run.charAt(0)
-      const tag = tags[place.toLowerCase()] ?? 'span'
-      return make(place === place.toLowerCase() ? `${tag}.trace-slope` : tag, run.slice(1))
-    }),
+    ...runsOf(tex).map(({ at, upright, text }) => make(tags[at] + (upright ? '' : '.trace-slope'), text)),
   )
 
 const SVG = 'http://www.w3.org/2000/svg'
 
-/** A formula from the pieces that it was set in. */
-export function formula(pieces: readonly Piece[]): DocumentFragment {
+/** A formula from the pieces that it was set in, each a tag without its first sign, and the text after it. */
+export function formula(pieces: readonly string[]): DocumentFragment {
   const whole = document.createDocumentFragment()
   const open: (Element | DocumentFragment)[] = [whole]
-  for (const [name, text, ...attributes] of pieces) {
-    if (name === '/') open.pop()
+  for (const piece of pieces) {
+    // Attributes hold no `>`, as KaTeX writes them.
+    const end = piece.indexOf('>')
+    const tag = piece.slice(0, end)
+    if (tag.startsWith('/')) open.pop()
     else {
-      const element = /^(?:svg|path)$/.test(name) ? document.createElementNS(SVG, name) : document.createElement(name)
-      for (let i = 0; i < attributes.length; i += 2) {
-        const key = attributes[i] ?? ''
-        if (key !== 'xmlns') element.setAttribute(key, attributes[i + 1] ?? '')
-      }
+      const name = /^\w+/.exec(tag)?.[0] ?? 'span'
+      const element = name === 'span' ? document.createElement(name) : document.createElementNS(SVG, name)
+      for (const [, key = '', value = ''] of tag.matchAll(/ ([\w-]+)="([^"]*)"/g))
+        if (key !== 'xmlns') element.setAttribute(key, plain(value))
       open.at(-1)?.append(element)
-      open.push(element)
+      if (!tag.endsWith('/')) open.push(element)
     }
-    if (text !== '') open.at(-1)?.append(text)
+    open.at(-1)?.append(plain(piece.slice(end + 1)))
   }
   return whole
 }
+
+const signs: Readonly<Record<string, string>> = { amp: '&', lt: '<', gt: '>', quot: '"', '#x27': "'" }
+
+const plain = (text: string): string => text.replace(/&(amp|lt|gt|quot|#x27);/g, (_, name: string) => signs[name] ?? '')

@@ -67,8 +67,8 @@ function bar(walk: readonly string[], data: Data, acts: Acts): HTMLElement {
 }
 
 function what(value: IslandValue, data: Data, acts: Acts): readonly Node[] {
-  const [id, runs, printed, , lines] = value
-  const title = make('h2', letter(runs), ' = ', make('b', printed))
+  const [id, tex, printed, , lines] = value
+  const title = make('h2', letter(tex), ' = ', make('b', printed))
   title.tabIndex = -1
   return [
     title,
@@ -128,14 +128,14 @@ function list(title: string, entries: readonly Input[], data: Data, acts: Acts):
 }
 
 /** A value to walk to: its letter, its number, and its line in the source or its id. */
-function entryOf({ letter: runs, value }: Input, data: Data, acts: Acts): HTMLElement {
+function entryOf({ letter: tex, value }: Input, data: Data, acts: Acts): HTMLElement {
   const [id, , printed, kind, lines] = value
   const [line] = lines
   const below =
     kind === 'given' && line !== undefined
       ? sourceLine(line, data, 'span')
       : make('span.trace-source', make('code', id))
-  return button('.trace-entry', () => acts.walk(id), letter(runs), ' ', make('b', printed), ' ', below)
+  return button('.trace-entry', () => acts.walk(id), letter(tex), ' ', make('b', printed), ' ', below)
 }
 
 /** A page of very many values does not carry them all. */

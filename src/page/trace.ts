@@ -1,4 +1,5 @@
 /** Opens the panel on any number of the page, and keeps the walk from there. */
+import { runsOf } from '../explain/letter.ts'
 import type { Island } from '../render/island.ts'
 import { type Data, type IslandValue, readData } from './data.ts'
 import { make } from './elements.ts'
@@ -188,7 +189,10 @@ function markUnder(target: Element): HTMLElement | undefined {
 }
 
 /** Such as `k_W1 = 13,625 kip/in`, to be heard. */
-const inWords = ([, runs, printed]: IslandValue): string => `${runs.map(run => run.slice(1)).join(' ')} = ${printed}`
+const inWords = ([, tex, printed]: IslandValue): string =>
+  `${runsOf(tex)
+    .map(({ text }) => text)
+    .join(' ')} = ${printed}`
 
 const pace = (): ScrollBehavior => (matchMedia('(prefers-reduced-motion: reduce)').matches ? 'instant' : 'smooth')
 

@@ -1,18 +1,13 @@
 /** What the page's own script reads: the trace as JSON, with its formulas set. Without scripts it is not seen. */
-import type { Run } from '../explain/letter.ts'
 import type { Traced, TracedValue } from '../explain/traced.ts'
-import { createPieces, type Piece } from './markup.ts'
 import type { Typesetter } from './typeset.ts'
 
-/** Runs of a letter, each after a sign of where it stands: on the line, below, above; a capital for upright. */
-export type IslandLetter = readonly string[]
-
-/** Id, letter, printed, kind, lines of the source; then what the kind has more. */
+/** Id, letter in TeX, printed, kind, lines of the source; then what the kind has more. */
 export type IslandValue =
-  | readonly [id: string, letter: IslandLetter, printed: string, kind: 'given', lines: readonly number[]]
+  | readonly [id: string, letter: string, printed: string, kind: 'given', lines: readonly number[]]
   | readonly [
       id: string,
-      letter: IslandLetter,
+      letter: string,
       printed: string,
       kind: 'worked',
       lines: readonly number[],
@@ -21,7 +16,7 @@ export type IslandValue =
     ]
   | readonly [
       id: string,
-      letter: IslandLetter,
+      letter: string,
       printed: string,
       kind: 'measured' | 'default',
       lines: readonly number[],
@@ -34,13 +29,14 @@ export type IslandFormula = readonly [
   text: string,
   reference: string,
   assumes: readonly string[],
-  symbols?: readonly IslandLetter[],
+  symbols?: readonly string[],
 ]
 
 export interface Island {
   readonly values: readonly IslandValue[]
   readonly formulas: readonly IslandFormula[]
-  readonly pieces: readonly Piece[]
+  /** Markup as KaTeX writes it, cut before each tag: formulas are made of the same few tags. */
+  readonly pieces: readonly string[]
   /** Text of the source lines by their numbers. */
   readonly lines: Readonly<Record<number, string>>
 }
@@ -59,32 +55,32 @@ const inScript = (json: string): string =>
   json.replace(/[<\u2028\u2029]/g, sign => `\\u${sign.charCodeAt(0).toString(16).padStart(4, '0')}`)
 
 export function islandOf({ values, formulas, lines }: Traced, typesetter: Typesetter): Island {
-  const pieces = createPieces()
+  const pieces = new Map<string, number>()
+  const numberOf = (piece: string): number => {
+    const known = pieces.get(piece) ?? pieces.size
+    pieces.set(piece, known)
+    return known
+  }
   return {
     values: values.map(islandValue),
     formulas: formulas.map(({ letters, text, reference, assumes, symbols }): IslandFormula => {
-      const set = pieces.pack(typesetter.html(letters, 'display'))
-      return symbols ? [set, text, reference, assumes, symbols.map(islandLetter)] : [set, text, reference, assumes]
+      const set = typesetter.html(letters, 'display').split('<').slice(1).map(numberOf)
+      return symbols ? [set, text, reference, assumes, symbols] : [set, text, reference, assumes]
     }),
-    pieces: pieces.all(),
+    pieces: [...pieces.keys()],
     lines: Object.fromEntries(lines),
   }
 }
 
-function islandValue({ value, letter, printed, kind, lines, formula, inputs, words }: TracedValue): IslandValue {
+function islandValue({ value, printed, kind, lines, formula, inputs, words }: TracedValue): IslandValue {
   const { id } = value
   switch (kind) {
     case 'given':
-      return [id, islandLetter(letter), printed, kind, lines]
+      return [id, value.tex, printed, kind, lines]
     case 'worked':
-      return [id, islandLetter(letter), printed, kind, lines, formula ?? 0, inputs]
+      return [id, value.tex, printed, kind, lines, formula ?? 0, inputs]
     case 'measured':
     case 'default':
-      return [id, islandLetter(letter), printed, kind, lines, words]
+      return [id, value.tex, printed, kind, lines, words]
   }
 }
-
-const places = { line: 'l', below: 'b', above: 'a' } as const
-
-const islandLetter = (runs: readonly Run[]): IslandLetter =>
-  runs.map(({ at, upright, text }) => (upright ? places[at].toUpperCase() : places[at]) + text)
