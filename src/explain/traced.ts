@@ -55,13 +55,14 @@ export function traced(context: Context, most: number = MOST_VALUES): Traced {
   const lines = new Map<number, string>()
   const values = all.map((value): TracedValue => {
     const { origin } = value
-    const own = context.lines(ownSpans(origin))
-    for (const line of own) lines.set(line, excerpt(context.source, line))
+    const spans = ownSpans(origin)
+    const own = spans.length === 0 ? [] : context.lines(spans)
+    for (const line of own) if (!lines.has(line)) lines.set(line, excerpt(context.source, line))
     const base = {
       value,
       printed: printed(value, context.language),
       kind: origin.kind,
-      words: context.words(wordsOf(origin)),
+      words: origin.kind === 'measured' || origin.kind === 'default' ? context.words(wordsOf(origin)) : '',
       lines: own,
     }
     if (origin.kind !== 'worked') return { ...base, inputs: [] }

@@ -43,7 +43,7 @@ export function formula(pieces: readonly string[]): DocumentFragment {
       const name = /^\w+/.exec(tag)?.[0] ?? 'span'
       const element = name === 'span' ? document.createElement(name) : document.createElementNS(SVG, name)
       for (const [, key = '', value = ''] of tag.matchAll(/ ([\w-]+)="([^"]*)"/g))
-        if (key !== 'xmlns') element.setAttribute(key, plain(value))
+        element.setAttribute(key, plain(value))
       open.at(-1)?.append(element)
       if (!tag.endsWith('/')) open.push(element)
     }

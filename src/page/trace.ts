@@ -127,7 +127,7 @@ export function startTrace(): Refresh | undefined {
     panel.replaceChildren()
     for (const mark of document.querySelectorAll('.trace-here')) mark.classList.remove('trace-here')
     if (location.hash.startsWith(ADDRESS))
-      history.replaceState(null, '', addressBefore || location.pathname + location.search)
+      history.replaceState(null, '', addressBefore || location.href.replace(/#.*/, ''))
     if (opener) stopFor(opener)?.focus({ preventScroll: true })
     opener = undefined
     walk = []
@@ -157,7 +157,7 @@ export function startTrace(): Refresh | undefined {
 
   function chooseIn(step: HTMLElement, key: string): boolean {
     if (key !== 'ArrowLeft' && key !== 'ArrowRight') return false
-    const marks = [...(step.closest('.eq')?.querySelectorAll<HTMLElement>(MARK) ?? [])]
+    const marks = inReadingOrder(step.closest('.eq'))
     const at = marks.indexOf(chosen.get(step) ?? resultOf(step) ?? step)
     const next = marks[(at + (key === 'ArrowRight' ? 1 : marks.length - 1)) % marks.length]
     choose(step, next)
@@ -179,6 +179,16 @@ const MOVES: ReadonlySet<string> = new Set(['ArrowLeft', 'ArrowRight', 'ArrowUp'
 
 const resultOf = (step: Element): HTMLElement | undefined =>
   step.closest('.eq')?.querySelector<HTMLElement>(`.result ${MARK}`) ?? undefined
+
+/** The numbers of a step line by line, each from the left: KaTeX writes what is below a bar before what is above it. */
+function inReadingOrder(step: Element | null): readonly HTMLElement[] {
+  const lines = [...(step?.querySelectorAll('.rhs') ?? [])]
+  return lines.flatMap(line =>
+    [...line.querySelectorAll<HTMLElement>(MARK)].sort(
+      (a, b) => a.getBoundingClientRect().left - b.getBoundingClientRect().left,
+    ),
+  )
+}
 
 /** The number that was pointed at, or the only one of the cell around it. */
 function markUnder(target: Element): HTMLElement | undefined {

@@ -1,24 +1,15 @@
 /** The sketch as a browser sets it: its real letters, not our estimate of them. */
-import { existsSync } from 'node:fs'
-import puppeteer, { type Browser } from 'puppeteer-core'
+import type { Browser } from 'puppeteer-core'
 import { afterAll, beforeAll, expect, test } from 'vitest'
 import { type Box, boxesMeet } from '../../src/draw/geometry.ts'
 import { drawPlan } from '../../src/draw/plan.ts'
+import { browserPath, launchBrowser } from '../support/browser.ts'
 import { buildings, hangar } from './views.ts'
-
-const places = [
-  '/usr/bin/chromium',
-  '/usr/bin/chromium-browser',
-  '/usr/bin/google-chrome',
-  '/usr/bin/google-chrome-stable',
-]
-const executablePath = process.env.CHROME_PATH ?? places.find(existsSync)
 
 let browser: Browser | undefined
 
 beforeAll(async () => {
-  if (executablePath === undefined) return
-  browser = await puppeteer.launch({ executablePath, args: ['--no-sandbox', '--disable-gpu', '--no-first-run'] })
+  if (browserPath !== undefined) browser = await launchBrowser()
 }, 60_000)
 
 afterAll(async () => browser?.close())
@@ -39,7 +30,7 @@ const measure = `[...document.querySelectorAll('svg text')].flatMap(text => {
   return [{ text: letters, box: { at: { x: middle.x, y: middle.y }, halfWidth: width / 2, halfHeight: height / 2, angle } }]
 })`
 
-test.skipIf(executablePath === undefined).each(Object.entries({ ...buildings, hangar }))(
+test.skipIf(browserPath === undefined).each(Object.entries({ ...buildings, hangar }))(
   'in a browser no two texts of %s overlap (skipped where no browser is found)',
   async (_, view) => {
     const page = await browser?.newPage()
