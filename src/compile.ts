@@ -11,6 +11,7 @@ import { numberItems } from './explain/number.ts'
 import type { Check, Sheet } from './explain/sheet.ts'
 import { type Choices, readChoices } from './model/front.ts'
 import { gather } from './model/givens.ts'
+import type { Scope } from './model/scope.ts'
 import { readDocument } from './read/document.ts'
 import { parseMarkdown } from './read/markdown.ts'
 import { type Nearby, nothingNearby } from './read/nearby.ts'
@@ -23,6 +24,8 @@ export interface Compiled {
   readonly choices: Choices
   readonly parts: readonly Part[]
   readonly context: Context
+  /** Every value by its id, printed or not. */
+  readonly scope: Scope
   readonly checks: readonly Check[]
   /** In the order of the source, each once. */
   readonly diagnostics: readonly Diagnostic[]
@@ -58,6 +61,7 @@ export function compileTree(tree: Root, source: Source, nearby: Nearby = nothing
     choices,
     parts: partsOf(items, headings, quotes),
     context,
+    scope: sheet.scope,
     checks: context.checks,
     diagnostics,
   }

@@ -57,7 +57,7 @@ export function traced(context: Context, most: number = MOST_VALUES): Traced {
     const { origin } = value
     const spans = ownSpans(origin)
     const own = spans.length === 0 ? [] : context.lines(spans)
-    for (const line of own) if (!lines.has(line)) lines.set(line, excerpt(context.source, line))
+    for (const line of own) if (!lines.has(line)) lines.set(line, sourceLine(context.source, line))
     const base = {
       value,
       printed: printed(value, context.language),
@@ -159,10 +159,11 @@ export function ownSpans(origin: Origin): readonly Span[] {
   }
 }
 
-/** A line longer than this is cut around nothing: its beginning tells what it is. */
+/** Of a longer line the beginning tells what it is. */
 const LONGEST = 400
 
-function excerpt(source: Source, line: number): string {
+/** A line of the source, in one space between its words. */
+export function sourceLine(source: Source, line: number): string {
   // Columns of a table are padded for the eye that reads them below each other.
   const text = lineText(source, line).trim().replace(/\s+/g, ' ')
   return text.length > LONGEST ? `${text.slice(0, LONGEST)}…` : text
