@@ -4,13 +4,17 @@ import { parseArgs } from 'node:util'
 import { inWords, suggestion } from './base/near.ts'
 import { longForm, oneLine } from './base/report.ts'
 import { sourceOf } from './base/span.ts'
+import type { Value } from './base/value.ts'
 import type { Compiled } from './compile.ts'
 import { compileText } from './compile.ts'
 import { auditSteps } from './explain/audit.ts'
 import { missingForSubmittal } from './explain/submittal.ts'
+import { everyValue } from './explain/trace.ts'
+import { traceText } from './explain/trace-text.ts'
 import { type DocumentFile, documentsIn, nearbyOf, print, readText, writeWhole } from './files.ts'
 import { help, helpFor } from './help.ts'
 import { hostAt } from './host.ts'
+import { isWord } from './model/scope.ts'
 import { type Format, publish } from './publish.ts'
 
 const DONE = 0
@@ -22,7 +26,7 @@ const isFormat = (word: string): word is Format => formats.includes(word)
 
 const host = hostAt(join(__dirname, 'assets'))
 
-const commands = ['build', 'check', 'audit'] as const
+const commands = ['build', 'check', 'audit', 'trace'] as const
 type Command = (typeof commands)[number]
 
 interface Settings {
@@ -34,6 +38,8 @@ interface Settings {
   readonly oneLine: boolean
   /** True when what a submittal must carry is asked for too. */
   readonly submittal: boolean
+  /** The value that `trace` tells of. */
+  readonly id: string
 }
 
 /** @returns the exit code */
@@ -71,6 +77,7 @@ const options = {
   build: { to: { type: 'string' }, out: { type: 'string' }, draft: { type: 'boolean' }, list: { type: 'boolean' } },
   check: { list: { type: 'boolean' }, submittal: { type: 'boolean' } },
   audit: { list: { type: 'boolean' } },
+  trace: { list: { type: 'boolean' } },
 } as const
 
 function readOptions(command: Command, args: readonly string[]): Settings | number {
@@ -83,7 +90,11 @@ function readOptions(command: Command, args: readonly string[]): Settings | numb
   } catch (error) {
     return misuse(`${error instanceof Error ? (error.message.split('. ')[0] ?? '') : ''}.`)
   }
-  const { values, positionals } = parsed
+  const { values } = parsed
+  const asksForValue = command === 'trace'
+  if (asksForValue && parsed.positionals.length !== 2) return misuse('Name one Markdown file and the id of a value.')
+  const id = asksForValue ? (parsed.positionals[1] ?? '') : ''
+  const positionals = asksForValue ? parsed.positionals.slice(0, 1) : parsed.positionals
   if (positionals.length === 0) return misuse('Name a Markdown file, or a folder of them.')
   const to = (typeof values.to === 'string' ? values.to : 'html').split(',').map(word => word.trim())
   const strange = to.find(word => !isFormat(word))
@@ -99,6 +110,7 @@ function readOptions(command: Command, args: readonly string[]): Settings | numb
     draft: values.draft === true,
     oneLine: values.list === true,
     submittal: values.submittal === true,
+    id,
   }
 }
 
@@ -163,7 +175,30 @@ function audit({ path }: DocumentFile, settings: Settings): number {
   return errors > 0 || broken.length > 0 ? ERRORS : DONE
 }
 
-const actions = { build, check, audit } as const
+/** Tells where a value came from. What is printed is known by its id; anything else is looked up. */
+function trace({ path }: DocumentFile, settings: Settings): number {
+  const compiled = compileFile(path)
+  if (!compiled) return ERRORS
+  const errors = tell(compiled, settings)
+  const { context, scope } = compiled
+  const known = everyValue([...context.besides.values(), ...context.roots.values()])
+  const found = known.find(({ id }) => id === settings.id) ?? looked(scope.lookup(settings.id))
+  if (!found)
+    return fail(
+      `${shownPath(path)}: there is no value ${settings.id}. ${suggestion(
+        settings.id,
+        known.map(({ id }) => id),
+        'value',
+      )}`,
+    )
+  print('output', `${traceText(found, context)}\n`)
+  return errors > 0 ? ERRORS : DONE
+}
+
+const looked = (found: ReturnType<Compiled['scope']['lookup']>): Value | undefined =>
+  found?.ok && !isWord(found.value) ? found.value : undefined
+
+const actions = { build, check, audit, trace } as const
 
 /** Prints every diagnostic and a closing count. @returns the number of errors */
 function tell({ source, diagnostics }: Compiled, settings: Settings): number {

@@ -21,6 +21,7 @@ import { closingOf, prefaceOf } from './explain/preface.ts'
 import type { Check, Preface, Sheet, Template } from './explain/sheet.ts'
 import { type Choices, readChoices } from './model/front.ts'
 import { gather } from './model/givens.ts'
+import type { Scope } from './model/scope.ts'
 import { readDocument } from './read/document.ts'
 import { parseMarkdown } from './read/markdown.ts'
 import { type Nearby, nothingNearby } from './read/nearby.ts'
@@ -40,6 +41,8 @@ export interface Compiled {
   readonly parts: readonly Part[]
   readonly pictures: Pictures
   readonly context: Context
+  /** Every value by its id, printed or not. */
+  readonly scope: Scope
   readonly checks: readonly Check[]
   /** In the order of the source, each once. */
   readonly diagnostics: readonly Diagnostic[]
@@ -90,6 +93,7 @@ export function compileTree(tree: Root, source: Source, nearby: Nearby = nothing
     parts: partsOf(items, headings, pictures, quotes),
     pictures: document.pictures,
     context,
+    scope: sheet.scope,
     checks: context.checks,
     diagnostics,
   }

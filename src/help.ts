@@ -6,6 +6,7 @@ shear-wall building, with formulas, values put in, results, tables and sketches.
   platemark build FILE…    write the calculation beside each file
   platemark check FILE…    say what is wrong and how the checks come out
   platemark audit FILE…    show that every printed line holds to its digits
+  platemark trace FILE ID  say where a number came from
 
 A FILE is a Markdown document; a folder stands for all .md files in it.
 platemark COMMAND --help tells more. platemark --version prints the version.
@@ -54,6 +55,17 @@ as the same numbers. Lines that do not hold are printed; nothing is written.
 Exit code: 0 every line holds, 1 errors or lines that do not hold, 2 wrong usage.
 
   platemark audit workshop.md`,
+  trace: `platemark trace FILE ID [--list]
+
+Tells where the value ID came from: its formula, the values put in, the clause or derivation and the line of
+the source, and the same for each value that it rests on, set in under it. Each is told once; nothing is
+written. The page tells the same when a number is clicked.
+
+  --list      one line for each diagnostic
+
+Exit code: 0 told, 1 errors or no such value, 2 wrong usage.
+
+  platemark trace workshop.md roof.CR.x`,
 } as const
 
 export const helpFor = (command: keyof typeof texts): string => texts[command]

@@ -7,6 +7,7 @@ import remarkStringify from 'remark-stringify'
 import { unified } from 'unified'
 import { type Compiled, sheetOf } from './compile.ts'
 import type { Figure } from './explain/sheet.ts'
+import { traced } from './explain/traced.ts'
 import type { PlacedPicture } from './read/pictures.ts'
 import { besideNames } from './render/beside.ts'
 import type { BodyPart } from './render/body.ts'
@@ -71,7 +72,14 @@ export function shapesOf(host: Host): ShapeCache {
 function page(compiled: Compiled, draft: boolean, host: Host): string {
   const { source } = compiled
   const sheet = sheetOf(compiled, host.version, host.sha256(source.text), draft)
-  return renderHtml({ sheet, body: bodyOf(compiled), source, asset: host.asset, shapes: shapesOf(host) })
+  return renderHtml({
+    sheet,
+    body: bodyOf(compiled),
+    source,
+    asset: host.asset,
+    shapes: shapesOf(host),
+    traced: traced(compiled.context),
+  })
 }
 
 function bodyOf({ parts, pictures }: Compiled): readonly BodyPart[] {

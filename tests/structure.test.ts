@@ -18,6 +18,7 @@ const order: readonly (readonly string[])[] = [
   ['compile.ts'],
   ['publish.ts'],
   ['host.ts', 'index.ts', 'files.ts', 'help.ts', 'cli.ts'],
+  ['page'],
 ]
 
 interface SourceFile {

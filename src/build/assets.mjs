@@ -2,10 +2,12 @@
  * Prepares what a page carries inside itself: its template, its style, and each
  * face as a ready `@font-face` rule, so that rendering only joins texts.
  */
+import { createHash } from 'node:crypto'
 import { mkdir, readFile, writeFile } from 'node:fs/promises'
 import { createRequire } from 'node:module'
 import { dirname, join } from 'node:path'
 import { fileURLToPath } from 'node:url'
+import { build } from 'esbuild'
 
 const root = fileURLToPath(new URL('../..', import.meta.url))
 const require = createRequire(import.meta.url)
@@ -21,6 +23,7 @@ const packageFolder = name => dirname(require.resolve(`${name}/package.json`))
  */
 export async function prepareAssets() {
   const katex = await katexAssets()
+  const script = await pageScript()
   const text = await textFaces('@fontsource-variable/source-serif-4', 'text', 'Source Serif 4')
   const label = await textFaces('@fontsource-variable/source-sans-3', 'label', 'Source Sans 3')
   const prepared = [...text, ...label]
@@ -28,10 +31,32 @@ export async function prepareAssets() {
     ['page.html', await readFile(join(root, 'templates/page.html'), 'utf8')],
     ['sheet.html', await readFile(join(root, 'templates/sheet.html'), 'utf8')],
     ['sheet.css', minified(await readFile(join(root, 'templates/sheet.css'), 'utf8'))],
+    ['trace.css', minified(await readFile(join(root, 'templates/trace.css'), 'utf8'))],
+    ['trace.js', script],
+    // What the page's policy names the script by, so that no other can run.
+    ['trace.hash', `sha256-${createHash('sha256').update(script).digest('base64')}`],
     ['faces.json', JSON.stringify(prepared.map(({ face }) => face))],
     .../** @type {[string, string][]} */ (prepared.map(({ face, rule }) => [`faces/${face.name}.css`, rule])),
     ...katex,
   ])
+}
+
+/** The page's own script, in one piece that nothing within can end. */
+async function pageScript() {
+  const { outputFiles } = await build({
+    entryPoints: [join(root, 'src/page/main.ts')],
+    bundle: true,
+    minify: true,
+    write: false,
+    format: 'iife',
+    target: ['chrome109', 'firefox115', 'safari16'],
+    charset: 'ascii',
+    legalComments: 'none',
+    tsconfigRaw: {},
+  })
+  const script = outputFiles[0]?.text.trim() ?? ''
+  if (/<\/script|<!--/i.test(script)) throw new Error('the script of the page would end itself')
+  return script
 }
 
 /**

@@ -40,6 +40,8 @@ export class Context {
   readonly roots = new Map<string, Value>()
   /** Ids of the engineer's own lines that say where their formula is from. */
   readonly cited = new Set<string>()
+  /** Values that are printed and can be traced, but are no part of the results: the limits of checks, the subjects of words. */
+  readonly besides = new Map<string, Value>()
   /** Every formula that was printed, in order. */
   readonly formulas = new Set<Formula>()
   private readonly checked = new Map<string, Check>()

@@ -4,7 +4,7 @@ import { evaluate } from '../base/evaluate.ts'
 import { namesIn } from '../base/expr.ts'
 import { halfUnit, type Numeral, numeralTex, numeralValue } from '../base/numeral.ts'
 import { plain } from '../base/plain.ts'
-import { joinTex, type Tex, tex } from '../base/tex.ts'
+import { joinTex, marked, type Tex, tex } from '../base/tex.ts'
 import { letter, typeset, valueSet } from '../base/typeset.ts'
 import { unitTex } from '../base/unit.ts'
 import { printedNumeral, printedPlain, type Step, spansOf, type Value } from '../base/value.ts'
@@ -54,7 +54,8 @@ function linesOf(step: Step, value: Value, { language }: Context): readonly Tex[
     body,
     name => {
       const input = inputOf(step, name)
-      return valueSet(printedNumeral(input, extra), input.unit, language)
+      const piece = valueSet(printedNumeral(input, extra), input.unit, language)
+      return { ...piece, tex: marked(input.id, piece.tex) }
     },
     language,
   )
@@ -99,7 +100,7 @@ function resultTex(value: Value, { language }: Context): Tex {
   const numeral = printedNumeral(value)
   const unit = unitTex(value.unit)
   const spaced = unit === '' || unit === '\\mathrm{\\%}' ? unit : `\\ ${unit}`
-  return joinTex(bold(numeral, language), unit === '\\mathrm{deg}' ? '^{\\circ}' : spaced)
+  return marked(value.id, joinTex(bold(numeral, language), unit === '\\mathrm{deg}' ? '^{\\circ}' : spaced))
 }
 
 function bold(numeral: Numeral, language: Context['language']): Tex {

@@ -32,7 +32,13 @@ export function explainGiven(block: Block, context: Context): readonly Piece[] {
           ? ('left' as const)
           : ('right' as const),
     }))
-    const rows = table.rows.map(({ cells }): Row => ({ cells: cells.map(({ text }) => text), governs: false }))
+    const rows = table.rows.map(
+      ({ cells }): Row => ({
+        cells: cells.map(({ text }) => text),
+        places: cells.map(({ span }) => span),
+        governs: false,
+      }),
+    )
     pieces.push(given(id, title, columns, rows, lines))
   }
   if (stated.length > 0) {
@@ -42,6 +48,7 @@ export function explainGiven(block: Block, context: Context): readonly Piece[] {
     const rows = stated.map(
       ({ name, value, comment }): Row => ({
         cells: [name.text, value.text, ...(noted ? [comment] : [])],
+        places: [nowhere, value.span, ...(noted ? [nowhere] : [])],
         governs: false,
       }),
     )
@@ -49,6 +56,9 @@ export function explainGiven(block: Block, context: Context): readonly Piece[] {
   }
   return pieces
 }
+
+/** A cell that repeats no value of the source. */
+const nowhere = { start: 0, end: 0 }
 
 const numeric = (cells: readonly string[]): boolean =>
   cells.every(text => text === '' || /^[-−]?\d/.test(text)) && !cells.some(text => text.includes(','))

@@ -17,11 +17,15 @@ export function explainQuote({ id, options }: QuoteMark, scope: Scope, context: 
   const found = scope.lookup(id.text)
   if (found === undefined) return bad([unknownName(id.text, id.span, scope)])
   if (!found.ok) return found
-  if (isWord(found.value))
+  if (isWord(found.value)) {
+    // A word is told by the value that it is about.
+    const about = scope.lookup(found.value.about)
+    if (about?.ok && !isWord(about.value)) context.besides.set(about.value.id, about.value)
     return good({
       id: found.value.about,
       printed: found.value.id.endsWith('.case') ? caseOnPage(found.value.text) : found.value.text,
     })
+  }
   context.roots.set(found.value.id, found.value)
   if (options.text === '') return good({ id: found.value.id, printed: printed(found.value, context.language) })
   const asked = asAsked(found.value, options, context)

@@ -1,11 +1,12 @@
 /** Torsion, wall shears, design shears, displacement and equilibrium. */
 
-import { sym } from '../base/formula.ts'
+import { formula, sym } from '../base/formula.ts'
 import type { Display } from '../base/kind.ts'
 import { verbatim } from '../base/language.ts'
 import { numeralOnPage, rounded } from '../base/numeral.ts'
 import { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
+import { texAbout, work } from '../base/work.ts'
 import { caseOnPage } from '../compute/cases.ts'
 import type { Displacement } from '../compute/displacement.ts'
 import type { CaseResult, Distribution } from '../compute/distribution.ts'
@@ -188,6 +189,17 @@ function displacedPoints(
 /** The residual that the arithmetic may leave, of the storey shear. */
 const ALLOWED = 1e-9
 
+const share = {
+  of: sym('R', 'R', 'residual'),
+  limit: sym('R_lim', 'R_{\\text{lim}}', 'residual'),
+}
+const residualRatio = formula({
+  gives: sym('r', 'r', 'number'),
+  body: 'R/R_lim',
+  of: [share.of, share.limit],
+  source: 'demand over limit',
+})
+
 const resisted = {
   x: sym('R_x', '\\sum V\\,c', 'force'),
   y: sym('R_y', '\\sum V\\,s', 'force'),
@@ -235,7 +247,7 @@ export function explainEquilibrium(
         caption: `What acts on ${verbatim(level)} and what its walls resist, moments about the origin. The residual is the largest difference over the storey shear.`,
         rowHead: 'Case',
         columns: ['V', 'R_x', 'R_y', 'M_o', 'R_M'],
-        words: [{ head: 'Residual', cells: residuals }],
+        words: [{ head: 'Residual', cells: residuals, ids: cases.map(({ residual }) => residual.ratio.id) }],
       },
       context,
     ),
@@ -246,11 +258,25 @@ export function explainEquilibrium(
 /** Two digits tell what a residual has to tell: how small it is. */
 const residualOnPage = ({ si }: Value, { language }: Context): string => numeralOnPage(rounded(si, -2), language)
 
+const LIMIT = 'limit of the arithmetic'
+
 /** The check of the case with the largest residual. */
 export function equilibriumCheck({ level, cases }: Distribution, context: Context): Check {
   const ratios = cases.map(({ residual }) => residual.ratio)
   const worst = ratios.reduce((a, b) => (b.si > a.si ? b : a))
-  const ratio = worst.si / ALLOWED
+  const limit: Value = {
+    id: `${level}.equilibrium.limit`,
+    tex: texAbout(share.limit.tex, level),
+    si: ALLOWED,
+    unit: worst.unit,
+    rounding: 0,
+    origin: { kind: 'default', assumption: LIMIT },
+  }
+  // A pure number prints alike in every system.
+  const display: Display = { system: 'US', relative: false }
+  const worked = work(`${level}.equilibrium.ratio`, residualRatio, { R: worst, R_lim: limit }, display, [level])
+  const ratio = worked.si
+  for (const value of [worst, limit, worked]) context.besides.set(value.id, value)
   return {
     kind: 'check',
     id: `${level}.equilibrium.check`,
@@ -260,8 +286,9 @@ export function equilibriumCheck({ level, cases }: Distribution, context: Contex
     numbers: { demand: worst.si, capacity: ALLOWED, unit: '' },
     ratio,
     ratioPrinted: numeralOnPage(rounded(ratio, -2), context.language),
+    ids: { demand: worst.id, capacity: limit.id, ratio: worked.id },
     ok: ratio <= 1,
-    reference: 'limit of the arithmetic',
+    reference: LIMIT,
     sourceLines: [],
   }
 }

@@ -4,6 +4,7 @@
  */
 import type { Diagnostic } from '../base/diagnostic.ts'
 import type { Language } from '../base/language.ts'
+import type { Span } from '../base/span.ts'
 import type { Tex } from '../base/tex.ts'
 import type { Paper, TitleBlock } from '../model/front.ts'
 import type { Revision } from '../model/revisions.ts'
@@ -42,6 +43,10 @@ export interface Column {
 export interface Row {
   /** Printed text, one cell a column; numbers are already grouped and rounded. */
   readonly cells: readonly string[]
+  /** The id of the value that each cell prints; empty where it prints none. */
+  readonly ids?: readonly string[]
+  /** The place in the source that each cell repeats, where the row is one that the engineer wrote. */
+  readonly places?: readonly Span[]
   /** Marks the row that governs. */
   readonly governs: boolean
 }
@@ -89,6 +94,8 @@ export interface Check {
   /** Demand over capacity. */
   readonly ratio: number
   readonly ratioPrinted: string
+  /** Ids of the values that the three print. */
+  readonly ids?: { readonly demand: string; readonly capacity: string; readonly ratio: string }
   readonly ok: boolean
   readonly reference: string
   readonly sourceLines: readonly number[]

@@ -23,9 +23,16 @@ export interface TableWant {
   /** Index of the row that governs. */
   readonly governs?: number
   /** Words in columns of their own, after the numbers. */
-  readonly words?: readonly { readonly head: string; readonly cells: readonly string[] }[]
+  readonly words?: readonly WordColumn[]
   /** Columns whose formulas are told elsewhere. */
   readonly knownFormulas?: readonly string[]
+}
+
+/** Text after the numbers; `ids` where it prints values after all. */
+export interface WordColumn {
+  readonly head: string
+  readonly cells: readonly string[]
+  readonly ids?: readonly string[]
 }
 
 export function explainTable(table: Tabulation, want: TableWant, context: Context): Table {
@@ -39,11 +46,13 @@ export function explainTable(table: Tabulation, want: TableWant, context: Contex
   const rows = table.rows.map(
     (name, i): Row => ({
       cells: [name, ...columns.map(({ cells }) => cells[i] ?? ''), ...words.map(({ cells }) => cells[i] ?? '')],
+      ids: ['', ...columns.map(({ ids }) => ids[i] ?? ''), ...words.map(({ ids }) => ids?.[i] ?? '')],
       governs: want.governs === i,
     }),
   )
   const foot: Row = {
     cells: [context.words('Sum'), ...columns.map(({ sum }) => sum), ...words.map(() => '')],
+    ids: ['', ...want.columns.map(name => want.sums?.[name]?.id ?? ''), ...words.map(() => '')],
     governs: false,
   }
   return {
@@ -70,6 +79,7 @@ const root = (value: Value, context: Context): void => {
 interface NumberColumn {
   readonly column: Column
   readonly cells: readonly string[]
+  readonly ids: readonly string[]
   readonly sum: string
 }
 
@@ -101,6 +111,7 @@ function numberColumn(
   return {
     column: { head: tex(sym.tex), unit, align: 'right' },
     cells: values.map(print),
+    ids: values.map(({ id }) => id),
     sum: sum ? print(sum) : '',
   }
 }

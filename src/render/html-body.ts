@@ -12,7 +12,8 @@ export function bodyHtml(body: readonly BodyPart[], setting: Setting): string {
   let checks: Check[] = []
   let level = setting.level
   const closeChecks = () => {
-    if (checks.length > 0) out.push(`<ul class="checks">\n${checks.map(check => checkHtml(check)).join('\n')}\n</ul>`)
+    if (checks.length > 0)
+      out.push(`<ul class="checks">\n${checks.map(check => checkHtml(check, setting)).join('\n')}\n</ul>`)
     checks = []
   }
   for (const part of body) {

@@ -1,22 +1,23 @@
 /** A check on one line: what, demand against capacity, a bar, the ratio and the verdict in words. */
 import type { Check } from '../explain/sheet.ts'
 import { escapeHtml, fragment, pageText } from './escape.ts'
-import { idAttribute, sourceHtml } from './html-parts.ts'
+import { markedText } from './html-marks.ts'
+import { idAttribute, type Setting, sourceHtml } from './html-parts.ts'
 
 /** The bar ends at this ratio; the limit stands at 1. */
 const BAR_END = 1.25
 
 /** @param place the anchor of the step that works the check, where `check` is told of elsewhere */
-export function checkHtml(check: Check, place?: string): string {
-  const { id, what, demand, capacity, ratio, ratioPrinted, ok, reference, sourceLines } = check
+export function checkHtml(check: Check, { marks }: Setting, place?: string): string {
+  const { id, ids, what, demand, capacity, ratio, ratioPrinted, ok, reference, sourceLines } = check
   const origin = [reference === '' ? '' : `<span>${pageText(reference)}</span>`, sourceHtml(sourceLines)].filter(
     part => part !== '',
   )
   return `<li class="check ${ok ? 'ok' : 'ng'}"${idAttribute(id)}>
 <span class="what">${place === undefined ? pageText(what) : `<a href="${escapeHtml(fragment(place))}">${pageText(what)}</a>`}${origin.length === 0 ? '' : `<span class="from">${origin.join(' ')}</span>`}</span>
-<span class="demand">${pageText(demand)}</span><span class="sign">${ok ? '≤' : '&gt;'}</span><span class="capacity">${pageText(capacity)}</span>
+<span class="demand">${markedText(demand, ids?.demand, marks)}</span><span class="sign">${ok ? '≤' : '&gt;'}</span><span class="capacity">${markedText(capacity, ids?.capacity, marks)}</span>
 <span class="bar" aria-hidden="true"><i style="width:${barLength(ratio)}%"></i></span>
-<span class="ratio"><span class="unseen">ratio </span>${escapeHtml(ratioPrinted)}</span><span class="verdict">${ok ? 'OK' : 'NG'}</span>
+<span class="ratio"><span class="unseen">ratio </span>${markedText(ratioPrinted, ids?.ratio, marks)}</span><span class="verdict">${ok ? 'OK' : 'NG'}</span>
 </li>`
 }
 

@@ -3,6 +3,7 @@ import type { Source } from '../base/span.ts'
 import { linesInWords } from '../base/span.ts'
 import type { Tex } from '../base/tex.ts'
 import { escapeHtml } from './escape.ts'
+import type { Marks } from './html-marks.ts'
 import { type Typesetter, withoutDigitGroups } from './typeset.ts'
 
 export interface Setting {
@@ -11,6 +12,8 @@ export interface Setting {
   readonly source: Source
   /** Level of a heading inside a working, from the heading above it. */
   readonly level: number
+  /** The values that the page can tell of. */
+  readonly marks: Marks
 }
 
 /** A formula in running text: KaTeX hides its HTML from readers by ear, who get MathML instead. */

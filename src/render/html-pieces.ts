@@ -16,7 +16,7 @@ export function pieceHtml(piece: Piece, setting: Setting): string {
     case 'figure':
       return figureHtml(piece)
     case 'check':
-      return checkHtml(piece)
+      return checkHtml(piece, setting)
     case 'note':
       return noteHtml(piece)
     case 'heading':

@@ -8,21 +8,21 @@ import { tableHtml } from './html-table.ts'
 /** Sections and their parts; what lies deeper is found from there. */
 const DEEPEST = 1
 
-export function summaryHtml({ checks }: Preface): string {
+export function summaryHtml({ checks }: Preface, setting: Setting): string {
   if (checks.length === 0) return ''
   const failed = checks.filter(({ check }) => !check.ok).length
   const verdict = failed === 0 ? `all ${checks.length} OK` : `${failed} of ${checks.length} NG`
   return `<section class="summary" aria-labelledby="summary-of-checks">
 <h2 class="front" id="summary-of-checks">Checks <span class="tally">${checks.length === 1 && failed === 0 ? 'OK' : verdict}, the worst first</span></h2>
 <ul class="checks">
-${checks.map(summaryCheckHtml).join('\n')}
+${checks.map(check => summaryCheckHtml(check, setting)).join('\n')}
 </ul>
 </section>`
 }
 
 /** A check whose place is in the calculation leads there. */
-const summaryCheckHtml = ({ check, place }: SummaryCheck): string =>
-  checkHtml(place === undefined ? check : { ...check, id: '' }, place)
+const summaryCheckHtml = ({ check, place }: SummaryCheck, setting: Setting): string =>
+  checkHtml(place === undefined ? check : { ...check, id: '' }, setting, place)
 
 export function contentsHtml({ contents }: Preface): string {
   const shown = contents.filter(({ depth }) => depth <= DEEPEST)

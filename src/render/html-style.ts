@@ -28,6 +28,7 @@ export function styleOf({ sheet, body, asset }: Styled, classes: ReadonlySet<str
     ...faces,
     mathRules(asset('katex.css'), classes),
     asset('sheet.css'),
+    asset('trace.css'),
     sheet.template.css ?? '',
     paperRules(sheet),
   ].join('\n')

@@ -4,6 +4,7 @@ import { joinTex } from '../base/tex.ts'
 import { unitOnPage } from '../base/unit.ts'
 import type { Column, ColumnFormula, Row, Table } from '../explain/sheet.ts'
 import { escapeHtml, pageText } from './escape.ts'
+import { givenText, markedText } from './html-marks.ts'
 import { idAttribute, inlineMath, type Setting, sourceHtml, titleHtml } from './html-parts.ts'
 import { fitFactor, tableWidth } from './measure.ts'
 
@@ -29,8 +30,8 @@ export function tableHtml(table: Table, setting: Setting): string {
 <caption><span>${titleHtml('Table', number)}${pageText(caption)} ${sourceHtml(sourceLines)}</span></caption>
 <thead><tr>${columns.map(column => headHtml(column, setting)).join('')}</tr></thead>
 <tbody>
-${rows.map(row => rowHtml(row, columns)).join('\n')}
-</tbody>${foot === undefined ? '' : `\n<tfoot>${rowHtml(foot, columns)}</tfoot>`}
+${rows.map(row => rowHtml(row, columns, setting)).join('\n')}
+</tbody>${foot === undefined ? '' : `\n<tfoot>${rowHtml(foot, columns, setting)}</tfoot>`}
 </table></div>
 ${formulas.length === 0 ? '' : `<ul class="how">${formulas.map(formula => formulaHtml(formula, setting)).join('')}</ul>\n`}</div>`
 }
@@ -43,9 +44,11 @@ function headHtml({ head, unit, align }: Column, setting: Setting): string {
 
 const side = (align: Column['align']): string => (align === 'right' ? ' class="r"' : '')
 
-function rowHtml({ cells, governs }: Row, columns: readonly Column[]): string {
+function rowHtml({ cells, ids, places, governs }: Row, columns: readonly Column[], { marks }: Setting): string {
   const set = columns.map(({ align }, i) => {
-    const text = pageText(cells[i] ?? '')
+    const cell = cells[i] ?? ''
+    const place = places?.[i]
+    const text = place ? givenText(cell, place, marks) : markedText(cell, ids?.[i], marks)
     if (i > 0) return `<td${side(align)}>${text}</td>`
     return `<th scope="row"${side(align)}>${text}${governs ? ' <span class="mark">governs</span>' : ''}</th>`
   })

@@ -1,13 +1,16 @@
 /** The page: one HTML file that needs nothing beside it. */
 import type { Source } from '../base/span.ts'
 import type { Sheet, TitleBlock } from '../explain/sheet.ts'
+import type { Traced } from '../explain/traced.ts'
 import { escapeHtml, pageText } from './escape.ts'
 import { bodyHtml } from './html-body.ts'
+import { marksOf, noMarks } from './html-marks.ts'
 import type { Setting } from './html-parts.ts'
 import { bannerHtml, coverHtml, logoHtml, plateHtml } from './html-plate.ts'
 import { contentsHtml, criteriaHtml, revisionsHtml, summaryHtml } from './html-preface.ts'
 import { type Styled, styleOf } from './html-style.ts'
 import { CAUTION, markOf } from './imprint.ts'
+import { islandHtml } from './island.ts'
 import { fillTemplate } from './template.ts'
 import { createTypesetter, type ShapeCache } from './typeset.ts'
 
@@ -16,33 +19,39 @@ export interface Page extends Styled {
   readonly source: Source
   /** Shapes set by earlier pages; without it every shape is set afresh. */
   readonly shapes?: ShapeCache
+  /** Where the numbers came from; without it the page has no script. */
+  readonly traced?: Traced
 }
 
 export function renderHtml(page: Page): string {
-  const { sheet, asset } = page
+  const { sheet, asset, traced } = page
   const { titleBlock, language } = sheet
   const typesetter = createTypesetter(page.shapes)
-  const setting = { typesetter, source: page.source, level: 2 }
+  const setting = { typesetter, source: page.source, level: 2, marks: traced ? marksOf(traced) : noMarks }
   const body = fillTemplate(sheet.template.html ?? asset('sheet.html'), {
     ...escaped(titleBlock),
     banner: bannerHtml(sheet),
     logo: logoHtml(sheet),
     plate: plateOf(sheet, setting),
-    preface: [summaryHtml, contentsHtml, ...(sheet.cover ? [] : [revisionsHtml])]
-      .map(part => part(sheet.preface))
-      .join('\n'),
+    preface: prefaceOf(sheet, setting),
     body: bodyHtml(page.body, setting),
     mark: escapeHtml(markOf(sheet)),
     caution: CAUTION,
   })
+  const trace = traced ? islandHtml(traced, typesetter, asset('trace.js')) : ''
   return fillPage(asset('page.html'), {
     language,
     title: escapeHtml(documentTitle(titleBlock)),
     generator: escapeHtml(`Platemark ${sheet.version}`),
     style: styleOf(page, typesetter.classes()),
+    scripts: traced ? `'${asset('trace.hash')}'` : "'none'",
     sheet: body,
+    trace,
   })
 }
+
+const prefaceOf = ({ preface, cover }: Sheet, setting: Setting): string =>
+  [summaryHtml(preface, setting), contentsHtml(preface), cover ? '' : revisionsHtml(preface)].join('\n')
 
 function plateOf(sheet: Sheet, setting: Setting): string {
   const logo = logoHtml(sheet)

@@ -1,9 +1,9 @@
 /** The engineer's own prose as HTML: quotes put in, headings numbered, and nothing let through that could act. */
-import type { Root as HastRoot } from 'hast'
+import type { Element, Root as HastRoot, Text as HastText } from 'hast'
 import { defaultSchema, type Schema, sanitize } from 'hast-util-sanitize'
 import { toHtml } from 'hast-util-to-html'
-import type { Nodes, Root, RootContent } from 'mdast'
-import { toHast } from 'mdast-util-to-hast'
+import type { Nodes, Root, RootContent, Text } from 'mdast'
+import { defaultHandlers, type State, toHast } from 'mdast-util-to-hast'
 
 /** Links may lead out of the page; nothing is fetched from anywhere, and a picture holds itself. */
 const schema: Schema = {
@@ -23,6 +23,7 @@ const schema: Schema = {
       'id',
       ['className', 'q', 'data-footnote-backref'],
     ],
+    span: ['dataV'],
   },
 }
 
@@ -37,9 +38,18 @@ export function proseHtml(nodes: readonly RootContent[], definitions: readonly R
   const tree = toHast(root, {
     clobberPrefix: `${mark}-`,
     footnoteLabelTagName: 'p',
+    handlers: { text: quotedText },
   })
   const safe = sanitize(tree, schema)
   return toHtml(safe as HastRoot).trim()
+}
+
+/** Text as usual; a quoted result with the id of its value on it. */
+function quotedText(state: State, node: Text): Element | HastText {
+  const text = defaultHandlers.text(state, node)
+  const id = node.data?.prints
+  if (id === undefined || text.type !== 'text') return text
+  return { type: 'element', tagName: 'span', properties: { dataV: id }, children: [text] }
 }
 
 export const isDefinition = (node: Nodes): boolean => node.type === 'definition' || node.type === 'footnoteDefinition'

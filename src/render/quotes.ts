@@ -4,6 +4,13 @@ import type { Quoted, Quotes } from '../explain/blocks.ts'
 import type { HeadingMark } from '../explain/number.ts'
 import { fragment } from './escape.ts'
 
+declare module 'mdast' {
+  interface TextData {
+    /** Id of the value that the text prints. */
+    prints?: string
+  }
+}
+
 /** The same node with its quotes put in; nodes without quotes stay the same objects. */
 export function withQuotes<T extends RootContent>(node: T, quotes: Quotes): T {
   if (quotes.size === 0 || !('children' in node)) return node
@@ -30,8 +37,10 @@ function inline(text: Text, quoted: readonly Quoted[] | undefined, linked: boole
 
 function inPlace(quoted: Quoted, linked: boolean): PhrasingContent {
   if ('missing' in quoted) return { type: 'strong', children: [{ type: 'text', value: `[${quoted.missing}]` }] }
-  const words: Text = { type: 'text', value: quoted.quote.printed }
-  if (quoted.place === undefined || linked) return words
+  // A link of the engineer's own leads where they said, and nowhere else.
+  if (linked) return { type: 'text', value: quoted.quote.printed }
+  const words: Text = { type: 'text', value: quoted.quote.printed, data: { prints: quoted.quote.id } }
+  if (quoted.place === undefined) return words
   return {
     type: 'link',
     url: fragment(quoted.place),

@@ -2,7 +2,7 @@
  * Cuts TeX at what changes from one use of a formula to the next: its numerals, and the words of
  * names such as the W1 of k_{\text{W1}}. What is left is the formula's shape.
  */
-import type { Tex } from '../base/tex.ts'
+import { markOf, type Tex } from '../base/tex.ts'
 
 /** TeX whose slots hold words besides numerals. Two of one key differ in nothing but their slots. */
 export interface CutTex extends Tex {
@@ -13,6 +13,8 @@ export interface CutTex extends Tex {
 
 const NUMERAL = '\u0001'
 const WORD = '\u0003'
+const VALUE = '\u0004'
+const VALUE_END = '\u0005'
 const OPEN = '\\text{'
 
 export function cutTex(tex: Tex): CutTex {
@@ -22,9 +24,14 @@ export function cutTex(tex: Tex): CutTex {
   for (let i = 0; i < slots.length; i++) {
     const slot = slots[i] ?? ''
     const after = parts[i + 1] ?? ''
-    requireNumeral(slot)
-    if (slot.length === 1 && isLoneArgument(parts[i] ?? '', after)) addText(cut, slot)
-    else addSlot(cut, slot, NUMERAL)
+    const mark = markOf(slot)
+    if (mark === 'end') endMark(cut)
+    else if (mark !== undefined) startMark(cut, mark.id)
+    else {
+      requireNumeral(slot)
+      if (slot.length === 1 && isLoneArgument(parts[i] ?? '', after)) addText(cut, slot)
+      else addSlot(cut, slot, NUMERAL)
+    }
     addPart(cut, after)
   }
   return cut
@@ -48,6 +55,27 @@ function addSlot(cut: Cutting, slot: string, mark: string): void {
   cut.marks.push(mark)
   cut.parts.push('')
 }
+
+/** The id goes into an attribute of the page by way of a slot, so it is escaped here, as KaTeX escapes one. */
+function startMark(cut: Cutting, id: string): void {
+  cut.parts[cut.parts.length - 1] += '\\htmlData{v='
+  addSlot(cut, attribute(id), VALUE)
+  cut.parts[cut.parts.length - 1] += '}{'
+}
+
+function endMark(cut: Cutting): void {
+  cut.key += VALUE_END
+  cut.parts[cut.parts.length - 1] += '}'
+}
+
+const entities: Readonly<Record<string, string>> = {
+  '&': '&amp;',
+  '<': '&lt;',
+  '>': '&gt;',
+  '"': '&quot;',
+  "'": '&#x27;',
+}
+const attribute = (text: string): string => text.replace(/[&<>"']/g, sign => entities[sign] ?? sign)
 
 /** Adds a part, with the words in it as slots of their own. */
 function addPart(cut: Cutting, part: string): void {
@@ -126,13 +154,14 @@ function measured(word: string): string {
 const figures = 'acemnorsuz'
 const inLetters = (number: string): string => number.replace(/\d/g, digit => figures.charAt(Number(digit)))
 const inDigits = (letters: string): string => letters.replace(/\D/g, letter => String(figures.indexOf(letter)))
-const placeholders = /91735(\d{5})|znxzn([acemnorsuz]{5})../
+const placeholders = /91735(\d{5})|znxzn([acemnorsuz]{5})..|vnxvn(\d{5})/
 
 /** The slots of a cut with a placeholder in each. */
 export function placeholdersFor({ marks }: CutTex): readonly string[] {
   return marks.map((mark, i) => {
     const number = String(i).padStart(5, '0')
-    return mark === NUMERAL ? `91735${number}` : `znxzn${inLetters(number)}${mark.slice(1)}`
+    if (mark === NUMERAL) return `91735${number}`
+    return mark === VALUE ? `vnxvn${number}` : `znxzn${inLetters(number)}${mark.slice(1)}`
   })
 }
 
@@ -141,11 +170,23 @@ export function cutOutput(output: string): { readonly cuts: readonly string[]; r
   const found: readonly (string | undefined)[] = output.split(placeholders)
   const cuts: string[] = []
   const order: number[] = []
-  for (let i = 0; i < found.length; i += 3) {
+  for (let i = 0; i < found.length; i += 4) {
     cuts.push(found[i] ?? '')
-    const [numeral, word] = [found[i + 1], found[i + 2]]
-    if (numeral !== undefined) order.push(Number(numeral))
-    else if (word !== undefined) order.push(Number(inDigits(word)))
+    const [numeral, word, value] = [found[i + 1], found[i + 2], found[i + 3]]
+    if (word !== undefined) order.push(Number(inDigits(word)))
+    else if (numeral !== undefined || value !== undefined) order.push(Number(numeral ?? value))
   }
   return { cuts, order }
+}
+
+/**
+ * A formula that KaTeX must see as it is: its TeX, with placeholders only for the ids of marked values,
+ * which are no TeX, and what stands for each in the output.
+ */
+export function wholeSource(cut: CutTex): { readonly source: Tex; readonly put: (output: string) => string } {
+  const held = placeholdersFor(cut)
+  const slots = cut.slots.map((slot, i) => (cut.marks[i] === VALUE ? (held[i] ?? '') : slot))
+  const put = (output: string): string =>
+    output.replace(/vnxvn(\d{5})/g, (_, at: string) => cut.slots[Number(at)] ?? '')
+  return { source: { parts: cut.parts, slots }, put }
 }

@@ -1,30 +1,22 @@
 /** The drawings as a browser sets it: its real letters, not our estimate of them. */
-import { existsSync, readFileSync } from 'node:fs'
-import puppeteer, { type Browser } from 'puppeteer-core'
+import { readFileSync } from 'node:fs'
+import type { Browser } from 'puppeteer-core'
 import { afterAll, beforeAll, expect, test } from 'vitest'
 import { compileText } from '../../src/compile.ts'
 import { drawDisplaced } from '../../src/draw/displaced.ts'
 import { type Box, boundsOfBox, boxesMeet } from '../../src/draw/geometry.ts'
 import { drawPlan } from '../../src/draw/plan.ts'
 import { drawStoreys } from '../../src/draw/storeys.ts'
+import { browserPath, launchBrowser } from '../support/browser.ts'
 import { figuresOf } from '../support/figures.ts'
 import { displacedBuildings } from './displacedviews.ts'
 import { storeyBuildings } from './storeyviews.ts'
 import { buildings, hangar } from './views.ts'
 
-const places = [
-  '/usr/bin/chromium',
-  '/usr/bin/chromium-browser',
-  '/usr/bin/google-chrome',
-  '/usr/bin/google-chrome-stable',
-]
-const executablePath = process.env.CHROME_PATH ?? places.find(existsSync)
-
 let browser: Browser | undefined
 
 beforeAll(async () => {
-  if (executablePath === undefined) return
-  browser = await puppeteer.launch({ executablePath, args: ['--no-sandbox', '--disable-gpu', '--no-first-run'] })
+  if (browserPath !== undefined) browser = await launchBrowser()
 }, 60_000)
 
 afterAll(async () => browser?.close())
@@ -61,7 +53,7 @@ const drawings: readonly (readonly [string, string])[] = [
   ...ofSamples,
 ]
 
-test.skipIf(executablePath === undefined).each(drawings)(
+test.skipIf(browserPath === undefined).each(drawings)(
   'in a browser no two texts of %s overlap, and none leaves the sheet (skipped where no browser is found)',
   async (_, svg) => {
     const page = await browser?.newPage()

@@ -1,26 +1,18 @@
 /** Elevations of walls: what they say, and that no two of their texts overlap as a browser sets them. */
-import { existsSync } from 'node:fs'
-import puppeteer, { type Browser } from 'puppeteer-core'
+import type { Browser } from 'puppeteer-core'
 import { afterAll, beforeAll, describe, expect, test } from 'vitest'
 import { compileText } from '../../src/compile.ts'
 import { drawElevation } from '../../src/draw/elevation.ts'
 import { type Box, boundsOfBox, boxesMeet } from '../../src/draw/geometry.ts'
+import { browserPath, launchBrowser } from '../support/browser.ts'
 import { elevations } from './elevations.ts'
 import { readXml } from './reading.ts'
-
-const places = [
-  '/usr/bin/chromium',
-  '/usr/bin/chromium-browser',
-  '/usr/bin/google-chrome',
-  '/usr/bin/google-chrome-stable',
-]
-const executablePath = process.env.CHROME_PATH ?? places.find(existsSync)
 
 let browser: Browser | undefined
 
 beforeAll(async () => {
-  if (executablePath === undefined) return
-  browser = await puppeteer.launch({ executablePath, args: ['--no-sandbox', '--disable-gpu', '--no-first-run'] })
+  if (browserPath === undefined) return
+  browser = await launchBrowser()
 }, 60_000)
 
 afterAll(async () => browser?.close())
@@ -45,7 +37,7 @@ const measure = `({
   }),
 })`
 
-test.skipIf(executablePath === undefined).each(Object.entries(elevations))(
+test.skipIf(browserPath === undefined).each(Object.entries(elevations))(
   'in a browser the texts of %s stand apart and on the sheet (skipped where no browser is found)',
   async (_, view) => {
     const page = await browser?.newPage()

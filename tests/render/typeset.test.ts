@@ -2,7 +2,7 @@ import { readFileSync } from 'node:fs'
 import { createRequire } from 'node:module'
 import katex from 'katex'
 import { describe, expect, test } from 'vitest'
-import { joinTex, numeral, type Tex, tex, texSource } from '../../src/base/tex.ts'
+import { joinTex, marked, numeral, type Tex, tex, texSource } from '../../src/base/tex.ts'
 import { mathFaces, mathRules } from '../../src/render/math-faces.ts'
 import { createShapeCache, createTypesetter, withoutDigitGroups } from '../../src/render/typeset.ts'
 
@@ -153,6 +153,64 @@ test('a number with digit groups is read out as one number', () => {
   expect(texSource(withoutDigitGroups(grouped))).toBe('k=1013625.5\\ \\mathrm{lb}')
   const product = joinTex(numeral('12'), '\\,', numeral('5'), '+', numeral('3'), '\\,', numeral('625'))
   expect(texSource(withoutDigitGroups(product))).toBe('12\\,5+3625')
+})
+
+describe('a stretch that prints a value', () => {
+  const trusted = (source: string, displayMode: boolean) =>
+    katex.renderToString(source, {
+      ...options,
+      output: 'html',
+      displayMode,
+      trust: ({ command }) => command === '\\htmlData',
+    })
+  const inside: readonly ((digits: string) => Tex)[] = [
+    digits => numeral(digits),
+    digits => joinTex('-', numeral(digits), '\\ \\mathrm{kip/in}'),
+    digits => joinTex('\\mathbf{', numeral(digits), '}\\ \\mathrm{ft^{2}}'),
+    digits => joinTex(numeral('1'), '{,}', numeral('234'), '\\times 10^{-4}', numeral(digits)),
+  ]
+  const around: readonly (readonly [string, string])[] = [
+    ['', ''],
+    ['x+', '-y'],
+    ['\\dfrac{', '}{2}'],
+    ['\\dfrac{a}{', '}'],
+    ['{', '}^{2}'],
+    ['{\\left(', '\\right)}^{3}'],
+    ['\\sqrt{', '}'],
+    ['4\\,', '+3'],
+    ['\\mathit{', '}'],
+  ]
+
+  test("is KaTeX's own data attribute, byte for byte, in every place", () => {
+    const typesetter = createTypesetter()
+    for (const [before, after] of around)
+      for (const make of inside)
+        for (const digits of ['8', '12', '1.5'])
+          for (const id of ['roof.wall.W1.k', "constructions.C8.f'm", 'a']) {
+            const formula = joinTex(before, marked(id, make(digits)), after)
+            const source = `${before}\\htmlData{v=${id}}{${texSource(make(digits))}}${after}`
+            expect(typesetter.html(formula, 'display'), source).toBe(trusted(source, true))
+            expect(typesetter.html(formula, 'inline'), source).toBe(trusted(source, false))
+            expect(typesetter.mathml(formula)).toBe(direct.mathml(before + texSource(make(digits)) + after))
+          }
+  })
+
+  test('may be of a value whose id TeX could not hold', () => {
+    const id = 'roof.wall.a}{\\b,c=d%#&"<i>\'.k'
+    const html = createTypesetter().html(marked(id, numeral('8')), 'inline')
+    expect(html).toContain('data-v="roof.wall.a}{\\b,c=d%#&amp;&quot;&lt;i&gt;&#x27;.k"')
+    expect(createTypesetter().html(marked(id, joinTex('\\mathit{', numeral('8'), '}')), 'inline')).toContain(
+      '&lt;i&gt;',
+    )
+  })
+
+  test('is no part of the source, and shares its shape with others', () => {
+    const cache = createShapeCache()
+    const typesetter = createTypesetter(cache)
+    for (let i = 10; i < 40; i++) typesetter.html(marked(`v${i}`, numeral(String(i))), 'display')
+    expect(cache.display.size).toBe(1)
+    expect(texSource(joinTex('k=', marked('a', numeral('12'))))).toBe('k=12')
+  })
 })
 
 describe("KaTeX's style sheet", () => {

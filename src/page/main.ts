@@ -1,0 +1,4 @@
+/** The script of a page. */
+import { startTrace } from './trace.ts'
+
+startTrace()
