@@ -78,7 +78,7 @@ describe('the Markdown of a sheet', () => {
   })
 
   test('says demand, capacity, ratio and verdict of a check in words', () => {
-    expect(whole).toMatch(/^\| Check +\| Demand \| Capacity \| Ratio \| Verdict \| From +\|$/m)
+    expect(whole).toMatch(/^\| Check +\| +Demand \| +Capacity \| Ratio \| Verdict \| From +\|$/m)
     expect(whole).toMatch(
       /^\| <a id="[^"]+"><\/a>Story drift at grid D, along y +\| +0\.61 in \| +> 0\.58 in \| +1\.05 \| \*\*NG\*\* +\| ASCE 7-22 §12\.12\.1 · line 52 +\|$/m,
     )
