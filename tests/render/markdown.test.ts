@@ -56,7 +56,7 @@ describe('the Markdown of a sheet', () => {
     expect(whole).toContain('**W1** (governs)')
     expect(whole).toMatch(/\| \*\*Sum\*\* +\|/)
     expect(whole).toContain('**Table 2.1.** Walls along y and their shares of 62 kip, case EY. · lines 31–34')
-    expect(whole).toContain('$V_{\\text{d}}=F\\thinspace\\frac{k}{\\sum k}$ — rigid diaphragm')
+    expect(whole).toContain('$V_{\\text{d}}=F\\ \\frac{k}{\\sum k}$ — rigid diaphragm')
   })
 
   test('aligns an equation at its equals signs, with its origin above', () => {
@@ -67,8 +67,8 @@ describe('the Markdown of a sheet', () => {
         '',
         '$$',
         '\\begin{aligned}',
-        'e_{x} &= x_{\\text{m}}-x_{\\text{r}} \\cr',
-        '&= 34.20\\ \\mathrm{ft}-19.92\\ \\mathrm{ft} \\cr',
+        'e_{x} &= x_{\\text{m}}-x_{\\text{r}} \\\\',
+        '&= 34.20\\ \\mathrm{ft}-19.92\\ \\mathrm{ft} \\\\',
         '&= \\mathbf{14.28}\\ \\mathrm{ft}',
         '\\end{aligned}',
         '$$',
