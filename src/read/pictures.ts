@@ -43,40 +43,34 @@ export function readPictures(
   let together = 0
   for (const node of nodes) {
     const alt = (node.alt ?? '').trim()
-    const tell = (rule: PictureRule, what: string, help: string) => faults.push(warning(node, rule, what, help))
+    const tell = (told: Told) => faults.push(warning(node, told))
     if (alt === '')
-      tell(
-        'picture-undescribed',
-        'this picture has no description',
-        'Say between the brackets what it shows, for a reader who does not see it: ![plan of the site](site.png).',
-      )
+      tell({
+        rule: 'picture-undescribed',
+        what: 'this picture has no description',
+        help: 'Say between the brackets what it shows, for a reader who does not see it: ![plan of the site](site.png).',
+      })
     const { url, title } = node.type === 'image' ? node : definitionOf(node, definitions)
     const elsewhere = elsewhereIn(url)
     if (elsewhere !== undefined) {
-      tell(
-        'picture-elsewhere',
-        elsewhere,
-        'Put the file beside the document and name it from there: pictures/site.png.',
-      )
+      const help = 'Put the file beside the document and name it from there: pictures/site.png.'
+      tell({ rule: 'picture-elsewhere', what: elsewhere, help })
       continue
     }
     const path = decoded(url)
-    if (!read(path).ok) {
-      const reason = read(path)
-      tell('picture-unreadable', `${path}: ${reason.ok ? '' : reason.because}`, IN_ITS_PLACE)
+    const bytes = read(path)
+    if (!bytes.ok) {
+      tell({ rule: 'picture-unreadable', what: `${path}: ${bytes.because}`, help: IN_ITS_PLACE })
       continue
     }
     const found = recognised(path)
     if (!found.ok) {
-      tell('picture-refused', `${path}: ${found.because}`, IN_ITS_PLACE)
+      tell({ rule: 'picture-refused', what: `${path}: ${found.because}`, help: IN_ITS_PLACE })
       continue
     }
     if (together + found.value.bytes.length > MOST_TOGETHER) {
-      tell(
-        'picture-refused',
-        `${path}: with it the pictures of this document have more than ${megabytes(MOST_TOGETHER)} MB`,
-        'Save pictures smaller: a page is no more than 2000 pixels wide.',
-      )
+      const what = `${path}: with it the pictures of this document have more than ${megabytes(MOST_TOGETHER)} MB`
+      tell({ rule: 'picture-refused', what, help: 'Save pictures smaller: a page is no more than 2000 pixels wide.' })
       continue
     }
     together += found.value.bytes.length
@@ -85,11 +79,15 @@ export function readPictures(
   return { pictures, faults }
 }
 
-type PictureRule = 'picture-undescribed' | 'picture-elsewhere' | 'picture-unreadable' | 'picture-refused'
+interface Told {
+  readonly rule: 'picture-undescribed' | 'picture-elsewhere' | 'picture-unreadable' | 'picture-refused'
+  readonly what: string
+  readonly help: string
+}
 
 const IN_ITS_PLACE = 'The page shows its description in place of it.'
 
-const warning = (node: PictureNode, rule: PictureRule, what: string, help: string): Diagnostic => {
+const warning = (node: PictureNode, { rule, what, help }: Told): Diagnostic => {
   const start = node.position?.start.offset ?? 0
   return diagnose('warning', rule, { start, end: node.position?.end.offset ?? start }, what, help)
 }

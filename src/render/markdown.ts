@@ -88,7 +88,7 @@ function equationNodes(equation: Equation): readonly RootContent[] {
   const above = [...anchor(id), ...name, ...from]
   return [
     ...(above.length === 0 ? [] : [paragraph(...above)]),
-    mathBlock(`\\begin{aligned}\n${rows.join(' \\cr\n')}\n\\end{aligned}`),
+    mathBlock(`\\begin{aligned}\n${rows.join(' \\\\\n')}\n\\end{aligned}`),
   ]
 }
 

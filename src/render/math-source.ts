@@ -1,7 +1,8 @@
 /**
  * TeX as Markdown carries it. A reader that does not know formulas takes `\,`, `_`, `*`, `<` or `|`
- * for signs of its own and hands on what is left; so a formula is spelt with commands of letters that
- * KaTeX and MathJax both know, and comes through any reader of Markdown as it was written.
+ * for signs of its own and hands on what is left; so a formula is spelt with commands that no reader of
+ * Markdown touches and that KaTeX, MathJax and pandoc all know. One sign is left to those who know formulas:
+ * `\\` between the rows of a block, for which there is no other spelling that all three take.
  */
 import { type Tex, texSource } from '../base/tex.ts'
 
@@ -37,7 +38,7 @@ const unseen: Readonly<Record<string, string>> = {
 /** Signs that mean something to Markdown, to TeX or to MathJax's text, which knows no commands. */
 const signs: Readonly<Record<string, string>> = {
   '*': '{\\ast}',
-  _: '\\underline{\\enspace}',
+  _: '\\underline{\\ \\ }',
   '<': '{\\lt}',
   '>': '{\\gt}',
   '|': '{\\vert}',
@@ -65,10 +66,10 @@ const words = (plain: string): string =>
     .map(run => (run === '' ? '' : (signs[run] ?? `\\text{${run}}`)))
     .join('')
 
-/** Commands of one sign by their names of letters. GitHub does not allow `\operatorname`. */
+/** Commands of one sign by others; a thin space has none that all know, and a plain one serves. GitHub does not allow `\operatorname`. */
 const lettered = (source: string): string =>
   source
-    .replaceAll('\\,', '\\thinspace ')
+    .replaceAll('\\,', '\\ ')
     .replace(/\\mathrm\{\\%\}|\\%/g, '\\text{ percent}')
     .replaceAll('\\operatorname{', '\\mathrm{')
     .replaceAll('\\|', '\\Vert ')
@@ -80,4 +81,4 @@ const closedUp = (source: string): string =>
     .replace(/\s+/g, ' ')
     .replace(/(\\[A-Za-z]+) (?=[^A-Za-z ])/g, '$1')
     .replace(/(?<![\p{L}\p{N}])_(?=\S)/gu, '_ ')
-    .trim()
+    .replace(/^ +|(?<!\\) +$/g, '')

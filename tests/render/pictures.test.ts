@@ -6,6 +6,7 @@ import { bad, good } from '../../src/base/outcome.ts'
 import { compileText } from '../../src/compile.ts'
 import { publish } from '../../src/publish.ts'
 import type { Nearby } from '../../src/read/nearby.ts'
+import { readers } from '../support/markdown.ts'
 import { jpeg, png, svg, utf8 } from '../support/pictures.ts'
 import { asset } from './assets.ts'
 
@@ -94,5 +95,7 @@ describe('beside the Markdown', () => {
     expect(report?.text).toContain('![view](calc.site-view.jpg) and [text][t]')
     expect(report?.text).toContain('[t]: https://a.example')
     expect(report?.text).not.toContain('[v]:')
+    const { parse, write } = readers.knowing
+    expect(write(parse(report?.text ?? ''))).toBe(report?.text)
   })
 })

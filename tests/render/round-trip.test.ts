@@ -26,7 +26,7 @@ function comesThrough(markdown: string): void {
   const read = readers.plain.parse(markdown)
   expect(bare(readers.plain.parse(readers.plain.write(read)))).toEqual(bare(read))
   const text = textOf(read)
-  for (const { tex } of formulasIn(markdown)) expect(text).toContain(tex)
+  for (const { tex } of formulasIn(markdown)) expect(text).toContain(tex.replaceAll('\\\\\n', '\\\n'))
 }
 
 function linksMeet(markdown: string): void {
@@ -117,7 +117,7 @@ describe('any document', () => {
       fc.property(cell(12), cell(8), cell(12), fc.array(prose, { maxLength: 4 }), (area, wall, note, texts) => {
         comesThrough(workedMarkdown(`${texts.join('\n\n')}\n\n${building(area, wall, note)}\n`))
       }),
-      { numRuns: Number(process.env.RUNS ?? 40), seed: Number(process.env.SEED ?? 7) },
+      { numRuns: Number(process.env.RUNS ?? 25), seed: Number(process.env.SEED ?? 7) },
     )
   }, 600_000)
 })
