@@ -13,6 +13,7 @@ import {
 import { dirname, extname, join, relative, resolve } from 'node:path'
 import type { Diagnostic } from './base/diagnostic.ts'
 import { bad, good, type Outcome } from './base/outcome.ts'
+import type { BytesFile, OutputFile } from './publish.ts'
 import type { Nearby } from './read/nearby.ts'
 
 /** A document to be built. */
@@ -101,18 +102,16 @@ function decode(bytes: Uint8Array): Outcome<string, TextFault> {
 }
 
 /** Writes each file whole or not at all: a reader never sees half of one. */
-export function writeWhole(
-  folder: string,
-  files: readonly { readonly name: string; readonly text: string }[],
-): Outcome<undefined> {
+export function writeWhole(folder: string, files: readonly (OutputFile | BytesFile)[]): Outcome<undefined> {
   if (files.length === 0) return good(undefined)
   let workshop: string | undefined
   try {
     mkdirSync(folder, { recursive: true })
     workshop = mkdtempSync(join(folder, '.platemark-'))
-    for (const { name, text } of files) {
-      mkdirSync(dirname(join(workshop, name)), { recursive: true })
-      writeFileSync(join(workshop, name), text)
+    for (const file of files) {
+      const path = join(workshop, file.name)
+      mkdirSync(dirname(path), { recursive: true })
+      writeFileSync(path, 'bytes' in file ? file.bytes : file.text)
     }
     for (const { name } of files) renameSync(join(workshop, name), join(folder, name))
     return good(undefined)

@@ -7,10 +7,11 @@ import { unified } from 'unified'
 import { type Compiled, sheetOf } from './compile.ts'
 import type { Figure } from './explain/sheet.ts'
 import type { BodyPart } from './render/body.ts'
-import { renderHtml } from './render/html.ts'
+import { type Page, renderHtml } from './render/html.ts'
 import { renderJson } from './render/json.ts'
 import { documentNodes, pieceNodes } from './render/markdown.ts'
 import { markdownSettings } from './render/math-nodes.ts'
+import { type Paper, renderPaper } from './render/paper.ts'
 import type { Part } from './render/parts.ts'
 import { isDefinition, proseHtml } from './render/prose.ts'
 import { unpackShapes } from './render/shape-pack.ts'
@@ -27,24 +28,31 @@ export interface Host {
   readonly shapes?: () => string
 }
 
-export type Format = 'html' | 'md' | 'json'
+/** What is written as text, with nothing but the document needed. */
+export type TextFormat = 'html' | 'md' | 'json'
+export type Format = TextFormat | 'pdf'
 
 export interface OutputFile {
   readonly name: string
   readonly text: string
 }
 
+export interface BytesFile {
+  readonly name: string
+  readonly bytes: Uint8Array
+}
+
 /** @param stem name of the document without its ending */
 export function publish(
   compiled: Compiled,
   stem: string,
-  format: Format,
+  format: TextFormat,
   draft: boolean,
   host: Host,
 ): readonly OutputFile[] {
   switch (format) {
     case 'html':
-      return [{ name: `${stem}.html`, text: page(compiled, draft, host) }]
+      return [{ name: `${stem}.html`, text: renderHtml(pageOf(compiled, draft, host)) }]
     case 'md':
       return markdown(compiled, stem, draft, host)
     case 'json':
@@ -61,10 +69,16 @@ export function shapesOf(host: Host): ShapeCache {
   return known
 }
 
-function page(compiled: Compiled, draft: boolean, host: Host): string {
+/** The page for paper; a browser is needed to print it. */
+export function paperOf(compiled: Compiled, draft: boolean, host: Host): Paper {
+  const identity = host.sha256(`${host.version}\n${draft ? 'draft' : 'issue'}\n${compiled.source.text}`)
+  return renderPaper(pageOf(compiled, draft, host), identity)
+}
+
+function pageOf(compiled: Compiled, draft: boolean, host: Host): Page {
   const { source } = compiled
   const sheet = sheetOf(compiled, host.version, host.sha256(source.text), draft)
-  return renderHtml({ sheet, body: bodyOf(compiled), source, asset: host.asset, shapes: shapesOf(host) })
+  return { sheet, body: bodyOf(compiled), source, asset: host.asset, shapes: shapesOf(host) }
 }
 
 function bodyOf({ parts }: Compiled): readonly BodyPart[] {

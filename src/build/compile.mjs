@@ -42,6 +42,7 @@ const packagesApart = {
     const filter = new RegExp(`^(?:${Object.keys(apart).join('|')})$`)
     build.onResolve({ filter }, ({ path }) => ({ path, namespace: 'apart' }))
     build.onResolve({ filter: /^\.\/\w+\.cjs$/, namespace: 'apart' }, ({ path }) => ({ path, external: true }))
+    build.onResolve({ filter: /^\.\/pdf\/press\.ts$/ }, () => ({ path: './pdf.cjs', external: true }))
     build.onLoad({ filter: /.*/, namespace: 'apart' }, ({ path }) => ({
       contents: (apart[path] ?? [])
         .map(name => `exports.${name} = (...args) => require('./${path}.cjs').${name}(...args)`)
@@ -55,12 +56,15 @@ const loaded = {
   ...common,
   format: 'cjs',
   minify: true,
+  // The launcher's files have no `import`; a file that is asked for late is required late.
+  supported: { 'dynamic-import': false },
   banner: { js: '(function (require, module, exports, __dirname) {' },
   footer: { js: '})' },
 }
 
 await Promise.all([
   build({ ...loaded, entryPoints: [`${root}src/cli.ts`], outfile: `${dist}/command.cjs`, plugins: [packagesApart] }),
+  build({ ...loaded, entryPoints: [`${root}src/pdf/press.ts`], outfile: `${dist}/pdf.cjs` }),
   ...Object.keys(apart).map(name =>
     build({
       ...loaded,
@@ -70,10 +74,12 @@ await Promise.all([
   ),
   build({
     ...common,
-    entryPoints: [`${root}src/index.ts`],
+    entryPoints: { index: `${root}src/index.ts` },
     format: 'esm',
     packages: 'external',
-    outfile: `${dist}/index.js`,
+    // What prints a PDF is in a file of its own.
+    splitting: true,
+    outdir: dist,
   }),
   build({
     ...common,

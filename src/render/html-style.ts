@@ -13,10 +13,12 @@ export interface Styled {
   readonly asset: (name: string) => string
 }
 
-export function styleOf({ sheet, body, asset }: Styled, classes: ReadonlySet<string>): string {
-  const text = facesFor(JSON.parse(asset('faces.json')) as readonly Face[], needsOf(sheet, body)).map(
-    ({ name }) => name,
-  )
+/** Where the page is read: a screen takes variable faces, a PDF one face a weight. */
+export type Medium = 'screen' | 'paper'
+
+export function styleOf({ sheet, body, asset }: Styled, classes: ReadonlySet<string>, medium: Medium): string {
+  const faceList = JSON.parse(asset(`faces.${medium}.json`)) as readonly Face[]
+  const text = facesFor(faceList, needsOf(sheet, body)).map(({ name }) => name)
   // KaTeX's roman also stands in for signs that the text faces lack, such as ≤ or →.
   const math = new Set([
     ...mathFaces(classes),

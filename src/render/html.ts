@@ -2,9 +2,9 @@
 import type { Source } from '../base/span.ts'
 import type { TitleBlock } from '../explain/sheet.ts'
 import { escapeHtml } from './escape.ts'
-import { bodyHtml } from './html-body.ts'
+import { bodyBlocks } from './html-body.ts'
 import { bannerHtml, plateHtml } from './html-plate.ts'
-import { type Styled, styleOf } from './html-style.ts'
+import { type Medium, type Styled, styleOf } from './html-style.ts'
 import { CAUTION, markOf } from './imprint.ts'
 import { createTypesetter, type ShapeCache } from './typeset.ts'
 
@@ -16,25 +16,39 @@ export interface Page extends Styled {
 }
 
 export function renderHtml(page: Page): string {
+  const { template, fields, blocks } = layOut(page, 'screen')
+  return fillTemplate(template, { ...fields, body: blocks.join('\n') })
+}
+
+/** A page before its body is put in. */
+export interface LaidOut {
+  readonly template: string
+  /** Every field of the template but the body. */
+  readonly fields: Readonly<Record<string, string>>
+  /** The body in order: an element or a list each. */
+  readonly blocks: readonly string[]
+}
+
+export function layOut(page: Page, medium: Medium): LaidOut {
   const { sheet, asset } = page
   const { titleBlock, language } = sheet
   const typesetter = createTypesetter(page.shapes)
-  const body = bodyHtml(page.body, { typesetter, source: page.source, level: 2 })
-  return fillTemplate(asset('sheet.html'), {
+  const blocks = bodyBlocks(page.body, { typesetter, source: page.source, level: 2 })
+  const fields = {
     language,
     title: escapeHtml(documentTitle(titleBlock)),
     generator: escapeHtml(`Platemark ${sheet.version}`),
-    style: styleOf(page, typesetter.classes()),
+    style: styleOf(page, typesetter.classes(), medium),
     banner: bannerHtml(sheet),
     plate: plateHtml(titleBlock),
-    body,
     mark: escapeHtml(markOf(sheet)),
     caution: CAUTION,
-  })
+  }
+  return { template: asset('sheet.html'), fields, blocks }
 }
 
 /** Puts the fields in place in one pass, so that nothing put in is read as a field again. */
-function fillTemplate(template: string, fields: Readonly<Record<string, string>>): string {
+export function fillTemplate(template: string, fields: Readonly<Record<string, string>>): string {
   return template.replace(/\{\{(\w+)\}\}/g, (_, name: string) => {
     const value = fields[name]
     if (value === undefined) throw new Error(`the template asks for an unknown field: ${name}`)
@@ -42,5 +56,5 @@ function fillTemplate(template: string, fields: Readonly<Record<string, string>>
   })
 }
 
-const documentTitle = ({ title, project, number }: TitleBlock): string =>
+export const documentTitle = ({ title, project, number }: TitleBlock): string =>
   [title, project, number].filter(part => part !== '').join(' – ') || 'Calculation'
