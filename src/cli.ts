@@ -65,7 +65,10 @@ async function runWithPress(settings: Settings): Promise<number> {
   let code = DONE
   try {
     for (const document of settings.documents)
-      code = Math.max(code, await buildWithPress(document, settings, press, said).catch(error => ownFault(document, error)))
+      code = Math.max(
+        code,
+        await buildWithPress(document, settings, press, said).catch(error => ownFault(document, error)),
+      )
   } finally {
     await press.close()
   }

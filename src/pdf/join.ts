@@ -112,7 +112,6 @@ function keepPages(context: PDFContext, parts: readonly Joined[], pages: readonl
 function dropCatalog(context: PDFContext, parts: readonly Joined[], catalog: PDFDict): void {
   const structure = dictEntry(context, catalog, 'StructTreeRoot')
   const dead = new Set<unknown>([catalog, structure, dictEntry(context, structure, 'K')])
-  for (const key of ['ParentTree', 'IDTree']) dead.add(dictEntry(context, structure, key))
   dead.add(dictEntry(context, catalog, 'Dests'))
   for (const { objects } of parts) for (const [ref, object] of objects) if (dead.has(object)) context.delete(ref)
 }

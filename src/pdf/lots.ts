@@ -3,13 +3,16 @@
  * from. Each lot begins a new sheet. What leads from one lot to another is written as an address that
  * no network has, and becomes a link within the document when the lots are joined.
  */
-import { escapeHtml, fragment } from '../render/escape.ts'
+import { escapeHtml, fragment, plainText } from '../render/escape.ts'
 import type { Paper, Section } from '../render/paper.ts'
 
 /** A document whose body is shorter than this, in characters, is printed whole. */
 const SHORT = 600_000
 /** About as much body as a lot takes. */
 const LOT = 300_000
+
+/** A box with no height at all would make no sheet. */
+const BLANK = '<div style="height:1px;break-after:page"></div>'
 
 /** `.invalid` is reserved and never resolves (RFC 2606). */
 export const AWAY = 'https://sheet.invalid/'
@@ -40,7 +43,7 @@ export function lotsOf(paper: Paper, { short, lot }: Sizes = { short: SHORT, lot
   const bodies = length <= short ? [sections] : gathered(sections, lot)
   const pages = bodies.map((each, i) => {
     const body = each.map(({ html }) => html).join('\n')
-    return i === 0 ? firstPage(body) : laterPage(`<div style="break-after:page"></div>\n${body}`)
+    return i === 0 ? firstPage(body) : laterPage(`${BLANK}\n${body}`)
   })
   const marked = bodies.length === 1 ? pages : pages.map(withoutFolio)
   return { lots: linked(marked).map((html, i) => ({ html, led: i > 0 })), titles: pages.flatMap(titlesOf) }
@@ -75,7 +78,7 @@ const withoutFolio = (html: string): string => styled(html, '@page{@bottom-right
 /** Blank sheets with nothing in their margins but "sheet n of m". */
 export function folioPage({ laterPage }: Paper, sheets: number): string {
   const others = ['top-left', 'top-center', 'top-right', 'bottom-left', 'bottom-center']
-  const body = Array.from({ length: sheets - 1 }, () => '<div style="break-after:page"></div>').join('')
+  const body = BLANK.repeat(sheets - 1)
   const rules = others.map(place => `@${place}{content:none!important}`).join('')
   return styled(laterPage(`${body}<div style="height:1px"></div>`), `@page{${rules}}footer{display:none}`)
 }
@@ -138,15 +141,6 @@ const titlesOf = (page: string): readonly Title[] =>
       .replace(/\s+/g, ' ')
       .trim(),
   }))
-
-const named: Readonly<Record<string, string>> = { amp: '&', lt: '<', gt: '>', quot: '"', apos: "'", nbsp: '\u00a0' }
-
-/** Text out of HTML: character references read. */
-export const plainText = (html: string): string =>
-  html.replace(/&(?:#x([0-9a-f]+)|#(\d+)|(\w+));/gi, (whole, hex?: string, decimal?: string, name?: string) => {
-    if (name !== undefined) return named[name] ?? whole
-    return String.fromCodePoint(hex === undefined ? Number(decimal) : Number.parseInt(hex, 16))
-  })
 
 /** The id that a link's fragment means. */
 export function idAt(address: string): string {

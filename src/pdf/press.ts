@@ -5,6 +5,7 @@ import type { Paper } from '../render/paper.ts'
 import { type BrowserChoice, startBrowser } from './browser.ts'
 
 export { PATIENCE } from './browser.ts'
+
 import { createDesk, type Desk } from './desk.ts'
 import { addOutline, setProperties } from './finish.ts'
 import { layOver } from './folio.ts'

@@ -11,7 +11,8 @@ export interface Joined {
 
 /** Makes the tree of the first document hold those of all. Keys and ids are given anew, in order. */
 export function joinTags(context: PDFContext, parts: readonly Joined[]): void {
-  const [root, ...others] = parts.map(({ catalog }) => dictEntry(context, catalog, 'StructTreeRoot'))
+  const roots = parts.map(({ catalog }) => dictEntry(context, catalog, 'StructTreeRoot'))
+  const [root, ...others] = roots
   const top = root?.get(name('K'))
   const topElement = dictEntry(context, root, 'K')
   if (root === undefined || topElement === undefined || top === undefined) return
@@ -25,14 +26,25 @@ export function joinTags(context: PDFContext, parts: readonly Joined[]): void {
     }
   }
   topElement.set(name('K'), context.obj(kids))
-  joinParents(context, parts, root)
-  joinIds(context, parts, root)
+  const parents = parentTree(context, parts)
+  const ids = idTree(context, parts)
+  for (const each of roots) for (const key of ['ParentTree', 'IDTree']) dropTree(context, each?.get(name(key)))
+  root.set(name('ParentTree'), context.register(context.obj({ Nums: parents })))
+  root.set(name('ParentTreeNextKey'), PDFNumber.of(parents.length / 2))
+  root.set(name('IDTree'), context.register(context.obj({ Names: ids })))
+}
+
+/** Deletes a tree of keys down to its last branch, though not what the keys lead to. */
+function dropTree(context: PDFContext, tree: PDFObject | undefined): void {
+  if (!(tree instanceof PDFRef)) return
+  const branch = context.lookup(tree)
+  if (branch instanceof PDFDict) for (const kid of listEntry(context, branch, 'Kids')) dropTree(context, kid)
+  context.delete(tree)
 }
 
 /** From a page or a link back to its elements: each page and link has a key in one tree. */
-function joinParents(context: PDFContext, parts: readonly Joined[], root: PDFDict): void {
+function parentTree(context: PDFContext, parts: readonly Joined[]): PDFObject[] {
   const all: PDFObject[] = []
-  let next = 0
   for (const { catalog, pages } of parts) {
     const structure = dictEntry(context, catalog, 'StructTreeRoot')
     const parents = new Map(numbersIn(context, dictEntry(context, structure, 'ParentTree')))
@@ -43,9 +55,9 @@ function joinParents(context: PDFContext, parts: readonly Joined[], root: PDFDic
         holder.delete(name(key))
         return
       }
-      holder.set(name(key), PDFNumber.of(next))
-      all.push(PDFNumber.of(next), parent)
-      next += 1
+      const next = PDFNumber.of(all.length / 2)
+      holder.set(name(key), next)
+      all.push(next, parent)
     }
     for (const page of pages) {
       renew(page, 'StructParents')
@@ -55,8 +67,7 @@ function joinParents(context: PDFContext, parts: readonly Joined[], root: PDFDic
       }
     }
   }
-  root.set(name('ParentTree'), context.register(context.obj({ Nums: all })))
-  root.set(name('ParentTreeNextKey'), PDFNumber.of(next))
+  return all
 }
 
 function numbersIn(context: PDFContext, tree: PDFDict | undefined): readonly (readonly [number, PDFObject])[] {
@@ -70,7 +81,7 @@ function numbersIn(context: PDFContext, tree: PDFDict | undefined): readonly (re
 }
 
 /** Cells name their heads by id. The browser counts ids on from document to document; the same source must give the same. */
-function joinIds(context: PDFContext, parts: readonly Joined[], root: PDFDict): void {
+function idTree(context: PDFContext, parts: readonly Joined[]): PDFObject[] {
   const all: PDFObject[] = []
   for (const { objects } of parts) {
     const elements = objects.flatMap(([ref, object]) =>
@@ -87,7 +98,7 @@ function joinIds(context: PDFContext, parts: readonly Joined[], root: PDFDict): 
     }
     for (const [, element] of elements) renameHeads(context, element, renamed)
   }
-  root.set(name('IDTree'), context.register(context.obj({ Names: all })))
+  return all
 }
 
 function renameHeads(context: PDFContext, element: PDFDict, renamed: ReadonlyMap<string, PDFString>): void {

@@ -5,6 +5,7 @@ import { cssString } from './escape.ts'
 import { type Face, facesFor, needsOf } from './faces.ts'
 import { CAUTION, draftWords, markOf } from './imprint.ts'
 import { mathFaces, mathRules } from './math-faces.ts'
+import type { Medium } from './medium.ts'
 
 export interface Styled {
   readonly sheet: Sheet
@@ -13,9 +14,7 @@ export interface Styled {
   readonly asset: (name: string) => string
 }
 
-/** Where the page is read: a screen takes variable faces, a PDF one face a weight. */
-export type Medium = 'screen' | 'paper'
-
+/** A PDF takes one face a weight: a variable face would be drawn as shapes. */
 export function styleOf({ sheet, body, asset }: Styled, classes: ReadonlySet<string>, medium: Medium): string {
   const faceList = JSON.parse(asset(`faces.${medium}.json`)) as readonly Face[]
   const text = facesFor(faceList, needsOf(sheet, body)).map(({ name }) => name)

@@ -4,8 +4,9 @@ import type { TitleBlock } from '../explain/sheet.ts'
 import { escapeHtml } from './escape.ts'
 import { bodyBlocks } from './html-body.ts'
 import { bannerHtml, plateHtml } from './html-plate.ts'
-import { type Medium, type Styled, styleOf } from './html-style.ts'
+import { type Styled, styleOf } from './html-style.ts'
 import { CAUTION, markOf } from './imprint.ts'
+import type { Medium } from './medium.ts'
 import { createTypesetter, type ShapeCache } from './typeset.ts'
 
 export interface Page extends Styled {
@@ -33,7 +34,7 @@ export function layOut(page: Page, medium: Medium): LaidOut {
   const { sheet, asset } = page
   const { titleBlock, language } = sheet
   const typesetter = createTypesetter(page.shapes)
-  const blocks = bodyBlocks(page.body, { typesetter, source: page.source, level: 2 })
+  const blocks = bodyBlocks(page.body, { typesetter, source: page.source, level: 2, medium })
   const fields = {
     language,
     title: escapeHtml(documentTitle(titleBlock)),
