@@ -75,12 +75,12 @@ const styled = (html: string, rules: string): string => html.replace('</style>',
 /** The number of a sheet is laid over it when all lots are joined. */
 const withoutFolio = (html: string): string => styled(html, '@page{@bottom-right{content:none!important}}')
 
-/** Blank sheets with nothing in their margins but "sheet n of m". */
+/** Clear sheets with nothing in their margins but "sheet n of m". */
 export function folioPage({ laterPage }: Paper, sheets: number): string {
   const others = ['top-left', 'top-center', 'top-right', 'bottom-left', 'bottom-center']
   const body = BLANK.repeat(sheets - 1)
   const rules = others.map(place => `@${place}{content:none!important}`).join('')
-  return styled(laterPage(`${body}<div style="height:1px"></div>`), `@page{${rules}}footer{display:none}`)
+  return styled(laterPage(`${body}<div style="height:1px"></div>`), `@page{${rules}}*{background:none!important}footer{display:none}`)
 }
 
 const tags = /<([a-z][a-z0-9]*)((?:"[^"]*"|[^">])*)>/gi
