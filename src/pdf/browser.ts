@@ -32,7 +32,7 @@ export async function startBrowser(choice: BrowserChoice, machine: Machine = thi
     tried.push(started.because)
   }
   if (tried.length === 0) tried.push('no Chrome, Chromium or Edge is on the PATH or in its usual place')
-  const embedded = await embeddedBrowser(near)
+  const embedded = await embeddedBrowser(near, machine)
   if (!embedded.ok) return bad(noBrowser([...tried, embedded.because]))
   const started = await start(embedded.value.program, embedded.value.environment, patience)
   return started.ok ? started : bad(noBrowser([...tried, started.because]))

@@ -23,26 +23,33 @@ export function createDesk(browser: Browser): Desk {
     while (tabs.length < Math.min(TABS, count)) tabs.push(await openTab(waiting.pop() ?? (await browser.newPage())))
     return tabs.slice(0, count)
   }
+  const printAll = async (pages: readonly string[]): Promise<Outcome<readonly Uint8Array[]>> => {
+    const printed: Uint8Array[] = []
+    let next = 0
+    const work = async (tab: Tab) => {
+      while (next < pages.length) {
+        const i = next++
+        printed[i] = await tab.print(pages[i] ?? '')
+      }
+    }
+    try {
+      await Promise.all((await tabsFor(pages.length)).map(work))
+      return good(printed)
+    } catch (error) {
+      next = pages.length
+      // What a tab was at is unknown now: what is printed next gets new ones.
+      await Promise.all(tabs.map(({ close }) => close()))
+      tabs = []
+      return bad(`the browser did not print it: ${error instanceof Error ? error.message : String(error)}`)
+    }
+  }
+  let before: Promise<unknown> = Promise.resolve()
   return {
-    print: async pages => {
-      const printed: Uint8Array[] = []
-      let next = 0
-      const work = async (tab: Tab) => {
-        while (next < pages.length) {
-          const i = next++
-          printed[i] = await tab.print(pages[i] ?? '')
-        }
-      }
-      try {
-        await Promise.all((await tabsFor(pages.length)).map(work))
-        return good(printed)
-      } catch (error) {
-        next = pages.length
-        // What a tab was at is unknown now: the next document gets new ones.
-        await Promise.all(tabs.map(({ close }) => close()))
-        tabs = []
-        return bad(`the browser did not print it: ${error instanceof Error ? error.message : String(error)}`)
-      }
+    // A tab holds one page at a time, so whoever prints waits for those who came first.
+    print: pages => {
+      const now = before.then(() => printAll(pages))
+      before = now
+      return now
     },
     close: async () => {
       const program = browser.process()

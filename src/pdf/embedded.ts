@@ -7,7 +7,7 @@ import { dirname, join } from 'node:path'
 import { promisify } from 'node:util'
 import { brotliDecompress } from 'node:zlib'
 import { bad, good, type Outcome } from '../base/outcome.ts'
-import { thisMachine } from './places.ts'
+import type { Machine } from './places.ts'
 import { filesInTar } from './tar.ts'
 
 const PACKAGE = '@sparticuz/chromium'
@@ -21,15 +21,15 @@ export interface Embedded {
  * @param near a folder from which the package can be found
  * @returns the program, unpacked if it was not; or why there is none here
  */
-export async function embeddedBrowser(near: string): Promise<Outcome<Embedded>> {
-  const { platform, arch } = thisMachine
+export async function embeddedBrowser(near: string, machine: Machine): Promise<Outcome<Embedded>> {
+  const { platform, arch } = machine
   if (platform !== 'linux' || arch !== 'x64')
     return bad(`the embedded browser is for Linux on x86-64, and this is ${platform} on ${arch}`)
   const packed = packageFolder(near)
   if (packed === undefined) return bad(`the package ${PACKAGE}, which holds the embedded browser, is not installed`)
   try {
     const { version } = JSON.parse(await readFile(join(packed, 'package.json'), 'utf8')) as { readonly version: string }
-    return good(placesIn(await unpackedAt(packed, `chromium-${version}`)))
+    return good(placesIn(await unpackedAt(packed, `chromium-${version}`, machine)))
   } catch (error) {
     return bad(`the embedded browser cannot be unpacked: ${error instanceof Error ? error.message : String(error)}`)
   }
@@ -50,8 +50,8 @@ const placesIn = (folder: string): Embedded => ({
 })
 
 /** A folder that is there is whole: it is filled under another name and then renamed. */
-async function unpackedAt(packed: string, name: string): Promise<string> {
-  const shelf = await shelfFolder()
+async function unpackedAt(packed: string, name: string, machine: Machine): Promise<string> {
+  const shelf = await shelfFolder(machine)
   const folder = join(shelf, name)
   if (isThere(join(folder, 'chromium'))) return folder
   const workshop = await mkdtemp(join(shelf, '.unpacking-'))
@@ -70,8 +70,7 @@ async function unpackedAt(packed: string, name: string): Promise<string> {
 const isThere = (path: string): boolean => statSync(path, { throwIfNoEntry: false }) !== undefined
 
 /** Where unpacked programs are kept: the user's cache, or where there is none a folder of the user's own among the temporary ones. */
-async function shelfFolder(): Promise<string> {
-  const { environment } = thisMachine
+async function shelfFolder({ environment }: Machine): Promise<string> {
   const cache = environment.XDG_CACHE_HOME || join(homedir(), '.cache')
   try {
     const shelf = join(cache, 'platemark')

@@ -49,7 +49,6 @@ export function joinLots(lots: readonly PrintedLot[]): readonly PDFRef[] {
     const shift = lot === first ? 0 : moveInto(context, document.context)
     const moved = (ref: PDFRef) => PDFRef.of(ref.objectNumber + shift, ref.generationNumber)
     const kept = own.slice(led ? 1 : 0).map(moved)
-    if (led && own[0] !== undefined) deletePage(context, moved(own[0]))
     pages.push(...kept)
     parts.push({
       catalog: context.lookup(moved(root), PDFDict),
@@ -61,7 +60,6 @@ export function joinLots(lots: readonly PrintedLot[]): readonly PDFRef[] {
   joinTags(context, parts)
   for (const { pages: own } of parts) for (const page of own) turnLinks(context, page)
   keepPages(context, parts, pages)
-  for (const { catalog } of parts.slice(1)) dropCatalog(context, parts, catalog)
   return pages
 }
 
@@ -69,12 +67,6 @@ function rootOf({ context }: PDFDocument): PDFRef {
   const { Root } = context.trailerInfo
   if (!(Root instanceof PDFRef)) throw new Error('the printed document has no catalog')
   return Root
-}
-
-function deletePage(context: PDFContext, ref: PDFRef): void {
-  const contents = context.lookup(ref, PDFDict).get(name('Contents'))
-  if (contents instanceof PDFRef) context.delete(contents)
-  context.delete(ref)
 }
 
 function joinDestinations(context: PDFContext, parts: readonly Joined[]): void {
@@ -100,18 +92,7 @@ function turnLinks(context: PDFContext, page: PDFDict): void {
 
 /** One flat list of pages in the place of each document's own tree. */
 function keepPages(context: PDFContext, parts: readonly Joined[], pages: readonly PDFRef[]): void {
-  for (const { objects } of parts)
-    for (const [ref, object] of objects)
-      if (object instanceof PDFDict && object.get(name('Type')) === name('Pages')) context.delete(ref)
   const tree = context.register(context.obj({ Type: 'Pages', Kids: [...pages], Count: pages.length }))
   for (const ref of pages) context.lookup(ref, PDFDict).set(name('Parent'), tree)
   parts[0]?.catalog.set(name('Pages'), tree)
-}
-
-/** What only a document's own catalog led to. */
-function dropCatalog(context: PDFContext, parts: readonly Joined[], catalog: PDFDict): void {
-  const structure = dictEntry(context, catalog, 'StructTreeRoot')
-  const dead = new Set<unknown>([catalog, structure, dictEntry(context, structure, 'K')])
-  dead.add(dictEntry(context, catalog, 'Dests'))
-  for (const { objects } of parts) for (const [ref, object] of objects) if (dead.has(object)) context.delete(ref)
 }

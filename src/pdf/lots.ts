@@ -80,7 +80,10 @@ export function folioPage({ laterPage }: Paper, sheets: number): string {
   const others = ['top-left', 'top-center', 'top-right', 'bottom-left', 'bottom-center']
   const body = BLANK.repeat(sheets - 1)
   const rules = others.map(place => `@${place}{content:none!important}`).join('')
-  return styled(laterPage(`${body}<div style="height:1px"></div>`), `@page{${rules}}*{background:none!important}footer{display:none}`)
+  return styled(
+    laterPage(`${body}<div style="height:1px"></div>`),
+    `@page{${rules}}*{background:none!important}footer{display:none}`,
+  )
 }
 
 const tags = /<([a-z][a-z0-9]*)((?:"[^"]*"|[^">])*)>/gi

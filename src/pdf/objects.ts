@@ -73,3 +73,20 @@ function shiftWithin(object: PDFObject, shift: number): void {
       else shiftWithin(value, shift)
   } else if (object instanceof PDFStream) shiftWithin(object.dict, shift)
 }
+
+/** Deletes what nothing leads to any more from the catalog and the properties. */
+export function dropUnreachable(context: PDFContext): void {
+  const { Root, Info } = context.trailerInfo
+  const seen = new Set<PDFRef>()
+  const waiting: (PDFObject | undefined)[] = [Root, Info]
+  while (waiting.length > 0) {
+    const object = waiting.pop()
+    if (object instanceof PDFRef) {
+      if (!seen.has(object)) waiting.push(context.lookup(object))
+      seen.add(object)
+    } else if (object instanceof PDFArray) waiting.push(...object.asArray())
+    else if (object instanceof PDFDict) waiting.push(...object.values())
+    else if (object instanceof PDFStream) waiting.push(...object.dict.values())
+  }
+  for (const [ref] of context.enumerateIndirectObjects()) if (!seen.has(ref)) context.delete(ref)
+}

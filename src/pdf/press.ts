@@ -11,7 +11,7 @@ import { addOutline, setProperties } from './finish.ts'
 import { layOver } from './folio.ts'
 import { joinLots, type Place, type PrintedLot, placesIn, sheetsIn } from './join.ts'
 import { folioPage, hasFolios, type Lots, lotsOf, type Sizes, withFolios } from './lots.ts'
-import { openPdf } from './objects.ts'
+import { dropUnreachable, openPdf } from './objects.ts'
 
 export interface Press {
   /**
@@ -62,6 +62,7 @@ async function printed(paper: Paper, { lots, titles }: Lots, desk: Desk): Promis
   })
   addOutline(document, placed, pages)
   setProperties(document, paper.properties)
+  dropUnreachable(document.context)
   return good(await document.save({ addDefaultPage: false, updateFieldAppearances: false, objectsPerTick: Infinity }))
 }
 

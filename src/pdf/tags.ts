@@ -11,8 +11,7 @@ export interface Joined {
 
 /** Makes the tree of the first document hold those of all. Keys and ids are given anew, in order. */
 export function joinTags(context: PDFContext, parts: readonly Joined[]): void {
-  const roots = parts.map(({ catalog }) => dictEntry(context, catalog, 'StructTreeRoot'))
-  const [root, ...others] = roots
+  const [root, ...others] = parts.map(({ catalog }) => dictEntry(context, catalog, 'StructTreeRoot'))
   const top = root?.get(name('K'))
   const topElement = dictEntry(context, root, 'K')
   if (root === undefined || topElement === undefined || top === undefined) return
@@ -27,19 +26,9 @@ export function joinTags(context: PDFContext, parts: readonly Joined[]): void {
   }
   topElement.set(name('K'), context.obj(kids))
   const parents = parentTree(context, parts)
-  const ids = idTree(context, parts)
-  for (const each of roots) for (const key of ['ParentTree', 'IDTree']) dropTree(context, each?.get(name(key)))
   root.set(name('ParentTree'), context.register(context.obj({ Nums: parents })))
   root.set(name('ParentTreeNextKey'), PDFNumber.of(parents.length / 2))
-  root.set(name('IDTree'), context.register(context.obj({ Names: ids })))
-}
-
-/** Deletes a tree of keys down to its last branch, though not what the keys lead to. */
-function dropTree(context: PDFContext, tree: PDFObject | undefined): void {
-  if (!(tree instanceof PDFRef)) return
-  const branch = context.lookup(tree)
-  if (branch instanceof PDFDict) for (const kid of listEntry(context, branch, 'Kids')) dropTree(context, kid)
-  context.delete(tree)
+  root.set(name('IDTree'), context.register(context.obj({ Names: idTree(context, parts) })))
 }
 
 /** From a page or a link back to its elements: each page and link has a key in one tree. */

@@ -1,6 +1,6 @@
 /** A check on one line: what, demand against capacity, a bar, the ratio and the verdict in words. */
 import type { Check } from '../explain/sheet.ts'
-import { escapeHtml, pageText } from './escape.ts'
+import { pageText } from './escape.ts'
 import { idAttribute, sourceHtml } from './html-parts.ts'
 
 /** The bar ends at this ratio; the limit stands at 1. */
@@ -15,7 +15,7 @@ export function checkHtml(check: Check): string {
 <span class="what">${pageText(what)}${origin.length === 0 ? '' : `<span class="from">${origin.join(' ')}</span>`}</span>
 <span class="demand">${pageText(demand)}</span><span class="sign">${ok ? '≤' : '&gt;'}</span><span class="capacity">${pageText(capacity)}</span>
 <span class="bar" aria-hidden="true"><i style="width:${barLength(ratio)}%"></i></span>
-<span class="ratio"><span class="unseen">ratio </span>${escapeHtml(ratioPrinted)}</span><span class="verdict">${ok ? 'OK' : 'NG'}</span>
+<span class="ratio"><span class="unseen">ratio </span>${pageText(ratioPrinted)}</span><span class="verdict">${ok ? 'OK' : 'NG'}</span>
 </li>`
 }
 
