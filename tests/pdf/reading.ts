@@ -1,5 +1,6 @@
 /** PDFs for tests: printed by whatever browser this machine has or the embedded one, and read back by pdf.js. */
 import { fileURLToPath } from 'node:url'
+import { PDFDict, PDFDocument, PDFName } from 'pdf-lib'
 import { getDocument, type PDFDocumentProxy } from 'pdfjs-dist/legacy/build/pdf.mjs'
 import type { TextItem } from 'pdfjs-dist/types/src/display/api.js'
 import { compileText } from '../../src/compile.ts'
@@ -106,11 +107,12 @@ export interface Link {
   readonly url: string | undefined
 }
 
+/** Links in the order of the sheets, and on each from its head to its foot. */
 export async function linksOf(document: PDFDocumentProxy): Promise<readonly Link[]> {
   const links: Link[] = []
   for (let sheet = 1; sheet <= document.numPages; sheet++) {
     const annotations = await (await document.getPage(sheet)).getAnnotations()
-    for (const { subtype, dest, url, unsafeUrl } of annotations) {
+    for (const { subtype, dest, url, unsafeUrl } of annotations.toSorted((a, b) => b.rect[3] - a.rect[3])) {
       if (subtype !== 'Link') continue
       const to = dest ? await sheetOfDestination(document, dest) : undefined
       links.push({ sheet, to, url: url ?? unsafeUrl })
@@ -137,16 +139,14 @@ export async function bookmarksOf(document: PDFDocumentProxy): Promise<readonly 
   return found
 }
 
-/** Roles of the structure tree with how often each stands on these sheets. */
-export async function rolesOf(document: PDFDocumentProxy): Promise<ReadonlyMap<string, number>> {
+/** Roles of the structure elements with how often each stands in the document. */
+export async function rolesOf(bytes: Uint8Array): Promise<ReadonlyMap<string, number>> {
+  const document = await PDFDocument.load(bytes, { updateMetadata: false })
   const counts = new Map<string, number>()
-  const walk = (node: { readonly role?: string; readonly children?: readonly object[] }): void => {
-    if (node.role !== undefined) counts.set(node.role, (counts.get(node.role) ?? 0) + 1)
-    for (const child of node.children ?? []) walk(child)
-  }
-  for (let number = 1; number <= document.numPages; number++) {
-    const tree = await (await document.getPage(number)).getStructTree()
-    if (tree) walk(tree)
+  for (const [, object] of document.context.enumerateIndirectObjects()) {
+    if (!(object instanceof PDFDict) || object.get(PDFName.of('Type')) !== PDFName.of('StructElem')) continue
+    const role = object.lookup(PDFName.of('S'), PDFName).decodeText()
+    counts.set(role, (counts.get(role) ?? 0) + 1)
   }
   return counts
 }
