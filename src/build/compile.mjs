@@ -2,7 +2,7 @@
  * Builds `dist`: the command in a few files with their code caches, the library, and the
  * assets of a page.
  */
-import { execFileSync } from 'node:child_process'
+import { execFileSync, spawnSync } from 'node:child_process'
 import { chmod, copyFile, mkdir, readdir, readFile, rm, writeFile } from 'node:fs/promises'
 import { fileURLToPath, pathToFileURL } from 'node:url'
 import { build } from 'esbuild'
@@ -112,6 +112,22 @@ async function writeCodeCaches() {
   const formulas = 'warm_one = 2 ft + sqrt(9 ft^2)\nwarm_two = (warm_one / 3)^2 - 4 ft^2\nwarm_three = 7 kip * warm_one'
   const front = starter.replace('---\n', '---\nby: "warm: up" # not plain\n')
   await writeFile(`${dist}/warm.md`, `${front}\n\`\`\`equations\n${formulas}\n\`\`\`\n`)
+  // No browser is needed to load what drives one: naming one that is not there loads it and ends.
+  spawnSync(
+    process.execPath,
+    [
+      `${dist}/platemark.cjs`,
+      'build',
+      `${dist}/warm.md`,
+      '--out',
+      `${dist}/warm`,
+      '--to',
+      'pdf',
+      '--browser',
+      './none',
+    ],
+    { env: { ...process.env, PLATEMARK_WRITE_CACHE: '1' }, stdio: 'ignore' },
+  )
   execFileSync(
     process.execPath,
     [`${dist}/platemark.cjs`, 'build', `${dist}/warm.md`, '--out', `${dist}/warm`, '--to', 'html,json'],
