@@ -15,13 +15,14 @@ import { type DocumentFile, documentsIn, nearbyOf, print, readText, writeWhole }
 import { help, helpFor } from './help.ts'
 import { hostAt } from './host.ts'
 import { isWord } from './model/scope.ts'
-import { type Format, publish } from './publish.ts'
+import type { Press } from './pdf/press.ts'
+import { type Format, type OutputFile, paperOf, publish } from './publish.ts'
 
 const DONE = 0
 const ERRORS = 1
 const WRONG_USAGE = 2
 
-const formats: readonly string[] = ['html', 'md', 'json'] satisfies readonly Format[]
+const formats: readonly string[] = ['html', 'pdf', 'md', 'json'] satisfies readonly Format[]
 const isFormat = (word: string): word is Format => formats.includes(word)
 
 const host = hostAt(join(__dirname, 'assets'))
@@ -40,26 +41,55 @@ interface Settings {
   readonly submittal: boolean
   /** The value that `trace` tells of. */
   readonly id: string
+  readonly browser: NamedBrowser | undefined
 }
 
-/** @returns the exit code */
-export function run(args: readonly string[]): number {
+interface NamedBrowser {
+  readonly program: string
+  readonly namedBy: string
+}
+
+/** @returns the exit code; in a promise only where a PDF is wanted, since all else is quicker done at once */
+export function run(args: readonly string[]): number | Promise<number> {
   const settings = readArguments(args)
   if (typeof settings === 'number') return settings
+  if (settings.to.includes('pdf')) return runWithPress(settings)
   const codes = settings.documents.map(document => guarded(document, settings))
   return Math.max(DONE, ...codes)
 }
 
-/** A fault of our own must not hide the other documents, and is said as what it is. */
 function guarded(document: DocumentFile, settings: Settings): number {
   try {
     return actions[settings.command](document, settings)
   } catch (error) {
-    const detail = error instanceof Error ? (process.env.PLATEMARK_DEBUG ? (error.stack ?? '') : error.message) : ''
-    return fail(
-      `${shownPath(document.path)}: Platemark has a fault of its own here: ${detail}\nPlease report it with the document. Nothing was written.`,
-    )
+    return ownFault(document, error)
   }
+}
+
+/** One browser prints every document, and is ended whatever happens. */
+async function runWithPress(settings: Settings): Promise<number> {
+  const { openPress, PATIENCE } = await import('./pdf/press.ts')
+  const press = openPress({ named: settings.browser, near: __dirname, patience: PATIENCE })
+  const said = new Set<string>()
+  let code = DONE
+  try {
+    for (const document of settings.documents)
+      code = Math.max(
+        code,
+        await buildWithPress(document, settings, press, said).catch(error => ownFault(document, error)),
+      )
+  } finally {
+    await press.close()
+  }
+  return code
+}
+
+/** A fault of our own must not hide the other documents, and is said as what it is. */
+function ownFault(document: DocumentFile, error: unknown): number {
+  const detail = error instanceof Error ? (process.env.PLATEMARK_DEBUG ? (error.stack ?? '') : error.message) : ''
+  return fail(
+    `${shownPath(document.path)}: Platemark has a fault of its own here: ${detail}\nPlease report it with the document. Nothing was written.`,
+  )
 }
 
 function readArguments(args: readonly string[]): Settings | number {
@@ -74,7 +104,13 @@ function readArguments(args: readonly string[]): Settings | number {
 }
 
 const options = {
-  build: { to: { type: 'string' }, out: { type: 'string' }, draft: { type: 'boolean' }, list: { type: 'boolean' } },
+  build: {
+    to: { type: 'string' },
+    out: { type: 'string' },
+    draft: { type: 'boolean' },
+    browser: { type: 'string' },
+    list: { type: 'boolean' },
+  },
   check: { list: { type: 'boolean' }, submittal: { type: 'boolean' } },
   audit: { list: { type: 'boolean' } },
   trace: { list: { type: 'boolean' } },
@@ -99,6 +135,7 @@ function readOptions(command: Command, args: readonly string[]): Settings | numb
   const to = (typeof values.to === 'string' ? values.to : 'html').split(',').map(word => word.trim())
   const strange = to.find(word => !isFormat(word))
   if (strange !== undefined) return misuse(`There is no format ${strange}. Formats are ${inWords(formats, 'and')}.`)
+  if (values.browser !== undefined && !to.includes('pdf')) return misuse('--browser is for --to pdf.')
   const found = positionals.map(path => documentsIn(path))
   const missing = found.flatMap(each => (each.ok ? [] : [each.because]))
   if (missing.length > 0) return fail(missing.join('\n'))
@@ -111,7 +148,14 @@ function readOptions(command: Command, args: readonly string[]): Settings | numb
     oneLine: values.list === true,
     submittal: values.submittal === true,
     id,
+    browser: namedBrowser(values.browser),
   }
+}
+
+function namedBrowser(option: unknown): NamedBrowser | undefined {
+  if (typeof option === 'string') return { program: option, namedBy: '--browser' }
+  const { PLATEMARK_BROWSER } = process.env
+  return PLATEMARK_BROWSER ? { program: PLATEMARK_BROWSER, namedBy: 'PLATEMARK_BROWSER' } : undefined
 }
 
 /** Each document once, however often it was named. */
@@ -133,20 +177,60 @@ function compileFile(path: string): Compiled | undefined {
 
 const shownPath = (path: string): string => relative(process.cwd(), resolve(path)).replaceAll('\\', '/')
 
+/** A document that was worked, with the text files that it gives. */
+interface Worked {
+  readonly compiled: Compiled
+  readonly errors: number
+  readonly folder: string
+  readonly stem: string
+  readonly files: readonly OutputFile[]
+}
+
+function build(document: DocumentFile, settings: Settings): number {
+  const worked = work(document, settings)
+  return worked ? deliver(worked, []) : ERRORS
+}
+
+/** @param said what has been said about the browser of earlier documents */
+async function buildWithPress(
+  document: DocumentFile,
+  settings: Settings,
+  press: Press,
+  said: Set<string>,
+): Promise<number> {
+  const worked = work(document, settings)
+  if (!worked) return ERRORS
+  const { compiled, errors, stem } = worked
+  if (errors > 0 && !settings.draft) return deliver(worked, [])
+  const printed = await press.print(paperOf(compiled, settings.draft && errors > 0, host))
+  if (printed.ok) return deliver(worked, [{ name: `${stem}.pdf`, text: '', bytes: printed.value }])
+  if (!said.has(printed.because)) fail(printed.because)
+  said.add(printed.because)
+  deliver(worked, [])
+  return fail(`${compiled.source.path}: the PDF was not written`)
+}
+
 /** Pages are written by a sound build, or as a draft; results always are. */
-function build({ path, within }: DocumentFile, settings: Settings): number {
+function work({ path, within }: DocumentFile, settings: Settings): Worked | undefined {
   const compiled = compileFile(path)
-  if (!compiled) return ERRORS
+  if (!compiled) return undefined
   const errors = tell(compiled, settings)
   const folder = settings.out === undefined ? dirname(path) : join(settings.out, within)
   const stem = basename(path, extname(path))
   // Beside its source the worked Markdown needs a name of its own.
   const stemOf = (format: Format) => (format === 'md' && settings.out === undefined ? `${stem}.worked` : stem)
   const wanted = settings.to.filter(format => format === 'json' || errors === 0 || settings.draft)
-  const files = wanted.flatMap(format => publish(compiled, stemOf(format), format, settings.draft && errors > 0, host))
-  const written = writeWhole(folder, files)
+  const files = wanted.flatMap(format =>
+    format === 'pdf' ? [] : publish(compiled, stemOf(format), format, settings.draft && errors > 0, host),
+  )
+  return { compiled, errors, folder, stem, files }
+}
+
+function deliver({ compiled, errors, folder, files }: Worked, printed: readonly OutputFile[]): number {
+  const all = [...files, ...printed]
+  const written = writeWhole(folder, all)
   if (!written.ok) return fail(written.because)
-  for (const { name } of files) print('output', `${shownPath(join(folder, name))}\n`)
+  for (const { name } of all) print('output', `${shownPath(join(folder, name))}\n`)
   sayChecks(compiled)
   return errors > 0 ? ERRORS : DONE
 }

@@ -14,24 +14,29 @@ platemark COMMAND --help tells more. platemark --version prints the version.
 What it writes is to be reviewed by the engineer of record; local codes govern.`
 
 const texts = {
-  build: `platemark build FILE… [--to html,md,json] [--out DIR] [--draft] [--list]
+  build: `platemark build FILE… [--to html,pdf,md,json] [--out DIR] [--draft] [--list]
 
 Works each document and writes:
 
   html   one page that needs nothing beside it (what you get without --to)
+  pdf    the same on sheets of paper, with bookmarks, links and tags
   md     the same calculation as Markdown, with its sketches as SVG beside it;
          named NAME.worked.md when it is written beside its source
   json   every value, step, check and diagnostic, for other programs
 
   --out DIR   write there instead of beside the source
   --draft     write the pages in spite of errors, with a box at each and a banner
+  --browser PROGRAM
+              print the PDF with this Chrome, Chromium or Edge; PLATEMARK_BROWSER names one too.
+              Without either an installed one is looked for, then the one that comes along
+              (Linux on x86-64)
   --list      one line for each diagnostic
 
 A document with errors leaves its pages as they were; its JSON is always written.
 Exit code: 0 done, 1 errors, 2 wrong usage. A check that fails is a result, not an error.
 
   platemark build workshop.md
-  platemark build calcs/ --to html,json --out out/`,
+  platemark build calcs/ --to html,pdf --out out/`,
   check: `platemark check FILE… [--submittal] [--list]
 
 Works each document, prints what is wrong with it and how its checks come out, and writes nothing.

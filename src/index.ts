@@ -7,6 +7,7 @@ import type { VFile } from 'vfile'
 import { positionOf, sourceOf } from './base/span.ts'
 import { type Compiled, compileText, compileTree } from './compile.ts'
 import { hostAt } from './host.ts'
+import type { Press } from './pdf/press.ts'
 import type { Host } from './publish.ts'
 import { leftAlone } from './read/nearby.ts'
 import { bodyNodes } from './render/markdown-body.ts'
@@ -14,11 +15,24 @@ import { markdownSettings } from './render/math-nodes.ts'
 
 export type { Diagnostic } from './base/diagnostic.ts'
 export { longForm, oneLine } from './base/report.ts'
-export { type Format, type Host, type OutputFile, publish } from './publish.ts'
+export type { Press } from './pdf/press.ts'
+export { type Format, type Host, type OutputFile, paperOf, publish, type TextFormat } from './publish.ts'
 
 /** The host that `publish` needs, with the assets of this package. */
 export const host: Host = hostAt(fileURLToPath(new URL('./assets/', import.meta.url)))
 export { type Compiled, compileText, compileTree }
+
+/**
+ * Prints PDFs through a browser that stays warm: `press.print(paperOf(compiled, false, host))` for each document, then
+ * `press.close()`.
+ *
+ * @param browser a program of Chrome, Chromium or Edge; left out, an installed one is looked for, then the embedded one
+ */
+export async function openPress(browser?: string): Promise<Press> {
+  const press = await import('./pdf/press.ts')
+  const named = browser === undefined ? undefined : { program: browser, namedBy: 'openPress' }
+  return press.openPress({ named, near: fileURLToPath(new URL('.', import.meta.url)), patience: press.PATIENCE })
+}
 
 /**
  * A remark plugin. It replaces Platemark's fenced blocks by the worked calculation

@@ -11,11 +11,12 @@ import { traced } from './explain/traced.ts'
 import type { PlacedPicture } from './read/pictures.ts'
 import { besideNames } from './render/beside.ts'
 import type { BodyPart } from './render/body.ts'
-import { renderHtml } from './render/html.ts'
+import { type Page, renderHtml } from './render/html.ts'
 import { renderJson } from './render/json.ts'
 import { documentNodes } from './render/markdown.ts'
 import { bodyNodes, liftOf } from './render/markdown-body.ts'
 import { markdownSettings } from './render/math-nodes.ts'
+import { type Paper, renderPaper } from './render/paper.ts'
 import type { Part } from './render/parts.ts'
 import { onlyPictured, picturesBeside, picturesInPage } from './render/pictures.ts'
 import { isDefinition, proseHtml } from './render/prose.ts'
@@ -33,11 +34,13 @@ export interface Host {
   readonly shapes?: () => string
 }
 
-export type Format = 'html' | 'md' | 'json'
+/** What is written as text, with nothing but the document needed. */
+export type TextFormat = 'html' | 'md' | 'json'
+export type Format = TextFormat | 'pdf'
 
 export interface OutputFile {
   readonly name: string
-  /** Empty where the file is a picture, which has `bytes`. */
+  /** Empty where the file has `bytes`. */
   readonly text: string
   readonly bytes?: Uint8Array
 }
@@ -46,13 +49,13 @@ export interface OutputFile {
 export function publish(
   compiled: Compiled,
   stem: string,
-  format: Format,
+  format: TextFormat,
   draft: boolean,
   host: Host,
 ): readonly OutputFile[] {
   switch (format) {
     case 'html':
-      return [{ name: `${stem}.html`, text: page(compiled, draft, host) }]
+      return [{ name: `${stem}.html`, text: renderHtml(pageOf(compiled, draft, host)) }]
     case 'md':
       return markdown(compiled, stem, draft, host)
     case 'json':
@@ -69,17 +72,23 @@ export function shapesOf(host: Host): ShapeCache {
   return known
 }
 
-function page(compiled: Compiled, draft: boolean, host: Host): string {
+/** The page for paper; a browser is needed to print it. */
+export function paperOf(compiled: Compiled, draft: boolean, host: Host): Paper {
+  const identity = host.sha256(`${host.version}\n${draft ? 'draft' : 'issue'}\n${compiled.source.text}`)
+  return renderPaper(pageOf(compiled, draft, host), identity)
+}
+
+function pageOf(compiled: Compiled, draft: boolean, host: Host): Page {
   const { source } = compiled
   const sheet = sheetOf(compiled, host.version, host.sha256(source.text), draft)
-  return renderHtml({
+  return {
     sheet,
     body: bodyOf(compiled),
     source,
     asset: host.asset,
     shapes: shapesOf(host),
     traced: traced(compiled.context),
-  })
+  }
 }
 
 function bodyOf({ parts, pictures }: Compiled): readonly BodyPart[] {

@@ -17,6 +17,7 @@ const order: readonly (readonly string[])[] = [
   ['render'],
   ['compile.ts'],
   ['publish.ts'],
+  ['pdf'],
   ['host.ts', 'index.ts', 'files.ts', 'help.ts', 'cli.ts'],
   ['page'],
 ]
@@ -111,8 +112,8 @@ describe('the order of the house', () => {
   })
 })
 
-/** The command line and the two files that it reaches the machine through. */
-const touching: readonly string[] = ['cli.ts', 'files.ts', 'host.ts']
+/** The command line, the two files that it reaches the machine through, and what starts a browser. */
+const touches = (path: string): boolean => ['cli.ts', 'files.ts', 'host.ts'].includes(path) || path.startsWith('pdf/')
 
 describe('what the stages may reach', () => {
   const paths = new Set(files.map(({ path }) => path))
@@ -122,9 +123,9 @@ describe('what the stages may reach', () => {
     expect(foreign.filter(({ from }) => from.startsWith('base/'))).toEqual([])
   })
 
-  test('only the command line and the build touch files, network, clock and process', () => {
+  test('only the command line, the press and the build touch files, network, clock and process', () => {
     // The library asks where its own package lies, and touches nothing there itself.
-    const mayAsk = ({ from, to }: Import) => touching.includes(from) || (from === 'index.ts' && to === 'node:url')
+    const mayAsk = ({ from, to }: Import) => touches(from) || (from === 'index.ts' && to === 'node:url')
     const reaching = foreign.filter(each => each.to.startsWith('node:') && !mayAsk(each) && !isBuild(each.from))
     expect(reaching).toEqual([])
   })
@@ -132,7 +133,7 @@ describe('what the stages may reach', () => {
   test('nothing but the command line asks for the time, the environment or a random number', () => {
     const asks = /\bDate\.now\b|\bnew Date\b|\bMath\.random\b|\bprocess\.|\bfetch\(|\btoLocale\w+\(|\bIntl\./
     const asking = files.filter(
-      ({ path, text }) => !touching.includes(path) && !isBuild(path) && asks.test(withoutComments(text)),
+      ({ path, text }) => !touches(path) && !isBuild(path) && asks.test(withoutComments(text)),
     )
     expect(asking.map(({ path }) => path)).toEqual([])
   })

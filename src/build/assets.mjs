@@ -24,9 +24,14 @@ const packageFolder = name => dirname(require.resolve(`${name}/package.json`))
 export async function prepareAssets() {
   const katex = await katexAssets()
   const script = await pageScript()
-  const text = await textFaces('@fontsource-variable/source-serif-4', 'text', 'Source Serif 4')
-  const label = await textFaces('@fontsource-variable/source-sans-3', 'label', 'Source Sans 3')
-  const prepared = [...text, ...label]
+  const screen = [
+    ...(await textFaces('@fontsource-variable/source-serif-4', variable, 'text', 'Source Serif 4')),
+    ...(await textFaces('@fontsource-variable/source-sans-3', variable, 'label', 'Source Sans 3')),
+  ]
+  const paper = [
+    ...(await textFaces('@fontsource/source-serif-4', fixed, 'text', 'Source Serif 4')),
+    ...(await textFaces('@fontsource/source-sans-3', fixed, 'label', 'Source Sans 3')),
+  ]
   return new Map([
     ['page.html', await readFile(join(root, 'templates/page.html'), 'utf8')],
     ['sheet.html', await readFile(join(root, 'templates/sheet.html'), 'utf8')],
@@ -35,8 +40,11 @@ export async function prepareAssets() {
     ['trace.js', script],
     // What the page's policy names the script by, so that no other can run.
     ['trace.hash', `sha256-${createHash('sha256').update(script).digest('base64')}`],
-    ['faces.json', JSON.stringify(prepared.map(({ face }) => face))],
-    .../** @type {[string, string][]} */ (prepared.map(({ face, rule }) => [`faces/${face.name}.css`, rule])),
+    ['faces.screen.json', JSON.stringify(screen.map(({ face }) => face))],
+    ['faces.paper.json', JSON.stringify(paper.map(({ face }) => face))],
+    .../** @type {[string, string][]} */ (
+      [...screen, ...paper].map(({ face, rule }) => [`faces/${face.name}.css`, rule])
+    ),
     ...katex,
   ])
 }
@@ -71,16 +79,21 @@ export async function writeAssets(outDir) {
   }
 }
 
+/** Style sheets of the packages: one face of every weight for the screen; one face a weight for paper, where a variable one would be drawn as shapes. */
+const variable = ['wght.css', 'wght-italic.css']
+const fixed = ['400.css', '400-italic.css', '600.css', '600-italic.css']
+
 /**
  * The faces of a text family, one for each style and range of characters.
  * @param {string} packageName
+ * @param {readonly string[]} sheetNames
  * @param {'text' | 'label'} family
  * @param {string} familyName
  * @returns {Promise<{ face: Face, rule: string }[]>}
  */
-async function textFaces(packageName, family, familyName) {
+async function textFaces(packageName, sheetNames, family, familyName) {
   const folder = packageFolder(packageName)
-  const sheets = await Promise.all(['wght.css', 'wght-italic.css'].map(name => readFile(join(folder, name), 'utf8')))
+  const sheets = await Promise.all(sheetNames.map(name => readFile(join(folder, name), 'utf8')))
   const rules = sheets.join('\n').match(/@font-face\s*\{[^}]*\}/g) ?? []
   return Promise.all(rules.map(rule => textFace(rule, folder, family, familyName)))
 }

@@ -2,7 +2,7 @@
  * Builds `dist`: the command in a few files with their code caches, the library, and the
  * assets of a page.
  */
-import { execFileSync } from 'node:child_process'
+import { execFileSync, spawnSync } from 'node:child_process'
 import { chmod, copyFile, mkdir, readdir, readFile, rm, writeFile } from 'node:fs/promises'
 import { fileURLToPath, pathToFileURL } from 'node:url'
 import { build } from 'esbuild'
@@ -42,6 +42,7 @@ const packagesApart = {
     const filter = new RegExp(`^(?:${Object.keys(apart).join('|')})$`)
     build.onResolve({ filter }, ({ path }) => ({ path, namespace: 'apart' }))
     build.onResolve({ filter: /^\.\/\w+\.cjs$/, namespace: 'apart' }, ({ path }) => ({ path, external: true }))
+    build.onResolve({ filter: /^\.\/pdf\/press\.ts$/ }, () => ({ path: './pdf.cjs', external: true }))
     build.onLoad({ filter: /.*/, namespace: 'apart' }, ({ path }) => ({
       contents: (apart[path] ?? [])
         .map(name => `exports.${name} = (...args) => require('./${path}.cjs').${name}(...args)`)
@@ -55,12 +56,15 @@ const loaded = {
   ...common,
   format: 'cjs',
   minify: true,
+  // The launcher's files have no `import`; a file that is asked for late is required late.
+  supported: { 'dynamic-import': false },
   banner: { js: '(function (require, module, exports, __dirname) {' },
   footer: { js: '})' },
 }
 
 await Promise.all([
   build({ ...loaded, entryPoints: [`${root}src/cli.ts`], outfile: `${dist}/command.cjs`, plugins: [packagesApart] }),
+  build({ ...loaded, entryPoints: [`${root}src/pdf/press.ts`], outfile: `${dist}/pdf.cjs` }),
   ...Object.keys(apart).map(name =>
     build({
       ...loaded,
@@ -70,10 +74,12 @@ await Promise.all([
   ),
   build({
     ...common,
-    entryPoints: [`${root}src/index.ts`],
+    entryPoints: { index: `${root}src/index.ts` },
     format: 'esm',
     packages: 'external',
-    outfile: `${dist}/index.js`,
+    // What prints a PDF is in a file of its own.
+    splitting: true,
+    outdir: dist,
   }),
   build({
     ...common,
@@ -118,6 +124,22 @@ async function writeCodeCaches() {
   const formulas = 'warm_one = 2 ft + sqrt(9 ft^2)\nwarm_two = (warm_one / 3)^2 - 4 ft^2\nwarm_three = 7 kip * warm_one'
   const front = starter.replace('---\n', '---\nby: "warm: up" # not plain\n')
   await writeFile(`${dist}/warm.md`, `${front}\n\`\`\`equations\n${formulas}\n\`\`\`\n`)
+  // No browser is needed to load what drives one: naming one that is not there loads it and ends.
+  spawnSync(
+    process.execPath,
+    [
+      `${dist}/platemark.cjs`,
+      'build',
+      `${dist}/warm.md`,
+      '--out',
+      `${dist}/warm`,
+      '--to',
+      'pdf',
+      '--browser',
+      './none',
+    ],
+    { env: { ...process.env, PLATEMARK_WRITE_CACHE: '1' }, stdio: 'ignore' },
+  )
   execFileSync(
     process.execPath,
     [`${dist}/platemark.cjs`, 'build', `${dist}/warm.md`, '--out', `${dist}/warm`, '--to', 'html,json'],

@@ -41,7 +41,15 @@ function run(file) {
   return made.exports
 }
 
-const command = /** @type {{ run: (args: readonly string[]) => number }} */ (load('./command.cjs'))
-process.exitCode = command.run(process.argv.slice(2))
-if (process.env.PLATEMARK_WRITE_CACHE === '1')
-  for (const [file, script] of scripts) writeFileSync(`${file}.cache`, script.createCachedData())
+const command = /** @type {{ run: (args: readonly string[]) => number | Promise<number> }} */ (load('./command.cjs'))
+
+/** @param {number} code */
+function end(code) {
+  process.exitCode = code
+  if (process.env.PLATEMARK_WRITE_CACHE === '1')
+    for (const [file, script] of scripts) writeFileSync(`${file}.cache`, script.createCachedData())
+}
+
+const ended = command.run(process.argv.slice(2))
+if (typeof ended === 'number') end(ended)
+else ended.then(end)

@@ -33,3 +33,12 @@ export function cssString(text: string): string {
   const safe = text.replace(/[^A-Za-z0-9 .,;:()-]/gu, mark => `\\${mark.codePointAt(0)?.toString(16) ?? '20'} `)
   return `"${safe}"`
 }
+
+const named: Readonly<Record<string, string>> = { amp: '&', lt: '<', gt: '>', quot: '"', apos: "'", nbsp: '\u00a0' }
+
+/** Text out of HTML: character references read. */
+export const plainText = (html: string): string =>
+  html.replace(/&(?:#x([0-9a-f]+)|#(\d+)|(\w+));/gi, (whole, hex?: string, decimal?: string, name?: string) => {
+    if (name !== undefined) return named[name] ?? whole
+    return String.fromCodePoint(hex === undefined ? Number(decimal) : Number.parseInt(hex, 16))
+  })

@@ -2,7 +2,7 @@
 import type { Sheet } from '../explain/sheet.ts'
 import type { BodyPart } from './body.ts'
 
-/** One entry of the asset `faces.json`. */
+/** One entry of the assets `faces.screen.json` and `faces.paper.json`. */
 export interface Face {
   /** The asset `faces/NAME.css` holds its rule. */
   readonly name: string

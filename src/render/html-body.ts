@@ -6,7 +6,7 @@ import type { Setting } from './html-parts.ts'
 import { pieceHtml } from './html-pieces.ts'
 
 /** Pieces in order; checks that follow each other share a list, and headings take their level from the prose before them. */
-export function bodyHtml(body: readonly BodyPart[], setting: Setting): string {
+export function bodyBlocks(body: readonly BodyPart[], setting: Setting): readonly string[] {
   const out: string[] = []
   const lift = 2 - topLevel(body)
   let checks: Check[] = []
@@ -29,7 +29,7 @@ export function bodyHtml(body: readonly BodyPart[], setting: Setting): string {
     } else out.push(pieceHtml(part, { ...setting, level }))
   }
   closeChecks()
-  return out.join('\n')
+  return out
 }
 
 // A whole tag, quoted values and all, so that nothing inside an attribute is taken for a tag; then a section number.

@@ -2,7 +2,7 @@
 import { joinTex } from '../base/tex.ts'
 import type { Equation } from '../explain/sheet.ts'
 import { escapeHtml, pageText } from './escape.ts'
-import { idAttribute, type Setting, sourceHtml, unseenMath } from './html-parts.ts'
+import { heardMath, idAttribute, type Setting, sourceHtml } from './html-parts.ts'
 import { fitFactor, unbreakableWidth } from './measure.ts'
 
 /** Room for a line beside the origin, and with the whole width to itself, in em of the formula's type. */
@@ -12,17 +12,19 @@ const ROOM_ALONE = 33
 /** About 5.5 pt on paper: below that a formula should have been a table. */
 const LEAST = 0.45
 
-export function equationHtml(equation: Equation, { typesetter }: Setting): string {
+export function equationHtml(equation: Equation, setting: Setting): string {
+  const { typesetter } = setting
   const { id, number, symbol, lines, result } = equation
   const whole = joinTex(...[symbol, ...lines, result].flatMap((tex, i) => (i === 0 ? [tex] : ['=', tex])))
   const widths = [...lines, result].map(unbreakableWidth)
   const isLong = Math.max(...widths) > ROOM_BESIDE
   const rows = lines.map((tex, i) => rightHtml(typesetter.html(tex, 'display'), widths[i] ?? 0))
   rows.push(rightHtml(`<span class="result">${typesetter.html(result, 'display')}</span>`, widths.at(-1) ?? 0))
+  const { before, attributes } = heardMath(whole, setting)
   const name = number === '' ? 'Equation' : `Equation ${escapeHtml(number)}`
   return `<div class="eq${isLong ? ' long' : ''}"${idAttribute(id)} role="group" aria-label="${name}">
 <p class="n">${escapeHtml(number)}</p>
-<div class="steps">${unseenMath(whole, typesetter)}<div class="lines" aria-hidden="true">
+<div class="steps">${before}<div class="lines"${attributes}>
 ${rows.map((row, i) => leftHtml(i === 0 ? typesetter.html(symbol, 'inline') : '') + row).join('\n')}
 </div></div>
 ${originHtml(equation)}</div>`

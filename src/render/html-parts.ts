@@ -4,6 +4,8 @@ import { linesInWords } from '../base/span.ts'
 import type { Tex } from '../base/tex.ts'
 import { escapeHtml } from './escape.ts'
 import type { Marks } from './html-marks.ts'
+import type { Medium } from './medium.ts'
+import { spoken } from './spoken.ts'
 import { type Typesetter, withoutDigitGroups } from './typeset.ts'
 
 export interface Setting {
@@ -14,15 +16,31 @@ export interface Setting {
   readonly level: number
   /** The values that the page can tell of. */
   readonly marks: Marks
+  readonly medium: Medium
 }
 
-/** A formula in running text: KaTeX hides its HTML from readers by ear, who get MathML instead. */
-export function inlineMath(tex: Tex, { typesetter }: Setting): string {
-  return `${unseenMath(tex, typesetter)}${typesetter.html(tex, 'inline')}`
+/** How a formula reaches readers by ear, from whom KaTeX's HTML is hidden. */
+interface Heard {
+  /** Stands before what is seen. */
+  readonly before: string
+  /** Of the element that holds what is seen. */
+  readonly attributes: string
 }
 
-export const unseenMath = (tex: Tex, typesetter: Typesetter): string =>
-  `<span class="unseen">${typesetter.mathml(withoutDigitGroups(tex))}</span>`
+/** MathML on the screen; on paper, where nothing unseen is left, a text in its place. */
+export function heardMath(tex: Tex, { typesetter, medium }: Setting): Heard {
+  const mathml = typesetter.mathml(withoutDigitGroups(tex))
+  return medium === 'screen'
+    ? { before: `<span class="unseen">${mathml}</span>`, attributes: ' aria-hidden="true"' }
+    : { before: '', attributes: ` role="img" aria-label="${escapeHtml(spoken(mathml))}"` }
+}
+
+/** A formula in running text. */
+export function inlineMath(tex: Tex, setting: Setting): string {
+  const { before, attributes } = heardMath(tex, setting)
+  const seen = setting.typesetter.html(tex, 'inline')
+  return setting.medium === 'screen' ? `${before}${seen}` : `<span${attributes}>${seen}</span>`
+}
 
 /** The source lines of a piece, in copper; nothing where there are none. */
 export function sourceHtml(lines: readonly number[]): string {

@@ -5,6 +5,7 @@ import { cssString } from './escape.ts'
 import { type Face, facesFor, needsOf } from './faces.ts'
 import { CAUTION, draftWords, markOf } from './imprint.ts'
 import { mathFaces, mathRules } from './math-faces.ts'
+import type { Medium } from './medium.ts'
 
 export interface Styled {
   readonly sheet: Sheet
@@ -13,10 +14,10 @@ export interface Styled {
   readonly asset: (name: string) => string
 }
 
-export function styleOf({ sheet, body, asset }: Styled, classes: ReadonlySet<string>): string {
-  const text = facesFor(JSON.parse(asset('faces.json')) as readonly Face[], needsOf(sheet, body)).map(
-    ({ name }) => name,
-  )
+/** A PDF takes one face a weight: a variable face would be drawn as shapes. */
+export function styleOf({ sheet, body, asset }: Styled, classes: ReadonlySet<string>, medium: Medium): string {
+  const faceList = JSON.parse(asset(`faces.${medium}.json`)) as readonly Face[]
+  const text = facesFor(faceList, needsOf(sheet, body)).map(({ name }) => name)
   // KaTeX's roman also stands in for signs that the text faces lack, such as ≤ or →.
   const math = new Set([
     ...mathFaces(classes),
@@ -28,7 +29,7 @@ export function styleOf({ sheet, body, asset }: Styled, classes: ReadonlySet<str
     ...faces,
     mathRules(asset('katex.css'), classes),
     asset('sheet.css'),
-    asset('trace.css'),
+    medium === 'screen' ? asset('trace.css') : '',
     sheet.template.css ?? '',
     paperRules(sheet),
   ].join('\n')

@@ -3,7 +3,7 @@ import type { Source } from '../base/span.ts'
 import type { Sheet, TitleBlock } from '../explain/sheet.ts'
 import type { Traced } from '../explain/traced.ts'
 import { escapeHtml, pageText } from './escape.ts'
-import { bodyHtml } from './html-body.ts'
+import { bodyBlocks } from './html-body.ts'
 import { marksOf, noMarks } from './html-marks.ts'
 import type { Setting } from './html-parts.ts'
 import { bannerHtml, coverHtml, logoHtml, plateHtml } from './html-plate.ts'
@@ -11,6 +11,7 @@ import { contentsHtml, criteriaHtml, revisionsHtml, summaryHtml } from './html-p
 import { type Styled, styleOf } from './html-style.ts'
 import { CAUTION, markOf } from './imprint.ts'
 import { islandHtml } from './island.ts'
+import type { Medium } from './medium.ts'
 import { fillTemplate } from './template.ts'
 import { createTypesetter, type ShapeCache } from './typeset.ts'
 
@@ -19,35 +20,58 @@ export interface Page extends Styled {
   readonly source: Source
   /** Shapes set by earlier pages; without it every shape is set afresh. */
   readonly shapes?: ShapeCache
-  /** Where the numbers came from; without it the page has no script. */
+  /** What the page's panel tells of its numbers; without it the page has no script. */
   readonly traced?: Traced
 }
 
 export function renderHtml(page: Page): string {
-  const { sheet, asset, traced } = page
+  const { firstPage, blocks } = layOut(page, 'screen')
+  return firstPage(blocks.join('\n'))
+}
+
+/** A page before its body is put in. */
+export interface LaidOut {
+  readonly firstPage: (body: string) => string
+  /** The same page without what stands around the body. */
+  readonly laterPage: (body: string) => string
+  /** The body in order: an element or a list each. */
+  readonly blocks: readonly string[]
+}
+
+/** Paper has no script: nobody clicks on it. */
+export function layOut(page: Page, medium: Medium): LaidOut {
+  const { sheet, asset } = page
   const { titleBlock, language } = sheet
+  const traced = medium === 'screen' ? page.traced : undefined
   const typesetter = createTypesetter(page.shapes)
-  const setting = { typesetter, source: page.source, level: 2, marks: traced ? marksOf(traced) : noMarks }
-  const body = fillTemplate(sheet.template.html ?? asset('sheet.html'), {
+  const marks = traced ? marksOf(traced) : noMarks
+  const setting: Setting = { typesetter, source: page.source, level: 2, marks, medium }
+  const blocks = bodyBlocks(page.body, setting)
+  const around = {
     ...escaped(titleBlock),
     banner: bannerHtml(sheet),
     logo: logoHtml(sheet),
     plate: plateOf(sheet, setting),
     preface: prefaceOf(sheet, setting),
-    body: bodyHtml(page.body, setting),
     mark: escapeHtml(markOf(sheet)),
     caution: CAUTION,
-  })
-  const trace = traced ? islandHtml(traced, typesetter, asset('trace.js')) : ''
-  return fillPage(asset('page.html'), {
+  }
+  const parts = {
     language,
     title: escapeHtml(documentTitle(titleBlock)),
     generator: escapeHtml(`Platemark ${sheet.version}`),
-    style: styleOf(page, typesetter.classes()),
     scripts: traced ? `'${asset('trace.hash')}'` : "'none'",
-    sheet: body,
-    trace,
-  })
+    trace: traced ? islandHtml(traced, typesetter, asset('trace.js')) : '',
+    style: styleOf(page, typesetter.classes(), medium),
+  }
+  const template = sheet.template.html ?? asset('sheet.html')
+  const filled = (place: 'first' | 'later', fields: typeof around) => (body: string) =>
+    fillPage(asset('page.html'), { ...parts, place, sheet: fillTemplate(template, { ...fields, body }) })
+  return {
+    firstPage: filled('first', around),
+    laterPage: filled('later', { ...around, banner: '', plate: '', preface: '' }),
+    blocks,
+  }
 }
 
 const prefaceOf = ({ preface, cover }: Sheet, setting: Setting): string =>
@@ -86,5 +110,5 @@ function fillPage(page: string, parts: Readonly<Record<string, string>>): string
   })
 }
 
-const documentTitle = ({ title, project, number }: TitleBlock): string =>
+export const documentTitle = ({ title, project, number }: TitleBlock): string =>
   [title, project, number].filter(part => part !== '').join(' – ') || 'Calculation'

@@ -144,6 +144,56 @@ function tooLarge() {
   compare('10 MB refused, whole process', 10, [bare, { ...platemark('platemark', path), status: 1 }])
 }
 
+/** From the compiled document to the bytes of its PDF, with the browser that this machine has. */
+async function pdf() {
+  const { compileText, host, openPress, paperOf } = await import(pathToFileURL(join(root, 'dist/index.js')).href)
+  /** @param {string} text */
+  const paperFor = text => paperOf(compileText('bench.md', text), false, host)
+  const short = paperFor(twoPages)
+  const long = paperFor(longDocument(100, 1000))
+  head('PDF through a warm browser')
+  const start = performance.now()
+  const press = await openPress(process.env.PLATEMARK_BROWSER)
+  try {
+    await press.print(short)
+    row('start of the browser, and the first two sheets', [performance.now() - start], '')
+    for (const [name, paper, rounds] of /** @type {const} */ ([
+      ['two sheets', short, 15],
+      ['100 sections, 1,000 equations, about 200 sheets', long, 3],
+    ])) {
+      const times = []
+      for (let round = 0; round < rounds; round++) {
+        const began = performance.now()
+        const made = await press.print(paper)
+        if (!made.ok) return line(made.because)
+        times.push(performance.now() - began)
+      }
+      row(name, [Math.min(...times), median(times)], '')
+    }
+  } finally {
+    await press.close()
+  }
+}
+
+const twoPages = `---
+title: Two sheets
+project: Bait and Tackle Kiosk
+---
+
+# Loads
+
+\`\`\`equations
+w = 20 psf + 35 psf
+A = 12 ft * 18 ft
+P = w * A -> kip
+M = P * 12 ft / 8 -> kip*ft
+S = 5 in * (12 in)^2 / 6
+f = M / S -> psi
+v = P / (2 * 5 in * 12 in) -> psi
+R = P / 2
+\`\`\`
+`
+
 /** Programs in turns; the first is what the others are measured by. @param {string} title @param {number} rounds @param {readonly Program[]} programs */
 function compare(title, rounds, programs) {
   const times = programs.map(() => /** @type {number[]} */ ([]))
@@ -251,6 +301,7 @@ try {
   phases(inside)
   manyWalls()
   tooLarge()
+  await pdf()
 } finally {
   rmSync(folder, { recursive: true, force: true })
 }

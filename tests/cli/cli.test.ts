@@ -50,6 +50,7 @@ describe('exit codes', () => {
     [['build']],
     [['build', 'a.md', '--too', 'html']],
     [['build', 'a.md', '--to', 'docx']],
+    [['build', 'a.md', '--browser', 'chromium']],
   ])('2 when it is called wrongly: %j', args => {
     put('a.md', sound)
     const { status, stderr } = run(...args)
@@ -144,6 +145,37 @@ describe('what a build writes', () => {
         `${name}: ${JSON.stringify(validate.errors?.slice(0, 3))}`,
       ).toBe(true)
     }
+  })
+})
+
+describe('a PDF that cannot be printed', () => {
+  test('is said once, with what named the browser; the other formats are written', () => {
+    put('a.md', sound)
+    put('b.md', sound)
+    const { status, stderr } = run('build', 'a.md', 'b.md', '--to', 'html,pdf', '--browser', './none')
+    expect(status).toBe(1)
+    expect(stderr.match(/--browser: there is no program \.\/none/g)).toHaveLength(1)
+    expect(stderr).toContain('b.md: the PDF was not written')
+    expect(readdirSync(folder).sort()).toEqual(['a.html', 'a.md', 'b.html', 'b.md'])
+  })
+
+  test('is named by the environment too', () => {
+    put('a.md', sound)
+    const { status, stderr } = spawnSync(process.execPath, [command, 'build', 'a.md', '--to', 'pdf'], {
+      cwd: folder,
+      encoding: 'utf8',
+      env: { ...process.env, PLATEMARK_BROWSER: '/nowhere/chrome' },
+    })
+    expect(status).toBe(1)
+    expect(stderr).toContain('PLATEMARK_BROWSER: there is no program /nowhere/chrome')
+  })
+
+  test('is not wanted of a document with errors, but as a draft', () => {
+    put('a.md', faulty)
+    expect(run('build', 'a.md', '--to', 'pdf', '--browser', './none').stderr).not.toContain('PDF')
+    expect(run('build', 'a.md', '--to', 'pdf', '--draft', '--browser', './none').stderr).toContain(
+      'the PDF was not written',
+    )
   })
 })
 

@@ -2,12 +2,12 @@
 import fc from 'fast-check'
 import { expect, test } from 'vitest'
 import { compileText } from '../../src/compile.ts'
-import { type Format, publish } from '../../src/publish.ts'
+import { publish, type TextFormat } from '../../src/publish.ts'
 import { asset } from '../render/assets.ts'
 import { american, buildings, documentOf, metric } from '../support/building.ts'
 import { host } from '../support/worked.ts'
 
-const formats: readonly Format[] = ['html', 'md', 'json']
+const formats: readonly TextFormat[] = ['html', 'md', 'json']
 
 function bytesOf(text: string, path = 'calc.md'): readonly string[] {
   const compiled = compileText(path, text)
