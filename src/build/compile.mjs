@@ -92,7 +92,7 @@ await Promise.all([
   copyFile(`${root}src/build/launcher.cjs`, `${dist}/platemark.cjs`),
   copyFile(`${root}src/render/results.schema.json`, `${dist}/results.schema.json`),
 ])
-await Promise.all(['command', ...Object.keys(apart)].map(name => spellOut(`${dist}/${name}.cjs`)))
+await Promise.all(['command', 'pdf', ...Object.keys(apart)].map(name => spellOut(`${dist}/${name}.cjs`)))
 await chmod(`${dist}/platemark.cjs`, 0o755)
 await writeFile(`${dist}/assets/shapes.txt`, await packedShapes())
 await rm(`${dist}/pack.mjs`)

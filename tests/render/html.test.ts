@@ -11,7 +11,7 @@ import { asset } from './assets.ts'
 import { body, sheet, source } from './fixture.ts'
 
 const page = renderHtml({ sheet, body, source, asset })
-const [, markup = ''] = page.split('<body>')
+const [, markup = ''] = page.split(/<body[^>]*>/)
 const rendered = (parts: readonly BodyPart[], over: Partial<Sheet> = {}) =>
   renderHtml({ sheet: { ...sheet, draft: false, ...over }, body: parts, source, asset })
 const prose = (html: string): BodyPart => ({ kind: 'prose', html })
@@ -105,7 +105,7 @@ describe('the page', () => {
             reference: '',
             sourceLines: [],
           },
-        ]).split('<body>')[1] ?? '',
+        ]).split(/<body[^>]*>/)[1] ?? '',
       )?.[1]
     expect([0.5, 1, 9, Number.POSITIVE_INFINITY, Number.NaN, -1].map(bar)).toEqual([
       '40.0',

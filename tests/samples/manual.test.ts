@@ -10,6 +10,7 @@ import { longForm, oneLine } from '../../src/base/report.ts'
 import { unitSpellings } from '../../src/base/unit.ts'
 import { compileText } from '../../src/compile.ts'
 import { buildingWants, documentWants, wants } from '../../src/explain/request.ts'
+import { nearbyOf } from '../../src/files.ts'
 import { readChoices } from '../../src/model/front.ts'
 import { type Host, publish } from '../../src/publish.ts'
 import { noFrontMatter } from '../../src/read/front.ts'
@@ -42,7 +43,7 @@ describe('samples', () => {
   })
 
   test.each(samples)('%s compiles without errors or warnings', path => {
-    const { source, diagnostics, checks } = compileText(path, read(path))
+    const { source, diagnostics, checks } = compileText(path, read(path), nearbyOf(join(root, path)))
     expect(diagnostics.map(diagnostic => longForm(source, diagnostic))).toEqual([])
     expect(checks.filter(({ ok }) => !ok)).toEqual([])
   })
