@@ -2,7 +2,7 @@
 import { basename, dirname, extname, join, relative, resolve } from 'node:path'
 import { parseArgs } from 'node:util'
 import { inWords, suggestion } from './base/near.ts'
-import { longForm, oneLine } from './base/report.ts'
+import { longForm, oneLine, sorted } from './base/report.ts'
 import { sourceOf } from './base/span.ts'
 import type { Value } from './base/value.ts'
 import type { Compiled } from './compile.ts'
@@ -240,7 +240,7 @@ function check({ path }: DocumentFile, settings: Settings): number {
   if (!compiled) return ERRORS
   const { choices, context, diagnostics } = compiled
   const wanted = settings.submittal ? missingForSubmittal(choices, context) : []
-  const errors = tell({ ...compiled, diagnostics: [...diagnostics, ...wanted] }, settings)
+  const errors = tell({ ...compiled, diagnostics: sorted([...diagnostics, ...wanted]) }, settings)
   return errors > 0 || sayChecks(compiled) > 0 ? ERRORS : DONE
 }
 
