@@ -4,12 +4,14 @@ import type { Browser } from 'puppeteer-core'
 import { afterAll, beforeAll, expect, test } from 'vitest'
 import { compileText } from '../../src/compile.ts'
 import { drawDisplaced } from '../../src/draw/displaced.ts'
+import { drawElevation } from '../../src/draw/elevation.ts'
 import { type Box, boundsOfBox, boxesMeet } from '../../src/draw/geometry.ts'
 import { drawPlan } from '../../src/draw/plan.ts'
 import { drawStoreys } from '../../src/draw/storeys.ts'
 import { browserPath, launchBrowser } from '../support/browser.ts'
 import { figuresOf } from '../support/figures.ts'
 import { displacedBuildings } from './displacedviews.ts'
+import { elevations } from './elevations.ts'
 import { storeyBuildings } from './storeyviews.ts'
 import { buildings, hangar } from './views.ts'
 
@@ -23,6 +25,7 @@ afterAll(async () => browser?.close())
 
 interface Measured {
   readonly text: string
+  readonly fontSize: number
   readonly box: Box
 }
 
@@ -34,7 +37,8 @@ const measure = `[...document.querySelectorAll('svg text')].flatMap(text => {
   if (letters.trim() === '') return []
   const middle = new DOMPoint(x + width / 2, y + height / 2).matrixTransform(matrix)
   const angle = Math.atan2(matrix.b, matrix.a)
-  return [{ text: letters, box: { at: { x: middle.x, y: middle.y }, halfWidth: width / 2, halfHeight: height / 2, angle } }]
+  const fontSize = parseFloat(getComputedStyle(text).fontSize)
+  return [{ text: letters, fontSize, box: { at: { x: middle.x, y: middle.y }, halfWidth: width / 2, halfHeight: height / 2, angle } }]
 })`
 
 const sheet = `(() => { const { width, height } = document.querySelector('svg').viewBox.baseVal; return { width, height } })()`
@@ -46,8 +50,12 @@ const ofSamples = samples.flatMap(name => {
   return figuresOf(compiled).map(({ id, svg }) => [`${name} ${id}`, svg] as const)
 })
 
+/** On the sheet of a drawing; smaller letters are lost in a copy. */
+const SMALLEST = 11
+
 const drawings: readonly (readonly [string, string])[] = [
   ...Object.entries({ ...buildings, hangar }).map(([name, view]) => [`the plan of ${name}`, drawPlan(view)] as const),
+  ...Object.entries(elevations).map(([name, view]) => [`the elevation of ${name}`, drawElevation(view)] as const),
   ...Object.entries(displacedBuildings).map(([name, view]) => [`the displaced ${name}`, drawDisplaced(view)] as const),
   ...Object.entries(storeyBuildings).map(([name, view]) => [`the storeys of ${name}`, drawStoreys(view)] as const),
   ...ofSamples,
@@ -76,6 +84,7 @@ test.skipIf(browserPath === undefined).each(drawings)(
       return x0 < -1 || y0 < -1 || x1 > width + 1 || y1 > height + 1
     })
     expect(off.map(({ text }) => text)).toEqual([])
+    expect(texts.filter(({ fontSize }) => fontSize < SMALLEST).map(({ text }) => text)).toEqual([])
   },
   30_000,
 )

@@ -1,67 +1,9 @@
-/** Elevations of walls: what they say, and that no two of their texts overlap as a browser sets them. */
-import type { Browser } from 'puppeteer-core'
-import { afterAll, beforeAll, describe, expect, test } from 'vitest'
+/** Elevations of walls: what they say. */
+import { describe, expect, test } from 'vitest'
 import { compileText } from '../../src/compile.ts'
 import { drawElevation } from '../../src/draw/elevation.ts'
-import { type Box, boundsOfBox, boxesMeet } from '../../src/draw/geometry.ts'
-import { browserPath, launchBrowser } from '../support/browser.ts'
 import { elevations } from './elevations.ts'
 import { readXml } from './reading.ts'
-
-let browser: Browser | undefined
-
-beforeAll(async () => {
-  if (browserPath === undefined) return
-  browser = await launchBrowser()
-}, 60_000)
-
-afterAll(async () => browser?.close())
-
-interface Measured {
-  readonly size: { readonly width: number; readonly height: number }
-  readonly texts: readonly { readonly text: string; readonly fontSize: number; readonly box: Box }[]
-}
-
-/** Run by the page: the size of the sheet, and the box of each text, turned as it is set. */
-const measure = `({
-  size: { width: document.querySelector('svg').viewBox.baseVal.width, height: document.querySelector('svg').viewBox.baseVal.height },
-  texts: [...document.querySelectorAll('svg text')].flatMap(text => {
-    const letters = text.lastChild?.textContent ?? ''
-    const { x, y, width, height } = text.getBBox()
-    const matrix = text.getCTM()
-    if (letters.trim() === '') return []
-    const middle = new DOMPoint(x + width / 2, y + height / 2).matrixTransform(matrix)
-    const angle = Math.atan2(matrix.b, matrix.a)
-    const fontSize = parseFloat(getComputedStyle(text).fontSize)
-    return [{ text: letters, fontSize, box: { at: { x: middle.x, y: middle.y }, halfWidth: width / 2, halfHeight: height / 2, angle } }]
-  }),
-})`
-
-test.skipIf(browserPath === undefined).each(Object.entries(elevations))(
-  'in a browser the texts of %s stand apart and on the sheet (skipped where no browser is found)',
-  async (_, view) => {
-    const page = await browser?.newPage()
-    if (page === undefined) throw new Error('the browser did not start')
-    await page.setContent(`<!doctype html><body style="margin:0">${drawElevation(view)}`)
-    // The page hands back plain data, in the shape that the lines above give it.
-    const { size, texts } = (await page.evaluate(measure)) as Measured
-    await page.close()
-    expect(texts.length).toBeGreaterThan(4)
-    // A browser rounds the height of a line up to whole units.
-    const shrunk = texts.map(({ text, box }) => ({ text, box: { ...box, halfHeight: box.halfHeight - 0.5 } }))
-    const overlaps = shrunk.flatMap((a, idx) =>
-      shrunk.slice(idx + 1).flatMap(b => (boxesMeet(a.box, b.box) ? [`${a.text} / ${b.text}`] : [])),
-    )
-    expect(overlaps).toEqual([])
-    const outside = shrunk.filter(({ box }) => {
-      const { x0, y0, x1, y1 } = boundsOfBox(box)
-      return x0 < 0 || y0 < 0 || x1 > size.width || y1 > size.height
-    })
-    expect(outside.map(({ text }) => text)).toEqual([])
-    expect(Math.min(...texts.map(({ fontSize }) => fontSize))).toBeGreaterThanOrEqual(11)
-  },
-  30_000,
-)
 
 describe('an elevation', () => {
   test.each(Object.entries(elevations))('of %s is well formed, told in words, and the same each time', (_, view) => {
