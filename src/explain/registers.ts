@@ -53,13 +53,14 @@ function assumptionItems(assumptions: readonly Assumption[], context: Context): 
 const sentence = (text: string): string =>
   `${/^[a-z] /i.test(text) ? text : text.charAt(0).toUpperCase() + text.slice(1)}.`
 
-/** Each source once, in the order of its first use. */
+/** Each source once, in the order of its first use: of formulas, then of the limits of checks. */
 function referenceItems(context: Context): Items {
-  const sources = new Set([...context.formulas].map(({ source }) => source))
-  return [...sources]
-    .filter(source => !ownWords.includes(source))
-    .map(source => ({ text: context.words(source), detail: '' }))
+  const formulas = [...context.formulas].map(({ source }) => context.words(source))
+  const limits = context.checks.map(({ reference }) => reference)
+  return [...new Set([...formulas, ...limits])]
+    .filter(source => source !== '' && !ownWords.includes(source))
+    .map(source => ({ text: source, detail: '' }))
 }
 
 /** What a step says of itself when it leans on nothing outside the document. */
-const ownWords: readonly string[] = ['stated', 'sum of the column']
+const ownWords: readonly string[] = ['stated', 'sum of the column', 'limit of the arithmetic']

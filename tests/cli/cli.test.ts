@@ -80,6 +80,25 @@ describe('signs beyond ASCII', () => {
   })
 })
 
+describe('before a document goes out', () => {
+  test('check --submittal names what is missing, in the order of the source, and ends with 1', () => {
+    put('a.md', `---\nunits: US\n---\n\n${sound}`)
+    const { status, stderr } = run('check', 'a.md', '--submittal', '--list')
+    expect(status).toBe(1)
+    expect(stderr).toContain('a.md:2:1 error[submittal-missing] the front matter has no title\n')
+    expect(stderr).toContain('nobody is named as the one who checked it')
+    expect(run('check', 'a.md').status).toBe(0)
+  })
+
+  test('a failed check of the engineer’s own is a result, which check counts', () => {
+    put('a.md', '```equations\na = 5 kip\na <= 4 kip   # Anchor bolts; house standard 7\n```\n')
+    const { status, stdout } = run('check', 'a.md')
+    expect(status).toBe(1)
+    expect(stdout).toBe('a.md: Anchor bolts: 5 kip > 4 kip, ratio 1.25, NG\na.md: 1 check, 1 failed\n')
+    expect(run('build', 'a.md').status).toBe(0)
+  })
+})
+
 describe('what a build writes', () => {
   test('a page beside its source, and nothing else', () => {
     put('a.md', sound)
