@@ -42,7 +42,9 @@ export function valueSet(numeral: Numeral, unit: Unit, language: Language): Piec
   const units = unitTex(unit)
   const size = numeralTex(numeral, language)
   const spaced = units === '' || units === '\\mathrm{\\%}' || units === '\\mathrm{deg}' ? units : `\\ ${units}`
-  const shown = units === '\\mathrm{deg}' ? '^{\\circ}' : spaced
+  // A power of ten has its exponent already, so the sign of degrees is raised on its own.
+  const degrees = numeral.exponent === 0 ? '^{\\circ}' : '{}^{\\circ}'
+  const shown = units === '\\mathrm{deg}' ? degrees : spaced
   const product = units !== '' || numeral.exponent !== 0
   return {
     tex: joinTex(numeral.negative ? '-' : '', size, shown),

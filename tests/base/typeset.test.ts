@@ -1,4 +1,5 @@
 /** Formulas as they are set, read back by the conventions of print. */
+import katex from 'katex'
 import { describe, expect, test } from 'vitest'
 import { evaluate } from '../../src/base/evaluate.ts'
 import type { Expr } from '../../src/base/expr.ts'
@@ -7,7 +8,7 @@ import { numeralValue, rounded } from '../../src/base/numeral.ts'
 import { parseExpr } from '../../src/base/parse.ts'
 import { texSource } from '../../src/base/tex.ts'
 import { letter, nameTex, texWords, typeset, valueSet } from '../../src/base/typeset.ts'
-import { NO_UNIT, type Unit, unit } from '../../src/base/unit.ts'
+import { NO_UNIT, type Unit, unit, unitSpellings } from '../../src/base/unit.ts'
 import { anyMeasure, numberExpression, quantityExpression } from '../support/expressions.ts'
 import { type Random, randomFrom } from '../support/random.ts'
 import { readTex } from '../support/tex-reader.ts'
@@ -152,5 +153,17 @@ describe('names', () => {
     expect(texWords('50% \\input{x} $a$ #1 a_b^c ~')).toBe(
       '\\text{50\\% \\textbackslash{}input\\{x\\} \\$a\\$ \\#1 a\\_b\\textasciicircum{}c \\textasciitilde{}}',
     )
+  })
+})
+
+describe('a value in any unit', () => {
+  test.each([3.5, -3.5, 3.5e-9, -3.5e12])('%s sets without a fault, alone and raised', size => {
+    for (const name of unitSpellings()) {
+      const set = () => valueSet(rounded(size), unit(name), 'en-US')
+      const cubed = parseExpr('a^3')
+      if (!cubed.ok) throw new Error('a^3 does not parse')
+      for (const source of [texSource(set().tex), texSource(typeset(cubed.value, set, 'en-US'))])
+        expect(() => katex.renderToString(source, { throwOnError: true }), `${name}: ${source}`).not.toThrow()
+    }
   })
 })
