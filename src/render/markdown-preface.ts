@@ -51,7 +51,7 @@ export function prefaceNodes({ checks, contents, criteria, revisions }: Preface)
           ),
         ]),
     ...(contents.length === 0 ? [] : [paragraph(strong('Contents')), contentsList(contents)]),
-    ...(revisions.length === 0 ? [] : tableNodes(revisionTable(revisions))),
+    ...(revisions.length === 0 ? [] : [paragraph(strong('Revisions')), ...tableNodes(revisionTable(revisions))]),
   ]
 }
 
@@ -88,7 +88,7 @@ const revisionTable = (revisions: readonly Revision[]): Table => ({
   kind: 'table',
   id: '',
   number: '',
-  caption: 'Revisions',
+  caption: '',
   columns: ['Rev.', 'Date', 'By', 'Checked', 'What changed'].map(head => ({ head, unit: '', align: 'left' as const })),
   rows: revisions.toReversed().map(({ revision, date, by, checked, note }) => ({
     cells: [revision, date, by, checked, note],
