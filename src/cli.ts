@@ -18,6 +18,8 @@ import { isWord } from './model/scope.ts'
 import type { Press } from './pdf/press.ts'
 import { type Format, type OutputFile, paperOf, publish } from './publish.ts'
 
+export { stillPrinting } from './files.ts'
+
 const DONE = 0
 const ERRORS = 1
 const WRONG_USAGE = 2

@@ -141,6 +141,11 @@ function reason(error: unknown): string {
   return reasons[code] ?? (error instanceof Error ? error.message : String(error))
 }
 
+let handedOver = false
+
+/** True when a text may still be on its way, so that the process must end by itself. */
+export const stillPrinting = (): boolean => handedOver
+
 /**
  * Prints to the terminal or whatever stands in its place. Written straight to the file: setting
  * up the streams of `process` takes longer than many a document.
@@ -153,6 +158,7 @@ export function print(to: 'output' | 'errors', text: string): void {
   } catch {
     // A pipe that is full for now, or that nobody reads any more: the stream knows how to wait and how to end.
     const stream = to === 'output' ? process.stdout : process.stderr
+    handedOver = true
     if (stream.listenerCount('error') === 0) stream.on('error', () => undefined)
     stream.write(bytes.subarray(written))
   }

@@ -15,6 +15,7 @@ import { type Expr, type FunctionName, functions, isFunctionName, type Operator 
 import { suggestion } from './near.ts'
 import { bad, good, type Outcome } from './outcome.ts'
 import type { Span } from './span.ts'
+import { type Spelling, spellingOf } from './spelling.ts'
 import { isUnitName, type UnitFactor, unit, unitFactor, unitOf, unitSpellings } from './unit.ts'
 
 export interface ExprFault {
@@ -62,10 +63,6 @@ class Stop extends Error {
 }
 
 const NUMBER = /(?:\d+(?:\.\d*)?|\.\d+)(?:[eE][+-]?\d+)?/y
-/** A part of a dotted name may be a load case, whose sign belongs to it: `roof.wall.W1.V.EX+`. */
-const NAME =
-  /[\p{L}_][\p{L}\p{N}_]*(?:'[\p{L}\p{N}_]+)?(?:\.(?:[EW][XY]\d*[+-](?![\p{L}\p{N}(.])|[\p{L}\p{N}_]+(?:'[\p{L}\p{N}_]+)?))*/uy
-const UNIT_NAME = /[\p{L}°]+|%/uy
 /** The inches of feet and inches, after the foot mark or `ft`. */
 const INCHES = /(?:-|\s+)?(\d+(?:\.\d+)?)(?:\s+(\d+)\/(\d+))?\s*(?:"|″|'')/y
 const INCHES_IN_WORDS = /\s+(\d+(?:\.\d+)?)(?:\s+(\d+)\/(\d+))?\s+in\b(?![*/^])/y
@@ -80,9 +77,11 @@ class Reader {
   private operators = 0
   private readonly text: string
   private readonly offset: number
+  private readonly spelling: Spelling
 
   constructor(text: string, offset: number) {
     this.text = text
+    this.spelling = spellingOf(text)
     this.offset = offset
   }
 
@@ -220,7 +219,7 @@ class Reader {
     for (;;) {
       const op = this.peek()
       const next = this.text[this.at + 1] ?? ''
-      if ((op !== '*' && op !== '/' && op !== '·') || !/[\p{L}°]/u.test(next)) return factors
+      if ((op !== '*' && op !== '/' && op !== '·') || !this.spelling.unitStart.test(next)) return factors
       this.at++
       factors.push(this.unitFactor(op === '/' ? -1 : 1) ?? this.unexpected())
     }
@@ -228,7 +227,7 @@ class Reader {
 
   private unitFactor(sign: number): UnitFactor | undefined {
     const start = this.at
-    const name = this.take(UNIT_NAME)?.[0]
+    const name = this.take(this.spelling.unit)?.[0]
     if (name === undefined) return undefined
     const next = this.text[this.at] ?? ''
     if (!isUnitName(name) || next === '.' || next === '_' || /\d/.test(next)) return this.unknownUnit(start)
@@ -257,7 +256,7 @@ class Reader {
   }
 
   private nameOrCall(start: number): Expr | undefined {
-    const name = this.take(NAME)?.[0]
+    const name = this.take(this.spelling.name)?.[0]
     if (name === undefined) return undefined
     this.space()
     if (this.peek() !== '(')

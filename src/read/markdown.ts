@@ -13,7 +13,7 @@ import { type Piece, piecesOf } from './pieces.ts'
 
 export function parseMarkdown(text: string): Root {
   const pieces = piecesOf(text)
-  if (pieces === undefined) return whole.parse(text)
+  if (pieces === undefined) return whole().parse(text)
   const children: RootContent[] = []
   for (const piece of pieces) {
     if (piece.kind === 'fence') children.push(codeOf(piece, text))
@@ -24,12 +24,23 @@ export function parseMarkdown(text: string): Root {
   return { type: 'root', children, position: { start: { line: 1, column: 1, offset: 0 }, end } }
 }
 
-const whole = unified().use(remarkParse).use(remarkGfm).use(remarkFrontmatter).freeze()
-const first = unified().use(remarkParse).use(remarkGfm).use(withoutBareLinks).use(remarkFrontmatter).freeze()
+// Readers are made when first wanted: few documents want all of them.
+const whole = once(() => unified().use(remarkParse).use(remarkGfm).use(remarkFrontmatter).freeze())
+const first = once(() =>
+  unified().use(remarkParse).use(remarkGfm).use(withoutBareLinks).use(remarkFrontmatter).freeze(),
+)
 /** Only the start of a document has front matter. */
 const later = {
-  bareLinks: unified().use(remarkParse).use(remarkGfm).freeze(),
-  plain: unified().use(remarkParse).use(remarkGfm).use(withoutBareLinks).freeze(),
+  bareLinks: once(() => unified().use(remarkParse).use(remarkGfm).freeze()),
+  plain: once(() => unified().use(remarkParse).use(remarkGfm).use(withoutBareLinks).freeze()),
+}
+
+function once<T extends object>(make: () => T): () => T {
+  let made: T | undefined
+  return () => {
+    made ??= make()
+    return made
+  }
 }
 
 /** What an address that is a link without brackets cannot do without, in letters or behind an entity. */
@@ -44,8 +55,8 @@ const mayHoldBareLink = (piece: string): boolean =>
 function parsePiece({ start, end, line }: Piece, text: string): Root {
   const piece = text.slice(start, end)
   const bareLinks = mayHoldBareLink(piece)
-  if (start === 0) return (bareLinks ? whole : first).parse(piece)
-  const tree = (bareLinks ? later.bareLinks : later.plain).parse(piece)
+  if (start === 0) return (bareLinks ? whole : first)().parse(piece)
+  const tree = (bareLinks ? later.bareLinks : later.plain)().parse(piece)
   shift(tree, line - 1, start)
   return tree
 }

@@ -21,13 +21,23 @@ const DEEPEST = 200
 const MOST = 100_000
 
 const NAME = '[\\p{L}_][\\p{L}\\p{N}_.-]*(?::[\\p{L}_][\\p{L}\\p{N}_.-]*)?'
-const MARKUP = new RegExp(
-  `<!--[^]*?-->|<\\?[^]*?\\?>|<!\\[CDATA\\[([^]*?)\\]\\]>|<!DOCTYPE[^<>\\[]*>|<(/?)(${NAME})((?:\\s+${NAME}\\s*=\\s*(?:"[^"<]*"|'[^'<]*'))*)\\s*(/?)>`,
-  'uy',
-)
-const ATTRIBUTE = new RegExp(`(${NAME})\\s*=\\s*(?:"([^"]*)"|'([^']*)')`, 'gu')
+/** Made when the first picture is read, since patterns of all letters take long to make. */
+const patterns = () => ({
+  markup: new RegExp(
+    `<!--[^]*?-->|<\\?[^]*?\\?>|<!\\[CDATA\\[([^]*?)\\]\\]>|<!DOCTYPE[^<>\\[]*>|<(/?)(${NAME})((?:\\s+${NAME}\\s*=\\s*(?:"[^"<]*"|'[^'<]*'))*)\\s*(/?)>`,
+    'uy',
+  ),
+  attribute: new RegExp(`(${NAME})\\s*=\\s*(?:"([^"]*)"|'([^']*)')`, 'gu'),
+})
+let made: ReturnType<typeof patterns> | undefined
+
+function patternsOnce(): ReturnType<typeof patterns> {
+  made ??= patterns()
+  return made
+}
 
 export function elementsOf(source: string): Outcome<{ readonly root: Element; readonly all: readonly Element[] }> {
+  const { markup } = patternsOnce()
   const all: Element[] = []
   const open: Open[] = [{ name: '', attributes: new Map(), children: [], text: '' }]
   for (let at = 0; at < source.length; ) {
@@ -41,8 +51,8 @@ export function elementsOf(source: string): Outcome<{ readonly root: Element; re
       at += text.length
       continue
     }
-    MARKUP.lastIndex = at
-    const found = MARKUP.exec(source)
+    markup.lastIndex = at
+    const found = markup.exec(source)
     if (found === null && source.startsWith('<!DOCTYPE', at)) return bad('its document type declares something')
     if (found === null) return bad(`no sense can be made of ${quoted(source, at)}`)
     at += found[0].length
@@ -79,7 +89,7 @@ function finish(element: Open, outer: Open | undefined, all: Element[]): void {
 
 function attributesOf(written: string): ReadonlyMap<string, string> | undefined {
   const attributes = new Map<string, string>()
-  for (const [, name = '', double, single] of written.matchAll(ATTRIBUTE)) {
+  for (const [, name = '', double, single] of written.matchAll(patternsOnce().attribute)) {
     if (attributes.has(name)) return undefined
     attributes.set(name, withoutEntities(double ?? single ?? ''))
   }

@@ -12,7 +12,7 @@ import { type Styled, styleOf } from './html-style.ts'
 import { CAUTION, markOf } from './imprint.ts'
 import { islandHtml } from './island.ts'
 import type { Medium } from './medium.ts'
-import { fillTemplate } from './template.ts'
+import { filled, fillTemplate } from './template.ts'
 import { createTypesetter, type ShapeCache } from './typeset.ts'
 
 export interface Page extends Styled {
@@ -65,11 +65,11 @@ export function layOut(page: Page, medium: Medium): LaidOut {
     style: styleOf(page, typesetter.classes(), medium),
   }
   const template = sheet.template.html ?? asset('sheet.html')
-  const filled = (place: 'first' | 'later', fields: typeof around) => (body: string) =>
+  const pageWith = (place: 'first' | 'later', fields: typeof around) => (body: string) =>
     fillPage(asset('page.html'), { ...parts, place, sheet: fillTemplate(template, { ...fields, body }) })
   return {
-    firstPage: filled('first', around),
-    laterPage: filled('later', { ...around, banner: '', plate: '', preface: '' }),
+    firstPage: pageWith('first', around),
+    laterPage: pageWith('later', { ...around, banner: '', plate: '', preface: '' }),
     blocks,
   }
 }
@@ -102,13 +102,12 @@ const escaped = (block: TitleBlock): TitleBlock => ({
 })
 
 /** Puts the parts in place in one pass, so that nothing put in is read as a part again. */
-function fillPage(page: string, parts: Readonly<Record<string, string>>): string {
-  return page.replace(/\{\{(\w+)\}\}/g, (_, name: string) => {
+const fillPage = (page: string, parts: Readonly<Record<string, string>>): string =>
+  filled(page, (_, name) => {
     const part = parts[name]
     if (part === undefined) throw new Error(`the page asks for an unknown part: ${name}`)
     return part
   })
-}
 
 export const documentTitle = ({ title, project, number }: TitleBlock): string =>
   [title, project, number].filter(part => part !== '').join(' – ') || 'Calculation'

@@ -32,7 +32,21 @@ const FIELD = /\{\{(\w+)\}\}/g
 
 /** Puts the fields in place in one pass, so that nothing put in is read as a field again. */
 export const fillTemplate = (html: string, fields: Fields): string =>
-  html.replace(FIELD, (whole, name: string) => (isField(name) ? fields[name] : whole))
+  filled(html, (whole, name) => (isField(name) ? fields[name] : whole))
+
+/**
+ * Puts a text in the place of each `{{name}}`. Texts are laid end to end by `+`, which copies none of them until
+ * the whole is written; `replace` would copy a page once for each template that it goes through.
+ */
+export function filled(html: string, textOf: (whole: string, name: string) => string): string {
+  let made = ''
+  let at = 0
+  for (const { 0: whole, 1: name = '', index } of html.matchAll(FIELD)) {
+    made += html.slice(at, index) + textOf(whole, name)
+    at = index + whole.length
+  }
+  return made + html.slice(at)
+}
 
 /** Why a sheet cannot be used, in words that follow its name; undefined when it can. */
 export function faultOfSheet(html: string): string | undefined {
