@@ -19,7 +19,7 @@ import { buildings } from '../draw/views.ts'
 
 export { default as katex } from 'katex'
 export { sourceOf } from '../../src/base/span.ts'
-export { texSource } from '../../src/base/tex.ts'
+export { texSource, unmarked } from '../../src/base/tex.ts'
 export { compileText, compileTree } from '../../src/compile.ts'
 export { worksheet } from '../../src/compute/worksheet.ts'
 export { readChoices } from '../../src/model/front.ts'
