@@ -39,7 +39,7 @@ const fieldHtml = ([name, value]: Field): string =>
 export function coverHtml(sheet: Sheet, logo: string, lists: string, caution: string, mark: string): string {
   const { title, project, location } = sheet.titleBlock
   const heading = title === '' ? project : title
-  return `<section class="cover">
+  return `<section class="cover" aria-label="Cover">
 <header class="plate">
 ${logo}<div class="name">${project === '' || title === '' ? '' : `<p class="project">${pageText(project)}</p>`}
 <h1${heading === '' ? ' class="unseen"' : ''}>${heading === '' ? 'Calculation' : pageText(heading)}</h1>

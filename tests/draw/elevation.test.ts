@@ -4,14 +4,14 @@ import { afterAll, beforeAll, describe, expect, test } from 'vitest'
 import { compileText } from '../../src/compile.ts'
 import { drawElevation } from '../../src/draw/elevation.ts'
 import { type Box, boundsOfBox, boxesMeet } from '../../src/draw/geometry.ts'
-import { browserPath, launchBrowser } from '../support/browser.ts'
+import { hasBrowser, launchBrowser } from '../support/browser.ts'
 import { elevations } from './elevations.ts'
 import { readXml } from './reading.ts'
 
 let browser: Browser | undefined
 
 beforeAll(async () => {
-  if (browserPath === undefined) return
+  if (!hasBrowser) return
   browser = await launchBrowser()
 }, 60_000)
 
@@ -37,7 +37,7 @@ const measure = `({
   }),
 })`
 
-test.skipIf(browserPath === undefined).each(Object.entries(elevations))(
+test.skipIf(!hasBrowser).each(Object.entries(elevations))(
   'in a browser the texts of %s stand apart and on the sheet (skipped where no browser is found)',
   async (_, view) => {
     const page = await browser?.newPage()

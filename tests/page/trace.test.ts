@@ -7,7 +7,7 @@ import { afterAll, beforeAll, describe, expect, test } from 'vitest'
 import { compileText } from '../../src/compile.ts'
 import { type Host, publish } from '../../src/publish.ts'
 import { asset } from '../render/assets.ts'
-import { browserPath, launchBrowser } from '../support/browser.ts'
+import { hasBrowser, launchBrowser } from '../support/browser.ts'
 
 const host: Host = {
   version: '0.0.0',
@@ -23,7 +23,7 @@ let page: Page | undefined
 const complaints: string[] = []
 
 beforeAll(async () => {
-  if (browserPath !== undefined) browser = await launchBrowser()
+  if (hasBrowser) browser = await launchBrowser()
 }, 60_000)
 afterAll(async () => browser?.close())
 
@@ -69,7 +69,7 @@ const entry = (page: Page, text: string): Promise<void> =>
 const focused = (page: Page): Promise<unknown> =>
   page.evaluate(`document.activeElement.className + ' ' + document.activeElement.textContent`)
 
-describe.skipIf(browserPath === undefined)('the trace of a page (skipped where no browser is found)', () => {
+describe.skipIf(!hasBrowser)('the trace of a page (skipped where no browser is found)', () => {
   test('a result shows its formula, its inputs with their values, its clause and their source lines', async () => {
     const page = await opened(boatyard)
     await press(page, '.result [data-v="roof.wall.P1.k"]')
