@@ -46,7 +46,10 @@ export const awkward: readonly (readonly [string, string])[] = [
   ['a table of 14 columns', htmlOf(`# Table\n\n${tableOf(6)}`)],
   ['an equation longer than its line', htmlOf(`# Sum\n\n${longEquation}`)],
   ['a draft with faults', htmlOf(sourceOf('tests/golden/faults/wall-misspelt/input.md'), 'calc.md', true)],
-  ['a draft with faults in its expressions', htmlOf(sourceOf('tests/golden/faults/expressions/input.md'), 'calc.md', true)],
+  [
+    'a draft with faults in its expressions',
+    htmlOf(sourceOf('tests/golden/faults/expressions/input.md'), 'calc.md', true),
+  ],
 ]
 
 export const longTable: string = htmlOf(`# Table\n\n${tableOf(2000)}`)
