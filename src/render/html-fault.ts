@@ -7,7 +7,7 @@ import type { Setting } from './html-parts.ts'
 import { LETTERS_PHONE } from './prose.ts'
 
 export function faultHtml({ diagnostics }: Fault, { source }: Setting): string {
-  return `<section class="fault" aria-label="Fault">
+  return `<section class="fault" role="group" aria-label="Fault">
 ${diagnostics.map(diagnostic => diagnosticHtml(diagnostic, source)).join('\n')}
 </section>`
 }

@@ -67,5 +67,5 @@ export const logoHtml = ({ logo }: Sheet): string =>
   logo === undefined ? '' : `<img class="logo" src="${escapeHtml(logo)}" alt="Mark of the firm">\n`
 
 export function bannerHtml(sheet: Sheet): string {
-  return sheet.draft ? `<p class="draft" role="note"><b>Draft</b> ${draftWords(sheet)}</p>` : ''
+  return sheet.draft ? `<p class="draft" role="region" aria-label="Draft"><b>Draft</b> ${draftWords(sheet)}</p>` : ''
 }
