@@ -4,9 +4,10 @@ import { lineText, positionOf, type Source } from '../base/span.ts'
 import type { Fault } from '../explain/sheet.ts'
 import { escapeHtml } from './escape.ts'
 import type { Setting } from './html-parts.ts'
+import { LETTERS_PHONE } from './prose.ts'
 
 export function faultHtml({ diagnostics }: Fault, { source }: Setting): string {
-  return `<section class="fault" aria-label="Fault">
+  return `<section class="fault" role="group" aria-label="Fault">
 ${diagnostics.map(diagnostic => diagnosticHtml(diagnostic, source)).join('\n')}
 </section>`
 }
@@ -28,5 +29,6 @@ function placeHtml({ span, text }: Label, source: Source): string {
   const [before, marked, after] = [whole.slice(0, column - 1), whole.slice(column - 1, end), whole.slice(end)].map(
     escapeHtml,
   )
-  return `<li><span class="place">line ${line}</span><code>${before}<mark>${marked}</mark>${after}</code>${text === '' ? '' : `<span class="because">${escapeHtml(text)}</span>`}</li>`
+  const reach = whole.length > LETTERS_PHONE ? ' tabindex="0"' : ''
+  return `<li><span class="place">line ${line}</span><code${reach}>${before}<mark>${marked}</mark>${after}</code>${text === '' ? '' : `<span class="because">${escapeHtml(text)}</span>`}</li>`
 }

@@ -39,7 +39,7 @@ const fieldHtml = ([name, value]: Field): string =>
 export function coverHtml(sheet: Sheet, logo: string, lists: string, caution: string, mark: string): string {
   const { title, project, location } = sheet.titleBlock
   const heading = title === '' ? project : title
-  return `<section class="cover">
+  return `<section class="cover" aria-label="Cover">
 <header class="plate">
 ${logo}<div class="name">${project === '' || title === '' ? '' : `<p class="project">${pageText(project)}</p>`}
 <h1${heading === '' ? ' class="unseen"' : ''}>${heading === '' ? 'Calculation' : pageText(heading)}</h1>
@@ -67,5 +67,5 @@ export const logoHtml = ({ logo }: Sheet): string =>
   logo === undefined ? '' : `<img class="logo" src="${escapeHtml(logo)}" alt="Mark of the firm">\n`
 
 export function bannerHtml(sheet: Sheet): string {
-  return sheet.draft ? `<p class="draft" role="note"><b>Draft</b> ${draftWords(sheet)}</p>` : ''
+  return sheet.draft ? `<p class="draft" role="region" aria-label="Draft"><b>Draft</b> ${draftWords(sheet)}</p>` : ''
 }

@@ -2,8 +2,11 @@
 import type { Element, Root as HastRoot, Text as HastText } from 'hast'
 import { defaultSchema, type Schema, sanitize } from 'hast-util-sanitize'
 import { toHtml } from 'hast-util-to-html'
-import type { Nodes, Root, RootContent, Text } from 'mdast'
+import type { Code, Nodes, Root, RootContent, Text } from 'mdast'
 import { defaultHandlers, type State, toHast } from 'mdast-util-to-hast'
+
+/** Letters of a listing that stand in a line on the narrowest phone. */
+export const LETTERS_PHONE = 26
 
 /** Links may lead out of the page; nothing is fetched from anywhere, and a picture holds itself. */
 const schema: Schema = {
@@ -24,6 +27,7 @@ const schema: Schema = {
       ['className', 'q', 'data-footnote-backref'],
     ],
     span: ['dataV'],
+    pre: ['tabIndex'],
   },
 }
 
@@ -38,7 +42,7 @@ export function proseHtml(nodes: readonly RootContent[], definitions: readonly R
   const tree = toHast(root, {
     clobberPrefix: `${mark}-`,
     footnoteLabelTagName: 'p',
-    handlers: { text: quotedText },
+    handlers: { text: quotedText, code: reachedCode },
   })
   const safe = sanitize(tree, schema)
   return toHtml(safe as HastRoot).trim()
@@ -50,6 +54,13 @@ function quotedText(state: State, node: Text): Element | HastText {
   const id = node.data?.prints
   if (id === undefined || text.type !== 'text') return text
   return { type: 'element', tagName: 'span', properties: { dataV: id }, children: [text] }
+}
+
+/** A listing; one that a phone must scroll sideways can be reached and scrolled with the keys. */
+function reachedCode(state: State, node: Code): Element {
+  const listing = defaultHandlers.code(state, node)
+  const widest = Math.max(...node.value.split('\n').map(line => line.length))
+  return widest > LETTERS_PHONE ? { ...listing, properties: { ...listing.properties, tabIndex: 0 } } : listing
 }
 
 export const isDefinition = (node: Nodes): boolean => node.type === 'definition' || node.type === 'footnoteDefinition'

@@ -8,7 +8,7 @@ import { drawElevation } from '../../src/draw/elevation.ts'
 import { type Box, boundsOfBox, boxesMeet } from '../../src/draw/geometry.ts'
 import { drawPlan } from '../../src/draw/plan.ts'
 import { drawStoreys } from '../../src/draw/storeys.ts'
-import { browserPath, launchBrowser } from '../support/browser.ts'
+import { hasBrowser, launchBrowser } from '../support/browser.ts'
 import { figuresOf } from '../support/figures.ts'
 import { displacedBuildings } from './displacedviews.ts'
 import { elevations } from './elevations.ts'
@@ -18,7 +18,7 @@ import { buildings, hangar } from './views.ts'
 let browser: Browser | undefined
 
 beforeAll(async () => {
-  if (browserPath !== undefined) browser = await launchBrowser()
+  if (hasBrowser) browser = await launchBrowser()
 }, 60_000)
 
 afterAll(async () => browser?.close())
@@ -61,7 +61,7 @@ const drawings: readonly (readonly [string, string])[] = [
   ...ofSamples,
 ]
 
-test.skipIf(browserPath === undefined).each(drawings)(
+test.skipIf(!hasBrowser).each(drawings)(
   'in a browser no two texts of %s overlap, and none leaves the sheet (skipped where no browser is found)',
   async (_, svg) => {
     const page = await browser?.newPage()

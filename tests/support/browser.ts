@@ -1,22 +1,21 @@
-/** The browser that tests measure in, where one is installed. */
-import { existsSync } from 'node:fs'
-import puppeteer, { type Browser } from 'puppeteer-core'
+/** The browser that tests measure in: an installed one, or the one that comes along where none is. */
+import { fileURLToPath } from 'node:url'
+import type { Browser } from 'puppeteer-core'
+import { PATIENCE, startBrowser } from '../../src/pdf/browser.ts'
+import { installedBrowsers, thisMachine } from '../../src/pdf/places.ts'
 
-const places = [
-  '/usr/bin/chromium',
-  '/usr/bin/chromium-browser',
-  '/usr/bin/google-chrome',
-  '/usr/bin/google-chrome-stable',
-]
+const { platform, arch, environment } = thisMachine
+const named = environment.PLATEMARK_BROWSER
+const root = fileURLToPath(new URL('../../', import.meta.url))
 
-/** Undefined where no browser is found; `CHROME_PATH` names another. */
-export const browserPath: string | undefined = process.env.CHROME_PATH ?? places.find(existsSync)
+/** False where none is installed and none comes along, which is so only off Linux on x86-64. */
+export const hasBrowser: boolean =
+  named !== undefined || (platform === 'linux' && arch === 'x64') || installedBrowsers(thisMachine).length > 0
 
-/** @throws when there is no browser */
-export function launchBrowser(): Promise<Browser> {
-  if (browserPath === undefined) throw new Error('no browser is installed')
-  return puppeteer.launch({
-    executablePath: browserPath,
-    args: ['--no-sandbox', '--disable-gpu', '--no-first-run'],
-  })
+/** @throws when no browser starts, with what was tried */
+export async function launchBrowser(): Promise<Browser> {
+  const choice = named === undefined ? undefined : { program: named, namedBy: 'PLATEMARK_BROWSER' }
+  const started = await startBrowser({ named: choice, near: root, patience: PATIENCE })
+  if (!started.ok) throw new Error(started.because)
+  return started.value
 }
