@@ -40,19 +40,6 @@ export async function whyNoBrowser(press: Press): Promise<string | undefined> {
   throw new Error(tried.because)
 }
 
-/** The page with contents before its body, a line for each heading. */
-export function withContents(paper: Paper): Paper {
-  const lines = paper.sections.flatMap(({ html }) =>
-    Array.from(
-      html.matchAll(/<h[2-6] id="([^"]*)"[^>]*>([\s\S]*?)<\/h\d>/g),
-      ([, id = '', title = '']) =>
-        `<li><a href="#${id}"><span>${title}</span> <span class="folio" data-for="${id}"></span></a></li>`,
-    ),
-  )
-  const contents = `<nav class="contents"><ol>${lines.join('')}</ol></nav>`
-  return { ...paper, firstPage: body => paper.firstPage(body).replace('<main>', () => `${contents}<main>`) }
-}
-
 export async function printed(press: Press, paper: Paper, sizes?: Parameters<Press['print']>[1]): Promise<Uint8Array> {
   const made = await press.print(paper, sizes)
   if (!made.ok) throw new Error(made.because)
