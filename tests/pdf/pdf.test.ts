@@ -3,6 +3,7 @@ import { readFileSync } from 'node:fs'
 import { createServer } from 'node:http'
 import type { AddressInfo } from 'node:net'
 import { afterAll, describe, expect, test } from 'vitest'
+import { good } from '../../src/base/outcome.ts'
 import { plainText } from '../../src/render/escape.ts'
 import type { Paper } from '../../src/render/paper.ts'
 import { bookmarksOf, linksOf, open, paperFor, pressFor, printed, rolesOf, textsOf, whyNoBrowser } from './reading.ts'
@@ -153,7 +154,19 @@ prints(
       120_000,
     )
 
-    test.each(made)('$way: letters are set in faces, not drawn as shapes', async ({ document }) => {
+  },
+  300_000,
+)
+
+const escaped = (text: string): string => text.replace(/[.*+?^${}()|[\]\\]/g, '\\$&')
+
+prints(`letters${why}`, () => {
+  test.each(['starter', 'boatyard', 'observatory'])(
+    'of %s are set in the faces that the page carries, not drawn as shapes or borrowed from the machine',
+    async name => {
+      const nearby = { read: (path: string) => good(new Uint8Array(readFileSync(`samples/${path}`))) }
+      const paper = paperFor(readFileSync(`samples/${name}.md`, 'utf8'), nearby)
+      const document = await open(await printed(press, paper))
       for (let number = 1; number <= document.numPages; number++) {
         const page = await document.getPage(number)
         await page.getOperatorList()
@@ -165,12 +178,10 @@ prints(
           expect(face.isType3Font, face.name).not.toBe(true)
         }
       }
-    })
-  },
-  300_000,
-)
-
-const escaped = (text: string): string => text.replace(/[.*+?^${}()|[\]\\]/g, '\\$&')
+    },
+    60_000,
+  )
+})
 
 prints(`a long table${why}`, () => {
   test('of 2,000 rows repeats its head on every sheet, and splits no row', async () => {
