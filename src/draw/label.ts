@@ -1,13 +1,15 @@
 /** Texts on the sheet: their elements and the boxes they need. */
+import { digitRuns } from '../base/raised.ts'
 import { add, type Box, box, normal, type Point, times, toward } from './geometry.ts'
-import { element, type SceneElement, words } from './scene.ts'
+import { element, formatNumber, type SceneElement, type SceneNode, words } from './scene.ts'
 import { type TextRole, textStyles } from './style.ts'
 import { type Fitted, lineHeight, shorten, textWidth } from './textwidth.ts'
 
 /** What a text lies on: clear ground, or lines that it masks with the colour of the ground. */
 export type Ground = 'clear' | 'paper' | 'wash'
 
-const groundClasses: Record<Ground, string> = { clear: '', paper: ' pm-over', wash: ' pm-over-wash' }
+/** A box below the text: an outline around its letters would reach a PDF as shapes, and the text twice. */
+const maskClasses = { paper: 'pm-mask', wash: 'pm-mask-wash' } as const
 
 /** White space at either end of a text. */
 const sidebearing = 2.5
@@ -41,14 +43,43 @@ export function setLettering(letters: Lettering, at: Point, angle: number, groun
   const side = letters.keeps === undefined ? 0 : letters.width / 2 - sidebearing
   const end = { x: at.x + (letters.keeps === 'start' ? -side : side), y: at.y }
   const kept = letters.keeps === undefined ? '' : `pm-${letters.keeps} `
-  return letters.lines.map((line, idx) => {
+  const set = letters.lines.map((line, idx) => {
     const middle = (idx - (letters.lines.length - 1) / 2) * size * lineHeight
-    return textElement(
-      line,
-      `${kept}pm-t-${letters.role}${groundClasses[ground]}`,
-      add(end, times(down, middle + size * baselineDrop)),
-      angle,
-    )
+    return { line, middle }
+  })
+  const masks =
+    ground === 'clear'
+      ? []
+      : set.map(({ line, middle }) =>
+          maskElement(line.text, letters, maskClasses[ground], add(at, times(down, middle)), angle),
+        )
+  const texts = set.map(({ line, middle }) =>
+    textElement(line, `${kept}pm-t-${letters.role}`, add(end, times(down, middle + size * baselineDrop)), angle),
+  )
+  return [...masks, ...texts]
+}
+
+/** The letters of the page's face are about this much of the width that is kept free for them. */
+const FACE_SHARE = 0.94
+
+function maskElement(
+  text: string,
+  { role, keeps, width }: Lettering,
+  className: string,
+  at: Point,
+  angle: number,
+): SceneElement {
+  const style = textStyles[role]
+  const own = textWidth(text, style) * FACE_SHARE + 2
+  const left =
+    keeps === 'start' ? sidebearing - 1 - width / 2 : keeps === 'end' ? width / 2 - sidebearing + 1 - own : -own / 2
+  const size = { width: own, height: style.size * 1.1 }
+  const top = -size.height / 2
+  return element('rect', {
+    class: className,
+    ...(angle === 0
+      ? { x: at.x + left, y: at.y + top, ...size }
+      : { x: left, y: top, ...size, transform: placed(at, angle) }),
   })
 }
 
@@ -63,12 +94,30 @@ export function endText(text: string, role: TextRole, at: Point): SceneElement {
 }
 
 function textElement({ text, full }: Fitted, className: string, at: Point, angle: number): SceneElement {
-  const place =
-    angle === 0
-      ? { x: at.x, y: at.y }
-      : { transform: words('translate(', at.x, at.y, ') rotate(', (angle * 180) / Math.PI, ')') }
+  const place = angle === 0 ? { x: at.x, y: at.y } : { transform: placed(at, angle) }
   const whole = full === undefined ? [] : [element('title', {}, [full])]
-  return element('text', { class: className, ...place }, [...whole, text])
+  return element('text', { class: className, ...place }, [...whole, ...withShiftedDigits(text)])
+}
+
+const placed = (at: Point, angle: number): string =>
+  words('translate(', at.x, at.y, ') rotate(', (angle * 180) / Math.PI, ')')
+
+/** How far raised digits stand above the line and lowered ones below it, and how large they are, in parts of the size. */
+const SHIFT = 0.34
+const SMALLER = 0.72
+
+/** The text with its raised and lowered digits in the face of the rest; what follows them comes back to the line. */
+function withShiftedDigits(text: string): readonly SceneNode[] {
+  let back = 0
+  return digitRuns(text).map(run => {
+    const up = run.set === 'level' ? 0 : run.set === 'raised' ? -SHIFT : SHIFT
+    const move = up + back
+    back = -up
+    if (run.set === 'level')
+      return move === 0 ? run.text : element('tspan', { dy: `${formatNumber(move)}em` }, [run.text])
+    // An em is that of the smaller digits.
+    return element('tspan', { dy: `${formatNumber(move / SMALLER)}em`, 'font-size': `${100 * SMALLER}%` }, [run.text])
+  })
 }
 
 /** The angle along a line at which text reads from below or from the right, up to a little past upright. */

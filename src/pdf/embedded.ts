@@ -7,6 +7,7 @@ import { dirname, join } from 'node:path'
 import { promisify } from 'node:util'
 import { brotliDecompress } from 'node:zlib'
 import { bad, good, type Outcome } from '../base/outcome.ts'
+import { escapeHtml } from '../render/escape.ts'
 import type { Machine } from './places.ts'
 import { filesInTar } from './tar.ts'
 
@@ -29,7 +30,7 @@ export async function embeddedBrowser(near: string, machine: Machine): Promise<O
   if (packed === undefined) return bad(`the package ${PACKAGE}, which holds the embedded browser, is not installed`)
   try {
     const { version } = JSON.parse(await readFile(join(packed, 'package.json'), 'utf8')) as { readonly version: string }
-    return good(placesIn(await unpackedAt(packed, `chromium-${version}`, machine)))
+    return good(placesIn(await unpackedAt(packed, `chromium-${version}-faces`, machine)))
   } catch (error) {
     return bad(`the embedded browser cannot be unpacked: ${error instanceof Error ? error.message : String(error)}`)
   }
@@ -56,7 +57,7 @@ async function unpackedAt(packed: string, name: string, machine: Machine): Promi
   if (isThere(join(folder, 'chromium'))) return folder
   const workshop = await mkdtemp(join(shelf, '.unpacking-'))
   try {
-    await unpack(join(packed, 'bin'), workshop)
+    await unpack(join(packed, 'bin'), workshop, folder)
     await rename(workshop, folder)
   } catch (error) {
     // Another process may have been quicker.
@@ -91,12 +92,13 @@ async function shelfFolder({ environment }: Machine): Promise<string> {
 const decompress = promisify(brotliDecompress)
 
 /** The faces of the package first, then those of the machine, for scripts that the package lacks. */
-const fontSettings = `<?xml version="1.0"?>
+const fontSettings = (folder: string) => `<?xml version="1.0"?>
 <!DOCTYPE fontconfig SYSTEM "urn:fontconfig:fonts.dtd">
-<fontconfig><dir prefix="relative">fonts</dir><dir>/usr/share/fonts</dir><cachedir prefix="relative">fonts-cache</cachedir></fontconfig>
+<fontconfig><dir prefix="relative">fonts</dir><dir>/usr/share/fonts</dir><cachedir>${escapeHtml(join(folder, 'fonts-cache'))}</cachedir></fontconfig>
 `
 
-async function unpack(packed: string, folder: string): Promise<void> {
+/** @param home where the folder will stand: a cache of faces named relative to it would land where the command runs */
+async function unpack(packed: string, folder: string, home: string): Promise<void> {
   const open = async (name: string) => decompress(await readFile(join(packed, name)))
   const program = async () => writeFile(join(folder, 'chromium'), await open('chromium.br'), { mode: 0o755 })
   const archive = async (name: string) => {
@@ -107,5 +109,5 @@ async function unpack(packed: string, folder: string): Promise<void> {
     }
   }
   await Promise.all([program(), archive('al2023.tar.br'), archive('fonts.tar.br')])
-  await writeFile(join(folder, 'fonts.conf'), fontSettings)
+  await writeFile(join(folder, 'fonts.conf'), fontSettings(home))
 }

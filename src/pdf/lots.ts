@@ -77,7 +77,7 @@ const withoutFolio = (html: string): string => styled(html, '@page{@bottom-right
 
 /** Clear sheets with nothing in their margins but "sheet n of m". */
 export function folioPage({ laterPage }: Paper, sheets: number): string {
-  const others = ['top-left', 'top-center', 'top-right', 'bottom-left', 'bottom-center']
+  const others = ['top-left', 'top-center', 'top-right', 'bottom-left']
   const body = BLANK.repeat(sheets - 1)
   const rules = others.map(place => `@${place}{content:none!important}`).join('')
   return styled(

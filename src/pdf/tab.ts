@@ -4,6 +4,17 @@ import type { Page } from 'puppeteer-core'
 /** Longest that one lot may take, in ms. */
 const LONGEST = 120_000
 
+/** Without margins of the browser's own; in one answer, which is much quicker than piece by piece. */
+const sheet = {
+  preferCSSPageSize: true,
+  generateTaggedPDF: true,
+  generateDocumentOutline: false,
+  marginTop: 0,
+  marginBottom: 0,
+  marginLeft: 0,
+  marginRight: 0,
+} as const
+
 export interface Tab {
   /** @returns a tagged PDF of the page, on the sheets that its own style asks for */
   readonly print: (html: string) => Promise<Uint8Array>
@@ -25,7 +36,10 @@ export async function openTab(page: Page): Promise<Tab> {
   return {
     print: async html => {
       await client.send('Page.setDocumentContent', { frameId: frameTree.frame.id, html })
-      return page.pdf({ preferCSSPageSize: true, tagged: true, outline: false, timeout: LONGEST })
+      // Asked of the browser from outside, so that it holds with scripts off too.
+      await client.send('Runtime.evaluate', { expression: 'document.fonts.ready.then(() => 0)', awaitPromise: true })
+      const { data } = await client.send('Page.printToPDF', sheet, { timeout: LONGEST })
+      return Buffer.from(data, 'base64')
     },
     close: () => page.close().catch(() => undefined),
   }

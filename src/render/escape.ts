@@ -1,4 +1,5 @@
 /** Text made safe to stand in HTML, in an attribute, in an anchor and in a CSS string. */
+import { digitRuns } from '../base/raised.ts'
 
 const entities: Readonly<Record<string, string>> = {
   '&': '&amp;',
@@ -11,19 +12,13 @@ const entities: Readonly<Record<string, string>> = {
 /** For text and for quoted attribute values alike. */
 export const escapeHtml = (text: string): string => text.replace(/[&<>"']/g, mark => entities[mark] ?? mark)
 
-const lowered: Readonly<Record<string, string>> = Object.fromEntries(
-  Array.from('⁰¹²³⁴⁵⁶⁷⁸⁹⁻', (mark, i) => [mark, '0123456789−'.charAt(i)]),
-)
+const shifted = { level: ['', ''], raised: ['<sup>', '</sup>'], lowered: ['<sub>', '</sub>'] } as const
 
-/**
- * Printed text as HTML. The page's faces hold only the raised digits 1, 2 and 3,
- * so a run with any other is set as a superscript.
- */
-export function pageText(text: string): string {
-  return escapeHtml(text).replace(/[⁰¹²³⁴⁵⁶⁷⁸⁹⁻]+/g, run =>
-    /^[¹²³]$/.test(run) ? run : `<sup>${Array.from(run, mark => lowered[mark] ?? mark).join('')}</sup>`,
-  )
-}
+/** Printed text as HTML, its raised and lowered digits in faces that the page carries. */
+export const pageText = (text: string): string =>
+  digitRuns(text)
+    .map(run => shifted[run.set].join(escapeHtml(run.text)))
+    .join('')
 
 /** The address of an element of this id on the same page. */
 export const fragment = (id: string): string => `#${id.replace(/%/g, '%25').replace(/ /g, '%20')}`

@@ -47,7 +47,7 @@ function paperRules(sheet: Sheet): string {
   const boxes: Readonly<Record<string, string>> = {
     'top-left': cssString(joined(', ', project, title)),
     'top-right': cssString(issue),
-    'bottom-left': cssString(joined('\n', people, `${markOf(sheet)} · ${CAUTION}`)),
+    'bottom-left': cssString(joined('\n', people, `${CAUTION} ${markOf(sheet)}`)),
   }
   const rules = Object.entries(boxes).map(([box, content]) => `@${box}{content:${content}}`)
   const draft = sheet.draft

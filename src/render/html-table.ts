@@ -12,8 +12,8 @@ import { fitFactor, tableWidth } from './measure.ts'
 const ROOM_PAPER = 54
 const ROOM_PHONE = 26
 
-/** Smallest type of a table on paper, as a share of its usual size. */
-const LEAST = 0.6
+/** Smallest type of a table on paper, as a share of its usual size: hard to read, but nothing is cut off. */
+const LEAST = 0.35
 
 /** A table of so few rows is kept on one sheet. */
 const SHORT = 12

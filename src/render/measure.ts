@@ -94,16 +94,22 @@ function plainWidth(token: string): number {
   return /^[.,;:'|()[\]]$/.test(token) ? 0.36 : 0.47
 }
 
+/** Words in a cell go over several lines rather than make the table wider than this, in characters. */
+const BROKEN = 36
+
 /** Width of a table in em of its type, with the space between its columns. */
 export function tableWidth({ columns, rows, foot }: Table): number {
   const all = foot === undefined ? rows : [...rows, foot]
-  return columns.reduce((sum, { head, unit }, i) => {
-    const cells = all.map(({ cells }) => (cells[i] ?? '').length)
+  return columns.reduce((sum, { head, unit, align }, i) => {
+    const cells = all.map(({ cells }) => (align === 'right' ? (cells[i] ?? '').length : lengthOfWords(cells[i] ?? '')))
     const title = typeof head === 'string' ? head.length * 0.55 : unbreakableWidth(head) * 1.05
     const longest = cells.reduce((most, length) => Math.max(most, length), 0)
     return sum + Math.max(longest * 0.5, title, unit.length * 0.4) + 1.3
   }, 0)
 }
+
+const lengthOfWords = (text: string): number =>
+  text.length <= BROKEN ? text.length : Math.max(BROKEN, ...text.split(/\s+/).map(word => word.length))
 
 /** The factor that makes `width` fit into `room`: at most 1, and never below `least`, which can still be read. */
 export const fitFactor = (width: number, room: number, least: number): number =>

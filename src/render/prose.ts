@@ -1,9 +1,10 @@
 /** The engineer's own prose as HTML: quotes put in, headings numbered, and nothing let through that could act. */
-import type { Element, Root as HastRoot, Text as HastText } from 'hast'
+import type { Element, Root as HastRoot, Text as HastText, Properties } from 'hast'
 import { defaultSchema, type Schema, sanitize } from 'hast-util-sanitize'
 import { toHtml } from 'hast-util-to-html'
 import type { Code, Nodes, Root, RootContent, Text } from 'mdast'
 import { defaultHandlers, type State, toHast } from 'mdast-util-to-hast'
+import { digitRuns } from '../base/raised.ts'
 
 /** Letters of a listing that stand in a line on the narrowest phone. */
 export const LETTERS_PHONE = 26
@@ -49,11 +50,11 @@ export function proseHtml(nodes: readonly RootContent[], definitions: readonly R
 }
 
 /** Text as usual; a quoted result with the id of its value on it. */
-function quotedText(state: State, node: Text): Element | HastText {
+function quotedText(state: State, node: Text): (Element | HastText)[] {
   const text = defaultHandlers.text(state, node)
+  const set = text.type === 'text' ? withShiftedDigits(text) : [text]
   const id = node.data?.prints
-  if (id === undefined || text.type !== 'text') return text
-  return { type: 'element', tagName: 'span', properties: { dataV: id }, children: [text] }
+  return id === undefined ? set : [elementOf('span', set, { dataV: id })]
 }
 
 /** A listing; one that a phone must scroll sideways can be reached and scrolled with the keys. */
@@ -62,5 +63,22 @@ function reachedCode(state: State, node: Code): Element {
   const widest = Math.max(...node.value.split('\n').map(line => line.length))
   return widest > LETTERS_PHONE ? { ...listing, properties: { ...listing.properties, tabIndex: 0 } } : listing
 }
+
+/** Raised and lowered digits in faces that the page carries. */
+function withShiftedDigits(text: HastText): (Element | HastText)[] {
+  const runs = digitRuns(text.value)
+  if (runs.length === 1 && runs[0]?.set === 'level') return [text]
+  return runs.map(run => {
+    const words: HastText = { type: 'text', value: run.text }
+    return run.set === 'level' ? words : elementOf(run.set === 'raised' ? 'sup' : 'sub', [words])
+  })
+}
+
+const elementOf = (tagName: string, children: (Element | HastText)[], properties: Properties = {}): Element => ({
+  type: 'element',
+  tagName,
+  properties,
+  children,
+})
 
 export const isDefinition = (node: Nodes): boolean => node.type === 'definition' || node.type === 'footnoteDefinition'

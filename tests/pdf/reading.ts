@@ -6,6 +6,7 @@ import type { TextItem } from 'pdfjs-dist/types/src/display/api.js'
 import { compileText } from '../../src/compile.ts'
 import { openPress, PATIENCE, type Press } from '../../src/pdf/press.ts'
 import { paperOf } from '../../src/publish.ts'
+import type { Nearby } from '../../src/read/nearby.ts'
 import type { Paper } from '../../src/render/paper.ts'
 import { asset } from '../render/assets.ts'
 import { host } from '../support/worked.ts'
@@ -15,7 +16,8 @@ const near = fileURLToPath(new URL('../..', import.meta.url))
 export const pressFor = (program?: string): Press =>
   openPress({ named: program === undefined ? undefined : { program, namedBy: 'test' }, near, patience: PATIENCE })
 
-export const paperFor = (text: string): Paper => paperOf(compileText('calc.md', text), false, { ...host, asset })
+export const paperFor = (text: string, nearby?: Nearby): Paper =>
+  paperOf(compileText('calc.md', text, nearby), false, { ...host, asset })
 
 /** Why no PDF can be printed here, such as on a machine without a browser that the embedded one does not serve. */
 export async function whyNoBrowser(press: Press): Promise<string | undefined> {
@@ -38,19 +40,6 @@ export async function whyNoBrowser(press: Press): Promise<string | undefined> {
   if (tried.ok) return undefined
   if (tried.because.startsWith('There is no browser')) return tried.because
   throw new Error(tried.because)
-}
-
-/** The page with contents before its body, a line for each heading. */
-export function withContents(paper: Paper): Paper {
-  const lines = paper.sections.flatMap(({ html }) =>
-    Array.from(
-      html.matchAll(/<h[2-6] id="([^"]*)"[^>]*>([\s\S]*?)<\/h\d>/g),
-      ([, id = '', title = '']) =>
-        `<li><a href="#${id}"><span>${title}</span> <span class="folio" data-for="${id}"></span></a></li>`,
-    ),
-  )
-  const contents = `<nav class="contents"><ol>${lines.join('')}</ol></nav>`
-  return { ...paper, firstPage: body => paper.firstPage(body).replace('<main>', () => `${contents}<main>`) }
 }
 
 export async function printed(press: Press, paper: Paper, sizes?: Parameters<Press['print']>[1]): Promise<Uint8Array> {

@@ -140,9 +140,7 @@ describe('the page', () => {
   test('carries the caution, the mark of its source and the version', () => {
     expect(markup).toContain('To be reviewed by the engineer of record; local codes govern.')
     expect(markup).toContain('Platemark 0.1.0 · source 8f2c 41d0')
-    expect(page).toMatch(
-      /@bottom-left\{content:"[^"]*To be reviewed by the engineer of record; local codes govern\."\}/,
-    )
+    expect(page).toMatch(/@bottom-left\{content:"[^"]*To be reviewed by the engineer of record; local codes govern\./)
   })
 
   test('takes the paper that the sheet asks for', () => {
