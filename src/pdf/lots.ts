@@ -9,7 +9,7 @@ import type { Paper, Section } from '../render/paper.ts'
 /** A document whose body is shorter than this, in characters, is printed whole. */
 const SHORT = 600_000
 /** About as much body as a lot takes. */
-const LOT = 300_000
+const LOT = 450_000
 
 /** A box with no height at all would make no sheet. */
 const BLANK = '<div style="height:1px;break-after:page"></div>'

@@ -33,14 +33,39 @@ export async function openTab(page: Page): Promise<Tab> {
     page.setJavaScriptEnabled(false),
     page.setOfflineMode(true),
   ])
+  const { frame } = frameTree
+  // Asked of the browser from outside, so that it holds with scripts off too.
+  const ask = (expression: string) => client.send('Runtime.evaluate', { expression, awaitPromise: true })
+  let shell: string | undefined
   return {
     print: async html => {
-      await client.send('Page.setDocumentContent', { frameId: frameTree.frame.id, html })
-      // Asked of the browser from outside, so that it holds with scripts off too.
-      await client.send('Runtime.evaluate', { expression: 'document.fonts.ready.then(() => 0)', awaitPromise: true })
+      const page = parted(html)
+      if (page.shell !== shell) {
+        shell = undefined
+        await client.send('Page.setDocumentContent', { frameId: frame.id, html: page.shell })
+        await ask('Promise.all([...document.fonts].map(face => face.load())).then(() => 0, () => 0)')
+        shell = page.shell
+      }
+      await ask(
+        `document.body.innerHTML = ${JSON.stringify(page.body)}; Promise.all([document.fonts.ready, ...[...document.images].map(image => image.decode().catch(() => 0))]).then(() => 0)`,
+      )
       const { data } = await client.send('Page.printToPDF', sheet, { timeout: LONGEST })
       return Buffer.from(data, 'base64')
     },
     close: () => page.close().catch(() => undefined),
   }
+}
+
+/** Nothing is laid out for the window, which nobody sees. */
+const UNSEEN = '@media screen{body{display:none}}'
+
+/**
+ * A page as what its body stands in and the body: pages of one document, and of one document built again,
+ * share the first, with its faces and rules, so that a tab need not read those again.
+ */
+function parted(html: string): { readonly shell: string; readonly body: string } {
+  const start = html.indexOf('>', html.search(/<body[\s>]/)) + 1
+  const end = html.lastIndexOf('</body>')
+  const shell = `${html.slice(0, start)}${html.slice(end)}`
+  return { shell: shell.replace('</style>', () => `${UNSEEN}</style>`), body: html.slice(start, end) }
 }
