@@ -8,7 +8,7 @@ export default defineConfig({
     exclude: ['tests/bench/**', 'node_modules/**'],
     pool: 'threads',
     maxWorkers: 2,
-    testTimeout: 60_000,
-    hookTimeout: 60_000,
+    testTimeout: 120_000,
+    hookTimeout: 240_000,
   },
 })

@@ -19,7 +19,7 @@ let browser: Browser | undefined
 
 beforeAll(async () => {
   if (hasBrowser) browser = await launchBrowser()
-}, 60_000)
+}, 240_000)
 
 afterAll(async () => browser?.close())
 
@@ -86,5 +86,5 @@ test.skipIf(!hasBrowser).each(drawings)(
     expect(off.map(({ text }) => text)).toEqual([])
     expect(texts.filter(({ fontSize }) => fontSize < SMALLEST).map(({ text }) => text)).toEqual([])
   },
-  30_000,
+  120_000,
 )

@@ -59,14 +59,14 @@ describe('any plan', () => {
       }),
       { numRuns: 60, seed: 20261102 },
     )
-  }, 60_000)
+  }, 120_000)
 
   test('gives the same bytes twice', () => {
     fc.assert(
       fc.property(plans, view => drawPlan(view) === drawPlan(structuredCloneOf(view))),
       { numRuns: 20, seed: 7 },
     )
-  }, 30_000)
+  }, 120_000)
 })
 
 /** A copy that shares nothing with the view but its functions. */

@@ -16,7 +16,7 @@ beforeAll(async () => {
   if (!hasBrowser) return
   browser = await launchBrowser()
   page = await browser.newPage()
-}, 60_000)
+}, 240_000)
 afterAll(async () => browser?.close())
 
 const every = {

@@ -15,7 +15,7 @@ beforeAll(async () => {
   page = await browser.newPage()
   await page.emulateMediaFeatures([{ name: 'prefers-reduced-motion', value: 'reduce' }])
   listen(page, complaints)
-}, 60_000)
+}, 240_000)
 afterAll(async () => browser?.close())
 
 /**

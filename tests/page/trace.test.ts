@@ -20,7 +20,7 @@ const complaints: string[] = []
 
 beforeAll(async () => {
   if (hasBrowser) browser = await launchBrowser()
-}, 60_000)
+}, 240_000)
 afterAll(async () => browser?.close())
 
 /** A page with scripts on, that records what it complains of and what it asks the network for. */
