@@ -7,7 +7,7 @@ import { fitFactor, unbreakableWidth } from './measure.ts'
 
 /** Room for a line beside the origin, and with the whole width to itself, in em of the formula's type. */
 const ROOM_BESIDE = 22
-const ROOM_ALONE = 33
+const ROOM_ALONE = 31
 
 /** About 5.5 pt on paper: below that a formula should have been a table. */
 const LEAST = 0.45
