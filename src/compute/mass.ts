@@ -13,8 +13,8 @@ import type { Scope } from '../model/scope.ts'
 import { diagnose } from '../read/text.ts'
 import { A, Ip } from './measure.ts'
 import type { Plan } from './plan.ts'
-import { segment } from './segment.ts'
-import { L, W, x, x1, x2, xm, y, y1, y2, ym } from './symbols.ts'
+import { segment, takeEnds } from './segment.ts'
+import { L, W, x, xm, y, ym } from './symbols.ts'
 
 export interface Mass {
   readonly level: string
@@ -140,27 +140,13 @@ function areaTable({ level, parts }: Plan, loads: readonly Value[], display: Dis
 }
 
 function lineTable(level: string, lines: readonly LineLoad[], loads: readonly Value[], display: Display): Tabulation {
-  return new Tabulation(
+  const table = new Tabulation(
     lines.map(({ name }) => name),
     (row, key) => `${level}.lines.${row}.${key}`,
     display,
   )
-    .take(
-      x1,
-      lines.map(({ from }) => from.x),
-    )
-    .take(
-      y1,
-      lines.map(({ from }) => from.y),
-    )
-    .take(
-      x2,
-      lines.map(({ to }) => to.x),
-    )
-    .take(
-      y2,
-      lines.map(({ to }) => to.y),
-    )
+  const [from, to] = [lines.map(({ from }) => from), lines.map(({ to }) => to)]
+  return takeEnds(table, from, to)
     .work(segment.L, { x_1: 'x_1', y_1: 'y_1', x_2: 'x_2', y_2: 'y_2' })
     .take(lineLoad, loads)
     .work(line.W, { w: 'w', L: 'L' })

@@ -5,7 +5,7 @@ import { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
 import { work } from '../base/work.ts'
 import type { Corner } from '../model/grid.ts'
-import { segment } from './segment.ts'
+import { segment, takeEnds } from './segment.ts'
 import { x, x1, x2, y, y1, y2 } from './symbols.ts'
 
 export interface Measured {
@@ -104,27 +104,12 @@ function measureRectangle(
 
 function measurePolygon(id: string, name: string, outline: readonly Corner[], display: Display): Measured {
   const next = outline.map((corner, i) => outline[(i + 1) % outline.length] ?? corner)
-  const sides = new Tabulation(
+  const table = new Tabulation(
     outline.map((_, i) => String(i + 1)),
     (row, key) => `${id}.side${row}.${key}`,
     display,
   )
-    .take(
-      x1,
-      outline.map(({ x }) => x),
-    )
-    .take(
-      y1,
-      outline.map(({ y }) => y),
-    )
-    .take(
-      x2,
-      next.map(({ x }) => x),
-    )
-    .take(
-      y2,
-      next.map(({ y }) => y),
-    )
+  const sides = takeEnds(table, outline, next)
   const ends = { x_1: 'x_1', y_1: 'y_1', x_2: 'x_2', y_2: 'y_2' }
   sides.work(side.cross, ends)
   for (const formula of [side.sx, side.sy, side.so]) sides.work(formula, { ...ends, a: 'a' })

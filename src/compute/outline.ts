@@ -7,7 +7,7 @@ import type { Value } from '../base/value.ts'
 import { shownAs, work } from '../base/work.ts'
 import type { Corner } from '../model/grid.ts'
 import type { Ring } from './clip.ts'
-import { segment } from './segment.ts'
+import { segment, takeEnds } from './segment.ts'
 import { x, x1, x2, y, y1, y2 } from './symbols.ts'
 
 export interface NamedCorner extends Corner {
@@ -32,28 +32,12 @@ export function workOutline(level: string, outer: readonly Ring[], spans: readon
   const rings = namedCorners(level, outer, spans, display)
   const corners = rings.flat()
   const next = rings.flatMap(ring => ring.map((corner, i) => ring[(i + 1) % ring.length] ?? corner))
-  const sides = new Tabulation(
+  const table = new Tabulation(
     corners.map(({ name }) => name),
     (row, key) => `${level}.side.${row}.${key}`,
     display,
   )
-    .take(
-      x1,
-      corners.map(({ x }) => x),
-    )
-    .take(
-      y1,
-      corners.map(({ y }) => y),
-    )
-    .take(
-      x2,
-      next.map(({ x }) => x),
-    )
-    .take(
-      y2,
-      next.map(({ y }) => y),
-    )
-    .work(segment.L, { x_1: 'x_1', y_1: 'y_1', x_2: 'x_2', y_2: 'y_2' })
+  const sides = takeEnds(table, corners, next).work(segment.L, { x_1: 'x_1', y_1: 'y_1', x_2: 'x_2', y_2: 'y_2' })
   return {
     corners,
     perimeter: sides.sum('L', perimeter, `${level}.perimeter`),

@@ -95,10 +95,11 @@ prints(
           else expect(to).toBeLessThanOrEqual(document.numPages)
         }
         expect(links.some(({ url }) => url === 'https://kiosk.example/survey')).toBe(true)
-        // Each entry of the contents leads where its bookmark leads.
-        const led = links.filter(({ sheet }) => sheet === 1).map(({ to }) => to)
+        // Below the one check stand the contents, in two columns; each entry leads where its bookmark leads.
+        const led = links.filter(({ sheet }) => sheet === 1).slice(1, 1 + entries.length)
         const marks = await bookmarksOf(document)
-        for (const title of entries) expect(led, title).toContain(marks.find(mark => mark.title === title)?.sheet)
+        const sheets = entries.map(title => marks.find(mark => mark.title === title)?.sheet)
+        expect(led.map(({ to }) => to).toSorted()).toEqual(sheets.toSorted())
       },
     )
 
