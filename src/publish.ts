@@ -11,7 +11,7 @@ import { traced } from './explain/traced.ts'
 import type { PlacedPicture } from './read/pictures.ts'
 import { besideNames } from './render/beside.ts'
 import type { BodyPart } from './render/body.ts'
-import { type Page, renderHtml } from './render/html.ts'
+import { type LivePage, livePage, type Page, renderHtml } from './render/html.ts'
 import { renderJson } from './render/json.ts'
 import { documentNodes } from './render/markdown.ts'
 import { bodyNodes, liftOf } from './render/markdown-body.ts'
@@ -77,6 +77,10 @@ export function paperOf(compiled: Compiled, draft: boolean, host: Host): Paper {
   const identity = host.sha256(`${host.version}\n${draft ? 'draft' : 'issue'}\n${compiled.source.text}`)
   return renderPaper(pageOf(compiled, draft, host), identity)
 }
+
+/** The page for a browser that is told of each change. */
+export const livePageOf = (compiled: Compiled, draft: boolean, host: Host): LivePage =>
+  livePage(pageOf(compiled, draft, host))
 
 function pageOf(compiled: Compiled, draft: boolean, host: Host): Page {
   const { source } = compiled

@@ -17,8 +17,12 @@ const order: readonly (readonly string[])[] = [
   ['render'],
   ['compile.ts'],
   ['publish.ts'],
+  ['live.ts'],
+  ['tidy'],
   ['pdf'],
-  ['host.ts', 'index.ts', 'files.ts', 'help.ts', 'cli.ts'],
+  ['host.ts', 'index.ts', 'files.ts', 'help.ts'],
+  ['serve', 'lsp'],
+  ['cli.ts'],
   ['page'],
 ]
 
@@ -113,7 +117,8 @@ describe('the order of the house', () => {
 })
 
 /** The command line, the two files that it reaches the machine through, and what starts a browser. */
-const touches = (path: string): boolean => ['cli.ts', 'files.ts', 'host.ts'].includes(path) || path.startsWith('pdf/')
+const touches = (path: string): boolean =>
+  ['cli.ts', 'files.ts', 'host.ts'].includes(path) || /^(?:pdf|serve|lsp)\//.test(path)
 
 describe('what the stages may reach', () => {
   const paths = new Set(files.map(({ path }) => path))

@@ -10,7 +10,7 @@ import { bannerHtml, coverHtml, logoHtml, plateHtml } from './html-plate.ts'
 import { contentsHtml, criteriaHtml, revisionsHtml, summaryHtml } from './html-preface.ts'
 import { type Styled, styleOf } from './html-style.ts'
 import { CAUTION, markOf } from './imprint.ts'
-import { islandHtml } from './island.ts'
+import { type Island, islandHtml, islandOf } from './island.ts'
 import type { Medium } from './medium.ts'
 import { filled, fillTemplate } from './template.ts'
 import { createTypesetter, type ShapeCache } from './typeset.ts'
@@ -38,16 +38,63 @@ export interface LaidOut {
   readonly blocks: readonly string[]
 }
 
+/** A page in parts, to be sent to a browser piece by piece. */
+export interface LivePage {
+  readonly title: string
+  /** The rules of its style element. */
+  readonly style: string
+  /** What stands in the body around the calculation, which goes where `CALCULATION` stands. */
+  readonly around: string
+  /** The calculation in order: one element each. */
+  readonly blocks: readonly string[]
+  /** What the page's panel tells of its numbers; made when it is asked for. */
+  readonly island: () => Island
+}
+
+/** A comment that no prose can hold, since raw HTML is left out of a page. */
+export const CALCULATION = '<!--calculation-->'
+
+export function livePage(page: Page): LivePage {
+  const { blocks, title, style, typesetter, sheetAround } = setPage(page, 'screen')
+  const { traced = { values: [], formulas: [], lines: new Map() } } = page
+  return {
+    title,
+    style: style(),
+    around: sheetAround('first', CALCULATION),
+    blocks,
+    island: () => islandOf(traced, typesetter),
+  }
+}
+
 /** Paper has no script: nobody clicks on it. */
 export function layOut(page: Page, medium: Medium): LaidOut {
-  const { sheet, asset } = page
-  const { titleBlock, language } = sheet
+  const { asset, sheet } = page
   const traced = medium === 'screen' ? page.traced : undefined
+  const { blocks, title, style, typesetter, sheetAround } = setPage(page, medium)
+  const parts = {
+    language: sheet.language,
+    title,
+    generator: escapeHtml(`Platemark ${sheet.version}`),
+    scripts: traced ? `'${asset('trace.hash')}'` : "'none'",
+    trace: traced ? islandHtml(traced, typesetter, asset('trace.js')) : '',
+    style: style(),
+  }
+  const pageWith = (place: Place) => (body: string) =>
+    fillPage(asset('page.html'), { ...parts, place, sheet: sheetAround(place, body) })
+  return { firstPage: pageWith('first'), laterPage: pageWith('later'), blocks }
+}
+
+type Place = 'first' | 'later'
+
+/** All that a page is made of, set; its style knows the classes of what has been set when it is asked for. */
+function setPage(page: Page, medium: Medium) {
+  const { sheet, asset } = page
+  const { titleBlock } = sheet
   const typesetter = createTypesetter(page.shapes)
-  const marks = traced ? marksOf(traced) : noMarks
+  const marks = medium === 'screen' && page.traced ? marksOf(page.traced) : noMarks
   const setting: Setting = { typesetter, source: page.source, level: 2, marks, medium }
   const blocks = bodyBlocks(page.body, setting)
-  const around = {
+  const first = {
     ...escaped(titleBlock),
     banner: bannerHtml(sheet),
     logo: logoHtml(sheet),
@@ -56,21 +103,14 @@ export function layOut(page: Page, medium: Medium): LaidOut {
     mark: escapeHtml(markOf(sheet)),
     caution: CAUTION,
   }
-  const parts = {
-    language,
-    title: escapeHtml(documentTitle(titleBlock)),
-    generator: escapeHtml(`Platemark ${sheet.version}`),
-    scripts: traced ? `'${asset('trace.hash')}'` : "'none'",
-    trace: traced ? islandHtml(traced, typesetter, asset('trace.js')) : '',
-    style: styleOf(page, typesetter.classes(), medium),
-  }
+  const around = { first, later: { ...first, banner: '', plate: '', preface: '' } }
   const template = sheet.template.html ?? asset('sheet.html')
-  const pageWith = (place: 'first' | 'later', fields: typeof around) => (body: string) =>
-    fillPage(asset('page.html'), { ...parts, place, sheet: fillTemplate(template, { ...fields, body }) })
   return {
-    firstPage: pageWith('first', around),
-    laterPage: pageWith('later', { ...around, banner: '', plate: '', preface: '' }),
     blocks,
+    typesetter,
+    title: escapeHtml(documentTitle(titleBlock)),
+    style: () => styleOf(page, typesetter.classes(), medium),
+    sheetAround: (place: Place, body: string) => fillTemplate(template, { ...around[place], body }),
   }
 }
 
