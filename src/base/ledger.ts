@@ -10,39 +10,218 @@ import type { Span } from './span.ts'
 /** A result, or the faults that stand at its root. */
 export type Result<T> = Outcome<T, readonly Diagnostic[]>
 
-interface Task {
-  readonly name: string
-  readonly at: Span
+/** What some work did besides its result: told to whoever gathers it under a channel. */
+export interface Channel<T> {
+  /** Only for the type: what is told here. */
+  readonly told?: T
 }
 
+export const channel = <T>(): Channel<T> => ({})
+
+interface Telling {
+  readonly channel: Channel<unknown>
+  readonly what: unknown
+}
+
+/** Something that work reads: a task, or a place whose content may be replaced. */
+interface Read {
+  /** Tasks whose result rests on this. */
+  readonly readers: Set<Task>
+}
+
+interface Task extends Read {
+  readonly name: string
+  readonly at: Span
+  /** Undefined while there is none: not worked yet, or what it rests on has changed. */
+  result: Result<unknown> | undefined
+  /** What it read and what it told, in order, each read once. */
+  log: (Read | Telling)[]
+  /** The build in which it was last asked for by nobody but the build itself. */
+  asked: number
+}
+
+/** A content that may be replaced between builds; what read it is then worked again. */
+export interface Cell<T> {
+  readonly get: () => T
+  /** @returns true when the content is another than before */
+  readonly set: (next: T) => boolean
+}
+
+/** Work that is done when it is first asked for. */
+export interface Work<T> {
+  (): Result<T>
+  /** True when the result is at hand. */
+  readonly isDone: () => boolean
+}
+
+/**
+ * Work done on demand, each once. Each task knows what it read, so that of a long document only that is
+ * worked again which rests on what was changed. A ledger that is new and one that has seen many changes
+ * give the same results: a task's log depends on nothing but what it read.
+ */
 export class Ledger {
   private readonly underWay: Task[] = []
+  /** What the build itself asked for and told, in order. */
+  private root: (Read | Telling)[] = []
+  private build = 0
+  /** Tasks that may have lost their last reader. */
+  private readonly loose = new Set<Task>()
+  private gathered: Gathering = newGathering()
+  /** True once a chain was cut for its depth, which depends on where it was entered. */
+  strained = false
 
   /**
    * A function that does its work when first asked and keeps the result.
    * @param name what is worked, as a ring would name it
    * @param at the place of its definition
    */
-  once<T>(name: string, at: Span, work: () => Result<T>): () => Result<T> {
-    let result: Result<T> | undefined
-    const task: Task = { name, at }
-    return () => {
-      if (result) return result
+  once<T>(name: string, at: Span, work: () => Result<T>): Work<T> {
+    const task: Task = { name, at, result: undefined, log: [], readers: new Set(), asked: -1 }
+    const ask = (): Result<T> => {
+      this.read(task)
+      // Only this function sets the result, from work that gives a T.
+      if (task.result) return task.result as Result<T>
       const first = this.underWay.indexOf(task)
-      if (first !== -1) return bad([ring(this.underWay.slice(first))])
-      if (this.underWay.length >= DEEPEST) return bad([tooDeep(task)])
+      if (first !== -1) return bad([ring(this.underWay.slice(first).filter(({ name }) => name !== ''))])
+      if (this.underWay.length >= DEEPEST) {
+        this.strained = true
+        return bad([tooDeep(task)])
+      }
       this.underWay.push(task)
-      result = work()
+      const result = work()
       this.underWay.pop()
+      task.result = result
       return result
     }
+    return Object.assign(ask, { isDone: () => task.result !== undefined })
   }
+
+  /** @param same tells whether a content is as good as another */
+  cell<T>(first: T, same: (a: T, b: T) => boolean = Object.is): Cell<T> {
+    let content = first
+    const read: Read = { readers: new Set() }
+    return {
+      get: () => {
+        this.read(read)
+        return content
+      },
+      set: next => {
+        if (same(content, next)) return false
+        content = next
+        this.outdate(read)
+        return true
+      },
+    }
+  }
+
+  /** Tells something that is gathered at the end of each build in which this work has a part. */
+  tell<T>(channel: Channel<T>, what: T): void {
+    this.log().push({ channel, what })
+  }
+
+  /** Work asked for within is not noted as something that the task under way rests on. */
+  apart(work: () => void): void {
+    const nobody: Task = {
+      name: '',
+      at: { start: 0, end: 0 },
+      result: undefined,
+      log: [],
+      readers: new Set(),
+      asked: -1,
+    }
+    this.underWay.push(nobody)
+    work()
+    this.underWay.pop()
+    this.clear(nobody)
+  }
+
+  /** What was told under a channel in this build so far, in the order in which a first build comes to it. */
+  told<T>(channel: Channel<T>): readonly T[] {
+    gather(this.gathered, this.root)
+    // What is told under a channel is of its type.
+    return (this.gathered.told.get(channel) ?? []) as readonly T[]
+  }
+
+  /** Begins the next build; what nobody asked for in the last one is let go. */
+  next(): void {
+    for (const task of this.loose) if (task.readers.size === 0 && task.asked !== this.build) this.clear(task)
+    this.loose.clear()
+    for (const read of this.root) if (isTask(read)) this.loose.add(read)
+    this.root = []
+    this.gathered = newGathering()
+    this.build++
+  }
+
+  private log(): (Read | Telling)[] {
+    return this.underWay.at(-1)?.log ?? this.root
+  }
+
+  private read(what: Read): void {
+    const reader = this.underWay.at(-1)
+    if (reader === undefined) {
+      if (isTask(what)) {
+        if (what.asked === this.build) return
+        what.asked = this.build
+      }
+      this.root.push(what)
+    } else if (!what.readers.has(reader)) {
+      what.readers.add(reader)
+      reader.log.push(what)
+    }
+  }
+
+  /** Forgets every result that rests on something. */
+  private outdate(what: Read): void {
+    const waiting = [...what.readers]
+    for (let task = waiting.pop(); task; task = waiting.pop()) {
+      if (task.result === undefined && task.log.length === 0) continue
+      waiting.push(...task.readers)
+      this.clear(task)
+    }
+  }
+
+  private clear(task: Task): void {
+    for (const read of task.log)
+      if ('readers' in read && read.readers.delete(task) && isTask(read) && read.readers.size === 0)
+        this.loose.add(read)
+    task.result = undefined
+    task.log = []
+  }
+}
+
+const isTask = (read: Read | Telling): read is Task => 'log' in read
+
+interface Gathering {
+  readonly told: Map<Channel<unknown>, unknown[]>
+  readonly seen: Set<Task>
+  /** How much of the build's own log has been gone through. */
+  from: number
+}
+
+const newGathering = (): Gathering => ({ told: new Map(), seen: new Set(), from: 0 })
+
+/** Goes through the rest of a log and the logs of the tasks in it, each once and without nesting. */
+function gather(into: Gathering, root: readonly (Read | Telling)[]): void {
+  const open: { readonly log: readonly (Read | Telling)[]; at: number }[] = [{ log: root, at: into.from }]
+  for (let top = open.at(-1); top; top = open.at(-1)) {
+    const next = top.log[top.at++]
+    if (next === undefined) open.pop()
+    else if ('channel' in next) {
+      const list = into.told.get(next.channel)
+      if (list) list.push(next.what)
+      else into.told.set(next.channel, [next.what])
+    } else if (isTask(next) && !into.seen.has(next)) {
+      into.seen.add(next)
+      if (next.log.length > 0) open.push({ log: next.log, at: 0 })
+    }
+  }
+  into.from = root.length
 }
 
 /** A longer chain of definitions would exhaust the machine before it told the reader anything. */
 const DEEPEST = 600
 
-function tooDeep({ name, at }: Task): Diagnostic {
+function tooDeep({ name, at }: Pick<Task, 'name' | 'at'>): Diagnostic {
   return {
     rule: 'definitions-too-deep',
     severity: 'error',

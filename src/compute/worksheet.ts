@@ -1,21 +1,19 @@
 /** The whole building at work: every value by its id, each worked when it is first asked for. */
 import type { Diagnostic } from '../base/diagnostic.ts'
-import { namesIn } from '../base/expr.ts'
-import { all, Ledger, type Result } from '../base/ledger.ts'
+import { all, channel, Ledger, type Result } from '../base/ledger.ts'
 import { bad, good } from '../base/outcome.ts'
 import type { Span } from '../base/span.ts'
 import type { Value, Word } from '../base/value.ts'
 import { duplicates } from '../model/columns.ts'
 import { type Construction, readConstruction } from '../model/construction.ts'
-import { type Equation, readEquations, workEquation } from '../model/equations.ts'
 import type { Choices } from '../model/front.ts'
-import type { Givens } from '../model/givens.ts'
+import { type Givens, type LiveGivens, liveGivens } from '../model/givens.ts'
 import { type Grid, readGrid } from '../model/grid.ts'
 import { type LevelLine, readLevels } from '../model/levels.ts'
-import { type Limit, limitLines, workLimit } from '../model/limits.ts'
+import type { Limit } from '../model/limits.ts'
 import type { Assumption, Scope } from '../model/scope.ts'
-import type { Block } from '../read/block.ts'
 import type { Text } from '../read/text.ts'
+import { equationLines } from './equation-lines.ts'
 import { constructionValue, levelIds, levelValue } from './ids.ts'
 import { type LevelWork, levelWork } from './level.ts'
 import { topicMissing } from './level-faults.ts'
@@ -39,28 +37,39 @@ export interface Worksheet {
   readonly equation: (line: Text) => Result<Value>
   /** The check of each line that compares two values, by its place. */
   readonly limit: (line: Text) => Result<Limit>
-  readonly equationLines: readonly Text[]
   readonly assumptions: () => readonly Assumption[]
   readonly warnings: () => readonly Diagnostic[]
   /** Values that cells of the given blocks work from others. */
   readonly statedCells: () => readonly StatedCell[]
+  /** Values of the cells of the given blocks that were read. */
+  readonly cells: () => readonly Value[]
   /** Reads every given block, whether or not a working asks for it, and returns its faults. */
   readonly readAll: () => readonly Diagnostic[]
+  /**
+   * Takes the givens of the next build. What they change is worked again, all else is kept.
+   * @returns false when the building has other parts than before: a new worksheet is then to be made
+   */
+  readonly replace: (next: Givens) => boolean
 }
 
-export function worksheet(givens: Givens, { system, assumptions: chosen }: Choices): Worksheet {
+export function worksheet(first: Givens, { system, assumptions: chosen }: Choices): Worksheet {
   const ledger = new Ledger()
-  const warnings: Diagnostic[] = []
-  const statedCells = new Map<string, StatedCell>()
-  const assumptions = new Map(chosen.map(assumption => [assumption.text, assumption]))
+  const givens = liveGivens(first, ledger)
+  const [warned, assumed, cellsStated, cellsRead] = [
+    channel<Diagnostic>(),
+    channel<Assumption>(),
+    channel<StatedCell>(),
+    channel<Value>(),
+  ]
   const scope: Scope = {
     ledger,
     display: { system, relative: false },
     lookup: id => lookup(id),
-    ids: () => [...equations.keys(), ...levels.flatMap(levelIds)],
-    warn: fault => warnings.push(fault),
-    assume: assumption => assumptions.set(assumption.text, assumption),
-    stated: (value, at) => statedCells.set(value.id, { value, at }),
+    ids: () => [...lines.names(), ...levels.flatMap(levelIds)],
+    warn: fault => ledger.tell(warned, fault),
+    assume: assumption => ledger.tell(assumed, assumption),
+    stated: (value, at) => ledger.tell(cellsStated, { value, at }),
+    read: value => ledger.tell(cellsRead, value),
   }
   const nowhere = { start: 0, end: 0 }
   const grid = ledger.once('grid', givens.grid[0]?.info ?? nowhere, () => readGrid(givens.grid, scope))
@@ -68,7 +77,7 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
   const levelLines = ledger.once('levels', givens.levelTable[0]?.info ?? nowhere, () =>
     readLevels(givens.levelTable, onlyName, scope),
   )
-  const constructions = constructionsOf(givens.constructions, scope)
+  const constructions = constructionsOf(givens, scope)
   const repeated = duplicates(
     givens.constructions.flatMap(({ about }) => about ?? []),
     'construction',
@@ -114,59 +123,12 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
     return strays.length > 0 ? strays : [topicMissing(name, 'forces', anchor)]
   }
 
-  const lines = readEquations(givens.equations)
-  const limits = new Map<Text, () => Result<Limit>>(
-    limitLines(givens.equations.flatMap(({ lines }) => lines)).map(([line, ordinal]) => [
-      line,
-      scope.ledger.once(`check ${line.text}`, line.span, () => workLimit(line, ordinal, scope)),
-    ]),
-  )
-  const equations = new Map<string, () => Result<Value>>()
-  const bodies = new Map<string, Equation>()
-  for (const read of lines.values()) {
-    if (!read.ok) continue
-    const { name, span } = read.value
-    bodies.set(name.text, read.value)
-    equations.set(
-      name.text,
-      ledger.once(name.text, span, () => workEquation(read.value, scope)),
-    )
-  }
-
-  /** Equations whose parts were worked before them, or that lead into a ring: nothing is to be put in order there. */
-  const settled = new Set<string>()
-
-  /**
-   * Works what an equation rests on first, so that a long chain does not nest. A ring is left to the
-   * ledger, which tells its path.
-   */
-  function workInOrder(name: string): Result<Value> | undefined {
-    const waiting = settled.has(name) ? [] : [name]
-    const opened = new Set<string>()
-    const order: string[] = []
-    for (let next = waiting.at(-1); next !== undefined; next = waiting.at(-1)) {
-      if (opened.has(next)) {
-        waiting.pop()
-        if (!settled.has(next)) order.push(next)
-        settled.add(next)
-        continue
-      }
-      opened.add(next)
-      const body = bodies.get(next)
-      const rest = body ? [...namesIn(body.body).keys()].filter(other => bodies.has(other) && !settled.has(other)) : []
-      if (rest.some(other => opened.has(other))) {
-        for (const each of opened) settled.add(each)
-        break
-      }
-      waiting.push(...rest)
-    }
-    for (const earlier of order) equations.get(earlier)?.()
-    return equations.get(name)?.()
-  }
+  const lines = equationLines(scope)
+  lines.replace(first.equations)
 
   function lookup(id: string): Result<Value | Word> | undefined {
     const [head = '', ...path] = id.split('.')
-    if (path.length === 0) return equations.has(id) ? workInOrder(id) : undefined
+    if (path.length === 0) return lines.value(id)
     const level = levels.find(({ name }) => name === head)
     const [first = '', second = ''] = path
     if (level && first === 'elevation' && path.length === 1) return elevationOf(head)
@@ -204,26 +166,22 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
     levelLines,
     storeys,
     constructions,
-    equationLines: [...lines.keys()],
-    equation: line => {
-      const read = lines.get(line)
-      if (!read) return bad([])
-      return read.ok ? (workInOrder(read.value.name.text) ?? bad([])) : read
+    equation: line => lines.equation(line),
+    limit: line => lines.limit(line),
+    assumptions: () => {
+      const all = [...chosen, ...ledger.told(assumed)]
+      return [...new Map(all.map(assumption => [assumption.text, assumption])).values()]
     },
-    limit: line => limits.get(line)?.() ?? bad([]),
-    assumptions: () => [...assumptions.values()],
-    warnings: () => warnings,
-    statedCells: () => [...statedCells.values()],
-    readAll: () => [
-      ...givens.faults,
-      ...repeated,
-      ...faultsOf([...readers(), ...[...lines.keys()].map(line => () => equationFaults(line)), ...limits.values()]),
-    ],
-  }
-
-  function equationFaults(line: Text): Result<unknown> {
-    const read = lines.get(line)
-    return read?.ok ? (workInOrder(read.value.name.text) ?? bad([])) : (read ?? bad([]))
+    warnings: () => ledger.told(warned),
+    statedCells: () => [...new Map(ledger.told(cellsStated).map(cell => [cell.value.id, cell])).values()],
+    cells: () => ledger.told(cellsRead),
+    readAll: () => [...givens.faults, ...repeated, ...faultsOf([...readers(), ...lines.readers()])],
+    replace: next => {
+      ledger.next()
+      if (!givens.replace(next)) return false
+      lines.replace(next.equations)
+      return true
+    },
   }
 
   function readers(): readonly (() => Result<unknown>)[] {
@@ -248,15 +206,18 @@ function faultsOf(parts: readonly (() => Result<unknown>)[]): readonly Diagnosti
   })
 }
 
-function constructionsOf(blocks: readonly Block[], scope: Scope): ReadonlyMap<string, () => Result<Construction>> {
+function constructionsOf(
+  { constructions, constructionAt }: LiveGivens,
+  scope: Scope,
+): ReadonlyMap<string, () => Result<Construction>> {
   const found = new Map<string, () => Result<Construction>>()
-  for (const block of blocks) {
-    const name = block.about?.text ?? ''
-    if (!found.has(name))
-      found.set(
-        name,
-        scope.ledger.once(`constructions.${name}`, block.info, () => readConstruction(block, scope)),
-      )
+  for (const [i, { about, info }] of constructions.entries()) {
+    const name = about?.text ?? ''
+    const read = () => {
+      const block = constructionAt(i)
+      return block ? readConstruction(block, scope) : bad([])
+    }
+    if (!found.has(name)) found.set(name, scope.ledger.once(`constructions.${name}`, info, read))
   }
   return found
 }

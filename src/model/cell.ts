@@ -59,6 +59,7 @@ export function quantityOf(expr: Expr, span: Span, want: Want, scope: Scope): Re
   }
   // A bare name is told by the cell itself, and a coordinate by the plan.
   if (worked.value.inputs.size > 0 && expr.kind !== 'name' && !want.place) scope.stated(value, span)
+  scope.read(value)
   return good(value)
 }
 

@@ -25,8 +25,17 @@ export interface Equation {
 
 const NAME = /^[\p{L}][\p{L}\p{N}_]*(?:'[\p{L}\p{N}_]+)?$/u
 
+/** A line is read once, however many builds it stands in. */
+const known = new WeakMap<Text, Result<Equation>>()
+
 /** One line; the names in it are looked up later. */
 export function readEquation(line: Text): Result<Equation> {
+  const read = known.get(line) ?? readAnew(line)
+  known.set(line, read)
+  return read
+}
+
+function readAnew(line: Text): Result<Equation> {
   const sign = line.text.indexOf('=')
   if (sign === -1)
     return bad([

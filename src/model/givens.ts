@@ -1,5 +1,6 @@
 /** Sorts the blocks of a document by what they are about. */
 import type { Diagnostic } from '../base/diagnostic.ts'
+import type { Cell, Ledger } from '../base/ledger.ts'
 import { suggestion } from '../base/near.ts'
 import type { Block } from '../read/block.ts'
 import { diagnose } from '../read/text.ts'
@@ -74,6 +75,79 @@ export function gather(blocks: readonly Block[]): Givens {
 
 const isForceTable = (block: Block): boolean =>
   block.topic === 'forces' && block.about === undefined && block.table !== undefined
+
+/** Givens whose blocks may be replaced by others of the same topic, level and place. */
+export interface LiveGivens extends Givens {
+  /** A block of `constructions`, without a look at the others. */
+  readonly constructionAt: (index: number) => Block | undefined
+  /** @returns false when the building has other parts than before, so that its worksheet must be laid out anew */
+  readonly replace: (next: Givens) => boolean
+}
+
+/** What reads a block of these givens is worked again when it is replaced. */
+export function liveGivens(first: Givens, ledger: Ledger): LiveGivens {
+  let now = first
+  const cellOf = (blocks: readonly Block[]) => ledger.cell(blocks, sameItems)
+  const shared = sharedParts.map(part => [part, cellOf(first[part])] as const)
+  const constructions = first.constructions.map(block => ledger.cell(block))
+  const levels = first.levels.map(level => levelParts.map(part => [part, cellOf(level[part])] as const))
+  const constructionAt = (index: number) => constructions[index]?.get()
+  const others = {
+    levels: levels.map((parts, i) => withParts({ name: first.levels[i]?.name ?? '' }, parts)),
+    get constructions() {
+      return constructions.flatMap((_, i) => constructionAt(i) ?? [])
+    },
+    constructionAt,
+    // Equations are taken line by line, and of a building with faults nothing is kept.
+    get equations() {
+      return now.equations
+    },
+    get faults() {
+      return now.faults
+    },
+    strays: (topic: string) => now.strays(topic),
+    replace: (next: Givens) => {
+      if (next.faults.length > 0 || structureOf(next) !== structureOf(now)) return false
+      now = next
+      for (const [part, cell] of shared) cell.set(next[part])
+      for (const [i, cell] of constructions.entries()) {
+        const block = next.constructions[i]
+        if (block) cell.set(block)
+      }
+      for (const [i, parts] of levels.entries())
+        for (const [part, cell] of parts) cell.set(next.levels[i]?.[part] ?? [])
+      return true
+    },
+  }
+  return withParts(others, shared)
+}
+
+const sharedParts = ['grid', 'levelTable', 'forceTables'] as const
+const levelParts = ['areas', 'lineLoads', 'pointLoads', 'walls', 'openings', 'forces'] as const
+
+/** The same object with each part as a property that reads its cell. */
+function withParts<O extends object, P extends string, T>(
+  object: O,
+  parts: readonly (readonly [P, Cell<T>])[],
+): O & { readonly [K in P]: T } {
+  const properties = parts.map(([part, { get }]) => [part, { get, enumerable: true }] as const)
+  // Each part is defined as a property of its cell's type.
+  return Object.defineProperties(object, Object.fromEntries(properties)) as O & { readonly [K in P]: T }
+}
+
+const sameItems = <T>(a: readonly T[], b: readonly T[]): boolean =>
+  a.length === b.length && a.every((item, i) => item === b[i])
+
+/** What a worksheet is laid out by: the levels, and the topic, place and name of each block. */
+function structureOf({ levels, constructions, faults, ...givens }: Givens): string {
+  const heads = (blocks: readonly Block[]) => blocks.map(({ about, info }) => [about?.text ?? '', info.start, info.end])
+  return JSON.stringify([
+    levels.map(level => [level.name, ...levelParts.map(part => heads(level[part]))]),
+    sharedParts.map(part => heads(givens[part])),
+    heads(constructions),
+    faults.length,
+  ])
+}
 
 /** The level that a block is about: the one it names, or the only one there is. */
 export function levelNameOf(block: Block, names: readonly string[]): string | undefined {

@@ -23,6 +23,8 @@ export interface Scope {
   readonly assume: (assumption: Assumption) => void
   /** Tells of a value that a cell works from others, so that the page can show the step. */
   readonly stated: (value: Value, at: Span) => void
+  /** Tells of the value of a cell, so that the page can say where it comes from. */
+  readonly read: (value: Value) => void
 }
 
 export const isWord = (found: Value | Word): found is Word => 'text' in found
