@@ -242,7 +242,7 @@ function check({ path }: DocumentFile, settings: Settings): number {
   if (!compiled) return ERRORS
   const { choices, context, diagnostics } = compiled
   const wanted = settings.submittal ? missingForSubmittal(choices, context) : []
-  const errors = tell({ ...compiled, diagnostics: sorted([...diagnostics, ...wanted]) }, settings)
+  const errors = tell({ ...compiled, diagnostics: sorted(compiled.source, [...diagnostics, ...wanted]) }, settings)
   return errors > 0 || sayChecks(compiled) > 0 ? ERRORS : DONE
 }
 

@@ -3,24 +3,25 @@ import type { Root } from 'mdast'
 import type { Diagnostic } from './base/diagnostic.ts'
 import { sorted } from './base/report.ts'
 import { type Source, sourceOf } from './base/span.ts'
-import { worksheet } from './compute/worksheet.ts'
+import { type Worksheet, worksheet } from './compute/worksheet.ts'
 import { sketchDisplaced, sketchPlan, sketchStoreys } from './draw/sketch.ts'
 import { sketchElevation } from './draw/sketch-elevation.ts'
 import {
   closingItems,
-  explainBlocks,
+  type Explainer,
+  explainer,
   explainQuotes,
   faultsIn,
   itemsOf,
   nestedBlocks,
   quoteFaults,
 } from './explain/blocks.ts'
-import { Context } from './explain/context.ts'
+import { type Account, Context } from './explain/context.ts'
 import { numberItems } from './explain/number.ts'
 import { closingOf, prefaceOf } from './explain/preface.ts'
 import type { Check, Preface, Sheet, Template } from './explain/sheet.ts'
 import { type Choices, readChoices } from './model/front.ts'
-import { gather } from './model/givens.ts'
+import { type Givens, gather } from './model/givens.ts'
 import type { Scope } from './model/scope.ts'
 import { readDocument } from './read/document.ts'
 import { parseMarkdown } from './read/markdown.ts'
@@ -40,7 +41,8 @@ export interface Compiled {
   readonly logo: string | undefined
   readonly parts: readonly Part[]
   readonly pictures: Pictures
-  readonly context: Context
+  /** What was printed, and what the lists of the document are made of. */
+  readonly context: Account
   /** Every value by its id, printed or not. */
   readonly scope: Scope
   readonly checks: readonly Check[]
@@ -48,27 +50,35 @@ export interface Compiled {
   readonly diagnostics: readonly Diagnostic[]
 }
 
+/** What one build of a document leaves for the next: each part is used again for as long as nothing it rests on changes. */
+export interface Memory {
+  works?: Works
+}
+
+/** The building at work, and what explains it. */
+interface Works {
+  readonly sheet: Worksheet
+  readonly context: Context
+  readonly explainer: Explainer
+  /** What of the front matter these rest on. */
+  readonly basis: string
+}
+
 export function compileText(path: string, text: string, nearby: Nearby = nothingNearby): Compiled {
   return compileTree(parseMarkdown(text), sourceOf(path, text), nearby)
 }
 
-export function compileTree(tree: Root, source: Source, nearby: Nearby = nothingNearby): Compiled {
+export function compileTree(tree: Root, source: Source, nearby: Nearby = nothingNearby, memory: Memory = {}): Compiled {
   const document = readDocument(tree, source, nearby)
   const choices = readChoices(document.front)
-  const sheet = worksheet(gather([...document.blocks.values()]), choices)
+  const { sheet, context, explainer } = worksFor(gather([...document.blocks.values()]), choices, memory)
   const given = sheet.readAll()
-  const basis = { standard: choices.titleBlock.standard, system: choices.system }
-  const context = new Context(choices.language, source, basis, {
-    plan: (level, caseName) => sketchPlan(sheet, level, caseName, choices),
-    elevation: (level, wall, caseName) => sketchElevation(sheet, level, wall, caseName, choices),
-    displaced: (level, displacement) => sketchDisplaced(level, displacement, choices),
-    storeys: storeys => sketchStoreys(storeys, choices),
-  })
-  const { worked, asked, shown } = explainBlocks(document, sheet, context)
+  const { worked, asked, shown } = explainer.explain(document, source)
   const template = readTemplate(choices.template, nearby)
   const logo = readLogo(choices.logo, nearby)
-  const quotes = explainQuotes(document, sheet, context, shown)
-  const diagnostics = sorted([
+  const { placeOf } = context.account(source)
+  const quotes = explainQuotes(document, sheet, context, id => placeOf(id, shown))
+  const diagnostics = sorted(source, [
     ...document.faults,
     ...nestedBlocks(document),
     ...choices.faults,
@@ -80,9 +90,10 @@ export function compileTree(tree: Root, source: Source, nearby: Nearby = nothing
     ...(logo.ok ? [] : logo.because),
   ])
   const own = itemsOf(document, worked, diagnostics)
-  const all = [...own, ...closingItems(closingOf(asked, sheet, context), own)]
-  const { items, headings, pictures, contents } = numberItems(all, id => context.anchor(id))
-  const preface = prefaceOf(contents, { asked, shown }, choices, sheet, context)
+  const account = context.account(source)
+  const all = [...own, ...closingItems(closingOf(asked, sheet, context, account), own)]
+  const { items, headings, pictures, contents } = numberItems(all, account.linesOf)
+  const preface = prefaceOf(contents, { asked, shown }, choices, sheet, context, account)
   return {
     source,
     nearby,
@@ -92,11 +103,33 @@ export function compileTree(tree: Root, source: Source, nearby: Nearby = nothing
     logo: logo.ok ? logo.value : undefined,
     parts: partsOf(items, headings, pictures, quotes),
     pictures: document.pictures,
-    context,
+    context: account,
     scope: sheet.scope,
-    checks: context.checks,
+    checks: account.checks,
     diagnostics,
   }
+}
+
+/** The works of the build before with the givens of this one, or new ones where the building has other parts now. */
+function worksFor(givens: Givens, choices: Choices, memory: Memory): Works {
+  const { system, language, titleBlock, assumptions } = choices
+  const basis = JSON.stringify([system, language, titleBlock.standard, assumptions])
+  const { works } = memory
+  if (works?.basis === basis && works.sheet.replace(givens)) return works
+  const sheet = worksheet(givens, choices)
+  const context = new Context(
+    language,
+    { standard: titleBlock.standard, system },
+    {
+      plan: (level, caseName) => sketchPlan(sheet, level, caseName, choices),
+      elevation: (level, wall, caseName) => sketchElevation(sheet, level, wall, caseName, choices),
+      displaced: (level, displacement) => sketchDisplaced(level, displacement, choices),
+      storeys: storeys => sketchStoreys(storeys, choices),
+    },
+    sheet.scope.ledger,
+  )
+  memory.works = { sheet, context, explainer: explainer(sheet, context), basis }
+  return memory.works
 }
 
 /** What every page carries around its body. */

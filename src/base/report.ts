@@ -1,6 +1,6 @@
 /** Diagnostics as text: the long form for a reader, the one-line form for lists and editors. */
 import type { Diagnostic, Label } from './diagnostic.ts'
-import { lineText, positionOf, type Source } from './span.ts'
+import { lineText, offsetOf, positionOf, type Source } from './span.ts'
 
 /** `workshop.md:31:8 error[wall-outside-level] wall W7 …` */
 export function oneLine(source: Source, { rule, severity, message, at }: Diagnostic): string {
@@ -14,7 +14,7 @@ export function longForm(source: Source, diagnostic: Diagnostic): string {
   const { line, column } = positionOf(source, at.span.start)
   // A long ring has hundreds of other places; the cause is among those shown.
   const marks = [{ ...at, sign: '^' }, ...also.slice(0, 11).map(label => ({ ...label, sign: '-' }))].sort(
-    (a, b) => a.span.start - b.span.start,
+    (a, b) => offsetOf(source, a.span.start) - offsetOf(source, b.span.start),
   )
   const marked = source.text === '' ? [] : marks
   const width = Math.max(...marks.map(({ span }) => String(positionOf(source, span.start).line).length)) + 1
@@ -49,8 +49,9 @@ function markedLine(
 }
 
 /** In the order of the page, each once. */
-export function sorted(diagnostics: Iterable<Diagnostic>): readonly Diagnostic[] {
+export function sorted(source: Source, diagnostics: Iterable<Diagnostic>): readonly Diagnostic[] {
+  const offset = ({ at }: Diagnostic) => offsetOf(source, at.span.start)
   return [...new Set(diagnostics)].sort(
-    (a, b) => a.at.span.start - b.at.span.start || (a.rule < b.rule ? -1 : a.rule > b.rule ? 1 : 0),
+    (a, b) => offset(a) - offset(b) || (a.rule < b.rule ? -1 : a.rule > b.rule ? 1 : 0),
   )
 }

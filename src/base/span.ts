@@ -1,39 +1,63 @@
-/** A place in a source text: offsets in UTF-16 units, end exclusive. */
+/** A place in a source text: offsets in UTF-16 units, or addresses of such, end exclusive. */
 export interface Span {
   readonly start: number
   readonly end: number
 }
 
-/** A source text and the way from its offsets to lines and columns. */
+/**
+ * A source text and the way from places in it to lines and columns. A place is an offset in the text; where the
+ * text is read again and again, it is an address that stays with its stretch of text wherever that moves.
+ */
 export interface Source {
   readonly path: string
   readonly text: string
   /** Offset of the first character of each line. */
   readonly lineStarts: readonly number[]
+  /** Stretches of the text by ascending address; where there are none, addresses are offsets. */
+  readonly stretches?: readonly Stretch[]
 }
 
-export function sourceOf(path: string, text: string): Source {
+/** A stretch of text that has kept its address. */
+export interface Stretch {
+  readonly address: number
+  readonly offset: number
+}
+
+export function sourceOf(path: string, text: string, stretches?: readonly Stretch[]): Source {
   const lineStarts = [0]
   for (let i = text.indexOf('\n'); i !== -1; i = text.indexOf('\n', i + 1)) lineStarts.push(i + 1)
-  return { path, text, lineStarts }
+  return { path, text, lineStarts, ...(stretches ? { stretches } : {}) }
 }
 
-/** Line of an offset, from 1. */
-export function lineOf({ lineStarts }: Source, offset: number): number {
+/** Index of the last of some ascending numbers that is not beyond a limit, or 0. */
+function lastUpTo(limit: number, count: number, numberAt: (index: number) => number): number {
   let low = 0
-  let high = lineStarts.length - 1
+  let high = count - 1
   while (low < high) {
     const middle = (low + high + 1) >> 1
-    if ((lineStarts[middle] ?? 0) <= offset) low = middle
+    if (numberAt(middle) <= limit) low = middle
     else high = middle - 1
   }
-  return low + 1
+  return low
 }
 
-/** Line and column of an offset, both from 1. */
-export function positionOf(source: Source, offset: number): { readonly line: number; readonly column: number } {
-  const line = lineOf(source, offset)
-  return { line, column: offset - (source.lineStarts[line - 1] ?? 0) + 1 }
+/** Where a place is in the text. */
+export function offsetOf({ stretches, text }: Source, place: number): number {
+  if (!stretches) return place
+  const stretch = stretches[lastUpTo(place, stretches.length, i => stretches[i]?.address ?? 0)]
+  return stretch ? Math.min(text.length, stretch.offset + place - stretch.address) : place
+}
+
+/** Line of a place, from 1. */
+export function lineOf(source: Source, place: number): number {
+  const { lineStarts } = source
+  return lastUpTo(offsetOf(source, place), lineStarts.length, i => lineStarts[i] ?? 0) + 1
+}
+
+/** Line and column of a place, both from 1. */
+export function positionOf(source: Source, place: number): { readonly line: number; readonly column: number } {
+  const line = lineOf(source, place)
+  return { line, column: offsetOf(source, place) - (source.lineStarts[line - 1] ?? 0) + 1 }
 }
 
 /** The text of a line, from 1, without its ending. */

@@ -1,13 +1,16 @@
 /** Every block and quote of a document, explained: what the page puts in its place. */
 import type { Code, Heading, Nodes, RootContent, Text as TextNode } from 'mdast'
 import type { Diagnostic } from '../base/diagnostic.ts'
-import type { Worksheet } from '../compute/worksheet.ts'
+import type { Cell, Result, Work } from '../base/ledger.ts'
+import { good } from '../base/outcome.ts'
+import type { Source } from '../base/span.ts'
+import type { StatedCell, Worksheet } from '../compute/worksheet.ts'
 import { levelNameOf } from '../model/givens.ts'
 import { isLimit } from '../model/limits.ts'
 import type { Block } from '../read/block.ts'
 import type { Document, QuoteMark } from '../read/document.ts'
 import { diagnose } from '../read/text.ts'
-import type { Context } from './context.ts'
+import type { Account, Context } from './context.ts'
 import { explainValue } from './equation.ts'
 import { explainGiven } from './given.ts'
 import { limitPiece } from './limit.ts'
@@ -28,34 +31,104 @@ export interface Explained {
   readonly shown: ReadonlySet<string>
 }
 
+/**
+ * Explains the blocks of a document and keeps each explanation for as long as what it rests on stays the same.
+ * One serves all builds of a worksheet.
+ */
+export interface Explainer {
+  /** @param source the text of this build */
+  readonly explain: (document: Document, source: Source) => Explained
+}
+
+export function explainer(sheet: Worksheet, context: Context): Explainer {
+  const { ledger } = context
+  const known = new WeakMap<Block, Work<readonly Piece[]>>()
+  const stated = new WeakMap<Block, Cell<readonly StatedCell[]>>()
+  const kept = (block: Block, explain: () => readonly Piece[]): readonly Piece[] => {
+    const work = known.get(block) ?? ledger.once(block.topic, block.info, () => good(explain()))
+    known.set(block, work)
+    const made = work()
+    return made.ok ? made.value : [{ kind: 'fault', diagnostics: made.because }]
+  }
+  /** The cells of a block that work a value from others, as something that its explanation rests on. */
+  const statedIn = (block: Block, now: readonly StatedCell[]): Cell<readonly StatedCell[]> => {
+    const cell = stated.get(block) ?? ledger.cell(now, sameCells)
+    cell.set(now)
+    stated.set(block, cell)
+    return cell
+  }
+  return { explain: (document, source) => explainBlocks(document, sheet, context, source, kept, statedIn) }
+}
+
+const sameCells = (a: readonly StatedCell[], b: readonly StatedCell[]): boolean =>
+  a.length === b.length && a.every(({ value, at }, i) => value === b[i]?.value && at === b[i]?.at)
+
 /** The pieces of every working and equation block; lists of the whole document come last, since they tell of the rest. */
-export function explainBlocks({ blocks }: Document, sheet: Worksheet, context: Context): Explained {
+function explainBlocks(
+  { blocks }: Document,
+  sheet: Worksheet,
+  context: Context,
+  source: Source,
+  kept: (block: Block, explain: () => readonly Piece[]) => readonly Piece[],
+  statedIn: (block: Block, now: readonly StatedCell[]) => Cell<readonly StatedCell[]>,
+): Explained {
   const worked = new Map<Code, readonly Piece[]>()
   const requests = [...blocks]
     .filter(([, { topic }]) => topic === 'working')
-    .map(([node, block]) => [node, block, readRequest(block)] as const)
+    .map(([node, block]) => [node, block, requestOf(block)] as const)
+  const cells = sheet.statedCells()
   for (const [node, block] of blocks) {
-    if (block.topic === 'equations') worked.set(node, equationPieces(block, sheet, context))
-    else if (block.topic !== 'working') worked.set(node, givenPieces(node, block, sheet, context))
+    if (block.topic === 'equations')
+      worked.set(
+        node,
+        kept(block, () => equationPieces(block, sheet, context)),
+      )
+    else if (block.topic !== 'working') {
+      const stated = statedIn(block, cellsWithin(node, cells))
+      worked.set(
+        node,
+        kept(block, () => givenPieces(block, stated.get(), context)),
+      )
+    }
   }
   for (const [node, block, request] of requests) {
     if (!request.ok) worked.set(node, [{ kind: 'fault', diagnostics: request.because }])
     else if (!request.value.wants.some(isDocumentWant))
-      worked.set(node, workingPieces(block, request.value, sheet, context))
+      worked.set(
+        node,
+        kept(block, () => workingPieces(block, request.value, sheet, context)),
+      )
   }
+  const account = context.account(source)
   for (const [node, block, request] of requests)
     if (request.ok && request.value.wants.some(isDocumentWant))
-      worked.set(node, workingPieces(block, request.value, sheet, context))
+      worked.set(node, workingPieces(block, request.value, sheet, context, account))
   const wants = requests.flatMap(([, , request]) => (request.ok ? request.value.wants : []))
   const ids = [...worked.values()].flat().flatMap(piece => ('id' in piece ? [piece.id] : []))
   return { worked, asked: new Set(wants.filter(isDocumentWant)), shown: new Set(ids) }
 }
 
-function workingPieces(block: Block, request: Request, sheet: Worksheet, context: Context): readonly Piece[] {
+/** A block is read once, however many builds it stands in. */
+const requests = new WeakMap<Block, Result<Request>>()
+
+function requestOf(block: Block): Result<Request> {
+  const known = requests.get(block) ?? readRequest(block)
+  requests.set(block, known)
+  return known
+}
+
+/** @param account what the document comes to apart from its lists; without it lists are left out */
+function workingPieces(
+  block: Block,
+  request: Request,
+  sheet: Worksheet,
+  context: Context,
+  account?: Account,
+): readonly Piece[] {
   const names = sheet.levels.map(({ name }) => name)
   const level = sheet.levels.find(({ name }) => name === levelNameOf(block, names))
   return request.wants.flatMap((want): readonly Piece[] => {
-    if (isDocumentWant(want)) return explainRegister(want, sheet, context)
+    if (isDocumentWant(want)) return account ? explainRegister(want, sheet, context, account) : []
     if (isBuildingWant(want) && (level || !block.about))
       return explainStoreys(sheet, block.about && level, request, context)
     return level && !isBuildingWant(want)
@@ -81,7 +154,7 @@ function equationPieces(block: Block, sheet: Worksheet, context: Context): reado
     const equation = explainValue(value.value, context)
     // What the engineer says of a line tells more than that they wrote it.
     if (line.comment === '') return equation
-    context.cited.add(value.value.id)
+    context.cite(value.value.id)
     return { ...equation, reference: line.comment }
   })
 }
@@ -95,19 +168,19 @@ export type Quoted = { readonly within: QuoteMark['within'] } & (
 /** The quotes of each text of the prose, in order. */
 export type Quotes = ReadonlyMap<TextNode, readonly Quoted[]>
 
-/** @param worked what the page shows, where a quote may lead */
+/** @param placeOf where the page shows a value, for a quote to lead there */
 export function explainQuotes(
   { quotes }: Document,
   sheet: Worksheet,
   context: Context,
-  shown: ReadonlySet<string>,
+  placeOf: (id: string) => string | undefined,
 ): Quotes {
   const found = new Map<TextNode, Quoted[]>()
   for (const mark of quotes) {
     const quote = explainQuote(mark, sheet.scope, context)
     const { within, node, id } = mark
     const quoted: Quoted = quote.ok
-      ? { within, quote: quote.value, place: context.placeOf(quote.value.id, shown) }
+      ? { within, quote: quote.value, place: placeOf(quote.value.id) }
       : { within, missing: `${id.text}: not worked`, faults: quote.because }
     found.set(node, [...(found.get(node) ?? []), quoted])
   }
@@ -139,11 +212,14 @@ export function nestedBlocks({ tree, blocks }: Document): readonly Diagnostic[] 
 }
 
 /** What was given, and the steps of its cells that work a value from others. */
-function givenPieces(node: Code, block: Block, sheet: Worksheet, context: Context): readonly Piece[] {
-  const { start, end } = rangeOf(node)
-  const steps = sheet.statedCells().filter(({ at }) => at.start >= start && at.start < end)
-  const inOrder = [...steps].sort((a, b) => a.at.start - b.at.start)
+function givenPieces(block: Block, stated: readonly StatedCell[], context: Context): readonly Piece[] {
+  const inOrder = [...stated].sort((a, b) => a.at.start - b.at.start)
   return [...explainGiven(block, context), ...inOrder.map(({ value }) => explainValue(value, context))]
+}
+
+function cellsWithin(node: Code, cells: readonly StatedCell[]): readonly StatedCell[] {
+  const { start, end } = rangeOf(node)
+  return cells.filter(({ at }) => at.start >= start && at.start < end)
 }
 
 const rangeOf = (node: RootContent) => ({

@@ -3,7 +3,7 @@ import type { Formula } from '../base/formula.ts'
 import type { System } from '../base/kind.ts'
 import type { Language } from '../base/language.ts'
 import { inLanguage } from '../base/language.ts'
-import type { Result } from '../base/ledger.ts'
+import { channel, type Ledger, type Result } from '../base/ledger.ts'
 import { lineOf, type Source, type Span } from '../base/span.ts'
 import type { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
@@ -30,29 +30,28 @@ export interface Sketch {
 /** What the front matter says of the calculation as a whole. */
 export type Basis = Pick<TitleBlock, 'standard'> & { readonly system: System }
 
-/** Gathers, over the whole document, what its lists and its JSON are made of. */
+/** What explaining tells besides the pieces that it makes. */
+const told = {
+  root: channel<Value>(),
+  beside: channel<Value>(),
+  cited: channel<string>(),
+  formula: channel<Formula>(),
+  check: channel<Check>(),
+  table: channel<{ readonly anchor: string; readonly table: Tabulation }>(),
+}
+
+/** What explaining a working needs besides the results themselves, and where it tells what the lists of the document are made of. */
 export class Context {
   readonly language: Language
-  readonly source: Source
   readonly basis: Basis
   readonly sketch: Sketch
-  /** Every value that was printed: the roots of the trace. */
-  readonly roots = new Map<string, Value>()
-  /** Ids of the engineer's own lines that say where their formula is from. */
-  readonly cited = new Set<string>()
-  /** Values that are printed and can be traced, but are no part of the results: the limits of checks, the subjects of words. */
-  readonly besides = new Map<string, Value>()
-  /** Every formula that was printed, in order. */
-  readonly formulas = new Set<Formula>()
-  private readonly checked = new Map<string, Check>()
-  private readonly anchors = new Map<string, number>()
-  private readonly tables: { readonly anchor: string; readonly table: Tabulation }[] = []
+  readonly ledger: Ledger
 
-  constructor(language: Language, source: Source, basis: Basis, sketch: Sketch) {
+  constructor(language: Language, basis: Basis, sketch: Sketch, ledger: Ledger) {
     this.language = language
-    this.source = source
     this.basis = basis
     this.sketch = sketch
+    this.ledger = ledger
   }
 
   /** Our own words in the document's spelling. */
@@ -60,34 +59,89 @@ export class Context {
     return inLanguage(text, this.language)
   }
 
-  /** An anchor for a value; a second printing of the same value gets a number after it. */
-  anchor(id: string): string {
-    const times = (this.anchors.get(id) ?? 0) + 1
-    this.anchors.set(id, times)
-    return times === 1 ? id : `${id}-${times}`
+  /** A value that is printed: a root of the trace. */
+  root(value: Value): void {
+    this.ledger.tell(told.root, value)
+  }
+
+  /** A value that is printed and can be traced, but is no part of the results: the limit of a check, the subject of a word. */
+  beside(value: Value): void {
+    this.ledger.tell(told.beside, value)
+  }
+
+  /** A line of the engineer's own that says where its formula is from. */
+  cite(id: string): void {
+    this.ledger.tell(told.cited, id)
+  }
+
+  /** A formula that is printed. */
+  uses(formula: Formula): void {
+    this.ledger.tell(told.formula, formula)
   }
 
   /** Records a check once, however often it is shown. */
   check(check: Check): void {
-    this.checked.set(check.id, check)
-  }
-
-  get checks(): readonly Check[] {
-    return [...this.checked.values()]
+    this.ledger.tell(told.check, check)
   }
 
   tabled(anchor: string, table: Tabulation): void {
-    this.tables.push({ anchor, table })
+    this.ledger.tell(told.table, { anchor, table })
   }
 
-  /** Where a value is printed among the ids that the page shows, or undefined when it is not. */
-  placeOf(id: string, shown: ReadonlySet<string>): string | undefined {
-    if (shown.has(id)) return id
-    return this.tables.find(({ anchor, table }) => shown.has(anchor) && table.has(id))?.anchor
+  /** Where some places begin, from which the lines are told once the document is numbered. */
+  places(spans: Iterable<Span>): readonly number[] {
+    return [...new Set([...spans].map(({ start }) => start))]
   }
 
+  /** What has been told in this build so far. */
+  account(source: Source): Account {
+    const { ledger } = this
+    const lines = (places: Iterable<number>) =>
+      [...new Set([...places].map(place => lineOf(source, place)))].sort((a, b) => a - b)
+    const byId = (values: readonly Value[]) => new Map(values.map(value => [value.id, value]))
+    const checks = new Map(
+      ledger.told(told.check).map(check => [check.id, { ...check, sourceLines: lines(check.sourceLines) }]),
+    )
+    const tables = ledger.told(told.table)
+    return {
+      language: this.language,
+      source,
+      roots: byId(ledger.told(told.root)),
+      besides: byId(ledger.told(told.beside)),
+      cited: new Set(ledger.told(told.cited)),
+      formulas: new Set(ledger.told(told.formula)),
+      checks: [...checks.values()],
+      unnumbered: [...new Map(ledger.told(told.check).map(check => [check.id, check])).values()],
+      words: text => this.words(text),
+      lines: spans => lines([...spans].map(({ start }) => start)),
+      linesOf: lines,
+      placeOf: (id, shown) =>
+        shown.has(id) ? id : tables.find(({ anchor, table }) => shown.has(anchor) && table.has(id))?.anchor,
+    }
+  }
+}
+
+/** What the lists of a document and its JSON are made of. */
+export interface Account {
+  readonly language: Language
+  readonly source: Source
+  /** Every value that was printed: the roots of the trace. */
+  readonly roots: ReadonlyMap<string, Value>
+  /** Values that are printed and can be traced, but are no part of the results. */
+  readonly besides: ReadonlyMap<string, Value>
+  /** Ids of the engineer's own lines that say where their formula is from. */
+  readonly cited: ReadonlySet<string>
+  /** Every formula that was printed, in order. */
+  readonly formulas: ReadonlySet<Formula>
+  readonly checks: readonly Check[]
+  /** The same with the places of their inputs in place of lines, as pieces are until they are numbered. */
+  readonly unnumbered: readonly Check[]
+  /** Our own words in the document's spelling. */
+  readonly words: (text: string) => string
   /** Source lines of some places, each once, ascending. */
-  lines(spans: Iterable<Span>): readonly number[] {
-    return [...new Set([...spans].map(({ start }) => lineOf(this.source, start)))].sort((a, b) => a - b)
-  }
+  readonly lines: (spans: Iterable<Span>) => readonly number[]
+  /** The same from where they begin. */
+  readonly linesOf: (places: Iterable<number>) => readonly number[]
+  /** Where a value is printed among the ids that the page shows, or undefined when it is not. */
+  readonly placeOf: (id: string, shown: ReadonlySet<string>) => string | undefined
 }

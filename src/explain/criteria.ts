@@ -6,7 +6,7 @@ import { printed, spansOf, type Value } from '../base/value.ts'
 import type { LevelWork } from '../compute/level.ts'
 import type { Worksheet } from '../compute/worksheet.ts'
 import type { Construction } from '../model/construction.ts'
-import type { Context } from './context.ts'
+import type { Account, Context } from './context.ts'
 import type { Row, Table } from './sheet.ts'
 
 interface Criterion {
@@ -16,7 +16,7 @@ interface Criterion {
 }
 
 /** Standard, loads, forces and materials in one table. What was not given, or cannot be worked, has no line. */
-export function explainCriteria(sheet: Worksheet, context: Context): Table {
+export function explainCriteria(sheet: Worksheet, context: Context, account: Account): Table {
   const { basis } = context
   const criteria = [
     ...(basis.standard === '' ? [] : [{ name: 'Standard', value: verbatim(basis.standard), spans: [] }]),
@@ -26,13 +26,13 @@ export function explainCriteria(sheet: Worksheet, context: Context): Table {
   ]
   return {
     kind: 'table',
-    id: context.anchor('criteria'),
+    id: 'criteria',
     number: '',
     caption: context.words('Criteria: what the calculation starts from, as given'),
     columns: ['Criterion', 'As given', 'Source'].map(head => ({ head, unit: '', align: 'left' as const })),
     rows: criteria.map(
       ({ name, value, spans }): Row => ({
-        cells: [context.words(name), context.words(value), linesInWords(context.lines(spans))],
+        cells: [context.words(name), context.words(value), linesInWords(account.lines(spans))],
         governs: false,
       }),
     ),

@@ -12,20 +12,20 @@ import type { Context } from './context.ts'
 import type { Equation } from './sheet.ts'
 
 export function explainValue(value: Value, context: Context): Equation {
-  context.roots.set(value.id, value)
+  context.root(value)
   const { origin } = value
   const step = origin.kind === 'worked' ? origin.step : undefined
-  if (step) context.formulas.add(step.formula)
+  if (step) context.uses(step.formula)
   return {
     kind: 'equation',
-    id: context.anchor(value.id),
+    id: value.id,
     number: '',
     symbol: tex(value.tex),
     lines: step ? linesOf(step, value, context) : [],
     result: resultTex(value, context),
     reference: context.words(referenceOf(value)),
     assumes: step?.formula.assumes.map(text => context.words(text)) ?? [],
-    sourceLines: context.lines(spansOf(value)),
+    sourceLines: context.places(spansOf(value)),
   }
 }
 

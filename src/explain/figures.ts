@@ -34,7 +34,7 @@ export function figure(level: LevelWork, caseName: string | undefined, context: 
       : ' Design shears.'
   const id = caseName ? `${level.name}.plan.${caseName}` : `${level.name}.plan`
   const caption = context.words(`Plan of ${verbatim(level.name)}.${what}`)
-  const drawing: Piece = { kind: 'figure', id: context.anchor(id), number: '', caption, ...made.value }
+  const drawing: Piece = { kind: 'figure', id: id, number: '', caption, ...made.value }
   const missing = notDrawn(level)
   return good(missing.length > 0 ? [drawing, { kind: 'fault', diagnostics: missing }] : [drawing])
 }
@@ -73,9 +73,7 @@ function elevation(
   const about = `Elevation of wall ${verbatim(wall.name)} of ${verbatim(level.name)}.`
   const what = !hasShears(level) ? '' : caseName ? ` Shear of case ${caseOnPage(caseName)}.` : ' Design shear.'
   const id = `${level.name}.elevation.${wall.name}${caseName ? `.${caseName}` : ''}`
-  return good([
-    { kind: 'figure', id: context.anchor(id), number: '', caption: context.words(about + what), ...made.value },
-  ])
+  return good([{ kind: 'figure', id: id, number: '', caption: context.words(about + what), ...made.value }])
 }
 
 function pierTable(level: LevelWork, wall: string, display: Display, context: Context): Result<readonly Piece[]> {
@@ -107,7 +105,7 @@ export function displacedFigure(
   const made = context.sketch.displaced(level, displacement)
   if (!made.ok) return made
   const { name } = displacement.result.case
-  const id = context.anchor(`${level.name}.displaced.${name}`)
+  const id = `${level.name}.displaced.${name}`
   const caption = context.words(
     `Displaced shape of ${verbatim(level.name)} in case ${caseOnPage(name)}, drawn larger by the factor in its key.`,
   )

@@ -20,8 +20,8 @@ export function explainGiven(block: Block, context: Context): readonly Piece[] {
   const joint = topic === 'construction' ? ' ' : ' of '
   const title = `${titles[topic] ?? topic}${about ? `${joint}${about.text}` : ''}, as given`
   const stated = [...settings, ...options]
-  const id = context.anchor(`given.${topic}${about ? `.${about.text}` : ''}`)
-  const lines = context.lines([block.info])
+  const id = `given.${topic}${about ? `.${about.text}` : ''}`
+  const lines = context.places([block.info])
   const pieces: Piece[] = []
   if (table) {
     const columns = table.header.map(({ name, unit }, i) => ({
@@ -52,7 +52,7 @@ export function explainGiven(block: Block, context: Context): readonly Piece[] {
         governs: false,
       }),
     )
-    pieces.push(given(table ? context.anchor(`${id}.settings`) : id, title, columns, rows, lines))
+    pieces.push(given(table ? `${id}.settings` : id, title, columns, rows, lines))
   }
   return pieces
 }

@@ -5,7 +5,6 @@ import { printed, printedNumeral, type Value } from '../base/value.ts'
 import type { Worksheet } from '../compute/worksheet.ts'
 import type { Block } from '../read/block.ts'
 import type { Context } from './context.ts'
-import { shownCheck } from './shears.ts'
 import type { Check, Piece } from './sheet.ts'
 
 /** The comment says what is checked and, after a semicolon, where the limit is from. */
@@ -13,7 +12,7 @@ export function limitPiece(line: Block['lines'][number], sheet: Worksheet, conte
   const limit = sheet.limit(line)
   if (!limit.ok) return { kind: 'fault', diagnostics: limit.because }
   const { id, demand, capacity, ratio } = limit.value
-  for (const value of [demand, capacity, ratio]) context.roots.set(value.id, value)
+  for (const value of [demand, capacity, ratio]) context.root(value)
   const [what = '', ...reference] = line.comment.split(';')
   const inUnit = (value: Value) => value.si / demand.unit.scale
   const ok = ratio.si <= 1
@@ -29,10 +28,10 @@ export function limitPiece(line: Block['lines'][number], sheet: Worksheet, conte
     ratioPrinted: numeralOnPage(ratioNumeral(ratio), context.language),
     ok,
     reference: reference.join(';').trim(),
-    sourceLines: context.lines([line.span]),
+    sourceLines: context.places([line.span]),
   }
   context.check(check)
-  return shownCheck(check, context)
+  return check
 }
 
 /** More digits than this tell a reader nothing. */

@@ -34,12 +34,23 @@ export interface NumberedDocument<P> {
 }
 
 /**
- * The same items, their pieces numbered within their section, and the marks of the headings. A lone first
- * heading is the title: it has no number, nor has one that brings its own.
+ * The same items, their pieces numbered within their section and told by lines of the source, and the marks of
+ * the headings. Every piece and heading has an anchor that nothing else on the page has. A lone first heading
+ * is the title: it has no number, nor has one that brings its own.
  *
- * @param anchor gives an id that nothing else on the page has
+ * @param linesOf the source lines of some places, ascending
  */
-export function numberItems<P>(items: readonly Numbered<P>[], anchor: (id: string) => string): NumberedDocument<P> {
+export function numberItems<P>(
+  items: readonly Numbered<P>[],
+  linesOf: (places: readonly number[]) => readonly number[],
+): NumberedDocument<P> {
+  const anchors = new Map<string, number>()
+  /** An id as an anchor; where it stands again it gets a number after it. */
+  const anchor = (id: string): string => {
+    const times = (anchors.get(id) ?? 0) + 1
+    anchors.set(id, times)
+    return times === 1 ? id : `${id}-${times}`
+  }
   const top = topDepth(items) ?? 6
   const headings = new Map<P, HeadingMark>()
   const pictures = new Map<P, string>()
@@ -65,7 +76,7 @@ export function numberItems<P>(items: readonly Numbered<P>[], anchor: (id: strin
       return {
         ...item,
         pieces: item.pieces.map(piece =>
-          piece.kind === 'heading' ? numberHeading(piece) : numberPiece(piece, counts[0] ?? 0, within),
+          piece.kind === 'heading' ? numberHeading(piece) : numberPiece(piece, anchor, linesOf, counts[0] ?? 0, within),
         ),
       }
     if (item.kind === 'picture') pictures.set(item.key, numberOf('figure', counts[0] ?? 0, within))
@@ -105,10 +116,53 @@ const loneTitle = ([first, ...rest]: readonly number[], parted: boolean): boolea
 
 type Counts = { equation: number; table: number; figure: number }
 
-function numberPiece(piece: Piece, section: number, within: Counts): Piece {
-  if (piece.kind !== 'equation' && piece.kind !== 'table' && piece.kind !== 'figure') return piece
-  return { ...piece, number: numberOf(piece.kind, section, within) }
+function numberPiece(
+  piece: Exclude<Piece, Heading>,
+  anchor: (id: string) => string,
+  linesOf: (places: readonly number[]) => readonly number[],
+  section: number,
+  within: Counts,
+): Piece {
+  switch (piece.kind) {
+    case 'note':
+    case 'fault':
+      return piece
+    case 'register':
+      return asBefore(piece, { id: anchor(piece.id) })
+    case 'check':
+      return asBefore(piece, { id: anchor(piece.id), sourceLines: linesOf(piece.sourceLines) })
+    case 'figure':
+      return asBefore(piece, { id: anchor(piece.id), number: numberOf(piece.kind, section, within) })
+    case 'equation':
+    case 'table':
+      return asBefore(piece, {
+        id: anchor(piece.id),
+        number: numberOf(piece.kind, section, within),
+        sourceLines: linesOf(piece.sourceLines),
+      })
+  }
 }
+
+interface Marks {
+  readonly id: string
+  readonly number?: string
+  readonly sourceLines?: readonly number[]
+}
+
+/** Each piece as it was numbered last. */
+const numbered = new WeakMap<Piece, Piece & Marks>()
+
+/** A piece with its marks; the same object as in the build before where nothing about it has changed. */
+function asBefore<T extends Piece & Marks>(piece: T, marks: Marks): Piece {
+  const known = numbered.get(piece)
+  if (known && known.id === marks.id && known.number === marks.number && sameLines(known, marks)) return known
+  const made = { ...piece, ...marks }
+  numbered.set(piece, made)
+  return made
+}
+
+const sameLines = ({ sourceLines: a = [] }: Marks, { sourceLines: b = [] }: Marks): boolean =>
+  a.length === b.length && a.every((line, i) => line === b[i])
 
 /** The next number of a kind within its section. */
 function numberOf(kind: keyof Counts, section: number, within: Counts): string {

@@ -2,7 +2,7 @@
 import type { Worksheet } from '../compute/worksheet.ts'
 import type { Choices } from '../model/front.ts'
 import type { Explained } from './blocks.ts'
-import type { Context } from './context.ts'
+import type { Account, Context } from './context.ts'
 import { explainCriteria } from './criteria.ts'
 import type { ContentsEntry } from './number.ts'
 import { explainRegister, worstFirst } from './registers.ts'
@@ -18,6 +18,7 @@ export function prefaceOf(
   choices: Choices,
   sheet: Worksheet,
   context: Context,
+  account: Account,
 ): Preface {
   const { cover, revisions } = choices
   const isListed = choices.contents ?? (cover || contents.length >= FEW)
@@ -25,15 +26,20 @@ export function prefaceOf(
     contents: isListed ? contents : [],
     checks: asked.has('checks')
       ? []
-      : worstFirst(context.checks).map(check => ({ check, place: context.placeOf(check.id, shown) })),
-    criteria: cover && !asked.has('criteria') ? explainCriteria(sheet, context) : undefined,
+      : worstFirst(account.checks).map(check => ({ check, place: account.placeOf(check.id, shown) })),
+    criteria: cover && !asked.has('criteria') ? explainCriteria(sheet, context, account) : undefined,
     revisions,
   }
 }
 
 /** What was assumed and what was relied on is always told: a document that leaves the lists out has them at its end. */
-export const closingOf = (asked: ReadonlySet<DocumentWant>, sheet: Worksheet, context: Context): readonly Register[] =>
+export const closingOf = (
+  asked: ReadonlySet<DocumentWant>,
+  sheet: Worksheet,
+  context: Context,
+  account: Account,
+): readonly Register[] =>
   (['assumptions', 'references'] as const)
     .filter(want => !asked.has(want))
-    .flatMap(want => explainRegister(want, sheet, context))
+    .flatMap(want => explainRegister(want, sheet, context, account))
     .filter(piece => piece.kind === 'register')

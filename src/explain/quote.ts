@@ -20,13 +20,13 @@ export function explainQuote({ id, options }: QuoteMark, scope: Scope, context: 
   if (isWord(found.value)) {
     // A word is told by the value that it is about.
     const about = scope.lookup(found.value.about)
-    if (about?.ok && !isWord(about.value)) context.besides.set(about.value.id, about.value)
+    if (about?.ok && !isWord(about.value)) context.beside(about.value)
     return good({
       id: found.value.about,
       printed: found.value.id.endsWith('.case') ? caseOnPage(found.value.text) : found.value.text,
     })
   }
-  context.roots.set(found.value.id, found.value)
+  context.root(found.value)
   if (options.text === '') return good({ id: found.value.id, printed: printed(found.value, context.language) })
   const asked = asAsked(found.value, options, context)
   return asked.ok ? good({ id: found.value.id, printed: asked.value }) : asked

@@ -1,24 +1,28 @@
 /** The lists of the whole document: what was assumed, what was relied on, what was checked. */
 import type { Worksheet } from '../compute/worksheet.ts'
 import type { Assumption } from '../model/scope.ts'
-import type { Context } from './context.ts'
+import type { Account, Context } from './context.ts'
 import { explainCriteria } from './criteria.ts'
 import type { DocumentWant } from './request.ts'
-import { shownCheck } from './shears.ts'
 import type { Check, Piece } from './sheet.ts'
 
 /** Worked after everything else, since they list what the rest did. */
-export function explainRegister(want: DocumentWant, sheet: Worksheet, context: Context): readonly Piece[] {
+export function explainRegister(
+  want: DocumentWant,
+  sheet: Worksheet,
+  context: Context,
+  account: Account,
+): readonly Piece[] {
   switch (want) {
     case 'criteria':
-      return [explainCriteria(sheet, context)]
+      return [explainCriteria(sheet, context, account)]
     case 'assumptions':
-      return [register('assumptions', 'Assumptions', assumptionItems(sheet.assumptions(), context), context)]
+      return [register('assumptions', 'Assumptions', assumptionItems(sheet.assumptions(), account), context)]
     case 'references':
-      return [register('references', 'References', referenceItems(context), context)]
+      return [register('references', 'References', referenceItems(account), context)]
     case 'checks':
-      return context.checks.length > 0
-        ? worstFirst(context.checks).map(check => shownCheck(check, context))
+      return account.unnumbered.length > 0
+        ? worstFirst(account.unnumbered)
         : [{ kind: 'note', text: 'No check is made in this document.' }]
   }
 }
@@ -33,19 +37,19 @@ type Items = readonly { readonly text: string; readonly detail: string }[]
 
 const register = (id: string, title: string, items: Items, context: Context): Piece =>
   items.length > 0
-    ? { kind: 'register', id: context.anchor(id), title: context.words(title), items }
+    ? { kind: 'register', id: id, title: context.words(title), items }
     : { kind: 'note', text: context.words(`This document has no ${title.toLowerCase()} to list.`) }
 
 /** What was taken by default, then what the formulas take for granted. */
-function assumptionItems(assumptions: readonly Assumption[], context: Context): Items {
+function assumptionItems(assumptions: readonly Assumption[], account: Account): Items {
   const byFormula = new Map<string, Set<string>>()
-  for (const { assumes, source } of context.formulas)
+  for (const { assumes, source } of account.formulas)
     for (const text of assumes) byFormula.set(text, (byFormula.get(text) ?? new Set()).add(source))
   return [
-    ...assumptions.map(({ text, because }) => ({ text: context.words(text), detail: context.words(because) })),
+    ...assumptions.map(({ text, because }) => ({ text: account.words(text), detail: account.words(because) })),
     ...[...byFormula].map(([text, sources]) => ({
-      text: context.words(sentence(text)),
-      detail: context.words([...sources].join('; ')),
+      text: account.words(sentence(text)),
+      detail: account.words([...sources].join('; ')),
     })),
   ]
 }
@@ -54,9 +58,9 @@ const sentence = (text: string): string =>
   `${/^[a-z] /i.test(text) ? text : text.charAt(0).toUpperCase() + text.slice(1)}.`
 
 /** Each source once, in the order of its first use: of formulas, then of the limits of checks. */
-function referenceItems(context: Context): Items {
-  const formulas = [...context.formulas].map(({ source }) => context.words(source))
-  const limits = context.checks.map(({ reference }) => reference)
+function referenceItems(account: Account): Items {
+  const formulas = [...account.formulas].map(({ source }) => account.words(source))
+  const limits = account.checks.map(({ reference }) => reference)
   return [...new Set([...formulas, ...limits])]
     .filter(source => source !== '' && !ownWords.includes(source))
     .map(source => ({ text: source, detail: '' }))

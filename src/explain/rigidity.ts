@@ -31,7 +31,7 @@ export function explainStiffness(
   const worked = shown.flatMap(name => stiffnessSteps(level, name, springs, walls, detail, context))
   if (detail === 'result') return worked
   // The table rests on the same formulas, with what they assume, whether or not a wall is worked in full.
-  for (const { k } of springs) if (k.origin.kind === 'worked') context.formulas.add(k.origin.step.formula)
+  for (const { k } of springs) if (k.origin.kind === 'worked') context.uses(k.origin.step.formula)
   const heights = walls.flatMap(({ height }) => height ?? [])
   const table = new Tabulation(
     springs.map(({ name }) => name),

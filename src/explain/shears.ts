@@ -235,9 +235,9 @@ export function explainEquilibrium(
       resisted.M,
       cases.map(({ residual }) => residual.resisted.M),
     )
-  for (const { residual } of cases) context.roots.set(residual.ratio.id, residual.ratio)
+  for (const { residual } of cases) context.root(residual.ratio)
   const residuals = cases.map(({ residual }) => residualOnPage(residual.ratio, context))
-  const check = shownCheck(equilibriumCheck(distribution, context), context)
+  const check = equilibriumCheck(distribution, context)
   if (detail === 'result') return [check]
   return [
     explainTable(
@@ -276,7 +276,7 @@ export function equilibriumCheck({ level, cases }: Distribution, context: Contex
   const display: Display = { system: 'US', relative: false }
   const worked = work(`${level}.equilibrium.ratio`, residualRatio, { R: worst, R_lim: limit }, display, [level])
   const ratio = worked.si
-  for (const value of [worst, limit, worked]) context.besides.set(value.id, value)
+  for (const value of [worst, limit, worked]) context.beside(value)
   return {
     kind: 'check',
     id: `${level}.equilibrium.check`,
@@ -292,6 +292,3 @@ export function equilibriumCheck({ level, cases }: Distribution, context: Contex
     sourceLines: [],
   }
 }
-
-/** A check where it stands on the page, with an anchor of its own. */
-export const shownCheck = (check: Check, context: Context): Check => ({ ...check, id: context.anchor(check.id) })

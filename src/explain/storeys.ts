@@ -30,7 +30,7 @@ export function explainStoreys(
   const figure: Piece = drawn.ok
     ? {
         kind: 'figure',
-        id: context.anchor('storeys.diagram'),
+        id: 'storeys.diagram',
         number: '',
         caption: context.words('Force of each level, and shear of the storey below it.'),
         ...drawn.value,

@@ -6,7 +6,7 @@ import type { Diagnostic } from '../base/diagnostic.ts'
 import { spansOf, type Value } from '../base/value.ts'
 import type { Choices, TitleBlock } from '../model/front.ts'
 import { diagnose } from '../read/text.ts'
-import type { Context } from './context.ts'
+import type { Account } from './context.ts'
 import { everyValue } from './trace.ts'
 
 /** What the cover and the margins of every sheet print, with an example of each. */
@@ -20,7 +20,7 @@ const carried: Readonly<Record<Exclude<keyof TitleBlock, 'checked' | 'by'>, stri
   standard: 'the standard and its edition',
 }
 
-export function missingForSubmittal(choices: Choices, context: Context): readonly Diagnostic[] {
+export function missingForSubmittal(choices: Choices, context: Account): readonly Diagnostic[] {
   return [...missingEntries(choices), ...signatures(choices), ...issue(choices), ...sources(context)]
 }
 
@@ -69,7 +69,7 @@ function issue({ cover, contents, revisions, at }: Choices): readonly Diagnostic
 }
 
 /** Formulas that a checker could not look up: the engineer's own without a source, and ours from memory. */
-function sources(context: Context): readonly Diagnostic[] {
+function sources(context: Account): readonly Diagnostic[] {
   const told = new Set<string>()
   const warn = (value: Value, what: string, message: string, help: string): readonly Diagnostic[] => {
     if (told.has(what)) return []

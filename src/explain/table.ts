@@ -39,7 +39,7 @@ export function explainTable(table: Tabulation, want: TableWant, context: Contex
   const decimals = decimalsByKind(table, want)
   const columns = want.columns.map(name => numberColumn(table, name, want.sums?.[name], decimals, context))
   const words = want.words ?? []
-  const id = context.anchor(want.id)
+  const id = want.id
   context.tabled(id, table)
   for (const name of want.columns) for (let i = 0; i < table.rows.length; i++) root(table.column(name).cell(i), context)
   for (const sum of Object.values(want.sums ?? {})) root(sum, context)
@@ -68,12 +68,12 @@ export function explainTable(table: Tabulation, want: TableWant, context: Contex
     rows,
     ...(want.sums ? { foot } : {}),
     formulas: formulasOf(table, want, context),
-    sourceLines: context.lines(givenSpans(table, want.columns)),
+    sourceLines: context.places(givenSpans(table, want.columns)),
   }
 }
 
 const root = (value: Value, context: Context): void => {
-  context.roots.set(value.id, value)
+  context.root(value)
 }
 
 interface NumberColumn {
@@ -124,7 +124,7 @@ function formulasOf(
   const found = columns.flatMap(name => {
     const { sym, formula } = table.column(name)
     if (!formula || knownFormulas.includes(name)) return []
-    context.formulas.add(formula)
+    context.uses(formula)
     const body = typeset(formula.body, symbol => letter(formula.symbols.get(symbol)?.tex ?? symbol), context.language)
     // W x is the product that its head says.
     if (texSource(body) === sym.tex) return []

@@ -1,12 +1,12 @@
 /** Where a number came from, as text: each step under the one that uses it, each value told once. */
 import { plain } from '../base/plain.ts'
 import { printed, type Value } from '../base/value.ts'
-import type { Context } from './context.ts'
+import type { Account } from './context.ts'
 import { substituted } from './equation.ts'
 import { letterPlain } from './letter.ts'
 import { ownSpans, sourceLine } from './traced.ts'
 
-export function traceText(value: Value, context: Context): string {
+export function traceText(value: Value, context: Account): string {
   const told = new Set<string>()
   const lines: string[] = []
   const waiting: { readonly value: Value; readonly depth: number }[] = [{ value, depth: 0 }]
@@ -23,7 +23,7 @@ export function traceText(value: Value, context: Context): string {
   return lines.join('\n')
 }
 
-function entryOf(value: Value, again: boolean, context: Context): readonly string[] {
+function entryOf(value: Value, again: boolean, context: Account): readonly string[] {
   const { id, tex, origin } = value
   const head = `${id}: ${letterPlain(tex)} = ${printed(value, context.language)}`
   const written = context.lines(ownSpans(origin)).map(line => `line ${line}: ${sourceLine(context.source, line)}`)

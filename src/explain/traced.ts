@@ -8,7 +8,7 @@ import { lineText, type Source, type Span } from '../base/span.ts'
 import { type Tex, tex, texSource } from '../base/tex.ts'
 import { letter, typeset } from '../base/typeset.ts'
 import { type Origin, printed, type Value } from '../base/value.ts'
-import type { Context } from './context.ts'
+import type { Account } from './context.ts'
 import { nearestValues } from './trace.ts'
 
 export interface TracedFormula {
@@ -48,7 +48,7 @@ export interface Traced {
 export const MOST_VALUES = 20_000
 
 /** What is printed and all that it rests on, or no more than `most` of it, nearest to what is printed. */
-export function traced(context: Context, most: number = MOST_VALUES): Traced {
+export function traced(context: Account, most: number = MOST_VALUES): Traced {
   const all = nearestValues([...context.besides.values(), ...context.roots.values()], most)
   const indexOf = new Map(all.map(({ id }, i) => [id, i]))
   const formulas = new Formulas(context)
@@ -87,9 +87,9 @@ class Formulas {
   private readonly known = new Map<Formula, { ofInputs?: number; own?: number }>()
   private readonly told = new Map<string, number>()
   private readonly list: TracedFormula[] = []
-  private readonly context: Context
+  private readonly context: Account
 
-  constructor(context: Context) {
+  constructor(context: Account) {
     this.context = context
   }
 
@@ -119,7 +119,7 @@ class Formulas {
   }
 }
 
-function tracedFormula(formula: Formula, context: Context): TracedFormula {
+function tracedFormula(formula: Formula, context: Account): TracedFormula {
   const { body, symbols, inShort, source, assumes } = formula
   const letters =
     inShort === undefined

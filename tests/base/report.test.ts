@@ -82,7 +82,7 @@ describe('a fault as text', () => {
 
   test('faults stand in the order of the page, each once', () => {
     const first = { ...outside, at: { span: spanOf('Shop'), text: '' } }
-    expect(sorted([outside, first, outside])).toEqual([first, outside])
+    expect(sorted(source, [outside, first, outside])).toEqual([first, outside])
   })
 
   test('the marks stand under their words when the line holds tabs or is very long', () => {

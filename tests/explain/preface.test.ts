@@ -109,8 +109,8 @@ describe('the lists at the end', () => {
     expect(preface.contents.map(({ number, text, id }) => [number, text, id])).toEqual([
       ['1', 'One', 'one'],
       ['2', 'Two', 'two'],
-      ['3', 'Assumptions', 'assumptions-2'],
-      ['4', 'References', 'references-2'],
+      ['3', 'Assumptions', 'assumptions'],
+      ['4', 'References', 'references'],
     ])
   })
 })
