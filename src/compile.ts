@@ -76,7 +76,7 @@ export function compileTree(tree: Root, source: Source, nearby: Nearby = nothing
   const { worked, asked, shown } = explainer.explain(document, source)
   const template = readTemplate(choices.template, nearby)
   const logo = readLogo(choices.logo, nearby)
-  const { placeOf } = context.account(source)
+  const { placeOf } = context.account(source, [])
   const quotes = explainQuotes(document, sheet, context, id => placeOf(id, shown))
   const diagnostics = sorted(source, [
     ...document.faults,
@@ -90,7 +90,7 @@ export function compileTree(tree: Root, source: Source, nearby: Nearby = nothing
     ...(logo.ok ? [] : logo.because),
   ])
   const own = itemsOf(document, worked, diagnostics)
-  const account = context.account(source)
+  const account = context.account(source, sheet.cells())
   const all = [...own, ...closingItems(closingOf(asked, sheet, context, account), own)]
   const { items, headings, pictures, contents } = numberItems(all, account.linesOf)
   const preface = prefaceOf(contents, { asked, shown }, choices, sheet, context, account)
@@ -136,7 +136,7 @@ function worksFor(givens: Givens, choices: Choices, memory: Memory): Works {
 export function sheetOf(
   { choices, preface, template, logo, diagnostics }: Compiled,
   version: string,
-  sha256: string,
+  sourceMark: string,
   draft: boolean,
 ): Sheet {
   return {
@@ -147,7 +147,7 @@ export function sheetOf(
     template,
     logo,
     language: choices.language,
-    sourceMark: `${sha256.slice(0, 4)} ${sha256.slice(4, 8)}`,
+    sourceMark,
     version,
     faults: diagnostics.filter(({ severity }) => severity === 'error'),
     draft,

@@ -12,13 +12,14 @@ import type { PlacedPicture } from './read/pictures.ts'
 import { besideNames } from './render/beside.ts'
 import type { BodyPart } from './render/body.ts'
 import { type LivePage, livePage, type Page, renderHtml } from './render/html.ts'
+import { marksOf } from './render/html-marks.ts'
 import { renderJson } from './render/json.ts'
 import { documentNodes } from './render/markdown.ts'
 import { bodyNodes, liftOf } from './render/markdown-body.ts'
 import { markdownSettings } from './render/math-nodes.ts'
 import { type Paper, renderPaper } from './render/paper.ts'
 import type { Part } from './render/parts.ts'
-import { onlyPictured, picturesBeside, picturesInPage } from './render/pictures.ts'
+import { holdsPicture, onlyPictured, picturesBeside, picturesInPage } from './render/pictures.ts'
 import { isDefinition, proseHtml } from './render/prose.ts'
 import { unpackShapes } from './render/shape-pack.ts'
 import { createShapeCache, type ShapeCache } from './render/typeset.ts'
@@ -80,29 +81,47 @@ export function paperOf(compiled: Compiled, draft: boolean, host: Host): Paper {
 
 /** The page for a browser that is told of each change. */
 export const livePageOf = (compiled: Compiled, draft: boolean, host: Host): LivePage =>
-  livePage(pageOf(compiled, draft, host))
+  livePage(pageOf(compiled, draft, host, 'being edited'))
 
-function pageOf(compiled: Compiled, draft: boolean, host: Host): Page {
-  const { source } = compiled
-  const sheet = sheetOf(compiled, host.version, host.sha256(source.text), draft)
+function pageOf(compiled: Compiled, draft: boolean, host: Host, mark = sourceMarkOf(compiled, host)): Page {
+  const { source, context } = compiled
   return {
-    sheet,
+    sheet: sheetOf(compiled, host.version, mark, draft),
     body: bodyOf(compiled),
     source,
     asset: host.asset,
     shapes: shapesOf(host),
-    traced: traced(compiled.context),
+    trace: { marks: marksOf(context), traced: () => traced(context) },
   }
 }
 
+/** First eight hex digits of the source's SHA-256, grouped in fours. */
+function sourceMarkOf({ source }: Compiled, host: Host): string {
+  const hash = host.sha256(source.text)
+  return `${hash.slice(0, 4)} ${hash.slice(4, 8)}`
+}
+
 function bodyOf({ parts, pictures }: Compiled): readonly BodyPart[] {
-  const shown = parts.map(
-    (part): Part => (part.kind === 'prose' ? { ...part, nodes: picturesInPage(part.nodes, pictures) } : part),
-  )
-  const definitions = definitionsIn(shown)
-  return shown.flatMap((part, i): readonly BodyPart[] =>
-    part.kind === 'pieces' ? part.pieces : [{ kind: 'prose', html: proseHtml(part.nodes, definitions, `note-${i}`) }],
-  )
+  const definitions = definitionsIn(parts)
+  return parts.flatMap((part, i): readonly BodyPart[] => {
+    if (part.kind === 'pieces') return part.pieces
+    // What leads elsewhere, or holds a picture, tells more than its own nodes do.
+    if (definitions.length > 0 || part.nodes.some(holdsPicture))
+      return [{ kind: 'prose', html: proseHtml(picturesInPage(part.nodes, pictures), definitions, `note-${i}`) }]
+    return [proseAsBefore(part.nodes)]
+  })
+}
+
+/** Each stretch of prose as it was set last, by its first node. */
+const setBefore = new WeakMap<RootContent, { readonly nodes: readonly RootContent[]; readonly prose: BodyPart }>()
+
+function proseAsBefore(nodes: readonly RootContent[]): BodyPart {
+  const [first] = nodes
+  const before = first && setBefore.get(first)
+  if (before?.nodes.length === nodes.length && nodes.every((node, i) => node === before.nodes[i])) return before.prose
+  const prose: BodyPart = { kind: 'prose', html: proseHtml(nodes, [], '') }
+  if (first) setBefore.set(first, { nodes, prose })
+  return prose
 }
 
 const definitionsIn = (parts: readonly Part[]): readonly RootContent[] =>
@@ -140,7 +159,7 @@ function markdown(compiled: Compiled, stem: string, draft: boolean, host: Host):
         : part,
   )
   const body = bodyNodes(shown, liftOf(shown), { source, figureFile })
-  const sheet = sheetOf(compiled, host.version, host.sha256(source.text), draft)
+  const sheet = sheetOf(compiled, host.version, sourceMarkOf(compiled, host), draft)
   const root: Root = { type: 'root', children: [...documentNodes(sheet, body)] }
   linkAddresses(root)
   return [{ name: `${stem}.md`, text: writer.stringify(root) }, ...beside]

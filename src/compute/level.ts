@@ -143,10 +143,11 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     return all.ok ? all.value.find(({ name }) => name === wall) : undefined
   }
 
-  const lineOf = new Map<string, WallLine>()
+  // What is known of a wall is known of it as it was read: read again, it is another.
+  const lineOf = new WeakMap<Wall, WallLine>()
   const lineFor = (wall: Wall): WallLine => {
-    const known = lineOf.get(wall.name) ?? workLine(wall, name, scope.display)
-    lineOf.set(wall.name, known)
+    const known = lineOf.get(wall) ?? workLine(wall, name, scope.display)
+    lineOf.set(wall, known)
     return known
   }
 
@@ -165,12 +166,12 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     return known()
   }
 
-  const stiffnesses = new Map<string, () => Result<Value>>()
+  const stiffnesses = new WeakMap<Wall, () => Result<Value>>()
   const stiffnessFor = (wall: Wall): Result<Value> => {
-    let known = stiffnesses.get(wall.name)
+    let known = stiffnesses.get(wall)
     if (!known) {
       known = once(`wall.${wall.name}.k`, () => workWallStiffness(wall), wall.span)
-      stiffnesses.set(wall.name, known)
+      stiffnesses.set(wall, known)
     }
     return known()
   }
@@ -185,12 +186,12 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     return good(workStiffness(wall, lineFor(wall).L, parts.value.construction, parts.value.moduli, name, scope.display))
   }
 
-  const piercings = new Map<string, () => Result<Pierced | undefined>>()
+  const piercings = new WeakMap<Wall, () => Result<Pierced | undefined>>()
   const piercedFor = (wall: Wall): Result<Pierced | undefined> => {
-    let known = piercings.get(wall.name)
+    let known = piercings.get(wall)
     if (!known) {
       known = once(`wall.${wall.name}.openings`, () => workPiercedWall(wall), wall.span)
-      piercings.set(wall.name, known)
+      piercings.set(wall, known)
     }
     return known()
   }

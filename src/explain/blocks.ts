@@ -99,7 +99,7 @@ function explainBlocks(
         kept(block, () => workingPieces(block, request.value, sheet, context)),
       )
   }
-  const account = context.account(source)
+  const account = context.account(source, [])
   for (const [node, block, request] of requests)
     if (request.ok && request.value.wants.some(isDocumentWant))
       worked.set(node, workingPieces(block, request.value, sheet, context, account))
@@ -160,10 +160,19 @@ function equationPieces(block: Block, sheet: Worksheet, context: Context): reado
 }
 
 /** A quote with the place it leads to, or the words that stand where it would be. */
-export type Quoted = { readonly within: QuoteMark['within'] } & (
-  | { readonly quote: Quote; readonly place: string | undefined }
-  | { readonly missing: string; readonly faults: readonly Diagnostic[] }
-)
+export type Quoted = FoundQuote | MissingQuote
+
+interface FoundQuote {
+  readonly within: QuoteMark['within']
+  readonly quote: Quote
+  readonly place: string | undefined
+}
+
+interface MissingQuote {
+  readonly within: QuoteMark['within']
+  readonly missing: string
+  readonly faults: readonly Diagnostic[]
+}
 
 /** The quotes of each text of the prose, in order. */
 export type Quotes = ReadonlyMap<TextNode, readonly Quoted[]>
@@ -180,10 +189,22 @@ export function explainQuotes(
     const quote = explainQuote(mark, sheet.scope, context)
     const { within, node, id } = mark
     const quoted: Quoted = quote.ok
-      ? { within, quote: quote.value, place: placeOf(quote.value.id) }
+      ? quotedAsBefore(mark, { within, quote: quote.value, place: placeOf(quote.value.id) })
       : { within, missing: `${id.text}: not worked`, faults: quote.because }
     found.set(node, [...(found.get(node) ?? []), quoted])
   }
+  return found
+}
+
+/** What each quote said last. */
+const saidBefore = new WeakMap<QuoteMark, FoundQuote>()
+
+/** A quote as it is found; the same object as in the build before where it says the same. */
+function quotedAsBefore(mark: QuoteMark, found: FoundQuote): FoundQuote {
+  const before = saidBefore.get(mark)
+  const { quote, place } = found
+  if (before?.quote.printed === quote.printed && before.quote.id === quote.id && before.place === place) return before
+  saidBefore.set(mark, found)
   return found
 }
 

@@ -94,7 +94,7 @@ export class Context {
   }
 
   /** What has been told in this build so far. */
-  account(source: Source): Account {
+  account(source: Source, cells: readonly Value[]): Account {
     const { ledger } = this
     const lines = (places: Iterable<number>) =>
       [...new Set([...places].map(place => lineOf(source, place)))].sort((a, b) => a - b)
@@ -108,6 +108,7 @@ export class Context {
       source,
       roots: byId(ledger.told(told.root)),
       besides: byId(ledger.told(told.beside)),
+      cells,
       cited: new Set(ledger.told(told.cited)),
       formulas: new Set(ledger.told(told.formula)),
       checks: [...checks.values()],
@@ -129,6 +130,8 @@ export interface Account {
   readonly roots: ReadonlyMap<string, Value>
   /** Values that are printed and can be traced, but are no part of the results. */
   readonly besides: ReadonlyMap<string, Value>
+  /** Values of the cells that were read, whether or not anything rests on them. */
+  readonly cells: readonly Value[]
   /** Ids of the engineer's own lines that say where their formula is from. */
   readonly cited: ReadonlySet<string>
   /** Every formula that was printed, in order. */

@@ -49,7 +49,7 @@ export const MOST_VALUES = 20_000
 
 /** What is printed and all that it rests on, or no more than `most` of it, nearest to what is printed. */
 export function traced(context: Account, most: number = MOST_VALUES): Traced {
-  const all = nearestValues([...context.besides.values(), ...context.roots.values()], most)
+  const all = nearestValues([...context.besides.values(), ...context.roots.values(), ...context.cells], most)
   const indexOf = new Map(all.map(({ id }, i) => [id, i]))
   const formulas = new Formulas(context)
   const lines = new Map<number, string>()
@@ -176,14 +176,14 @@ export interface Placed extends Span {
 
 /**
  * Finds the values that the engineer wrote within a stretch of the source, in order and none within another.
+ * @param cells values of the cells that were read
  */
-export function givenWithin({ values }: Traced): (at: Span) => readonly Placed[] {
-  const placed = values
-    .flatMap(({ value, kind }): readonly Placed[] =>
-      kind === 'given' || kind === 'worked' ? ownSpans(value.origin).map(span => ({ ...span, id: value.id })) : [],
-    )
-    .sort((a, b) => a.start - b.start || b.end - a.end || (a.id < b.id ? -1 : 1))
+export function givenWithin(cells: Iterable<Value>): (at: Span) => readonly Placed[] {
+  let placed: readonly Placed[] | undefined
   return ({ start, end }) => {
+    placed ??= [...cells]
+      .flatMap(({ id, origin }) => ownSpans(origin).map(span => ({ ...span, id })))
+      .sort((a, b) => a.start - b.start || b.end - a.end || (a.id < b.id ? -1 : 1))
     const found: Placed[] = []
     for (let i = firstFrom(placed, start); i < placed.length; i++) {
       const each = placed[i]

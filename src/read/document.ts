@@ -2,10 +2,10 @@
  * Markdown to prose and blocks with their places. The tree stays as remark made it; blocks and quotes
  * are found in it.
  */
-import type { Code, Definition, Html, Link, Node, Root, Text as TextNode, Yaml } from 'mdast'
+import type { Code, Definition, Html, Link, Node, Root, RootContent, Text as TextNode, Yaml } from 'mdast'
 import type { Diagnostic } from '../base/diagnostic.ts'
 import { nearNames } from '../base/near.ts'
-import { lineOf, lineText, type Source } from '../base/span.ts'
+import { lineOf, lineText, offsetOf, type Source } from '../base/span.ts'
 import { type Block, readBlock } from './block.ts'
 import { type FrontMatter, noFrontMatter, readFront } from './front.ts'
 import { isSafeLink } from './links.ts'
@@ -34,32 +34,63 @@ export interface Document {
 }
 
 export function readDocument(tree: Root, source: Source, nearby: Nearby = nothingNearby): Document {
-  const faults: Diagnostic[] = []
-  const blocks = new Map<Code, Block>()
-  const quotes: QuoteMark[] = []
-  const links: (Link | Definition)[] = []
-  const definitions: Definition[] = []
-  const shown: PictureNode[] = []
-  let front = noFrontMatter
-  const cut = visit(tree, node => {
-    if (isYaml(node) && front === noFrontMatter) front = readFront(yamlText(node))
-    else if (isCode(node)) {
-      const block = blockOf(node, source, faults)
-      if (block) blocks.set(node, block)
-    } else if (isHtml(node)) faults.push(...htmlLeftOut(node))
-    else if (isLink(node)) {
-      if (node.type === 'definition') definitions.push(node)
-      links.push(node)
-    } else if (isPicture(node)) shown.push(node)
-    else if (isText(node)) quotes.push(...quotesIn(node, source))
-  })
+  const seen = tree.children.map(node => seenIn(node, source))
+  const links = seen.flatMap(({ links }) => links)
+  const shown = seen.flatMap(({ shown }) => shown)
   // What defines nothing but a picture is no link, and the picture tells of it.
   const pictured = new Set(shown.flatMap(node => (node.type === 'imageReference' ? [node.identifier] : [])))
   const isLeftOut = (node: Link | Definition) =>
     !isSafeLink(node.url) && !(node.type === 'definition' && pictured.has(node.identifier))
+  const definitions = links.filter(node => node.type === 'definition')
   const { pictures, faults: pictureFaults } = readPictures(shown, definitions, nearby)
-  faults.push(...links.filter(isLeftOut).map(linkLeftOut), ...pictureFaults, ...cut.map(nestedTooDeep))
-  return { source, tree, front, blocks, quotes, pictures, faults }
+  return {
+    source,
+    tree,
+    front: seen.find(({ front }) => front)?.front ?? noFrontMatter,
+    blocks: new Map(seen.flatMap(({ blocks }) => blocks)),
+    quotes: seen.flatMap(({ quotes }) => quotes),
+    pictures,
+    faults: [...seen.flatMap(({ faults }) => faults), ...links.filter(isLeftOut).map(linkLeftOut), ...pictureFaults],
+  }
+}
+
+/** What is found in a part of the document, in reading order. */
+interface Seen {
+  readonly front: FrontMatter | undefined
+  readonly blocks: readonly (readonly [Code, Block])[]
+  readonly quotes: readonly QuoteMark[]
+  readonly links: readonly (Link | Definition)[]
+  readonly shown: readonly PictureNode[]
+  readonly faults: readonly Diagnostic[]
+}
+
+/** A part is looked through once, however many builds it stands in. */
+const known = new WeakMap<RootContent, Seen>()
+
+function seenIn(node: RootContent, source: Source): Seen {
+  const seen = known.get(node) ?? lookThrough(node, source)
+  known.set(node, seen)
+  return seen
+}
+
+function lookThrough(part: RootContent, source: Source): Seen {
+  const faults: Diagnostic[] = []
+  const blocks: (readonly [Code, Block])[] = []
+  const quotes: QuoteMark[] = []
+  const links: (Link | Definition)[] = []
+  const shown: PictureNode[] = []
+  let front: FrontMatter | undefined
+  const cut = visit(part, node => {
+    if (isYaml(node)) front ??= readFront(yamlText(node))
+    else if (isCode(node)) {
+      const block = blockOf(node, source, faults)
+      if (block) blocks.push([node, block])
+    } else if (isHtml(node)) faults.push(...htmlLeftOut(node))
+    else if (isLink(node)) links.push(node)
+    else if (isPicture(node)) shown.push(node)
+    else if (isText(node)) quotes.push(...quotesIn(node, source))
+  })
+  return { front, blocks, quotes, links, shown, faults: [...faults, ...cut.map(nestedTooDeep)] }
 }
 
 const isYaml = (node: Node): node is Yaml => node.type === 'yaml'
@@ -73,8 +104,8 @@ const isText = (node: Node): node is TextNode => node.type === 'text'
 const DEEPEST = 60
 
 /** Sees every node in reading order. @returns the nodes whose contents were cut off */
-function visit(tree: Root, see: (node: Node) => void): readonly Node[] {
-  const waiting: { readonly node: Node; readonly depth: number }[] = [{ node: tree, depth: 0 }]
+function visit(part: Node, see: (node: Node) => void): readonly Node[] {
+  const waiting: { readonly node: Node; readonly depth: number }[] = [{ node: part, depth: 1 }]
   const cut: Node[] = []
   for (let next = waiting.pop(); next; next = waiting.pop()) {
     const { node, depth } = next
@@ -149,7 +180,8 @@ function strangeTopic(node: Code, word: string): Diagnostic | undefined {
 /** The fence's first line after its marks, wherever the fence stands. */
 function infoText(node: Code, source: Source): Text {
   const start = startOf(node)
-  const line = source.text.slice(start, lineEnd(source, start))
+  const offset = offsetOf(source, start)
+  const line = source.text.slice(offset, lineEnd(source, offset))
   const marks = /^[`~]+\s*/.exec(line)?.[0].length ?? 0
   const text = line.slice(marks).trimEnd()
   return { text, span: { start: start + marks, end: start + marks + text.length } }
@@ -164,11 +196,13 @@ function lineEnd({ text }: Source, from: number): number {
 function contentLines(node: Code, source: Source): readonly Text[] {
   if (node.value === '') return []
   const first = lineOf(source, startOf(node)) + 1
+  /** From an offset in the text to the address that it has in this fence. */
+  const shift = startOf(node) - offsetOf(source, startOf(node))
   return node.value.split('\n').map((raw, i) => {
     const text = raw.replace(/\r$/, '')
     const line = first + i
     const lineStart = source.lineStarts[line - 1] ?? source.text.length
-    const start = lineStart + Math.max(0, lineText(source, line).length - text.length)
+    const start = shift + lineStart + Math.max(0, lineText(source, line).length - text.length)
     return { text, span: { start, end: start + text.length } }
   })
 }
@@ -200,15 +234,16 @@ const QUOTE = /\{\{\s*([^{}|]*?)\s*(?:\|\s*([^{}]*?)\s*)?\}\}/g
 
 function quotesIn(node: TextNode, source: Source): readonly QuoteMark[] {
   if (!node.value.includes('{{')) return []
-  let from = startOf(node)
+  const shift = startOf(node) - offsetOf(source, startOf(node))
+  let from = startOf(node) - shift
   return [...node.value.matchAll(QUOTE)].map(found => {
     const [whole, id = '', options = ''] = found
     const at = Math.max(0, source.text.indexOf(whole, from))
     from = at + whole.length
     return {
       node,
-      id: placed(id, at + whole.indexOf(id)),
-      options: placed(options, at + whole.lastIndexOf(options)),
+      id: placed(id, shift + at + whole.indexOf(id)),
+      options: placed(options, shift + at + whole.lastIndexOf(options)),
       within: { start: found.index, end: found.index + whole.length },
     }
   })

@@ -15,13 +15,15 @@ export function parseMarkdown(text: string): Root {
   const pieces = piecesOf(text)
   if (pieces === undefined) return whole().parse(text)
   const children: RootContent[] = []
-  for (const piece of pieces) {
-    if (piece.kind === 'fence') children.push(codeOf(piece, text))
-    else for (const child of parsePiece(piece, text).children) children.push(child)
-  }
+  for (const piece of pieces) for (const child of nodesOf(piece, text, piece.start)) children.push(child)
   const lines = text.split('\n')
   const end = { line: lines.length, column: (lines.at(-1)?.length ?? 0) + 1, offset: text.length }
   return { type: 'root', children, position: { start: { line: 1, column: 1, offset: 0 }, end } }
+}
+
+/** @param address place of the piece's beginning, where its nodes are to say that they stand */
+export function nodesOf(piece: Piece, text: string, address: number): readonly RootContent[] {
+  return piece.kind === 'fence' ? [codeOf(piece, text, address)] : parsePiece(piece, text, address).children
 }
 
 // Readers are made when first wanted: few documents want all of them.
@@ -52,12 +54,12 @@ const mayHoldBareLink = (piece: string): boolean =>
   BARE_LINK.test(piece) &&
   BARE_LINK.test(piece.replace(PLAIN_LINK, (link, label: string) => (BARE_LINK.test(label) ? link : '')))
 
-function parsePiece({ start, end, line }: Piece, text: string): Root {
+function parsePiece({ start, end, line }: Piece, text: string, address: number): Root {
   const piece = text.slice(start, end)
   const bareLinks = mayHoldBareLink(piece)
   if (start === 0) return (bareLinks ? whole : first)().parse(piece)
   const tree = (bareLinks ? later.bareLinks : later.plain)().parse(piece)
-  shift(tree, line - 1, start)
+  shift(tree, line - 1, address)
   return tree
 }
 
@@ -98,7 +100,11 @@ function shift(tree: Root, lines: number, offset: number): void {
 }
 
 /** A fence at the margin, whose text is taken as it stands. */
-function codeOf({ start, end, line, lastLine, info, content }: Extract<Piece, { kind: 'fence' }>, text: string): Code {
+function codeOf(
+  { start, end, line, lastLine, info, content }: Extract<Piece, { kind: 'fence' }>,
+  text: string,
+  address: number,
+): Code {
   const [, lang = null, meta = null] = /^(\S+)(?:\s+(.*))?$/s.exec(info) ?? []
   const column = end - text.lastIndexOf('\n', end - 1)
   return {
@@ -107,8 +113,8 @@ function codeOf({ start, end, line, lastLine, info, content }: Extract<Piece, { 
     meta,
     value: content,
     position: {
-      start: { line, column: 1, offset: start },
-      end: { line: lastLine, column, offset: end },
+      start: { line, column: 1, offset: address },
+      end: { line: lastLine, column, offset: address + end - start },
     },
   }
 }

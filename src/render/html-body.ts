@@ -1,6 +1,6 @@
 /** Prose and pieces in reading order. */
 import type { Check } from '../explain/sheet.ts'
-import type { BodyPart } from './body.ts'
+import type { BodyPart, Prose } from './body.ts'
 import { checkHtml } from './html-check.ts'
 import type { Setting } from './html-parts.ts'
 import { pieceHtml } from './html-pieces.ts'
@@ -23,9 +23,9 @@ export function bodyBlocks(body: readonly BodyPart[], setting: Setting): readonl
     }
     closeChecks()
     if (part.kind === 'prose') {
-      const prose = proseHtml(part.html, lift)
+      const prose = proseAsBefore(part, lift)
       level = prose.lastLevel === undefined ? level : Math.min(6, prose.lastLevel + 1)
-      out.push(`<div class="prose">${prose.html}</div>`)
+      out.push(prose.html)
     } else out.push(pieceHtml(part, { ...setting, level }))
   }
   closeChecks()
@@ -37,12 +37,21 @@ const tags = /<(\/?)([a-z][a-z0-9]*)((?:"[^"]*"|'[^']*'|[^'">])*)>(\d+(?:\.\d+)*
 
 /** Level of the highest heading in the prose: it becomes the page's second, below the title. */
 function topLevel(body: readonly BodyPart[]): number {
-  const levels = body.flatMap(part => (part.kind === 'prose' ? headingLevels(part.html) : []))
-  return levels.length === 0 ? 2 : Math.min(...levels)
+  let top = 7
+  for (const part of body)
+    if (part.kind === 'prose') for (const level of headingLevels(part)) top = Math.min(top, level)
+  return top === 7 ? 2 : top
 }
 
-const headingLevels = (html: string): readonly number[] =>
-  Array.from(html.matchAll(tags), ([, , name = '']) => levelOf(name)).filter(level => level > 0)
+const levelsBefore = new WeakMap<Prose, readonly number[]>()
+
+function headingLevels(prose: Prose): readonly number[] {
+  const known =
+    levelsBefore.get(prose) ??
+    Array.from(prose.html.matchAll(tags), ([, , name = '']) => levelOf(name)).filter(level => level > 0)
+  levelsBefore.set(prose, known)
+  return known
+}
 
 /** 1 to 6 for `h1` to `h6`, otherwise 0. */
 const levelOf = (name: string): number => (/^h[1-6]$/i.test(name) ? Number(name.charAt(1)) : 0)
@@ -50,6 +59,16 @@ const levelOf = (name: string): number => (/^h[1-6]$/i.test(name) ? Number(name.
 interface SetProse {
   readonly html: string
   readonly lastLevel: number | undefined
+}
+
+const setBefore = new WeakMap<Prose, { readonly lift: number; readonly set: SetProse }>()
+
+function proseAsBefore(prose: Prose, lift: number): SetProse {
+  const before = setBefore.get(prose)
+  if (before?.lift === lift) return before.set
+  const set = proseHtml(prose.html, lift)
+  setBefore.set(prose, { lift, set })
+  return set
 }
 
 /** Prose with its headings moved by `lift` levels, their numbers marked, and its tables in boxes that scroll. */
@@ -65,5 +84,5 @@ function proseHtml(html: string, lift: number): SetProse {
     if (name.toLowerCase() !== 'table') return tag
     return slash === '' ? `<div class="scroll" tabindex="0">${tag}` : `${tag}</div>`
   })
-  return { html: set, lastLevel }
+  return { html: `<div class="prose">${set}</div>`, lastLevel }
 }

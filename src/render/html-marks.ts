@@ -1,6 +1,7 @@
 /** Marks on the page: which value a printed number is. They change nothing that is seen. */
 import type { Span } from '../base/span.ts'
-import { givenWithin, type Placed, type Traced } from '../explain/traced.ts'
+import type { Account } from '../explain/context.ts'
+import { givenWithin, MOST_VALUES, type Placed } from '../explain/traced.ts'
 import { escapeHtml, pageText } from './escape.ts'
 
 export interface Marks {
@@ -12,9 +13,16 @@ export interface Marks {
 
 export const noMarks: Marks = { has: () => false, within: () => [] }
 
-export function marksOf(traced: Traced): Marks {
-  const ids = new Set(traced.values.map(({ value }) => value.id))
-  return { has: id => ids.has(id), within: givenWithin(traced) }
+/** The marks of a page: what is told of while explaining can be told of by its panel. */
+export function marksOf({ roots, besides, cells }: Account): Marks {
+  const inOrder = [...besides.keys(), ...roots.keys()]
+  const within = givenWithin(cells)
+  // A page of very many values tells of the first only.
+  if (inOrder.length > MOST_VALUES) {
+    const told = new Set(inOrder.slice(0, MOST_VALUES))
+    return { has: id => told.has(id), within }
+  }
+  return { has: id => roots.has(id) || besides.has(id), within }
 }
 
 /** Text that prints a value as a whole. */

@@ -5,9 +5,30 @@ import { checkHtml } from './html-check.ts'
 import { equationHtml } from './html-equation.ts'
 import { faultHtml } from './html-fault.ts'
 import { idAttribute, type Setting, titleHtml } from './html-parts.ts'
-import { tableHtml } from './html-table.ts'
+import { marksInTable, tableHtml } from './html-table.ts'
 
+/** A piece that the build before had too is not set anew. */
 export function pieceHtml(piece: Piece, setting: Setting): string {
+  const { typesetter, medium, level } = setting
+  const anew = () => setPiece(piece, setting)
+  switch (piece.kind) {
+    case 'equation':
+      return typesetter.kept(piece, medium, anew)
+    case 'table':
+      return typesetter.kept(piece, `${medium} ${marksInTable(piece, setting.marks)}`, anew)
+    case 'register':
+      return typesetter.kept(piece, String(level), anew)
+    case 'figure':
+      return typesetter.kept(piece, '', anew)
+    case 'check':
+    case 'note':
+    case 'heading':
+    case 'fault':
+      return anew()
+  }
+}
+
+function setPiece(piece: Piece, setting: Setting): string {
   switch (piece.kind) {
     case 'equation':
       return equationHtml(piece, setting)

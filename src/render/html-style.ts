@@ -4,7 +4,7 @@ import type { BodyPart } from './body.ts'
 import { cssString } from './escape.ts'
 import { type Face, facesFor, needsOf } from './faces.ts'
 import { CAUTION, draftWords, markOf } from './imprint.ts'
-import { mathFaces, mathRules } from './math-faces.ts'
+import { allMathFaces, mathFaces, mathRules } from './math-faces.ts'
 import type { Medium } from './medium.ts'
 
 export interface Styled {
@@ -34,6 +34,34 @@ export function styleOf({ sheet, body, asset }: Styled, classes: ReadonlySet<str
     paperRules(sheet),
   ].join('\n')
 }
+
+/**
+ * The style of a page that changes while it is looked at: all faces and rules, and nothing that tells of this
+ * build, so that it stays the same for as long as the firm's own style does.
+ */
+export function liveStyle({ sheet, asset }: Styled): string {
+  const before = liveBefore.get(asset)
+  const css = sheet.template.css ?? ''
+  if (before?.css === css && before.paper === sheet.paper) return before.style
+  const faceList = JSON.parse(asset('faces.screen.json')) as readonly Face[]
+  const faces = [...faceList.map(({ name }) => name), ...allMathFaces]
+  const style = [
+    ...faces.map(name => asset(`faces/${name}.css`)),
+    asset('katex.css'),
+    asset('sheet.css'),
+    asset('trace.css'),
+    css,
+    `@page{size:${sheet.paper}}`,
+  ].join('\n')
+  liveBefore.set(asset, { css, paper: sheet.paper, style })
+  return style
+}
+
+/** The style of a host's last live page. */
+const liveBefore = new WeakMap<
+  Styled['asset'],
+  { readonly css: string; readonly paper: string; readonly style: string }
+>()
 
 const hasCode = (body: readonly BodyPart[]): boolean =>
   body.some(part => part.kind === 'fault' || (part.kind === 'prose' && /<(?:code|pre|kbd|samp)[\s>]/.test(part.html)))

@@ -4,7 +4,7 @@ import { joinTex } from '../base/tex.ts'
 import { unitOnPage } from '../base/unit.ts'
 import type { Column, ColumnFormula, Row, Table } from '../explain/sheet.ts'
 import { escapeHtml, pageText } from './escape.ts'
-import { givenText, markedText } from './html-marks.ts'
+import { givenText, type Marks, markedText } from './html-marks.ts'
 import { idAttribute, inlineMath, type Setting, sourceHtml, titleHtml } from './html-parts.ts'
 import { fitFactor, tableWidth } from './measure.ts'
 
@@ -35,6 +35,23 @@ ${rows.map(row => rowHtml(row, columns, setting)).join('\n')}
 </table></div>
 ${formulas.length === 0 ? '' : `<ul class="how">${formulas.map(formula => formulaHtml(formula, setting)).join('')}</ul>\n`}</div>`
 }
+
+/** Which numbers of a table bear marks, in short. */
+export const marksInTable = ({ rows, foot }: Table, marks: Marks): string =>
+  [...rows, ...(foot ? [foot] : [])]
+    .map(({ cells, ids = [], places = [] }) => {
+      const printed = ids.map(id => (marks.has(id) ? '1' : '0')).join('')
+      const repeated = places.map((place, i) =>
+        cells[i] === ''
+          ? ''
+          : marks
+              .within(place)
+              .map(({ id }) => id)
+              .join(),
+      )
+      return printed + repeated.join('|')
+    })
+    .join('/')
 
 function headHtml({ head, unit, align }: Column, setting: Setting): string {
   const title = typeof head === 'string' ? pageText(head) : inlineMath(head, setting)

@@ -4,11 +4,11 @@ import type { Sheet, TitleBlock } from '../explain/sheet.ts'
 import type { Traced } from '../explain/traced.ts'
 import { escapeHtml, pageText } from './escape.ts'
 import { bodyBlocks } from './html-body.ts'
-import { marksOf, noMarks } from './html-marks.ts'
+import { type Marks, noMarks } from './html-marks.ts'
 import type { Setting } from './html-parts.ts'
 import { bannerHtml, coverHtml, logoHtml, plateHtml } from './html-plate.ts'
 import { contentsHtml, criteriaHtml, revisionsHtml, summaryHtml } from './html-preface.ts'
-import { type Styled, styleOf } from './html-style.ts'
+import { liveStyle, type Styled, styleOf } from './html-style.ts'
 import { CAUTION, markOf } from './imprint.ts'
 import { type Island, islandHtml, islandOf } from './island.ts'
 import type { Medium } from './medium.ts'
@@ -21,7 +21,13 @@ export interface Page extends Styled {
   /** Shapes set by earlier pages; without it every shape is set afresh. */
   readonly shapes?: ShapeCache
   /** What the page's panel tells of its numbers; without it the page has no script. */
-  readonly traced?: Traced
+  readonly trace?: Trace
+}
+
+/** Which numbers the page's panel tells of, and what it tells of them. */
+export interface Trace {
+  readonly marks: Marks
+  readonly traced: () => Traced
 }
 
 export function renderHtml(page: Page): string {
@@ -55,28 +61,27 @@ export interface LivePage {
 export const CALCULATION = '<!--calculation-->'
 
 export function livePage(page: Page): LivePage {
-  const { blocks, title, style, typesetter, sheetAround } = setPage(page, 'screen')
-  const { traced = { values: [], formulas: [], lines: new Map() } } = page
+  const { blocks, title, typesetter, sheetAround } = setPage(page, 'screen')
   return {
     title,
-    style: style(),
+    style: liveStyle(page),
     around: sheetAround('first', CALCULATION),
     blocks,
-    island: () => islandOf(traced, typesetter),
+    island: () => islandOf(page.trace?.traced() ?? { values: [], formulas: [], lines: new Map() }, typesetter),
   }
 }
 
 /** Paper has no script: nobody clicks on it. */
 export function layOut(page: Page, medium: Medium): LaidOut {
   const { asset, sheet } = page
-  const traced = medium === 'screen' ? page.traced : undefined
+  const trace = medium === 'screen' ? page.trace : undefined
   const { blocks, title, style, typesetter, sheetAround } = setPage(page, medium)
   const parts = {
     language: sheet.language,
     title,
     generator: escapeHtml(`Platemark ${sheet.version}`),
-    scripts: traced ? `'${asset('trace.hash')}'` : "'none'",
-    trace: traced ? islandHtml(traced, typesetter, asset('trace.js')) : '',
+    scripts: trace ? `'${asset('trace.hash')}'` : "'none'",
+    trace: trace ? islandHtml(trace.traced(), typesetter, asset('trace.js')) : '',
     style: style(),
   }
   const pageWith = (place: Place) => (body: string) =>
@@ -91,7 +96,7 @@ function setPage(page: Page, medium: Medium) {
   const { sheet, asset } = page
   const { titleBlock } = sheet
   const typesetter = createTypesetter(page.shapes)
-  const marks = medium === 'screen' && page.traced ? marksOf(page.traced) : noMarks
+  const marks = medium === 'screen' && page.trace ? page.trace.marks : noMarks
   const setting: Setting = { typesetter, source: page.source, level: 2, marks, medium }
   const blocks = bodyBlocks(page.body, setting)
   const first = {

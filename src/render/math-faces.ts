@@ -43,6 +43,11 @@ const faceOfPair: readonly (readonly [string, string, string])[] = [
   ['delimsizing', 'size4', 'KaTeX_Size4-Regular'],
 ]
 
+/** Every face that a formula may need. */
+export const allMathFaces: readonly string[] = [
+  ...new Set(['KaTeX_Main-Regular', ...faceOfClass.values(), ...faceOfPair.map(([, , face]) => face)]),
+].sort()
+
 /** Names of the faces, sorted; the regular face is part of every formula. */
 export function mathFaces(classAttributes: ReadonlySet<string>): readonly string[] {
   const faces = new Set<string>()

@@ -37,6 +37,17 @@ function shown(node: RootContent, pictures: Pictures, showing: Showing): readonl
   return [{ ...node, children } as RootContent]
 }
 
+const holding = new WeakMap<RootContent, boolean>()
+
+/** True for a node that is a picture or holds one. */
+export function holdsPicture(node: RootContent): boolean {
+  if (isPicture(node)) return true
+  if (!('children' in node)) return false
+  const known = holding.get(node) ?? (node.children as readonly RootContent[]).some(holdsPicture)
+  holding.set(node, known)
+  return known
+}
+
 const isPicture = (node: RootContent): node is PictureNode => node.type === 'image' || node.type === 'imageReference'
 
 const descriptionOf = ({ alt }: PictureNode): PhrasingContent => ({

@@ -24,6 +24,14 @@ export interface ShapeCache {
   readonly mathml: Shapes
   /** Shapes that were set before this run. */
   readonly prepared: Prepared
+  /** What was set of each object, by how it was set. */
+  readonly kept: WeakMap<object, Map<string, Kept>>
+}
+
+/** Something set, and the shapes in it. */
+export interface Kept {
+  readonly html: string
+  readonly shapes: ReadonlySet<Shape>
 }
 
 export type Prepared = (form: Form, key: string) => Shape | undefined
@@ -33,6 +41,7 @@ export const createShapeCache = (prepared: Prepared = () => undefined): ShapeCac
   display: new Map(),
   mathml: new Map(),
   prepared,
+  kept: new WeakMap(),
 })
 
 /** The formula set through its shape. @param see is told the shape */

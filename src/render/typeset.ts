@@ -8,7 +8,7 @@
  * which a test holds it to. A stretch that prints a value is KaTeX's own `\\htmlData`.
  */
 import { joinTex, type Tex, unmarked } from '../base/tex.ts'
-import { createShapeCache, type Shape, type ShapeCache, setFormula } from './shapes.ts'
+import { createShapeCache, type Kept, type Shape, type ShapeCache, setFormula } from './shapes.ts'
 
 export { createShapeCache, type ShapeCache }
 
@@ -18,19 +18,40 @@ export type Mode = 'inline' | 'display'
 export interface Typesetter {
   readonly html: (tex: Tex, mode: Mode) => string
   readonly mathml: (tex: Tex) => string
+  /**
+   * Something with formulas in it, set once and kept for as long as the object is.
+   * @param how all that the setting rests on besides the object
+   */
+  readonly kept: (object: object, how: string, set: () => string) => string
   /** Class attributes of all HTML set so far, such as `mord mathnormal`. */
   readonly classes: () => ReadonlySet<string>
 }
 
 export function createTypesetter(cache: ShapeCache = createShapeCache()): Typesetter {
-  const used = new Set<Shape>()
+  const all = new Set<Shape>()
+  let used = all
   const see = (shape: Shape): void => {
     used.add(shape)
   }
+  const setAnew = (set: () => string): Kept => {
+    used = new Set()
+    const html = set()
+    const shapes = used
+    used = all
+    return { html, shapes }
+  }
   return {
+    kept: (object, how, set) => {
+      const ways = cache.kept.get(object) ?? new Map<string, Kept>()
+      cache.kept.set(object, ways)
+      const made = ways.get(how) ?? setAnew(set)
+      ways.set(how, made)
+      for (const shape of made.shapes) all.add(shape)
+      return made.html
+    },
     html: (tex, mode) => setFormula(tex, mode, cache, see),
     mathml: tex => setFormula(unmarked(tex), 'mathml', cache, see),
-    classes: () => new Set([...used].flatMap(({ classes }) => classes)),
+    classes: () => new Set([...all].flatMap(({ classes }) => classes)),
   }
 }
 
