@@ -76,7 +76,7 @@ export function compileTree(tree: Root, source: Source, nearby: Nearby = nothing
   const { worked, asked, shown } = explainer.explain(document, source)
   const template = readTemplate(choices.template, nearby)
   const logo = readLogo(choices.logo, nearby)
-  const { placeOf } = context.account(source, [])
+  const { placeOf } = context.account(source, () => [])
   const quotes = explainQuotes(document, sheet, context, id => placeOf(id, shown))
   const diagnostics = sorted(source, [
     ...document.faults,
@@ -90,9 +90,9 @@ export function compileTree(tree: Root, source: Source, nearby: Nearby = nothing
     ...(logo.ok ? [] : logo.because),
   ])
   const own = itemsOf(document, worked, diagnostics)
-  const account = context.account(source, sheet.cells())
+  const account = context.account(source, sheet.cells)
   const all = [...own, ...closingItems(closingOf(asked, sheet, context, account), own)]
-  const { items, headings, pictures, contents } = numberItems(all, account.linesOf)
+  const { items, headings, pictures, contents } = numberItems(all, source)
   const preface = prefaceOf(contents, { asked, shown }, choices, sheet, context, account)
   return {
     source,

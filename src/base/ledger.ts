@@ -27,24 +27,57 @@ interface Telling {
 interface Read {
   /** Tasks whose result rests on this. */
   readonly readers: Set<Task>
+  /** When it last became another. */
+  changed: number
 }
 
 interface Task extends Read {
   readonly name: string
   readonly at: Span
-  /** Undefined while there is none: not worked yet, or what it rests on has changed. */
+  readonly work: () => Result<unknown>
+  /** Whether a new result leaves the one before in its place. */
+  readonly keeps: (before: unknown, now: unknown) => boolean
+  /** Undefined while there is none. */
   result: Result<unknown> | undefined
+  /** True when something that it rests on may have changed. */
+  isDoubtful: boolean
+  /** When all that it rests on was last seen to be as it was. */
+  checked: number
   /** What it read and what it told, in order, each read once. */
   log: (Read | Telling)[]
   /** The build in which it was last asked for by nobody but the build itself. */
   asked: number
+  /** The build in which what it told was last gathered. */
+  gathered: number
 }
+
+const newTask = (
+  name: string,
+  at: Span,
+  work: () => Result<unknown>,
+  keeps: (before: unknown, now: unknown) => boolean,
+): Task => ({
+  name,
+  at,
+  work,
+  keeps,
+  result: undefined,
+  isDoubtful: false,
+  checked: 0,
+  changed: 0,
+  log: [],
+  readers: new Set(),
+  asked: -1,
+  gathered: -1,
+})
 
 /** A content that may be replaced between builds; what read it is then worked again. */
 export interface Cell<T> {
   readonly get: () => T
   /** @returns true when the content is another than before */
   readonly set: (next: T) => boolean
+  /** True while some result rests on the content. */
+  readonly isRead: () => boolean
 }
 
 /** Work that is done when it is first asked for. */
@@ -67,39 +100,67 @@ export class Ledger {
   /** Tasks that may have lost their last reader. */
   private readonly loose = new Set<Task>()
   private gathered: Gathering = newGathering()
-  /** True once a chain was cut for its depth, which depends on where it was entered. */
+  /** Counts every change of a result or a content. */
+  private clock = 0
+  /** True once a ring was found or a chain cut for its depth, which depend on where they were entered. */
   strained = false
 
   /**
    * A function that does its work when first asked and keeps the result.
    * @param name what is worked, as a ring would name it
    * @param at the place of its definition
+   * @param keeps true where a new result is as good as the one before, which then stays: what rests on it is not worked again
    */
-  once<T>(name: string, at: Span, work: () => Result<T>): Work<T> {
-    const task: Task = { name, at, result: undefined, log: [], readers: new Set(), asked: -1 }
+  once<T>(name: string, at: Span, work: () => Result<T>, keeps: (before: T, now: T) => boolean = () => false): Work<T> {
+    // Both results that it is asked about come from this work.
+    const task = newTask(name, at, work, keeps as Task['keeps'])
     const ask = (): Result<T> => {
       this.read(task)
-      // Only this function sets the result, from work that gives a T.
-      if (task.result) return task.result as Result<T>
-      const first = this.underWay.indexOf(task)
-      if (first !== -1) return bad([ring(this.underWay.slice(first).filter(({ name }) => name !== ''))])
-      if (this.underWay.length >= DEEPEST) {
-        this.strained = true
-        return bad([tooDeep(task)])
-      }
-      this.underWay.push(task)
-      const result = work()
-      this.underWay.pop()
-      task.result = result
-      return result
+      // The result comes from this work, or is a fault.
+      return this.upToDate(task) as Result<T>
     }
-    return Object.assign(ask, { isDone: () => task.result !== undefined })
+    return Object.assign(ask, { isDone: () => task.result !== undefined && !task.isDoubtful })
+  }
+
+  private upToDate(task: Task): Result<unknown> {
+    if (task.result && !task.isDoubtful) return task.result
+    const first = this.underWay.indexOf(task)
+    if (first !== -1 || this.underWay.length >= DEEPEST) {
+      this.strained = true
+      return bad([first === -1 ? tooDeep(task) : ring(this.underWay.slice(first).filter(({ name }) => name !== ''))])
+    }
+    this.underWay.push(task)
+    const result = task.result && this.holds(task) ? task.result : this.workAnew(task)
+    this.underWay.pop()
+    task.isDoubtful = false
+    task.checked = this.clock
+    return result
+  }
+
+  /** True when nothing that the task read has changed since it was last seen to hold. */
+  private holds({ log, checked }: Task): boolean {
+    for (const read of log) {
+      if (!('readers' in read)) continue
+      if (isTask(read)) this.upToDate(read)
+      if (read.changed > checked) return false
+    }
+    return true
+  }
+
+  private workAnew(task: Task): Result<unknown> {
+    const before = task.result
+    this.clear(task)
+    const now = task.work()
+    const isKept = before?.ok && now.ok && task.keeps(before.value, now.value)
+    if (!isKept) task.changed = ++this.clock
+    task.result = isKept ? before : now
+    return task.result
   }
 
   /** @param same tells whether a content is as good as another */
   cell<T>(first: T, same: (a: T, b: T) => boolean = Object.is): Cell<T> {
     let content = first
-    const read: Read = { readers: new Set() }
+    const read: Read = { readers: new Set(), changed: 0 }
     return {
       get: () => {
         this.read(read)
@@ -108,9 +169,11 @@ export class Ledger {
       set: next => {
         if (same(content, next)) return false
         content = next
-        this.outdate(read)
+        read.changed = ++this.clock
+        doubt(read)
         return true
       },
+      isRead: () => read.readers.size > 0,
     }
   }
 
@@ -121,14 +184,12 @@ export class Ledger {
 
   /** Work asked for within is not noted as something that the task under way rests on. */
   apart(work: () => void): void {
-    const nobody: Task = {
-      name: '',
-      at: { start: 0, end: 0 },
-      result: undefined,
-      log: [],
-      readers: new Set(),
-      asked: -1,
-    }
+    const nobody = newTask(
+      '',
+      { start: 0, end: 0 },
+      () => bad([]),
+      () => false,
+    )
     this.underWay.push(nobody)
     work()
     this.underWay.pop()
@@ -137,7 +198,7 @@ export class Ledger {
 
   /** What was told under a channel in this build so far, in the order in which a first build comes to it. */
   told<T>(channel: Channel<T>): readonly T[] {
-    gather(this.gathered, this.root)
+    gather(this.gathered, this.root, this.build)
     // What is told under a channel is of its type.
     return (this.gathered.told.get(channel) ?? []) as readonly T[]
   }
@@ -170,16 +231,6 @@ export class Ledger {
     }
   }
 
-  /** Forgets every result that rests on something. */
-  private outdate(what: Read): void {
-    const waiting = [...what.readers]
-    for (let task = waiting.pop(); task; task = waiting.pop()) {
-      if (task.result === undefined && task.log.length === 0) continue
-      waiting.push(...task.readers)
-      this.clear(task)
-    }
-  }
-
   private clear(task: Task): void {
     for (const read of task.log)
       if ('readers' in read && read.readers.delete(task) && isTask(read) && read.readers.size === 0)
@@ -189,19 +240,28 @@ export class Ledger {
   }
 }
 
+/** Every result that rests on something is looked at again when it is asked for. */
+function doubt(what: Read): void {
+  const waiting = [...what.readers]
+  for (let task = waiting.pop(); task; task = waiting.pop()) {
+    if (task.isDoubtful) continue
+    task.isDoubtful = true
+    waiting.push(...task.readers)
+  }
+}
+
 const isTask = (read: Read | Telling): read is Task => 'log' in read
 
 interface Gathering {
   readonly told: Map<Channel<unknown>, unknown[]>
-  readonly seen: Set<Task>
   /** How much of the build's own log has been gone through. */
   from: number
 }
 
-const newGathering = (): Gathering => ({ told: new Map(), seen: new Set(), from: 0 })
+const newGathering = (): Gathering => ({ told: new Map(), from: 0 })
 
 /** Goes through the rest of a log and the logs of the tasks in it, each once and without nesting. */
-function gather(into: Gathering, root: readonly (Read | Telling)[]): void {
+function gather(into: Gathering, root: readonly (Read | Telling)[], build: number): void {
   const open: { readonly log: readonly (Read | Telling)[]; at: number }[] = [{ log: root, at: into.from }]
   for (let top = open.at(-1); top; top = open.at(-1)) {
     const next = top.log[top.at++]
@@ -210,8 +270,8 @@ function gather(into: Gathering, root: readonly (Read | Telling)[]): void {
       const list = into.told.get(next.channel)
       if (list) list.push(next.what)
       else into.told.set(next.channel, [next.what])
-    } else if (isTask(next) && !into.seen.has(next)) {
-      into.seen.add(next)
+    } else if (isTask(next) && next.gathered !== build) {
+      next.gathered = build
       if (next.log.length > 0) open.push({ log: next.log, at: 0 })
     }
   }

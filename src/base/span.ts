@@ -14,7 +14,14 @@ export interface Source {
   /** Offset of the first character of each line. */
   readonly lineStarts: readonly number[]
   /** Stretches of the text by ascending address; where there are none, addresses are offsets. */
-  readonly stretches?: readonly Stretch[]
+  readonly stretches?: Stretches
+}
+
+/** The stretches of a text that is read again and again. */
+export interface Stretches {
+  readonly all: readonly Stretch[]
+  /** The same object for as long as every stretch begins on the line that it began on. */
+  readonly onLines: object
 }
 
 /** A stretch of text that has kept its address. */
@@ -23,7 +30,7 @@ export interface Stretch {
   readonly offset: number
 }
 
-export function sourceOf(path: string, text: string, stretches?: readonly Stretch[]): Source {
+export function sourceOf(path: string, text: string, stretches?: Stretches): Source {
   const lineStarts = [0]
   for (let i = text.indexOf('\n'); i !== -1; i = text.indexOf('\n', i + 1)) lineStarts.push(i + 1)
   return { path, text, lineStarts, ...(stretches ? { stretches } : {}) }
@@ -44,7 +51,8 @@ function lastUpTo(limit: number, count: number, numberAt: (index: number) => num
 /** Where a place is in the text. */
 export function offsetOf({ stretches, text }: Source, place: number): number {
   if (!stretches) return place
-  const stretch = stretches[lastUpTo(place, stretches.length, i => stretches[i]?.address ?? 0)]
+  const { all } = stretches
+  const stretch = all[lastUpTo(place, all.length, i => all[i]?.address ?? 0)]
   return stretch ? Math.min(text.length, stretch.offset + place - stretch.address) : place
 }
 
@@ -58,6 +66,14 @@ export function lineOf(source: Source, place: number): number {
 export function positionOf(source: Source, place: number): { readonly line: number; readonly column: number } {
   const line = lineOf(source, place)
   return { line, column: offsetOf(source, place) - (source.lineStarts[line - 1] ?? 0) + 1 }
+}
+
+/** Lines of some places, each once, ascending. */
+export function linesAt(source: Source, places: readonly number[]): readonly number[] {
+  const [first, ...more] = places
+  if (first === undefined) return []
+  if (more.length === 0) return [lineOf(source, first)]
+  return [...new Set(places.map(place => lineOf(source, place)))].sort((a, b) => a - b)
 }
 
 /** The text of a line, from 1, without its ending. */

@@ -95,3 +95,32 @@ export function spansOf(value: Value): readonly Span[] {
     }
   }
 }
+
+/** True when two values come from one expression and every number in it is the same: their equations print alike. */
+export function printsAlike(a: Value, b: Value): boolean {
+  if (!isAlike(a, b) || a.origin.kind !== 'worked' || b.origin.kind !== 'worked') return false
+  if (a.origin.span?.start !== b.origin.span?.start) return false
+  const [one, other] = [a.origin.step, b.origin.step]
+  if (one.formula.body !== other.formula.body || one.inputs.size !== other.inputs.size) return false
+  for (const [name, input] of one.inputs) {
+    const counterpart = other.inputs.get(name)
+    if (!counterpart || !isAlike(input, counterpart)) return false
+  }
+  return true
+}
+
+/** The same number under the same letter and id, and written at the same place where the engineer typed it. */
+function isAlike(a: Value, b: Value): boolean {
+  if (a === b) return true
+  return (
+    a.id === b.id &&
+    a.tex === b.tex &&
+    a.si === b.si &&
+    a.unit === b.unit &&
+    a.rounding === b.rounding &&
+    typedAt(a) === typedAt(b)
+  )
+}
+
+/** Where a value was typed, or how else it came about. */
+const typedAt = ({ origin }: Value): number | string => (origin.kind === 'given' ? origin.span.start : origin.kind)

@@ -1,10 +1,10 @@
 /** The engineer's own lines at work: each value and each check when it is first asked for. */
 import { namesIn } from '../base/expr.ts'
 import type { Cell, Result, Work } from '../base/ledger.ts'
-import { bad } from '../base/outcome.ts'
-import type { Value } from '../base/value.ts'
-import { type Equation, readEquations, workEquation } from '../model/equations.ts'
-import { type Limit, limitLines, workLimit } from '../model/limits.ts'
+import { bad, good } from '../base/outcome.ts'
+import { printsAlike, type Value } from '../base/value.ts'
+import { type Equation, readEquation, readEquations, workEquation } from '../model/equations.ts'
+import { isLimit, type Limit, limitLines, workLimit } from '../model/limits.ts'
 import type { Scope } from '../model/scope.ts'
 import type { Block } from '../read/block.ts'
 import type { Text } from '../read/text.ts'
@@ -23,10 +23,35 @@ export interface EquationLines {
   readonly readers: () => readonly (() => Result<unknown>)[]
 }
 
+/** The lines of a block, each read. */
+interface BlockLines {
+  readonly equations: readonly (readonly [Text, Result<Equation>])[]
+  readonly limits: readonly Text[]
+  /** The names that the equations give, in order. */
+  readonly names: readonly string[]
+}
+
+/** A block is read once, however many builds it stands in. */
+const known = new WeakMap<Block, BlockLines>()
+
+function linesOf(block: Block): BlockLines {
+  const read = known.get(block) ?? readLines(block)
+  known.set(block, read)
+  return read
+}
+
+function readLines({ lines }: Block): BlockLines {
+  const equations = lines.filter(line => !isLimit(line)).map(line => [line, readEquation(line)] as const)
+  const names = equations.flatMap(([, read]) => (read.ok ? [read.value.name.text] : []))
+  return { equations, limits: lines.filter(isLimit), names }
+}
+
 interface CheckLine {
   readonly ordinal: number
   readonly work: Work<Limit>
 }
+
+const noneRepeated: ReadonlyMap<Text, Result<Equation>> = new Map()
 
 export function equationLines(scope: Scope): EquationLines {
   const { ledger } = scope
@@ -34,33 +59,52 @@ export function equationLines(scope: Scope): EquationLines {
   const equations = new Map<string, Equation>()
   /** What works each name that was ever given or asked for. */
   const slots = new Map<string, Cell<Work<Value> | undefined>>()
-  const names = ledger.cell<readonly string[]>([], sameNames)
-  let lines: ReadonlyMap<Text, Cell<Result<Equation>>> = new Map()
+  /** Lines that give a name which a line before them gives too. */
+  const repeated = ledger.cell(noneRepeated)
+  /** The names of each block. */
+  const named = ledger.cell<readonly string[]>([], sameItems)
+  const works = new WeakMap<Block, { readonly equations: Work<undefined>; readonly limits: Work<undefined> }>()
+  let blocks: readonly Block[] = []
   let limits: ReadonlyMap<Text, CheckLine> = new Map()
 
   const slotOf = (name: string): Cell<Work<Value> | undefined> => {
-    const known = slots.get(name) ?? ledger.cell<Work<Value> | undefined>(undefined)
-    slots.set(name, known)
-    return known
+    const slot = slots.get(name) ?? ledger.cell<Work<Value> | undefined>(undefined)
+    slots.set(name, slot)
+    return slot
   }
 
-  function replace(blocks: readonly Block[]): void {
-    const read = readEquations(blocks)
-    lines = new Map(
-      [...read].map(([line, reading]) => {
-        const known = lines.get(line) ?? ledger.cell(reading)
-        known.set(reading)
-        return [line, known]
-      }),
-    )
-    const given = new Map<string, Equation>()
-    for (const reading of read.values()) if (reading.ok) given.set(reading.value.name.text, reading.value)
-    for (const name of [...equations.keys()]) if (!given.has(name)) drop(name)
-    for (const [name, equation] of given) if (equations.get(name) !== equation) take(name, equation)
-    names.set([...given.keys()])
+  function replace(next: readonly Block[]): void {
+    for (const [name, slot] of slots) if (!equations.has(name) && !slot.isRead()) slots.delete(name)
+    const gone = new Set(blocks)
+    const come = next.filter(block => !gone.delete(block))
+    blocks = next
+    const count = blocks.reduce((sum, block) => sum + linesOf(block).names.length, 0)
+    const given = new Map(come.flatMap(equationsOf))
+    for (const name of [...gone].flatMap(block => linesOf(block).names)) if (!given.has(name)) drop(name)
+    for (const [name, equation] of given) take(name, equation)
+    // Fewer names than lines that give one: some name stands twice, and only the first line is to give it.
+    if (equations.size < count || repeated.get() !== noneRepeated) takeFirst(count)
+    named.set(blocks.map(block => linesOf(block).names.join()))
     limits = new Map(
-      limitLines(blocks.flatMap(({ lines }) => lines)).map(([line, ordinal]) => [line, checkOf(line, ordinal)]),
+      limitLines(blocks.flatMap(block => linesOf(block).limits)).map(([line, ordinal]) => [
+        line,
+        checkOf(line, ordinal),
+      ]),
     )
+  }
+
+  const equationsOf = (block: Block): readonly (readonly [string, Equation])[] =>
+    linesOf(block).equations.flatMap(([, read]) => (read.ok ? [[read.value.name.text, read.value] as const] : []))
+
+  /** Goes through all lines, where a name stands twice or did so in the build before. */
+  function takeFirst(count: number): void {
+    const read = readEquations(blocks)
+    const given = new Map(
+      [...read.values()].flatMap(each => (each.ok ? [[each.value.name.text, each.value] as const] : [])),
+    )
+    for (const name of [...equations.keys()]) if (!given.has(name)) drop(name)
+    for (const [name, equation] of given) take(name, equation)
+    repeated.set(given.size < count ? read : noneRepeated)
   }
 
   function drop(name: string): void {
@@ -69,13 +113,14 @@ export function equationLines(scope: Scope): EquationLines {
   }
 
   function take(name: string, equation: Equation): void {
+    if (equations.get(name) === equation) return
     equations.set(name, equation)
-    slotOf(name).set(ledger.once(name, equation.span, () => workEquation(equation, scope)))
+    slotOf(name).set(ledger.once(name, equation.span, () => workEquation(equation, scope), keeps))
   }
 
   function checkOf(line: Text, ordinal: number): CheckLine {
-    const known = limits.get(line)
-    if (known?.ordinal === ordinal) return known
+    const check = limits.get(line)
+    if (check?.ordinal === ordinal) return check
     return { ordinal, work: ledger.once(`check ${line.text}`, line.span, () => workLimit(line, ordinal, scope)) }
   }
 
@@ -112,23 +157,54 @@ export function equationLines(scope: Scope): EquationLines {
   }
 
   const equation = (line: Text): Result<Value> => {
-    const read = lines.get(line)?.get()
-    if (!read) return bad([])
+    const read = repeated.get().get(line) ?? readEquation(line)
     return read.ok ? (value(read.value.name.text) ?? bad([])) : read
+  }
+
+  const limit = (line: Text): Result<Limit> => limits.get(line)?.work() ?? bad([])
+
+  /** All lines of a block at once: of a block that has not changed only one thing is asked. */
+  function worksOf(block: Block) {
+    const lines = linesOf(block)
+    const made = works.get(block) ?? {
+      equations: ledger.once('equations', block.info, () => faultsOf(lines.equations.map(([line]) => equation(line)))),
+      limits: ledger.once('checks', block.info, () => faultsOf(lines.limits.map(limit))),
+    }
+    works.set(block, made)
+    return made
   }
 
   return {
     replace,
     value,
     equation,
-    limit: line => limits.get(line)?.work() ?? bad([]),
-    names: () => names.get(),
+    limit,
+    names: () => {
+      named.get()
+      return [...new Set(blocks.flatMap(block => linesOf(block).names))]
+    },
     readers: () => [
-      ...[...lines.keys()].map(line => () => equation(line)),
-      ...[...limits.values()].map(({ work }) => work),
+      ...blocks.map(block => worksOf(block).equations),
+      ...blocks.filter(block => linesOf(block).limits.length > 0).map(block => worksOf(block).limits),
     ],
   }
 }
 
-const sameNames = (a: readonly string[], b: readonly string[]): boolean =>
-  a.length === b.length && a.every((name, i) => name === b[i])
+/**
+ * A value that prints as it did stays for all that rests on it, and is only told what it rests on itself now: a
+ * change ends where it no longer shows.
+ */
+function keeps(before: Value, now: Value): boolean {
+  if (!printsAlike(before, now)) return false
+  // Nothing else of the two differs.
+  Object.assign(before, { origin: now.origin })
+  return true
+}
+
+function faultsOf(results: readonly Result<unknown>[]): Result<undefined> {
+  const faults = results.flatMap(result => (result.ok ? [] : result.because))
+  return faults.length > 0 ? bad(faults) : good(undefined)
+}
+
+const sameItems = (a: readonly string[], b: readonly string[]): boolean =>
+  a.length === b.length && a.every((item, i) => item === b[i])

@@ -4,21 +4,22 @@ import type { Diagnostic } from '../base/diagnostic.ts'
 import type { Cell, Result, Work } from '../base/ledger.ts'
 import { good } from '../base/outcome.ts'
 import type { Source } from '../base/span.ts'
+import { printsAlike, type Value } from '../base/value.ts'
 import type { StatedCell, Worksheet } from '../compute/worksheet.ts'
 import { levelNameOf } from '../model/givens.ts'
 import { isLimit } from '../model/limits.ts'
 import type { Block } from '../read/block.ts'
 import type { Document, QuoteMark } from '../read/document.ts'
-import { diagnose } from '../read/text.ts'
+import { diagnose, type Text } from '../read/text.ts'
 import type { Account, Context } from './context.ts'
-import { explainValue } from './equation.ts'
+import { explainValue, tellValue } from './equation.ts'
 import { explainGiven } from './given.ts'
 import { limitPiece } from './limit.ts'
 import { type Numbered, topDepth } from './number.ts'
 import { explainQuote } from './quote.ts'
 import { explainRegister } from './registers.ts'
 import { type DocumentWant, isBuildingWant, isDocumentWant, type Request, readRequest } from './request.ts'
-import type { Piece, Quote, Register } from './sheet.ts'
+import type { Equation, Piece, Quote, Register } from './sheet.ts'
 import { explainStoreys } from './storeys.ts'
 import { explainWant } from './workings.ts'
 
@@ -99,13 +100,14 @@ function explainBlocks(
         kept(block, () => workingPieces(block, request.value, sheet, context)),
       )
   }
-  const account = context.account(source, [])
+  const account = context.account(source, () => [])
   for (const [node, block, request] of requests)
     if (request.ok && request.value.wants.some(isDocumentWant))
       worked.set(node, workingPieces(block, request.value, sheet, context, account))
   const wants = requests.flatMap(([, , request]) => (request.ok ? request.value.wants : []))
-  const ids = [...worked.values()].flat().flatMap(piece => ('id' in piece ? [piece.id] : []))
-  return { worked, asked: new Set(wants.filter(isDocumentWant)), shown: new Set(ids) }
+  const shown = new Set<string>()
+  for (const pieces of worked.values()) for (const piece of pieces) if ('id' in piece) shown.add(piece.id)
+  return { worked, asked: new Set(wants.filter(isDocumentWant)), shown }
 }
 
 /** A block is read once, however many builds it stands in. */
@@ -151,12 +153,27 @@ function equationPieces(block: Block, sheet: Worksheet, context: Context): reado
     if (isLimit(line)) return limitPiece(line, sheet, context)
     const value = sheet.equation(line)
     if (!value.ok) return { kind: 'fault', diagnostics: value.because }
-    const equation = explainValue(value.value, context)
+    const equation = equationAsBefore(line, value.value, context)
     // What the engineer says of a line tells more than that they wrote it.
     if (line.comment === '') return equation
     context.cite(value.value.id)
     return { ...equation, reference: line.comment }
   })
+}
+
+/** Each line as it was explained last. */
+const explainedBefore = new WeakMap<Text, { readonly value: Value; readonly equation: Equation }>()
+
+/** A line explained; the same object as in the build before where every number in it prints the same. */
+function equationAsBefore(line: Text, value: Value, context: Context): Equation {
+  const before = explainedBefore.get(line)
+  if (before && printsAlike(before.value, value)) {
+    tellValue(value, context)
+    return before.equation
+  }
+  const equation = explainValue(value, context)
+  explainedBefore.set(line, { value, equation })
+  return equation
 }
 
 /** A quote with the place it leads to, or the words that stand where it would be. */
@@ -211,8 +228,10 @@ function quotedAsBefore(mark: QuoteMark, found: FoundQuote): FoundQuote {
 export const quoteFaults = (quotes: Quotes): readonly Diagnostic[] =>
   [...quotes.values()].flat().flatMap(quoted => ('missing' in quoted ? quoted.faults : []))
 
-export const faultsIn = (pieces: readonly Piece[]): readonly Diagnostic[] =>
-  pieces.flatMap(piece => (piece.kind === 'fault' ? piece.diagnostics : []))
+export function faultsIn(pieces: readonly Piece[]): readonly Diagnostic[] {
+  const faults = pieces.filter(piece => piece.kind === 'fault')
+  return faults.flatMap(({ diagnostics }) => diagnostics)
+}
 
 /** Blocks stand at the margin: one inside a list or a quotation has no place of its own on the page. */
 export function nestedBlocks({ tree, blocks }: Document): readonly Diagnostic[] {
@@ -257,7 +276,7 @@ export function itemsOf(
   return document.tree.children.flatMap((node): readonly Numbered<RootContent>[] => {
     const pieces = node.type === 'code' ? worked.get(node) : undefined
     const box = boxFor(node, pieces, diagnostics)
-    if (pieces) return [{ kind: 'pieces', pieces: [...pieces, ...box], key: node }]
+    if (pieces) return [{ kind: 'pieces', pieces: box.length === 0 ? pieces : [...pieces, ...box], key: node }]
     const item: Numbered<RootContent> =
       node.type === 'heading'
         ? { kind: 'heading', depth: node.depth, text: headingText(node), key: node }
@@ -298,6 +317,7 @@ function boxFor(
   pieces: readonly Piece[] | undefined,
   diagnostics: readonly Diagnostic[],
 ): readonly Piece[] {
+  if (diagnostics.length === 0) return []
   const { start, end } = rangeOf(node)
   const shown = new Set(faultsIn(pieces ?? []))
   const own = diagnostics.filter(

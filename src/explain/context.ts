@@ -4,7 +4,7 @@ import type { System } from '../base/kind.ts'
 import type { Language } from '../base/language.ts'
 import { inLanguage } from '../base/language.ts'
 import { channel, type Ledger, type Result } from '../base/ledger.ts'
-import { lineOf, type Source, type Span } from '../base/span.ts'
+import { linesAt, type Source, type Span } from '../base/span.ts'
 import type { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
 import type { Displacement } from '../compute/displacement.ts'
@@ -40,12 +40,17 @@ const told = {
   table: channel<{ readonly anchor: string; readonly table: Tabulation }>(),
 }
 
+/** Words that are kept in the document's spelling. */
+const MOST_KNOWN = 1000
+
 /** What explaining a working needs besides the results themselves, and where it tells what the lists of the document are made of. */
 export class Context {
   readonly language: Language
   readonly basis: Basis
   readonly sketch: Sketch
   readonly ledger: Ledger
+  /** The same few words are told again and again. */
+  private readonly known = new Map<string, string>()
 
   constructor(language: Language, basis: Basis, sketch: Sketch, ledger: Ledger) {
     this.language = language
@@ -56,7 +61,12 @@ export class Context {
 
   /** Our own words in the document's spelling. */
   words(text: string): string {
-    return inLanguage(text, this.language)
+    const known = this.known.get(text)
+    if (known !== undefined) return known
+    const words = inLanguage(text, this.language)
+    if (this.known.size >= MOST_KNOWN) this.known.clear()
+    this.known.set(text, words)
+    return words
   }
 
   /** A value that is printed: a root of the trace. */
@@ -93,32 +103,61 @@ export class Context {
     return [...new Set([...spans].map(({ start }) => start))]
   }
 
-  /** What has been told in this build so far. */
-  account(source: Source, cells: readonly Value[]): Account {
+  /** What has been told in this build so far; each part is gathered when it is asked for. */
+  account(source: Source, cells: () => readonly Value[]): Account {
     const { ledger } = this
-    const lines = (places: Iterable<number>) =>
-      [...new Set([...places].map(place => lineOf(source, place)))].sort((a, b) => a - b)
     const byId = (values: readonly Value[]) => new Map(values.map(value => [value.id, value]))
-    const checks = new Map(
-      ledger.told(told.check).map(check => [check.id, { ...check, sourceLines: lines(check.sourceLines) }]),
-    )
-    const tables = ledger.told(told.table)
+    const unnumbered = lazy(() => [...new Map(ledger.told(told.check).map(check => [check.id, check])).values()])
+    const parts = {
+      roots: lazy(() => byId(ledger.told(told.root))),
+      besides: lazy(() => byId(ledger.told(told.beside))),
+      cited: lazy(() => new Set(ledger.told(told.cited))),
+      formulas: lazy(() => new Set(ledger.told(told.formula))),
+      checks: lazy(() => unnumbered().map(check => ({ ...check, sourceLines: linesAt(source, check.sourceLines) }))),
+    }
     return {
       language: this.language,
       source,
-      roots: byId(ledger.told(told.root)),
-      besides: byId(ledger.told(told.beside)),
-      cells,
-      cited: new Set(ledger.told(told.cited)),
-      formulas: new Set(ledger.told(told.formula)),
-      checks: [...checks.values()],
-      unnumbered: [...new Map(ledger.told(told.check).map(check => [check.id, check])).values()],
+      get roots() {
+        return parts.roots()
+      },
+      get besides() {
+        return parts.besides()
+      },
+      get cells() {
+        return cells()
+      },
+      get cited() {
+        return parts.cited()
+      },
+      get formulas() {
+        return parts.formulas()
+      },
+      get checks() {
+        return parts.checks()
+      },
+      get unnumbered() {
+        return unnumbered()
+      },
       words: text => this.words(text),
-      lines: spans => lines([...spans].map(({ start }) => start)),
-      linesOf: lines,
+      lines: spans =>
+        linesAt(
+          source,
+          Array.from(spans, ({ start }) => start),
+        ),
       placeOf: (id, shown) =>
-        shown.has(id) ? id : tables.find(({ anchor, table }) => shown.has(anchor) && table.has(id))?.anchor,
+        shown.has(id)
+          ? id
+          : ledger.told(told.table).find(({ anchor, table }) => shown.has(anchor) && table.has(id))?.anchor,
     }
+  }
+}
+
+function lazy<T>(make: () => T): () => T {
+  let made: { readonly value: T } | undefined
+  return () => {
+    made ??= { value: make() }
+    return made.value
   }
 }
 
@@ -143,8 +182,6 @@ export interface Account {
   readonly words: (text: string) => string
   /** Source lines of some places, each once, ascending. */
   readonly lines: (spans: Iterable<Span>) => readonly number[]
-  /** The same from where they begin. */
-  readonly linesOf: (places: Iterable<number>) => readonly number[]
   /** Where a value is printed among the ids that the page shows, or undefined when it is not. */
   readonly placeOf: (id: string, shown: ReadonlySet<string>) => string | undefined
 }

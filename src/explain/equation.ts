@@ -11,11 +11,16 @@ import { printedNumeral, printedPlain, type Step, spansOf, type Value } from '..
 import type { Context } from './context.ts'
 import type { Equation } from './sheet.ts'
 
-export function explainValue(value: Value, context: Context): Equation {
+/** Tells of a value that is printed with its formula. */
+export function tellValue(value: Value, context: Context): void {
   context.root(value)
+  if (value.origin.kind === 'worked') context.uses(value.origin.step.formula)
+}
+
+export function explainValue(value: Value, context: Context): Equation {
+  tellValue(value, context)
   const { origin } = value
   const step = origin.kind === 'worked' ? origin.step : undefined
-  if (step) context.uses(step.formula)
   return {
     kind: 'equation',
     id: value.id,

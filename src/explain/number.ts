@@ -1,4 +1,5 @@
 /** Numbers headings, equations, tables and figures, section by section. */
+import { linesAt, type Source } from '../base/span.ts'
 import type { Heading, Piece } from './sheet.ts'
 
 /** Number and anchor of a heading of the document. */
@@ -38,12 +39,9 @@ export interface NumberedDocument<P> {
  * the headings. Every piece and heading has an anchor that nothing else on the page has. A lone first heading
  * is the title: it has no number, nor has one that brings its own.
  *
- * @param linesOf the source lines of some places, ascending
+ * @param source the text that the pieces' places are in
  */
-export function numberItems<P>(
-  items: readonly Numbered<P>[],
-  linesOf: (places: readonly number[]) => readonly number[],
-): NumberedDocument<P> {
+export function numberItems<P>(items: readonly Numbered<P>[], source: Source): NumberedDocument<P> {
   const anchors = new Map<string, number>()
   /** An id as an anchor; where it stands again it gets a number after it. */
   const anchor = (id: string): string => {
@@ -71,14 +69,24 @@ export function numberItems<P>(
     contents.push({ id, number, text: piece.text, depth: below })
     return { ...piece, id, text: `${number} ${piece.text}` }
   }
+  const numberPieces = (pieces: readonly Piece[]): readonly Piece[] => {
+    const start: Start = { section: counts[0] ?? 0, ...within, onLines: source.stretches?.onLines }
+    const before = numberedBefore.get(pieces)
+    if (before && sameStart(before.start, start) && !before.ids.some(id => anchors.has(id))) {
+      for (const id of before.ids) anchors.set(id, 1)
+      Object.assign(within, before.end)
+      return before.pieces
+    }
+    const made = pieces.map(piece =>
+      piece.kind === 'heading' ? numberHeading(piece) : numberPiece(piece, anchor, source, counts[0] ?? 0, within),
+    )
+    const ids = idsOf(pieces)
+    const isPlain = idsOf(made).every((id, i) => id === ids[i]) && !pieces.some(({ kind }) => kind === 'heading')
+    if (isPlain) numberedBefore.set(pieces, { start, end: { ...within }, ids, pieces: made })
+    return made
+  }
   const numbered = items.map((item): Numbered<P> => {
-    if (item.kind === 'pieces')
-      return {
-        ...item,
-        pieces: item.pieces.map(piece =>
-          piece.kind === 'heading' ? numberHeading(piece) : numberPiece(piece, anchor, linesOf, counts[0] ?? 0, within),
-        ),
-      }
+    if (item.kind === 'pieces') return { ...item, pieces: numberPieces(item.pieces) }
     if (item.kind === 'picture') pictures.set(item.key, numberOf('figure', counts[0] ?? 0, within))
     if (item.kind === 'heading') {
       const id = anchor(slug(item.text))
@@ -114,12 +122,39 @@ const slug = (text: string): string =>
 const loneTitle = ([first, ...rest]: readonly number[], parted: boolean): boolean =>
   first !== undefined && (rest.length > 0 || parted) && rest.every(depth => depth > first)
 
+/** All that the numbers of some pieces rest on besides the pieces and their anchors. */
+interface Start extends Counts {
+  readonly section: number
+  readonly onLines: object | undefined
+}
+
+const sameStart = (a: Start, b: Start): boolean =>
+  a.section === b.section &&
+  a.equation === b.equation &&
+  a.table === b.table &&
+  a.figure === b.figure &&
+  a.onLines !== undefined &&
+  a.onLines === b.onLines
+
+/** Pieces as they were numbered last, each under its own id. */
+interface NumberedPieces {
+  readonly start: Start
+  readonly end: Counts
+  readonly ids: readonly string[]
+  readonly pieces: readonly Piece[]
+}
+
+const numberedBefore = new WeakMap<readonly Piece[], NumberedPieces>()
+
+const idsOf = (pieces: readonly Piece[]): readonly string[] =>
+  pieces.flatMap(piece => ('id' in piece ? [piece.id] : []))
+
 type Counts = { equation: number; table: number; figure: number }
 
 function numberPiece(
   piece: Exclude<Piece, Heading>,
   anchor: (id: string) => string,
-  linesOf: (places: readonly number[]) => readonly number[],
+  source: Source,
   section: number,
   within: Counts,
 ): Piece {
@@ -130,7 +165,7 @@ function numberPiece(
     case 'register':
       return asBefore(piece, { id: anchor(piece.id) })
     case 'check':
-      return asBefore(piece, { id: anchor(piece.id), sourceLines: linesOf(piece.sourceLines) })
+      return asBefore(piece, { id: anchor(piece.id), sourceLines: linesAt(source, piece.sourceLines) })
     case 'figure':
       return asBefore(piece, { id: anchor(piece.id), number: numberOf(piece.kind, section, within) })
     case 'equation':
@@ -138,7 +173,7 @@ function numberPiece(
       return asBefore(piece, {
         id: anchor(piece.id),
         number: numberOf(piece.kind, section, within),
-        sourceLines: linesOf(piece.sourceLines),
+        sourceLines: linesAt(source, piece.sourceLines),
       })
   }
 }

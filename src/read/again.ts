@@ -28,6 +28,9 @@ const FIRST_ROOM = 2 ** 32
 export class Rereader {
   private held: readonly Held[] = []
   private free = FIRST_ROOM
+  /** Address and line of each stretch of the last text. */
+  private lines: readonly number[] = []
+  private onLines = {}
 
   read(path: string, text: string): Read {
     const pieces = piecesOf(text)
@@ -38,14 +41,16 @@ export class Rereader {
     const texts = pieces.map(({ start, end }) => text.slice(start, end))
     const before = partners(this.held, pieces, texts)
     this.held = pieces.map((piece, i) => this.hold(piece, text, texts[i] ?? '', i === 0, before[i]))
-    const stretches = this.held.map(({ address }, i): Stretch => ({ address, offset: pieces[i]?.start ?? 0 }))
+    const all = this.held.map(({ address }, i): Stretch => ({ address, offset: pieces[i]?.start ?? 0 }))
+    const lines = this.held.flatMap(({ address }, i) => [address, pieces[i]?.line ?? 0])
+    if (!sameNumbers(lines, this.lines)) this.onLines = {}
+    this.lines = lines
+    // What stands nowhere stands at the very beginning.
+    all.push({ address: 0, offset: 0 })
+    all.sort((a, b) => a.address - b.address || b.offset - a.offset)
     return {
       tree: { type: 'root', children: this.held.flatMap(({ nodes }) => nodes) },
-      source: sourceOf(
-        path,
-        text,
-        [{ address: 0, offset: 0 }, ...stretches].sort((a, b) => a.address - b.address),
-      ),
+      source: sourceOf(path, text, { all, onLines: this.onLines }),
     }
   }
 
@@ -61,6 +66,9 @@ export class Rereader {
     return { kind, text, address, room, nodes: nodesOf(piece, whole, address) }
   }
 }
+
+const sameNumbers = (a: readonly number[], b: readonly number[]): boolean =>
+  a.length === b.length && a.every((each, i) => each === b[i])
 
 /**
  * For each piece the one before that it is, or else one that stood there and is no more. A piece that was

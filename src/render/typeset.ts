@@ -29,6 +29,7 @@ export interface Typesetter {
 
 export function createTypesetter(cache: ShapeCache = createShapeCache()): Typesetter {
   const all = new Set<Shape>()
+  const keptParts = new Set<Kept>()
   let used = all
   const see = (shape: Shape): void => {
     used.add(shape)
@@ -46,12 +47,15 @@ export function createTypesetter(cache: ShapeCache = createShapeCache()): Typese
       cache.kept.set(object, ways)
       const made = ways.get(how) ?? setAnew(set)
       ways.set(how, made)
-      for (const shape of made.shapes) all.add(shape)
+      keptParts.add(made)
       return made.html
     },
     html: (tex, mode) => setFormula(tex, mode, cache, see),
     mathml: tex => setFormula(unmarked(tex), 'mathml', cache, see),
-    classes: () => new Set([...all].flatMap(({ classes }) => classes)),
+    classes: () => {
+      for (const { shapes } of keptParts) for (const shape of shapes) all.add(shape)
+      return new Set([...all].flatMap(({ classes }) => classes))
+    },
   }
 }
 

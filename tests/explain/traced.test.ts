@@ -45,7 +45,8 @@ describe.each(samples)('in $name', ({ compiled }) => {
   })
 
   test('every value is told with the inputs of its step, in the order of the formula', () => {
-    const all = everyValue([...compiled.context.besides.values(), ...compiled.context.roots.values()])
+    const { besides, roots, cells } = compiled.context
+    const all = everyValue([...besides.values(), ...roots.values(), ...cells])
     expect(told.values.map(({ value }) => value.id)).toEqual(all.map(({ id }) => id))
     for (const value of all) {
       const found = data.find(value.id)
