@@ -1,0 +1,76 @@
+/**
+ * Canonical source. Only blank space, the dashes under the head of a table, and bars and cells that a row leaves
+ * out at its end are changed, and only within our own fences at the margin: prose, tables of the prose, front matter
+ * and foreign fences keep every byte. Lines map one to one, so that every place keeps its line.
+ */
+import type { Code, RootContent } from 'mdast'
+import { parseMarkdown } from '../read/markdown.ts'
+import { part, type Text, trimmed } from '../read/text.ts'
+import { isTopic } from '../read/topics.ts'
+import { tidyContent } from './fence.ts'
+
+/** @returns the text in canonical form; the same text where there is nothing to do. Tidy text stays as it is. */
+export function tidy(text: string): string {
+  const parts: string[] = []
+  let from = 0
+  for (const { start, end } of ourFences(text)) {
+    parts.push(text.slice(from, start), tidyFence(text.slice(start, end), start))
+    from = end
+  }
+  return parts.join('') + text.slice(from)
+}
+
+interface Fence {
+  readonly start: number
+  readonly end: number
+}
+
+const MARKS = /^(?:`{3,}|~{3,})/
+/** An end of line that editors do not agree on. */
+const LONE_RETURN = /\r(?!\n)/
+
+function ourFences(text: string): readonly Fence[] {
+  if (!/^(?:```|~~~)/m.test(text)) return []
+  return parseMarkdown(text)
+    .children.filter(isOurs)
+    .flatMap(({ position }) => {
+      const [start, end] = [position?.start.offset ?? 0, position?.end.offset ?? 0]
+      const fence = text.slice(start, end)
+      const atMargin = position?.start.column === 1 && (start === 0 || /[\r\n\ufeff]/.test(text[start - 1] ?? ''))
+      return atMargin && MARKS.test(fence) && !LONE_RETURN.test(fence) ? [{ start, end }] : []
+    })
+}
+
+const isOurs = (node: RootContent): node is Code => node.type === 'code' && isTopic(node.lang ?? '')
+
+/** The marks and the words behind them, the lines within, and the marks that close it, where anything does. */
+function tidyFence(fence: string, offset: number): string {
+  const [opening, ...rest] = placedLines(fence, offset)
+  if (!opening) return fence
+  const marks = MARKS.exec(opening.text)?.[0] ?? ''
+  const info = trimmed(part(opening, marks.length))
+  const last = rest.at(-1)
+  const closing = last && CLOSING.test(last.text) ? [last] : []
+  const content = closing.length === 0 ? rest : rest.slice(0, -1)
+  const lines = [
+    marks + (info.text.match(/\S+/g) ?? []).join(' '),
+    ...tidyContent(info, content),
+    ...closing.map(({ text }) => text.trimEnd()),
+  ]
+  const ends = fence.match(/\r?\n/g) ?? []
+  return lines.map((line, i) => line + (ends[i] ?? '')).join('')
+}
+
+/** A last line of this form is what closes the fence: within it, it would have closed it before. */
+const CLOSING = /^ {0,3}(?:`{3,}|~{3,})[ \t]*$/
+
+/** Lines without their ends. */
+function placedLines(text: string, offset: number): readonly Text[] {
+  let start = offset
+  return text.split('\n').map(raw => {
+    const line = raw.replace(/\r$/, '')
+    const span = { start, end: start + line.length }
+    start += raw.length + 1
+    return { text: line, span }
+  })
+}
