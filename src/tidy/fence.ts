@@ -27,7 +27,7 @@ export function tidyContent(info: Text, content: readonly Text[]): readonly stri
       if (isRow(raw)) return { kind: 'whole', text: tidied[row++] ?? raw.text }
       const line = trimmed(raw)
       if (line.text.startsWith('#'))
-        return { kind: 'comment', text: line.text, setIn: line.span.start > raw.span.start }
+        return { kind: 'comment', text: line.text, indent: line.span.start - raw.span.start }
       // Without its indent a line of marks would close the fence.
       if (/^(?:```|~~~)/.test(line.text)) return { kind: 'whole', text: raw.text }
       const setting = settings.get(line.span.start)

@@ -7,8 +7,8 @@ export type Piece =
   | { readonly kind: 'whole'; readonly text: string }
   /** Something with or without a comment behind it. */
   | { readonly kind: 'line'; readonly text: string; readonly comment: string }
-  /** A comment alone; one that is set in goes on with the comment of the line above. */
-  | { readonly kind: 'comment'; readonly text: string; readonly setIn: boolean }
+  /** A comment alone, typed this far from the margin. Right of the line above it goes on with that one's comment. */
+  | { readonly kind: 'comment'; readonly text: string; readonly indent: number }
 
 /** Between a line and its comment. */
 const GAP = '   '
@@ -25,15 +25,15 @@ export function joinedLines(pieces: readonly Piece[]): readonly string[] {
 
 /** Neighbouring lines with comments, or one piece of any other kind. */
 function runFrom(pieces: readonly Piece[], from: number): readonly Piece[] {
-  let end = from + 1
-  const [first] = pieces.slice(from, end)
-  if (first && isRemarked(first)) while (end < pieces.length && belongs(pieces[end])) end++
-  return pieces.slice(from, end)
+  let end = from
+  let width = Number.POSITIVE_INFINITY
+  for (const piece of pieces.slice(from)) {
+    if (piece.kind === 'line' && piece.comment !== '') width = widthOf(piece.text)
+    else if (piece.kind !== 'comment' || piece.indent < width) break
+    end++
+  }
+  return pieces.slice(from, Math.max(end, from + 1))
 }
-
-const isRemarked = (piece: Piece): boolean => piece.kind === 'line' && piece.comment !== ''
-const belongs = (piece: Piece | undefined): boolean =>
-  piece !== undefined && (isRemarked(piece) || (piece.kind === 'comment' && piece.setIn))
 
 function joinedRun(run: readonly Piece[]): readonly string[] {
   const widths = run.flatMap(piece => (piece.kind === 'line' ? [widthOf(piece.text)] : []))

@@ -11,6 +11,7 @@ import { tidyContent } from './fence.ts'
 
 /** @returns the text in canonical form; the same text where there is nothing to do. Tidy text stays as it is. */
 export function tidy(text: string): string {
+  if (text.startsWith('\ufeff')) return `\ufeff${tidy(text.slice(1))}`
   const parts: string[] = []
   let from = 0
   for (const { start, end } of ourFences(text)) {
@@ -36,7 +37,7 @@ function ourFences(text: string): readonly Fence[] {
     .flatMap(({ position }) => {
       const [start, end] = [position?.start.offset ?? 0, position?.end.offset ?? 0]
       const fence = text.slice(start, end)
-      const atMargin = position?.start.column === 1 && (start === 0 || /[\r\n\ufeff]/.test(text[start - 1] ?? ''))
+      const atMargin = position?.start.column === 1 && (start === 0 || /[\r\n]/.test(text[start - 1] ?? ''))
       return atMargin && MARKS.test(fence) && !LONE_RETURN.test(fence) ? [{ start, end }] : []
     })
 }
