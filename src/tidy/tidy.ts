@@ -5,6 +5,7 @@
  */
 import type { Code, RootContent } from 'mdast'
 import { parseMarkdown } from '../read/markdown.ts'
+import { piecesOf } from '../read/pieces.ts'
 import { part, type Text, trimmed } from '../read/text.ts'
 import { isTopic } from '../read/topics.ts'
 import { tidyContent } from './fence.ts'
@@ -30,16 +31,27 @@ const MARKS = /^(?:`{3,}|~{3,})/
 /** An end of line that editors do not agree on. */
 const LONE_RETURN = /\r(?!\n)/
 
+/** Prose that cannot hold a fence at the margin is not read. */
 function ourFences(text: string): readonly Fence[] {
-  if (!/^(?:```|~~~)/m.test(text)) return []
-  return parseMarkdown(text)
-    .children.filter(isOurs)
-    .flatMap(({ position }) => {
-      const [start, end] = [position?.start.offset ?? 0, position?.end.offset ?? 0]
-      const fence = text.slice(start, end)
-      const atMargin = position?.start.column === 1 && (start === 0 || /[\r\n]/.test(text[start - 1] ?? ''))
-      return atMargin && MARKS.test(fence) && !LONE_RETURN.test(fence) ? [{ start, end }] : []
-    })
+  const pieces = piecesOf(text) ?? [{ kind: 'text', start: 0, end: text.length }]
+  return pieces.flatMap((piece): readonly Fence[] => {
+    if (piece.kind === 'fence') return isTopic(/^\S*/.exec(piece.info)?.[0] ?? '') ? [piece] : []
+    return /^(?:```|~~~)/m.test(text.slice(piece.start, piece.end)) ? fencesRead(text, piece) : []
+  })
+}
+
+function fencesRead(text: string, { start: from, end: to }: Fence): readonly Fence[] {
+  // Behind an empty line dashes do not open front matter, which only a whole text has.
+  const before = from === 0 ? '' : '\n'
+  const { children } = parseMarkdown(before + text.slice(from, to))
+  return children.filter(isOurs).flatMap(({ position }) => {
+    const [start = from, end = from] = [position?.start.offset, position?.end.offset].map(
+      (offset = 0) => offset - before.length + from,
+    )
+    const fence = text.slice(start, end)
+    const atMargin = start === 0 || /[\r\n]/.test(text[start - 1] ?? '')
+    return atMargin && MARKS.test(fence) && !LONE_RETURN.test(fence) ? [{ start, end }] : []
+  })
 }
 
 const isOurs = (node: RootContent): node is Code => node.type === 'code' && isTopic(node.lang ?? '')

@@ -138,7 +138,7 @@ test('any text is tidied once, in its fences only, and no line is added or taken
       expect(around(tidied)).toEqual(around(text))
       expect(tidied.split('\n').length).toBe(text.split('\n').length)
     }),
-    { numRuns: 400, seed: 71 },
+    { numRuns: 250, seed: 71 },
   )
 })
 
@@ -148,7 +148,7 @@ test('any text says the same when it is tidied, line for line', () => {
       const text = hurt(read(path), seed)
       expect(said(tidy(text), path, ['md', 'json'])).toEqual(said(text, path, ['md', 'json']))
     }),
-    { numRuns: 250, seed: 72 },
+    { numRuns: 120, seed: 72 },
   )
 })
 
