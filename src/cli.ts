@@ -2,8 +2,8 @@
 import { basename, dirname, extname, join, relative, resolve } from 'node:path'
 import { parseArgs } from 'node:util'
 import { inWords, suggestion } from './base/near.ts'
+import { good } from './base/outcome.ts'
 import { longForm, oneLine, sorted } from './base/report.ts'
-import { sourceOf } from './base/span.ts'
 import type { Value } from './base/value.ts'
 import type { Compiled } from './compile.ts'
 import { compileText } from './compile.ts'
@@ -11,12 +11,13 @@ import { auditSteps } from './explain/audit.ts'
 import { missingForSubmittal } from './explain/submittal.ts'
 import { everyValue } from './explain/trace.ts'
 import { traceText } from './explain/trace-text.ts'
-import { type DocumentFile, documentsIn, nearbyOf, print, readText, writeWhole } from './files.ts'
+import { type DocumentFile, documentsIn, nearbyOf, print, readText, unreadable, writeWhole } from './files.ts'
 import { help, helpFor } from './help.ts'
 import { hostAt } from './host.ts'
 import { isWord } from './model/scope.ts'
 import type { Press } from './pdf/press.ts'
 import { type Format, type OutputFile, paperOf, publish } from './publish.ts'
+import { PIPED, tidyDocument } from './tidy-command.ts'
 
 export { stillPrinting } from './files.ts'
 
@@ -29,7 +30,7 @@ const isFormat = (word: string): word is Format => formats.includes(word)
 
 const host = hostAt(join(__dirname, 'assets'))
 
-const commands = ['build', 'check', 'audit', 'trace'] as const
+const commands = ['build', 'check', 'audit', 'trace', 'tidy'] as const
 type Command = (typeof commands)[number]
 
 interface Settings {
@@ -41,6 +42,8 @@ interface Settings {
   readonly oneLine: boolean
   /** True when what a submittal must carry is asked for too. */
   readonly submittal: boolean
+  /** True when `tidy` writes nothing. */
+  readonly checkOnly: boolean
   /** The value that `trace` tells of. */
   readonly id: string
   readonly browser: NamedBrowser | undefined
@@ -116,6 +119,7 @@ const options = {
   check: { list: { type: 'boolean' }, submittal: { type: 'boolean' } },
   audit: { list: { type: 'boolean' } },
   trace: { list: { type: 'boolean' } },
+  tidy: { check: { type: 'boolean' } },
 } as const
 
 function readOptions(command: Command, args: readonly string[]): Settings | number {
@@ -138,7 +142,9 @@ function readOptions(command: Command, args: readonly string[]): Settings | numb
   const strange = to.find(word => !isFormat(word))
   if (strange !== undefined) return misuse(`There is no format ${strange}. Formats are ${inWords(formats, 'and')}.`)
   if (values.browser !== undefined && !to.includes('pdf')) return misuse('--browser is for --to pdf.')
-  const found = positionals.map(path => documentsIn(path))
+  const piped = command === 'tidy' && positionals.includes(PIPED)
+  if (piped && positionals.length > 1) return misuse(`${PIPED} is the text piped in, and stands alone.`)
+  const found = piped ? [good([{ path: PIPED, within: '' }])] : positionals.map(path => documentsIn(path))
   const missing = found.flatMap(each => (each.ok ? [] : [each.because]))
   if (missing.length > 0) return fail(missing.join('\n'))
   return {
@@ -149,6 +155,7 @@ function readOptions(command: Command, args: readonly string[]): Settings | numb
     draft: values.draft === true,
     oneLine: values.list === true,
     submittal: values.submittal === true,
+    checkOnly: values.check === true,
     id,
     browser: namedBrowser(values.browser),
   }
@@ -168,12 +175,7 @@ function onlyOnce(documents: readonly DocumentFile[]): readonly DocumentFile[] {
 function compileFile(path: string): Compiled | undefined {
   const read = readText(path)
   if (read.ok) return compileText(shownPath(path), read.value, nearbyOf(path))
-  const { text, offset, rule, message, help } = read.because
-  const at = { span: { start: offset, end: offset + 1 }, text: '' }
-  print(
-    'errors',
-    `${longForm(sourceOf(shownPath(path), text), { rule, severity: 'error', message, help, at, also: [] })}\n\n`,
-  )
+  print('errors', unreadable(shownPath(path), read.because))
   return undefined
 }
 
@@ -284,7 +286,10 @@ function trace({ path }: DocumentFile, settings: Settings): number {
 const looked = (found: ReturnType<Compiled['scope']['lookup']>): Value | undefined =>
   found?.ok && !isWord(found.value) ? found.value : undefined
 
-const actions = { build, check, audit, trace } as const
+const tidy = ({ path }: DocumentFile, { checkOnly }: Settings): number =>
+  tidyDocument({ path, shown: path === PIPED ? path : shownPath(path), check: checkOnly }) ? DONE : ERRORS
+
+const actions = { build, check, audit, trace, tidy } as const
 
 /** Prints every diagnostic and a closing count. @returns the number of errors */
 function tell({ source, diagnostics }: Compiled, settings: Settings): number {

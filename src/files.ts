@@ -1,9 +1,14 @@
 /** Reading documents and writing results; nothing else touches the disk. */
 import {
+  accessSync,
+  chmodSync,
+  chownSync,
+  constants,
   mkdirSync,
   mkdtempSync,
   readdirSync,
   readFileSync,
+  realpathSync,
   renameSync,
   rmSync,
   statSync,
@@ -13,6 +18,8 @@ import {
 import { dirname, extname, join, relative, resolve } from 'node:path'
 import type { Diagnostic } from './base/diagnostic.ts'
 import { bad, good, type Outcome } from './base/outcome.ts'
+import { longForm } from './base/report.ts'
+import { sourceOf } from './base/span.ts'
 import type { OutputFile } from './publish.ts'
 import type { Nearby } from './read/nearby.ts'
 
@@ -57,14 +64,7 @@ const faultOfWhole = { text: '', offset: 0 }
 export function readText(path: string): Outcome<string, TextFault> {
   try {
     const { size } = statSync(path)
-    if (size > LARGEST)
-      return bad({
-        rule: 'file-too-large',
-        message: `this file has ${megabytes(size)} MB; ${megabytes(LARGEST)} MB are read`,
-        help: 'Split the document.',
-        ...faultOfWhole,
-      })
-    return decode(readFileSync(path))
+    return size > LARGEST ? bad(tooLarge(size)) : decode(readFileSync(path))
   } catch (error) {
     return bad({
       rule: 'file-unreadable',
@@ -74,6 +74,13 @@ export function readText(path: string): Outcome<string, TextFault> {
     })
   }
 }
+
+const tooLarge = (size: number): TextFault => ({
+  rule: 'file-too-large',
+  message: `this file has ${megabytes(size)} MB; ${megabytes(LARGEST)} MB are read`,
+  help: 'Split the document.',
+  ...faultOfWhole,
+})
 
 /** The files that the document at `path` names. */
 export const nearbyOf = (path: string): Nearby => ({
@@ -94,6 +101,29 @@ export const nearbyOf = (path: string): Nearby => ({
 })
 
 const megabytes = (size: number): string => String(Number((size / 1048576).toFixed(1)))
+
+/** What is said of a file that has no text. */
+export function unreadable(path: string, { text, offset, rule, message, help }: TextFault): string {
+  const at = { span: { start: offset, end: offset + 1 }, text: '' }
+  return `${longForm(sourceOf(path, text), { rule, severity: 'error', message, help, at, also: [] })}\n\n`
+}
+
+/** The text that is piped in, under the same limits as a file, with its byte order mark. */
+export function readPiped(): Outcome<string, TextFault> {
+  try {
+    const bytes = readFileSync(0)
+    if (bytes.length > LARGEST) return bad(tooLarge(bytes.length))
+    const read = decode(bytes)
+    return read.ok ? good(markOf(bytes) + read.value) : read
+  } catch (error) {
+    return bad({
+      rule: 'file-unreadable',
+      message: `the text piped in cannot be read: ${reason(error)}`,
+      help: 'Pipe a document in, or name a file.',
+      ...faultOfWhole,
+    })
+  }
+}
 
 function decode(bytes: Uint8Array): Outcome<string, TextFault> {
   try {
@@ -124,6 +154,34 @@ export function writeWhole(folder: string, files: readonly OutputFile[]): Outcom
     if (workshop !== undefined) rmSync(workshop, { recursive: true, force: true })
   }
 }
+
+/**
+ * Puts another text in the place of a file's, whole or not at all. A link is followed; mode, owner and a byte order
+ * mark stay. A file that may not be written is refused, though its folder would allow it to be replaced.
+ */
+export function rewrite(path: string, text: string): Outcome<undefined> {
+  let workshop: string | undefined
+  try {
+    const file = realpathSync(path)
+    accessSync(file, constants.W_OK)
+    const { mode, uid, gid } = statSync(file)
+    workshop = mkdtempSync(join(dirname(file), '.platemark-'))
+    const written = join(workshop, 'text')
+    writeFileSync(written, markOf(readFileSync(file)) + text)
+    const made = statSync(written)
+    if (made.uid !== uid || made.gid !== gid) chownSync(written, uid, gid)
+    chmodSync(written, mode)
+    renameSync(written, file)
+    return good(undefined)
+  } catch (error) {
+    return bad(`${path}: it cannot be rewritten: ${reason(error)}`)
+  } finally {
+    if (workshop !== undefined) rmSync(workshop, { recursive: true, force: true })
+  }
+}
+
+/** A byte order mark, which reading takes off, where some bytes begin with one. */
+const markOf = (bytes: Buffer): string => (bytes.subarray(0, 3).toString() === '\ufeff' ? '\ufeff' : '')
 
 const reasons: Readonly<Record<string, string>> = {
   ENOENT: 'there is no such file or folder',

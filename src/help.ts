@@ -7,6 +7,7 @@ shear-wall building, with formulas, values put in, results, tables and sketches.
   platemark check FILE…    say what is wrong and how the checks come out
   platemark audit FILE…    show that every printed line holds to its digits
   platemark trace FILE ID  say where a number came from
+  platemark tidy FILE…     set the source in columns, without changing what it says
 
 A FILE is a Markdown document; a folder stands for all .md files in it.
 platemark COMMAND --help tells more. platemark --version prints the version.
@@ -71,6 +72,21 @@ written. The page tells the same when a number is clicked.
 Exit code: 0 told, 1 errors or no such value, 2 wrong usage.
 
   platemark trace workshop.md roof.CR.x`,
+  tidy: `platemark tidy FILE… [--check]
+
+Sets the blocks of each document in their canonical form: tables in columns, one space behind a colon and
+around the = -> and <= of a line, comments of neighbouring lines below each other, no space at the end of a
+line. Nothing that has a meaning changes, no line is added or taken away, and everything outside the
+blocks stays as it is. Prints the name of each file that it rewrites. For - it reads the text piped in and
+prints it tidied, which is what an editor calls.
+
+  --check     write nothing; print the names of the files that are not tidy
+
+Exit code: 0 done, or all tidy; 1 errors or, with --check, a file that is not tidy; 2 wrong usage.
+
+  platemark tidy calcs/
+  platemark tidy --check calcs/
+  platemark tidy - < workshop.md`,
 } as const
 
 export const helpFor = (command: keyof typeof texts): string => texts[command]

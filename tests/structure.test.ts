@@ -21,7 +21,7 @@ const order: readonly (readonly string[])[] = [
   ['tidy'],
   ['pdf'],
   ['host.ts', 'index.ts', 'files.ts', 'help.ts'],
-  ['serve', 'lsp'],
+  ['serve', 'lsp', 'tidy-command.ts'],
   ['cli.ts'],
   ['page'],
 ]

@@ -27,10 +27,14 @@ const common = {
 
 /**
  * What few runs need, by the functions that are called of it: KaTeX for a formula whose shape was not
- * packed, YAML for front matter that is more than plain lines.
+ * packed, YAML for front matter that is more than plain lines, and the width of text that is not plain ASCII.
  * @type {Readonly<Record<string, readonly string[]>>}
  */
-const apart = { katex: ['renderToString'], yaml: ['isMap', 'isScalar', 'isSeq', 'parseDocument'] }
+const apart = {
+  katex: ['renderToString'],
+  yaml: ['isMap', 'isScalar', 'isSeq', 'parseDocument'],
+  'string-width': ['default'],
+}
 
 /**
  * Keeps those packages in files of their own, which are loaded when one of the functions is first called.
@@ -41,11 +45,15 @@ const packagesApart = {
   setup(build) {
     const filter = new RegExp(`^(?:${Object.keys(apart).join('|')})$`)
     build.onResolve({ filter }, ({ path }) => ({ path, namespace: 'apart' }))
-    build.onResolve({ filter: /^\.\/\w+\.cjs$/, namespace: 'apart' }, ({ path }) => ({ path, external: true }))
+    build.onResolve({ filter: /^\.\/[\w-]+\.cjs$/, namespace: 'apart' }, ({ path }) => ({ path, external: true }))
     build.onResolve({ filter: /^\.\/pdf\/press\.ts$/ }, () => ({ path: './pdf.cjs', external: true }))
     build.onLoad({ filter: /.*/, namespace: 'apart' }, ({ path }) => ({
       contents: (apart[path] ?? [])
-        .map(name => `exports.${name} = (...args) => require('./${path}.cjs').${name}(...args)`)
+        .map(name => {
+          // What a module of type CommonJS exports as a whole is the default of those that import it.
+          const exported = name === 'default' ? 'module.exports' : `exports.${name}`
+          return `${exported} = (...args) => require('./${path}.cjs').${name}(...args)`
+        })
         .join('\n'),
     }))
   },

@@ -19,7 +19,7 @@ export function limitPiece(line: Block['lines'][number], sheet: Worksheet, conte
   const check: Check = {
     kind: 'check',
     id: `${id}.check`,
-    what: what.trim() === '' ? line.text : what.trim(),
+    what: what.trim() === '' ? line.text.replace(/\s*(<=|≤)\s*/, ' $1 ') : what.trim(),
     demand: printed(demand, context.language),
     // Sizes are compared in one unit.
     capacity: printed({ ...capacity, unit: demand.unit }, context.language),

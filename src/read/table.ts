@@ -63,25 +63,24 @@ function headerCell(cell: Text): HeaderCell {
   return { name: part(cell, 0, name.length), unit: trimmed(part(cell, open + 1, cell.text.length - 1)) }
 }
 
-/** Cells between bars that are not escaped; the bars at both ends may be there or not. */
-function cellsOf(line: Text): readonly Text[] {
+const cellsOf = (line: Text): readonly Text[] => cellsAsTyped(line).map(unescaped)
+
+/** Cells between bars that are not escaped, without the space around them; the bars at both ends may be there or not. */
+export function cellsAsTyped(line: Text): readonly Text[] {
   const cells: Text[] = []
   let from = line.text.startsWith('|') ? 1 : 0
   for (let i = from; i < line.text.length; i++) {
     if (line.text[i] === '\\') i++
     else if (line.text[i] === '|') {
-      cells.push(unescaped(part(line, from, i)))
+      cells.push(trimmed(part(line, from, i)))
       from = i + 1
     }
   }
   const rest = part(line, from)
-  return rest.text.trim() === '' ? cells : [...cells, unescaped(rest)]
+  return rest.text.trim() === '' ? cells : [...cells, trimmed(rest)]
 }
 
-function unescaped(cell: Text): Text {
-  const inner = trimmed(cell)
-  return { text: inner.text.replaceAll('\\|', '|'), span: inner.span }
-}
+const unescaped = ({ text, span }: Text): Text => ({ text: text.replaceAll('\\|', '|'), span })
 
 const noRule = ({ span }: Text): Diagnostic =>
   diagnose(

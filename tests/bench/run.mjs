@@ -46,6 +46,7 @@ function longCold() {
   compare('200 sections, 2,000 equations to HTML, whole process', 5, [
     bare,
     platemark('platemark', long),
+    { name: 'the same tidied, nothing written', args: [command, 'tidy', '--check', long], status: 1 },
     ...pandoc('pandoc --mathml, same content', expanded(long)),
   ])
 }
