@@ -23,7 +23,8 @@ export interface Equation {
   readonly unit?: Unit
 }
 
-const NAME = /^[\p{L}][\p{L}\p{N}_]*(?:'[\p{L}\p{N}_]+)?$/u
+/** How an equation may be called. */
+export const NAME = /^[\p{L}][\p{L}\p{N}_]*(?:'[\p{L}\p{N}_]+)?$/u
 
 /** One line; the names in it are looked up later. */
 export function readEquation(line: Text): Result<Equation> {

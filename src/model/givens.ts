@@ -28,7 +28,8 @@ export interface Givens {
   readonly strays: (topic: string) => readonly Diagnostic[]
 }
 
-const perLevel = ['areas', 'line-loads', 'point-loads', 'walls', 'openings', 'forces'] as const
+/** Topics of which a block is about one level. */
+export const perLevel = ['areas', 'line-loads', 'point-loads', 'walls', 'openings', 'forces'] as const
 const ONLY_LEVEL = 'level'
 
 export function gather(blocks: readonly Block[]): Givens {
@@ -86,7 +87,7 @@ function firstName(named: readonly Block[], blocks: readonly Block[]): string {
   return first?.about?.text ?? ONLY_LEVEL
 }
 
-function levelNames(levelTable: readonly Block[]): readonly string[] {
+export function levelNames(levelTable: readonly Block[]): readonly string[] {
   const names = levelTable.flatMap(({ table }) => {
     const column = table?.header.findIndex(({ name }) => name.text === 'level') ?? -1
     return table?.rows.map(({ cells }) => cells[column]?.text ?? '') ?? []

@@ -35,6 +35,8 @@ export interface Corner {
   readonly y: Value
 }
 
+export const gridSettings: readonly string[] = ['x', 'y', 'north']
+
 const position = { x: sym('x', 'x', 'length'), y: sym('y', 'y', 'length') }
 const north = sym('north', '\\theta_{\\text{north}}', 'angle')
 
@@ -47,7 +49,7 @@ export function readGrid(blocks: readonly Block[], scope: Scope): Result<Grid> {
         also: [{ span: block.info, text: 'first here' }],
       }),
     ])
-  const faults = [...block.faults, ...strangeSettings(block, ['x', 'y', 'north']), ...strangeLines(block)]
+  const faults = [...block.faults, ...strangeSettings(block, gridSettings), ...strangeLines(block)]
   if (faults.length > 0) return bad(faults)
   const x = readLines(settingOf(block, 'x'), 'x', scope)
   const y = readLines(settingOf(block, 'y'), 'y', scope)
