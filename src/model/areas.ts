@@ -135,7 +135,7 @@ function readPolygon(record: RowOf, id: string, name: Text, grid: Grid, scope: S
 }
 
 /** Points in brackets and crossings, with spaces between. */
-function pointsOf(cell: Text): readonly Text[] {
+export function pointsOf(cell: Text): readonly Text[] {
   return [...cell.text.matchAll(/\(((?:[^()]|\([^()]*\))*)\)|[^\s(]+/g)].map(found => {
     const end = found.index + found[0].length
     return found[1] === undefined ? part(cell, found.index, end) : trimmed(part(cell, found.index + 1, end - 1))
