@@ -54,16 +54,22 @@ export interface TextFault extends Pick<Diagnostic, 'rule' | 'message' | 'help'>
 
 const faultOfWhole = { text: '', offset: 0 }
 
-export function readText(path: string): Outcome<string, TextFault> {
-  try {
-    const { size } = statSync(path)
-    if (size > LARGEST)
-      return bad({
+/** Why a document of some bytes is not read; undefined where it is. */
+export const sizeFault = (size: number): TextFault | undefined =>
+  size > LARGEST
+    ? {
         rule: 'file-too-large',
         message: `this file has ${megabytes(size)} MB; ${megabytes(LARGEST)} MB are read`,
         help: 'Split the document.',
         ...faultOfWhole,
-      })
+      }
+    : undefined
+
+export function readText(path: string): Outcome<string, TextFault> {
+  try {
+    const { size } = statSync(path)
+    const fault = sizeFault(size)
+    if (fault) return bad(fault)
     return decode(readFileSync(path))
   } catch (error) {
     return bad({

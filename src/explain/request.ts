@@ -35,7 +35,7 @@ export const documentWants = ['criteria', 'checks', 'assumptions', 'references']
 export type DocumentWant = (typeof documentWants)[number]
 
 /** All of a level in order; the displaced shape comes with the displacement. */
-export const WHOLE = 'whole calculation'
+export const WHOLE = 'whole calculation' as const
 const parts: readonly Want[] = wants.filter(want => want !== 'displaced shape')
 
 export type AnyWant = Want | BuildingWant | DocumentWant

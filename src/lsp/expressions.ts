@@ -37,6 +37,12 @@ function uses(expr: Expr, text: string, offset: number): readonly Text[] {
   return found
 }
 
+/** True for an id that an expression can hold. */
+export function readsAsName(id: string): boolean {
+  const read = parseExpr(id)
+  return read.ok && read.value.kind === 'name' && read.value.name === id
+}
+
 /** Names of the grid lines along each axis. */
 export interface LineNames {
   readonly x: readonly { readonly name: string }[]

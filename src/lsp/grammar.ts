@@ -4,7 +4,7 @@
  */
 import type { Kind } from '../base/kind.ts'
 import { casesOf } from '../compute/cases.ts'
-import { details } from '../explain/request.ts'
+import { type AnyWant, details, type WHOLE } from '../explain/request.ts'
 import { endsWords, materials } from '../model/construction.ts'
 import { levelWalls } from '../model/levels.ts'
 import type { Topic } from '../read/topics.ts'
@@ -196,3 +196,26 @@ export const settingFieldOf = (topic: Topic, name: string): Field | undefined =>
 
 const own = (fields: Fields, name: string): Field | undefined =>
   Object.hasOwn(fields, name) ? fields[name] : undefined
+
+/** What each part of the calculation is that a working may ask for. */
+export const wantSays: Readonly<Record<AnyWant | typeof WHOLE, string>> = {
+  'whole calculation': 'all parts of one level in order',
+  plan: 'sketch of the level to scale',
+  'centre of mass': 'weight, and where it acts',
+  'polar moment': 'polar moment of the weight about the centre of mass',
+  'wall stiffness': 'how the stiffness of each wall follows',
+  'centre of rigidity': 'stiffness along x and y, its centre, and J',
+  eccentricity: 'centre of mass less centre of rigidity',
+  torsion: 'moment about the centre of rigidity in each case',
+  'wall shears': 'direct and torsional shear of one case',
+  'design shears': 'the largest shear of each wall over all cases',
+  elevations: 'walls as they are seen, with openings and piers',
+  displacement: 'displacement and rotation, and the largest at a corner',
+  'displaced shape': 'sketch of the level as it moves',
+  equilibrium: 'what acts against what resists, in each case',
+  'storey shears': 'forces and shears of all levels',
+  criteria: 'what the calculation starts from',
+  checks: 'every check, the largest ratio first',
+  assumptions: 'what was taken because the document does not say',
+  references: 'sources of the formulas that are printed',
+}

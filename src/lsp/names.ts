@@ -51,9 +51,10 @@ export interface Names {
   /** What cannot be read, so that names in it are not known. */
   readonly unread: readonly Span[]
   readonly levels: readonly string[]
+  readonly lines: LineNames
 }
 
-/** Walls and the rest of a level by the name of the level, to tell what a dotted name means. */
+/** What a dotted name and a point are read by. */
 interface Given {
   readonly levels: readonly string[]
   readonly lines: LineNames
@@ -68,12 +69,13 @@ export function namesIn(
   levels: readonly string[],
   quotes: readonly { readonly id: Text; readonly sure: boolean }[],
 ): Names {
-  const gatherer = new Gatherer({ levels, lines: linesOf(blocks) })
+  const lines = linesOf(blocks)
+  const gatherer = new Gatherer({ levels, lines })
   for (const block of blocks) gatherer.block(block)
   for (const { id, sure } of quotes)
     if (sure) gatherer.id(id, 'quote')
     else gatherer.unread.push(id.span)
-  return { mentions: withFirstGiven(gatherer.mentions), ids: gatherer.ids, unread: gatherer.unread, levels }
+  return { mentions: withFirstGiven(gatherer.mentions), ids: gatherer.ids, unread: gatherer.unread, levels, lines }
 }
 
 function linesOf(blocks: readonly Block[]): LineNames {

@@ -3,12 +3,12 @@
  * values under the renamed ids: a name that this reading overlooks, or one that comes to mean something else, is then found.
  */
 import { bad, good, type Outcome } from '../base/outcome.ts'
-import { parseExpr } from '../base/parse.ts'
 import { lineOf, type Span } from '../base/span.ts'
 import type { Compiled } from '../compile.ts'
 import { everyValue } from '../explain/trace.ts'
 import { checkedName } from '../model/columns.ts'
 import { NAME } from '../model/equations.ts'
+import { readsAsName } from './expressions.ts'
 import { keyOf, type Mention, type Named, type Names, type Sort } from './names.ts'
 import type { Opened } from './opened.ts'
 
@@ -134,11 +134,6 @@ function standsIn(within: Mention['within'], name: string): boolean {
     case 'expression':
       return true
   }
-}
-
-function readsAsName(id: string): boolean {
-  const read = parseExpr(id)
-  return read.ok && read.value.kind === 'name' && read.value.name === id
 }
 
 /** A name in a line that cannot be read may be a use of it. */

@@ -67,9 +67,7 @@ export function namedLines(setting: Text): readonly { readonly name: Text; reado
     .filter(({ text }) => text !== '')
     .map(piece => {
       const word = /^(\S+)\s+/.exec(piece.text)
-      return word
-        ? { name: part(piece, 0, (word[1] ?? '').length), at: part(piece, word[0].length) }
-        : { name: piece }
+      return word ? { name: part(piece, 0, (word[1] ?? '').length), at: part(piece, word[0].length) } : { name: piece }
     })
 }
 
@@ -80,7 +78,13 @@ function readLines(setting: Text | undefined, axis: Axis, scope: Scope): Result<
   const lines = named.map((piece): Result<GridLine> => {
     if (!piece.at)
       return bad([
-        diagnose('error', 'grid-line', piece.name.span, 'a grid line is a name and a position', 'Write A 0 ft, B 24 ft.'),
+        diagnose(
+          'error',
+          'grid-line',
+          piece.name.span,
+          'a grid line is a name and a position',
+          'Write A 0 ft, B 24 ft.',
+        ),
       ])
     const name = checkedName(piece.name, 'grid line')
     if (!name.ok) return name
