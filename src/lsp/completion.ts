@@ -202,7 +202,7 @@ function inField({ holds }: Field, typed: Text, level: string, document: Opened,
       return inPoint(typed, document)
     case 'value':
       return [
-        ...(holds.words ?? []).map(
+        ...(/^\p{L}*$/u.test(typed.text) ? (holds.words ?? []) : []).map(
           (text): Offer => ({ kind: 'word', text, detail: 'in place of a value', replaces: typed.span }),
         ),
         ...inExpression(typed, holds.of, document),
@@ -287,7 +287,7 @@ function named(sort: Sort, of: string, replaces: Span, document: Opened): readon
 
 const mainValues: Readonly<Partial<Record<Sort, (of: string, name: string) => string>>> = {
   level: (_, name) => `${name}.W`,
-  wall: (of, name) => `${of}.wall.${name}.k`,
+  wall: (of, name) => `${of}.wall.${name}.L`,
   construction: (_, name) => `constructions.${name}.E`,
 }
 

@@ -85,7 +85,7 @@ function refused(found: Renameable, name: string, names: Names): string | undefi
   if (found.sort === 'equation' && !NAME.test(name))
     return `${name} is not a name. A name is a letter, then letters, digits and _.`
   if (names.mentions.some(each => each.given && keyOf(each) === keyOf({ ...found, name })))
-    return `There is a ${what} ${name} already.`
+    return `There is ${what === 'equation' ? 'an' : 'a'} ${what} ${name} already.`
   const uses = usesOf(names, found)
   const strange = uses.find(use => !standsIn(use.within, name))
   if (strange) return `${name} cannot be the name of this ${what}: ${places[strange.within]}`
