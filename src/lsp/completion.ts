@@ -41,12 +41,11 @@ function offersFor(place: Place, document: Opened): readonly Offer[] {
       return inHead(place, document)
     case 'cell': {
       const field = columnOf(place.inside.topic, place.column)
-      const wall = place.row[place.header.indexOf('wall')] ?? ''
-      return field ? inField(field, place.typed, levelOf(place.inside, document), document, wall) : []
+      return field ? inField(field, place.typed, levelOf(place.inside, document), document) : []
     }
     case 'setting': {
       const field = settingFieldOf(place.inside.topic, place.name)
-      return field ? inField(field, place.typed, levelOf(place.inside, document), document, '') : []
+      return field ? inField(field, place.typed, levelOf(place.inside, document), document) : []
     }
     case 'line':
       return inLine(place, document)
@@ -81,7 +80,7 @@ function inInfo({ words: before, typed }: At<'info'>, document: Opened): readonl
   if (option) {
     const field = settingFieldOf(topic, option[1] ?? '')
     const value = part(typed, (option[1] ?? '').length + 1)
-    return field ? inField(field, value, levelOf(inside, document), document, '') : []
+    return field ? inField(field, value, levelOf(inside, document), document) : []
   }
   const aboutLevel = topic === 'working' || perLevel.some(each => each === topic)
   const levels = aboutLevel && inside.about === '' ? named('level', '', typed.span, document) : []
@@ -172,7 +171,7 @@ function inEquation(typed: Text, document: Opened): readonly Offer[] {
   return inExpression(part(typed, sign.index + sign[0].length), undefined, document).filter(({ text }) => text !== own)
 }
 
-function inField({ holds }: Field, typed: Text, level: string, document: Opened, wall: string): readonly Offer[] {
+function inField({ holds }: Field, typed: Text, level: string, document: Opened): readonly Offer[] {
   switch (holds.kind) {
     case 'own':
     case 'text':
@@ -189,10 +188,14 @@ function inField({ holds }: Field, typed: Text, level: string, document: Opened,
       return named(holds.kind, '', typed.span, document)
     case 'wall':
       return named('wall', level, typed.span, document)
-    case 'walls':
-      return named('wall', level, endOf(typed, /[^,\s][^,]*$|$/).span, document).filter(
-        ({ text }) => !typed.text.split(',').some(each => each.trim() === text && text !== wall),
-      )
+    case 'walls': {
+      const before = typed.text
+        .split(',')
+        .slice(0, -1)
+        .map(name => name.trim())
+      const offers = named('wall', level, endOf(typed, /[^,\s][^,]*$|$/).span, document)
+      return offers.filter(({ text }) => !before.includes(text))
+    }
     case 'lines': {
       const piece = endOf(typed, /[^,]*$/)
       return /^\s*\S*$/.test(piece.text) ? [] : inExpression(endOf(piece, /\S.*$|$/), 'length', document)

@@ -3,7 +3,7 @@ import type { Span } from '../base/span.ts'
 import { pointsOf } from '../model/areas.ts'
 import { settingOf } from '../model/columns.ts'
 import { readEquation } from '../model/equations.ts'
-import { levelNameOf } from '../model/givens.ts'
+import { levelNameOf, perLevel } from '../model/givens.ts'
 import { namedLines } from '../model/grid.ts'
 import { isLimit, SIGN } from '../model/limits.ts'
 import type { Block } from '../read/block.ts'
@@ -135,6 +135,7 @@ class Gatherer {
   }
 
   private about({ topic }: Block, about: Text): void {
+    if (topic !== 'construction' && topic !== 'working' && !perLevel.some(each => each === topic)) return
     const sort = topic === 'construction' ? 'construction' : 'level'
     this.mention({ sort, name: about.text, of: '', span: about.span, given: sort === 'construction', within: 'info' })
   }

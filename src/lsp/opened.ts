@@ -69,7 +69,7 @@ export const spanOf = ({ position }: Node): Span => ({
 export const isCode = (node: Node): node is Code => node.type === 'code'
 
 /** The same pattern as the reading of quotes, and the bar as a Markdown table has it. */
-const QUOTE = /\{\{\s*([^{}|\\]*?)\s*(?:\\?\|[^{}]*)?\}\}/g
+const QUOTE = /\{\{([^{}|\\]*)(?:\\?\|[^{}]*)?\}\}/g
 
 /** Quotes by their places in the source, found anew within the place of their node. */
 function placedQuotes(marks: readonly QuoteMark[], { text }: Source): readonly PlacedQuote[] {
@@ -79,11 +79,12 @@ function placedQuotes(marks: readonly QuoteMark[], { text }: Source): readonly P
     const whole = spanOf(node)
     const found = [...text.slice(whole.start, whole.end).matchAll(QUOTE)]
     return held.map(({ id }, i): PlacedQuote => {
-      const [all = '', written] = found[i] ?? []
+      const inside = found[i]?.[1] ?? ''
+      const written = inside.trim()
       const at = whole.start + (found[i]?.index ?? 0)
       if (found.length !== held.length || written !== id.text)
         return { id: { text: id.text, span: whole }, sure: false }
-      const start = at + all.indexOf(written, 2)
+      const start = at + 2 + inside.length - inside.trimStart().length
       return { id: { text: written, span: { start, end: start + written.length } }, sure: true }
     })
   })

@@ -19,7 +19,8 @@ export interface Entry {
 
 export function outlineOf(document: Opened): readonly Entry[] {
   const headings = document.tree().children.filter(isHeading)
-  const blocks = document.fences().map(fence => blockEntry(fence, document))
+  const given = new Set(document.names().mentions.flatMap(each => (each.given ? [each.span] : [])))
+  const blocks = document.fences().map(fence => blockEntry(fence, given))
   const end = document.source.text.length
   const sections = headings.map((heading, i): Section => {
     const next = headings.slice(i + 1).find(({ depth }) => depth <= heading.depth)
@@ -60,10 +61,11 @@ function nested(sections: readonly Section[], blocks: readonly Entry[], text: st
   return [...loose, ...out].sort((a, b) => a.span.start - b.span.start)
 }
 
-function blockEntry({ block, span }: Fence, document: Opened): Entry {
+/** @param given places of the names that are given, by which a row is called */
+function blockEntry({ block, span }: Fence, given: ReadonlySet<Span>): Entry {
   const { topic, about, info, table } = block
   const rows = (topic === 'working' ? [] : (table?.rows ?? [])).flatMap(({ cells, line }): readonly Entry[] => {
-    const own = cells.find(({ span }) => document.names().mentions.some(each => each.given && each.span === span))
+    const own = cells.find(({ span }) => given.has(span))
     return own ? [{ kind: 'row', name: own.text, detail: topic, span: line.span, mark: own.span, children: [] }] : []
   })
   const equations = topic === 'equations' ? block.lines : []

@@ -23,8 +23,6 @@ export type Place =
       readonly kind: 'cell'
       readonly inside: Inside
       readonly column: string
-      readonly row: readonly string[]
-      readonly header: readonly string[]
       readonly typed: Text
     }
   | { readonly kind: 'setting'; readonly inside: Inside; readonly name: string; readonly typed: Text }
@@ -53,9 +51,7 @@ export function placeAt(document: Opened, offset: number): Place | undefined {
   const first = lineOf(source, spanOf(code).start)
   if (line === first) return inInfo(source.text.slice(spanOf(code).start, offset), offset)
   const [topic = '', ...about] = `${code.lang ?? ''} ${code.meta ?? ''}`.trim().split(/\s+/)
-  // The closing marks are a line of their own, beyond the last line of the content.
-  const last = first + code.value.split('\n').length
-  if (!isTopic(topic) || line > last) return undefined
+  if (!isTopic(topic) || CLOSING.test(lineText(source, line))) return undefined
   const lines = code.value.split('\n').map((text, i) => ({ text, line: first + 1 + i }))
   const inside: Inside = {
     topic,
@@ -67,6 +63,9 @@ export function placeAt(document: Opened, offset: number): Place | undefined {
   if (own.startsWith('|')) return inTable(inside, rows, own, lineText(source, line), offset)
   return /(?:^|\s)#/.test(before) ? undefined : inLine(inside, own, offset)
 }
+
+/** Marks that are all of a line: those that close the fence. */
+const CLOSING = /^[\s>]*(?:`{3,}|~{3,})\s*$/
 
 /** Nodes that a place is in, the innermost last; at the end of one it is still in it. */
 function nodesAround(tree: Node, offset: number): readonly Node[] {
@@ -121,9 +120,7 @@ function inTable(
   if (rows.length === 1) return undefined
   const header = cellsOf(head).map(columnName)
   const column = header[cellsOf(own).length - 1]
-  return column === undefined
-    ? undefined
-    : { kind: 'cell', inside, column, row: cellsOf(whole).map(cell => cell.trim()), header, typed }
+  return column === undefined ? undefined : { kind: 'cell', inside, column, typed }
 }
 
 /** Texts between bars that are not escaped, from the first bar on. */

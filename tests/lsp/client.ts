@@ -27,7 +27,7 @@ import {
 } from 'vscode-languageserver-protocol/node'
 import { TextDocument } from 'vscode-languageserver-textdocument'
 
-const command = fileURLToPath(new URL('../../dist/platemark.cjs', import.meta.url))
+export const command = fileURLToPath(new URL('../../dist/platemark.cjs', import.meta.url))
 
 const full: ClientCapabilities = {
   textDocument: {

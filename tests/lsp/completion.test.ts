@@ -187,6 +187,7 @@ describe('elsewhere', () => {
     ['a fence of another kind with a fence of ours shown in it', '````markdown\n```walls roof\n| ‸\n```\n````'],
     ['code in a line', 'so `{{roof.‸}}` prints'],
     ['the line that closes a fence', '```grid\nx: A 0 ft\n```‸'],
+    ['the line that closes an empty fence', '```working roof\n```‸'],
     ['a Markdown table', '| wall | ‸ |\n|---|---|\n| a | b |'],
   ])('nothing is offered in %s', async (_, text) => {
     // A second grid would be a fault of its own, and is none of this.

@@ -1,5 +1,6 @@
 /** The command as a language server, driven over its protocol. */
-import { cpSync, mkdtempSync, rmSync, writeFileSync } from 'node:fs'
+import { spawnSync } from 'node:child_process'
+import { cpSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from 'node:fs'
 import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { fileURLToPath, pathToFileURL } from 'node:url'
@@ -19,7 +20,7 @@ import {
 } from 'vscode-languageserver-protocol/node'
 import { TextDocument } from 'vscode-languageserver-textdocument'
 import { tidy } from '../../src/tidy/tidy.ts'
-import { building, Editor, marked } from './client.ts'
+import { building, command, Editor, marked } from './client.ts'
 
 let editor: Editor
 const workshop = mkdtempSync(join(tmpdir(), 'platemark-lsp-'))
@@ -57,6 +58,20 @@ describe('the connection', () => {
     expect(fault?.relatedInformation).toBeUndefined()
     expect(await plain.hover(uri, 4)).toBe('The grid lines, by which points of the plan are named.')
     expect(await plain.end()).toBe(0)
+  })
+})
+
+describe('the command', () => {
+  const run = (...args: string[]) =>
+    spawnSync(process.execPath, [command, 'lsp', ...args], { encoding: 'utf8', input: '' })
+
+  test('tells what it is for, and what it does not take', () => {
+    expect(run('--help')).toMatchObject({ status: 0, stdout: expect.stringContaining('Language Server Protocol') })
+    expect(run('--port', '3')).toMatchObject({ status: 2, stderr: expect.stringContaining('takes no --port') })
+  })
+
+  test('ends by itself when the editor goes away without a word', () => {
+    expect(run('--stdio')).toMatchObject({ status: 1, stdout: '', stderr: '' })
   })
 })
 
@@ -151,7 +166,8 @@ describe('diagnostics', () => {
 describe('what stands there', () => {
   test('a quote tells its value with formula, values put in, source and line', async () => {
     const told = await editor.told(markedAt('{{roof.W}}', 4))
-    expect(told).toMatch(/roof\.W: W = [\d.]+ kip/)
+    expect(told).toMatch(/^```text\nroof\.W: W = [\d.]+ kip\n.*\n```$/s)
+    expect(told.split('\n').length).toBeGreaterThan(3)
   })
 
   test('a name in an expression tells its own line', async () => {
@@ -414,7 +430,6 @@ test('the samples have no diagnostics in an editor either', async () => {
   for (const name of ['boatyard.md', 'observatory.md', 'starter.md', 'manual/04-workings.md']) {
     const path = join(workshop, 'samples', name)
     const uri = pathToFileURL(path).href
-    const { readFileSync } = await import('node:fs')
     await editor.open(uri, readFileSync(path, 'utf8'))
     expect(await editor.diagnostics(uri)).toEqual([])
     await editor.close(uri)
