@@ -266,7 +266,7 @@ class Gatherer {
 }
 
 /** The parts of a dotted name, with their places. */
-export function dotted(id: Text): readonly Text[] {
+function dotted(id: Text): readonly Text[] {
   let at = 0
   return id.text.split('.').map(({ length }) => {
     const found = part(id, at, at + length)

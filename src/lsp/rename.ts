@@ -24,9 +24,10 @@ type Renameable = Mention & { readonly sort: keyof typeof whats }
 
 const isRenameable = (mention: Mention): mention is Renameable => Object.hasOwn(whats, mention.sort)
 
-/** The mention that a place is in or at the end of. */
+/** The mention that a place is in, or at the end of: in a crossing one name starts where the other ends. */
 export const mentionAt = ({ mentions }: Names, offset: number): Mention | undefined =>
-  mentions.find(({ span }) => span.start <= offset && offset <= span.end)
+  mentions.find(({ span }) => span.start <= offset && offset < span.end) ??
+  mentions.find(({ span }) => offset === span.end)
 
 /** What stands at a place and can be renamed, or why nothing can. */
 export function renameable(document: Opened, offset: number): Outcome<Renameable> {

@@ -87,7 +87,7 @@ function firstName(named: readonly Block[], blocks: readonly Block[]): string {
   return first?.about?.text ?? ONLY_LEVEL
 }
 
-export function levelNames(levelTable: readonly Block[]): readonly string[] {
+function levelNames(levelTable: readonly Block[]): readonly string[] {
   const names = levelTable.flatMap(({ table }) => {
     const column = table?.header.findIndex(({ name }) => name.text === 'level') ?? -1
     return table?.rows.map(({ cells }) => cells[column]?.text ?? '') ?? []

@@ -235,6 +235,7 @@ describe('places', () => {
     ['CMU8         |\n| S1', 1, '```construction CMU8'],
     ['areas loft', 7, '| loft  | 11 ft     |'],
     ['C2 | q_roof', 0, 'x: A 0 ft, B 24 ft, C 40 ft'],
+    ['C2 | q_roof', 1, 'y: 1 0 ft, 2 18 ft'],
     ['C2 | q_roof', 2, 'y: 1 0 ft, 2 18 ft'],
     ['N1.h)', 1, '| N1   | A2   | B2         | 10 ft  | CMU8         |'],
     ['.h)', 1, '| N1   | A2   | B2         | 10 ft  | CMU8         |'],
