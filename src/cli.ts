@@ -57,7 +57,7 @@ interface NamedBrowser {
 /** @returns the exit code; in a promise only where a PDF is wanted, since all else is quicker done at once */
 export function run(args: readonly string[]): number | Promise<number> {
   const settings = readArguments(args)
-  if (typeof settings === 'number') return settings
+  if (typeof settings === 'number' || settings instanceof Promise) return settings
   if (settings.to.includes('pdf')) return runWithPress(settings)
   const codes = settings.documents.map(document => guarded(document, settings))
   return Math.max(DONE, ...codes)
@@ -97,13 +97,22 @@ function ownFault(document: DocumentFile, error: unknown): number {
   )
 }
 
-function readArguments(args: readonly string[]): Settings | number {
+/** Serves an editor until it ends the connection. Editors name the streams, and may name their own process. */
+function serveEditor(args: readonly string[]): number | Promise<number> {
+  if (args.includes('--help')) return say(helpFor('lsp'))
+  const strange = args.find(arg => arg !== '--stdio' && !/^--clientProcessId=\d+$/.test(arg))
+  if (strange !== undefined) return misuse(`platemark lsp takes no ${strange}.`)
+  return import('./lsp/command.ts').then(({ serveEditor }) => serveEditor())
+}
+
+function readArguments(args: readonly string[]): Settings | number | Promise<number> {
   const [word, ...rest] = args
   if (word === '--version') return say(host.version)
   if (word === undefined) return misuse('A command is missing.')
   if (word === '--help' || word === 'help') return say(help)
+  if (word === 'lsp') return serveEditor(rest)
   const command = commands.find(command => command === word)
-  if (!command) return misuse(`There is no command ${word}. ${suggestion(word, commands, 'command')}`)
+  if (!command) return misuse(`There is no command ${word}. ${suggestion(word, [...commands, 'lsp'], 'command')}`)
   if (rest.includes('--help')) return say(helpFor(command))
   return readOptions(command, rest)
 }

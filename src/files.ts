@@ -61,10 +61,23 @@ export interface TextFault extends Pick<Diagnostic, 'rule' | 'message' | 'help'>
 
 const faultOfWhole = { text: '', offset: 0 }
 
+/** Why a document of some bytes is not read; undefined where it is. */
+export const sizeFault = (size: number): TextFault | undefined =>
+  size > LARGEST
+    ? {
+        rule: 'file-too-large',
+        message: `this file has ${megabytes(size)} MB; ${megabytes(LARGEST)} MB are read`,
+        help: 'Split the document.',
+        ...faultOfWhole,
+      }
+    : undefined
+
 export function readText(path: string): Outcome<string, TextFault> {
   try {
     const { size } = statSync(path)
-    return size > LARGEST ? bad(tooLarge(size)) : decode(readFileSync(path))
+    const fault = sizeFault(size)
+    if (fault) return bad(fault)
+    return decode(readFileSync(path))
   } catch (error) {
     return bad({
       rule: 'file-unreadable',
@@ -74,13 +87,6 @@ export function readText(path: string): Outcome<string, TextFault> {
     })
   }
 }
-
-const tooLarge = (size: number): TextFault => ({
-  rule: 'file-too-large',
-  message: `this file has ${megabytes(size)} MB; ${megabytes(LARGEST)} MB are read`,
-  help: 'Split the document.',
-  ...faultOfWhole,
-})
 
 /** The files that the document at `path` names. */
 export const nearbyOf = (path: string): Nearby => ({
@@ -112,7 +118,8 @@ export function unreadable(path: string, { text, offset, rule, message, help }: 
 export function readPiped(): Outcome<string, TextFault> {
   try {
     const bytes = readFileSync(0)
-    if (bytes.length > LARGEST) return bad(tooLarge(bytes.length))
+    const fault = sizeFault(bytes.length)
+    if (fault) return bad(fault)
     const read = decode(bytes)
     return read.ok ? good(markOf(bytes) + read.value) : read
   } catch (error) {

@@ -8,6 +8,7 @@ shear-wall building, with formulas, values put in, results, tables and sketches.
   platemark audit FILE…    show that every printed line holds to its digits
   platemark trace FILE ID  say where a number came from
   platemark tidy FILE…     set the source in columns, without changing what it says
+  platemark lsp            serve an editor: messages as you type, names, values
 
 A FILE is a Markdown document; a folder stands for all .md files in it.
 platemark COMMAND --help tells more. platemark --version prints the version.
@@ -87,6 +88,23 @@ Exit code: 0 done, or all tidy; 1 errors or, with --check, a file that is not ti
   platemark tidy calcs/
   platemark tidy --check calcs/
   platemark tidy - < workshop.md`,
+  lsp: `platemark lsp [--stdio]
+
+A language server: an editor that speaks the Language Server Protocol starts it for Markdown files and talks to
+it over its standard streams. In our blocks and quotes it gives
+
+  messages      as you type, at their place, with what to do
+  completion    topics, columns, settings, units, names, grid crossings, ids of values
+  on pointing   a value with its formula, values put in, clause and line; what a column is
+  places        where a name is given, and every use of it
+  renaming      of a level, wall, construction, equation or grid line, everywhere or not at all
+  formatting    as platemark tidy does
+  outline       headings, blocks, walls and equations
+
+It reads the text in the editor and, from the disk, the pictures and templates that the text names. It writes
+nothing and opens no network. It ends when the editor ends it.
+
+Exit code: 0 ended as asked, 1 the editor went away, 2 wrong usage.`,
 } as const
 
 export const helpFor = (command: keyof typeof texts): string => texts[command]

@@ -35,13 +35,14 @@ export const documentWants = ['criteria', 'checks', 'assumptions', 'references']
 export type DocumentWant = (typeof documentWants)[number]
 
 /** All of a level in order; the displaced shape comes with the displacement. */
-const WHOLE = 'whole calculation'
+export const WHOLE = 'whole calculation' as const
 const parts: readonly Want[] = wants.filter(want => want !== 'displaced shape')
 
 export type AnyWant = Want | BuildingWant | DocumentWant
-const every: readonly AnyWant[] = [...wants, ...buildingWants, ...documentWants]
+export const everyWant: readonly AnyWant[] = [...wants, ...buildingWants, ...documentWants]
 
-const details = ['full', 'table', 'result'] as const
+export const workingSettings: readonly string[] = ['detail', 'walls', 'case']
+export const details = ['full', 'table', 'result'] as const
 export type Detail = (typeof details)[number]
 
 export interface Request {
@@ -57,7 +58,7 @@ export interface Request {
 
 export function readRequest(block: Block): Result<Request> {
   if (block.faults.length > 0) return bad(block.faults)
-  const faults: Diagnostic[] = [...strangeSettings(block, ['detail', 'walls', 'case'])]
+  const faults: Diagnostic[] = [...strangeSettings(block, workingSettings)]
   const found = block.lines.flatMap(line => splitAt(line, /[,;]/)).map(line => wantOf(line, faults))
   if (block.lines.length === 0)
     faults.push(
@@ -66,7 +67,7 @@ export function readRequest(block: Block): Result<Request> {
         'working-empty',
         block.info,
         'this working asks for nothing',
-        `Name what it shows: ${[WHOLE, ...every].join(', ')}.`,
+        `Name what it shows: ${[WHOLE, ...everyWant].join(', ')}.`,
       ),
     )
   if (block.table)
@@ -96,7 +97,7 @@ export function readRequest(block: Block): Result<Request> {
 function wantOf(line: Text, faults: Diagnostic[]): readonly AnyWant[] {
   const words = toBritish(line.text.toLowerCase()).replace(/\s+/g, ' ')
   if (words === WHOLE) return parts
-  const known = every.find(want => want === words)
+  const known = everyWant.find(want => want === words)
   if (known) return [known]
   faults.push(
     diagnose(
@@ -104,7 +105,7 @@ function wantOf(line: Text, faults: Diagnostic[]): readonly AnyWant[] {
       'unknown-working',
       line.span,
       `${line.text} is not something that can be shown`,
-      suggestion(words, [WHOLE, ...every], 'working'),
+      suggestion(words, [WHOLE, ...everyWant], 'working'),
     ),
   )
   return []

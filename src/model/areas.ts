@@ -9,7 +9,7 @@ import { texAbout } from '../base/work.ts'
 import type { Block } from '../read/block.ts'
 import { diagnose, part, type Text, trimmed } from '../read/text.ts'
 import { quantity } from './cell.ts'
-import { filled, type RowOf, readRows } from './columns.ts'
+import { type ColumnRules, filled, type RowOf, readRows } from './columns.ts'
 import { crossesItself, signedArea } from './geometry.ts'
 import { type Corner, type Grid, readPoint } from './grid.ts'
 import type { Scope } from './scope.ts'
@@ -27,14 +27,14 @@ export interface Area {
 
 const OPENING = 'opening'
 
-const rules = {
+export const areaColumns: ColumnRules = {
   needed: ['area', 'load'],
   optional: ['from', 'to', 'outline', 'note'],
   oneOf: [['from', 'to'], ['outline']],
 }
 
 export const readAreas = (blocks: readonly Block[], level: string, grid: Grid, scope: Scope): Result<readonly Area[]> =>
-  readRows(blocks, 'area', rules, (record, name) => readArea(record, name, level, grid, scope))
+  readRows(blocks, 'area', areaColumns, (record, name) => readArea(record, name, level, grid, scope))
 
 function readArea(record: RowOf, name: Text, level: string, grid: Grid, scope: Scope): Result<Area> {
   const load = filled(record, 'load')
@@ -135,7 +135,7 @@ function readPolygon(record: RowOf, id: string, name: Text, grid: Grid, scope: S
 }
 
 /** Points in brackets and crossings, with spaces between. */
-function pointsOf(cell: Text): readonly Text[] {
+export function pointsOf(cell: Text): readonly Text[] {
   return [...cell.text.matchAll(/\(((?:[^()]|\([^()]*\))*)\)|[^\s(]+/g)].map(found => {
     const end = found.index + found[0].length
     return found[1] === undefined ? part(cell, found.index, end) : trimmed(part(cell, found.index + 1, end - 1))

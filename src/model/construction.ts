@@ -43,7 +43,8 @@ const symbols: Readonly<Record<string, Sym>> = {
   "f'm": sym('fm', "f'_{m}", 'strength'),
 }
 
-const materials: Readonly<
+/** What each material needs and may have, besides its name and `ends`. */
+export const materials: Readonly<
   Record<Material, { readonly needed: readonly string[]; readonly optional: readonly string[] }>
 > = {
   section: { needed: ['E', 't'], optional: ['G', 'nu'] },
@@ -52,7 +53,11 @@ const materials: Readonly<
   'clay masonry': { needed: ["f'm", 't'], optional: ['E', 'G', 'nu'] },
 }
 
-const isMaterial = (text: string): text is Material => Object.hasOwn(materials, text)
+/** Settings of a construction of any material. */
+export const commonSettings: readonly string[] = ['material', 'ends']
+export const endsWords: readonly Ends[] = ['cantilever', 'fixed']
+
+export const isMaterial = (text: string): text is Material => Object.hasOwn(materials, text)
 
 export function readConstruction(block: Block, scope: Scope): Result<Construction> {
   if (block.faults.length > 0) return bad(block.faults)
@@ -88,7 +93,7 @@ export function readConstruction(block: Block, scope: Scope): Result<Constructio
 
 function readSettings(block: Block, name: Text, material: Material, scope: Scope): Result<Construction> {
   const { needed, optional } = materials[material]
-  const faults = [...strangeSettings(block, ['material', 'ends', ...needed, ...optional]), ...strangeLines(block)]
+  const faults = [...strangeSettings(block, [...commonSettings, ...needed, ...optional]), ...strangeLines(block)]
   const missing = needed.filter(setting => !settingOf(block, setting))
   if (missing.length > 0 && faults.length === 0)
     faults.push(
@@ -173,7 +178,8 @@ function readEnds(block: Block, name: Text, scope: Scope): Result<Ends> {
     })
     return good('cantilever')
   }
-  if (ends.text === 'cantilever' || ends.text === 'fixed') return good(ends.text)
+  const found = endsWords.find(word => word === ends.text)
+  if (found) return good(found)
   return bad([
     diagnose(
       'error',

@@ -23,7 +23,8 @@ export interface Equation {
   readonly unit?: Unit
 }
 
-const NAME = /^[\p{L}][\p{L}\p{N}_]*(?:'[\p{L}\p{N}_]+)?$/u
+/** How an equation may be called. */
+export const NAME = /^[\p{L}][\p{L}\p{N}_]*(?:'[\p{L}\p{N}_]+)?$/u
 
 /** A line is read once, however many builds it stands in. */
 const known = new WeakMap<Text, Result<Equation>>()

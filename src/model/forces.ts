@@ -11,7 +11,7 @@ import { texAbout } from '../base/work.ts'
 import type { Block } from '../read/block.ts'
 import { diagnose, type Text } from '../read/text.ts'
 import { quantity } from './cell.ts'
-import { filled, recordsOf, settingOf, strangeLines, strangeSettings } from './columns.ts'
+import { type ColumnRules, filled, recordsOf, settingOf, strangeLines, strangeSettings } from './columns.ts'
 import type { Scope } from './scope.ts'
 
 export interface Forces {
@@ -21,6 +21,11 @@ export interface Forces {
   /** Share of the plan's size across the force by which the mass may be off. */
   readonly accidental: Value
 }
+
+export const forceColumns: ColumnRules = { needed: ['level'], optional: ['x', 'y'] }
+export const forceSettings: readonly string[] = ['x', 'y', 'accidental']
+/** Those that stand beside a table of all levels. */
+export const forceTableSettings: readonly string[] = ['accidental']
 
 const force = { x: sym('F_x', 'F_x', 'force'), y: sym('F_y', 'F_y', 'force') }
 const share = sym('a', '\\alpha', 'share')
@@ -54,7 +59,7 @@ export function readForces(
     ])
   if (row) return readStated(row, level, scope)
   if (!block) return good(undefined)
-  const faults = [...block.faults, ...strangeSettings(block, ['x', 'y', 'accidental']), ...strangeLines(block)]
+  const faults = [...block.faults, ...strangeSettings(block, forceSettings), ...strangeLines(block)]
   if (faults.length > 0) return bad(faults)
   const [x, y, accidental] = ['x', 'y', 'accidental'].map(name => settingOf(block, name))
   if (!x && !y)
@@ -71,8 +76,8 @@ export function readForces(
 }
 
 function rowFor(table: Block, level: string): Result<Stated | undefined> {
-  const records = recordsOf(table, { needed: ['level'], optional: ['x', 'y'] })
-  const faults = [...strangeSettings(table, ['accidental']), ...strangeLines(table)]
+  const records = recordsOf(table, forceColumns)
+  const faults = [...strangeSettings(table, forceTableSettings), ...strangeLines(table)]
   if (!records.ok || faults.length > 0) return bad([...faults, ...(records.ok ? [] : records.because)])
   const record = records.value.find(record => record.cell('level')?.text === level)
   if (!record) return good(undefined)

@@ -29,7 +29,8 @@ export interface Givens {
   readonly strays: (topic: string) => readonly Diagnostic[]
 }
 
-const perLevel = ['areas', 'line-loads', 'point-loads', 'walls', 'openings', 'forces'] as const
+/** Topics of which a block is about one level. */
+export const perLevel = ['areas', 'line-loads', 'point-loads', 'walls', 'openings', 'forces'] as const
 const ONLY_LEVEL = 'level'
 
 export function gather(blocks: readonly Block[]): Givens {

@@ -35,6 +35,8 @@ export interface Corner {
   readonly y: Value
 }
 
+export const gridSettings: readonly string[] = ['x', 'y', 'north']
+
 const position = { x: sym('x', 'x', 'length'), y: sym('y', 'y', 'length') }
 const north = sym('north', '\\theta_{\\text{north}}', 'angle')
 
@@ -47,7 +49,7 @@ export function readGrid(blocks: readonly Block[], scope: Scope): Result<Grid> {
         also: [{ span: block.info, text: 'first here' }],
       }),
     ])
-  const faults = [...block.faults, ...strangeSettings(block, ['x', 'y', 'north']), ...strangeLines(block)]
+  const faults = [...block.faults, ...strangeSettings(block, gridSettings), ...strangeLines(block)]
   if (faults.length > 0) return bad(faults)
   const x = readLines(settingOf(block, 'x'), 'x', scope)
   const y = readLines(settingOf(block, 'y'), 'y', scope)
@@ -59,21 +61,36 @@ export function readGrid(blocks: readonly Block[], scope: Scope): Result<Grid> {
   return good(direction?.ok ? { ...lines, north: direction.value } : lines)
 }
 
+/** The lines of one axis as written: a name and where it lies; only a name where the position is left out. */
+export function namedLines(setting: Text): readonly { readonly name: Text; readonly at?: Text }[] {
+  return splitAt(setting, /,/)
+    .filter(({ text }) => text !== '')
+    .map(piece => {
+      const word = /^(\S+)\s+/.exec(piece.text)
+      return word ? { name: part(piece, 0, (word[1] ?? '').length), at: part(piece, word[0].length) } : { name: piece }
+    })
+}
+
 function readLines(setting: Text | undefined, axis: Axis, scope: Scope): Result<readonly GridLine[]> {
   if (!setting) return good([])
-  const named = splitAt(setting, /,/).filter(({ text }) => text !== '')
+  const named = namedLines(setting)
   const names: Text[] = []
   const lines = named.map((piece): Result<GridLine> => {
-    const word = /^(\S+)\s+/.exec(piece.text)
-    if (!word)
+    if (!piece.at)
       return bad([
-        diagnose('error', 'grid-line', piece.span, 'a grid line is a name and a position', 'Write A 0 ft, B 24 ft.'),
+        diagnose(
+          'error',
+          'grid-line',
+          piece.name.span,
+          'a grid line is a name and a position',
+          'Write A 0 ft, B 24 ft.',
+        ),
       ])
-    const name = checkedName(part(piece, 0, (word[1] ?? '').length), 'grid line')
+    const name = checkedName(piece.name, 'grid line')
     if (!name.ok) return name
     names.push(name.value)
     const at = quantity(
-      part(piece, word[0].length),
+      piece.at,
       { id: `grid.${name.value.text}`, what: 'position', sym: position[axis], tex: texAbout(axis, name.value.text) },
       scope,
     )
@@ -95,14 +112,10 @@ export interface PointWant {
 
 /** A crossing (`A1`), an offset from one (`A+6 ft / 2`), or `x, y`. */
 export function readPoint(cell: Text, want: PointWant, grid: Grid, scope: Scope): Result<Corner> {
-  const [first, second, ...more] = splitAt(cell, /,/)
-  if (first && second && more.length === 0)
-    return corner(coordinate(first, 'x', want, grid, scope), coordinate(second, 'y', want, grid, scope))
-  if (more.length > 0) return bad([notAPoint(cell, grid)])
-  const slash = splitAt(cell, /\//)
-  const [left, right] = slash
-  if (left && right && slash.length === 2)
-    return corner(coordinate(left, 'x', want, grid, scope), coordinate(right, 'y', want, grid, scope))
+  const form = formOfPoint(cell)
+  if (form.kind === 'strange') return bad([notAPoint(cell, grid)])
+  if (form.kind === 'pair')
+    return corner(coordinate(form.x, 'x', want, grid, scope), coordinate(form.y, 'y', want, grid, scope))
   const crossings = grid.x.flatMap(a =>
     grid.y.filter(b => a.name + b.name === cell.text).map(b => ({ x: a.at, y: b.at })),
   )
@@ -121,6 +134,21 @@ export function readPoint(cell: Text, want: PointWant, grid: Grid, scope: Scope)
   return good(crossing)
 }
 
+/** How a point is written: two coordinates, or what may be a crossing. */
+export type PointForm =
+  | { readonly kind: 'pair'; readonly x: Text; readonly y: Text }
+  | { readonly kind: 'crossing' }
+  | { readonly kind: 'strange' }
+
+export function formOfPoint(cell: Text): PointForm {
+  const [first, second, ...more] = splitAt(cell, /,/)
+  if (first && second && more.length === 0) return { kind: 'pair', x: first, y: second }
+  if (more.length > 0) return { kind: 'strange' }
+  const slash = splitAt(cell, /\//)
+  const [left, right] = slash
+  return left && right && slash.length === 2 ? { kind: 'pair', x: left, y: right } : { kind: 'crossing' }
+}
+
 function corner(x: Result<Value>, y: Result<Value>): Result<Corner> {
   const both = all([x, y])
   return x.ok && y.ok ? good({ x: x.value, y: y.value }) : both.ok ? bad([]) : both
@@ -135,9 +163,7 @@ function coordinate(cell: Text, axis: Axis, { id, mark, about }: PointWant, grid
     tex: texAbout(`${axis}_{${mark}}`, ...about),
     place: true,
   }
-  const line = [...grid[axis]]
-    .sort((a, b) => b.name.length - a.name.length)
-    .find(({ name }) => startsAtLine(cell.text, name))
+  const line = lineOfCoordinate(cell, grid[axis])
   if (!line) return quantity(cell, wanted, scope)
   const rest = trimmed(part(cell, line.name.length))
   if (rest.text === '') return good(line.at)
@@ -146,6 +172,13 @@ function coordinate(cell: Text, axis: Axis, { id, mark, about }: PointWant, grid
   if (!parsed.ok) return bad([exprDiagnostic(parsed.because)])
   return quantityOf(named(parsed.value, line.at.id), cell.span, wanted, scope)
 }
+
+/** The grid line that a coordinate starts from, the longest name first. */
+export const lineOfCoordinate = <T extends { readonly name: string }>(
+  { text }: Text,
+  lines: readonly T[],
+): T | undefined =>
+  [...lines].sort((a, b) => b.name.length - a.name.length).find(({ name }) => startsAtLine(text, name))
 
 const startsAtLine = (text: string, name: string): boolean =>
   text.startsWith(name) && /^\s*([+-]|$)/.test(text.slice(name.length))

@@ -9,7 +9,16 @@ import { texAbout } from '../base/work.ts'
 import type { Block } from '../read/block.ts'
 import { diagnose, type Text } from '../read/text.ts'
 import { aboveZero, quantity } from './cell.ts'
-import { duplicates, filled, nameIn, recordsOf, settingOf, strangeLines, strangeSettings } from './columns.ts'
+import {
+  type ColumnRules,
+  duplicates,
+  filled,
+  nameIn,
+  recordsOf,
+  settingOf,
+  strangeLines,
+  strangeSettings,
+} from './columns.ts'
 import type { Scope } from './scope.ts'
 
 export interface LevelLine {
@@ -18,6 +27,11 @@ export interface LevelLine {
   readonly elevation?: Value
   readonly span: Span
 }
+
+export const levelColumns: ColumnRules = { needed: ['level', 'elevation'], optional: [] }
+export const levelSettings: readonly string[] = ['walls']
+/** Either spelling; what holds without the setting. */
+export const levelWalls: readonly string[] = ['storey by storey', 'story by story']
 
 const elevation = sym('z', 'z', 'length')
 
@@ -32,8 +46,8 @@ export function readLevels(blocks: readonly Block[], onlyName: string, scope: Sc
       }),
     ])
   const walls = settingOf(block, 'walls')
-  const faults = [...strangeSettings(block, ['walls']), ...strangeLines(block)]
-  if (walls && walls.text !== 'storey by storey' && walls.text !== 'story by story')
+  const faults = [...strangeSettings(block, levelSettings), ...strangeLines(block)]
+  if (walls && !levelWalls.includes(walls.text))
     faults.push(
       diagnose(
         'error',
@@ -43,7 +57,7 @@ export function readLevels(blocks: readonly Block[], onlyName: string, scope: Sc
         'Walls are worked storey by storey.',
       ),
     )
-  const records = recordsOf(block, { needed: ['level', 'elevation'], optional: [] })
+  const records = recordsOf(block, levelColumns)
   if (!records.ok || faults.length > 0) return bad([...faults, ...(records.ok ? [] : records.because)])
   const names: Text[] = []
   const lines = records.value.map((record): Result<LevelLine> => {

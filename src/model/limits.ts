@@ -13,7 +13,7 @@ import { exprDiagnostic, workExpr } from './cell.ts'
 import type { Scope } from './scope.ts'
 
 /** A sign of comparison; the head of an arrow `->` is none. */
-const SIGN = /<=|>=|≤|≥|<|(?<!-)>/
+export const SIGN = /<=|>=|≤|≥|<|(?<!-)>/
 
 export const isLimit = ({ text }: Text): boolean => SIGN.test(text)
 

@@ -31,37 +31,35 @@ export interface PointLoad extends Loaded {
 export const lineLoad = sym('w', 'w', 'lineLoad')
 export const pointLoad = sym('W', 'W', 'force')
 
+export const lineColumns: ColumnRules = { needed: ['line', 'from', 'to', 'load'], optional: ['note'] }
+export const pointColumns: ColumnRules = { needed: ['point', 'at', 'load'], optional: ['note'] }
+
 export function readLineLoads(
   blocks: readonly Block[],
   level: string,
   grid: Grid,
   scope: Scope,
 ): Result<readonly LineLoad[]> {
-  return readEach(
-    blocks,
-    'line',
-    { needed: ['line', 'from', 'to', 'load'], optional: ['note'] },
-    (record, name, loaded) => {
-      const [from, to] = [filled(record, 'from'), filled(record, 'to')]
-      if (!from.ok) return from
-      if (!to.ok) return to
-      const want = { id: `${level}.lines.${name}`, about: [name] }
-      const a = readPoint(from.value, { ...want, mark: '1' }, grid, scope)
-      const b = readPoint(to.value, { ...want, mark: '2' }, grid, scope)
-      if (!a.ok || !b.ok) return bad([...(a.ok ? [] : a.because), ...(b.ok ? [] : b.because)])
-      if (a.value.x.si === b.value.x.si && a.value.y.si === b.value.y.si)
-        return bad([
-          diagnose(
-            'error',
-            'line-without-length',
-            loaded.span,
-            `line ${name} has no length`,
-            'Its two ends are the same point.',
-          ),
-        ])
-      return good({ ...loaded, from: a.value, to: b.value })
-    },
-  )
+  return readEach(blocks, 'line', lineColumns, (record, name, loaded) => {
+    const [from, to] = [filled(record, 'from'), filled(record, 'to')]
+    if (!from.ok) return from
+    if (!to.ok) return to
+    const want = { id: `${level}.lines.${name}`, about: [name] }
+    const a = readPoint(from.value, { ...want, mark: '1' }, grid, scope)
+    const b = readPoint(to.value, { ...want, mark: '2' }, grid, scope)
+    if (!a.ok || !b.ok) return bad([...(a.ok ? [] : a.because), ...(b.ok ? [] : b.because)])
+    if (a.value.x.si === b.value.x.si && a.value.y.si === b.value.y.si)
+      return bad([
+        diagnose(
+          'error',
+          'line-without-length',
+          loaded.span,
+          `line ${name} has no length`,
+          'Its two ends are the same point.',
+        ),
+      ])
+    return good({ ...loaded, from: a.value, to: b.value })
+  })
 }
 
 export function readPointLoads(
@@ -70,7 +68,7 @@ export function readPointLoads(
   grid: Grid,
   scope: Scope,
 ): Result<readonly PointLoad[]> {
-  return readEach(blocks, 'point', { needed: ['point', 'at', 'load'], optional: ['note'] }, (record, name, loaded) => {
+  return readEach(blocks, 'point', pointColumns, (record, name, loaded) => {
     const cell = filled(record, 'at')
     if (!cell.ok) return cell
     const at = readPoint(cell.value, { id: `${level}.points.${name}`, mark: '', about: [name] }, grid, scope)

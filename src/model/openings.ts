@@ -12,7 +12,16 @@ import { texAbout } from '../base/work.ts'
 import type { Block } from '../read/block.ts'
 import { diagnose, type Text } from '../read/text.ts'
 import { aboveZero, quantity } from './cell.ts'
-import { duplicates, filled, nameIn, type RowOf, recordsOf, strangeLines, strangeSettings } from './columns.ts'
+import {
+  type ColumnRules,
+  duplicates,
+  filled,
+  nameIn,
+  type RowOf,
+  recordsOf,
+  strangeLines,
+  strangeSettings,
+} from './columns.ts'
 import type { Scope } from './scope.ts'
 import type { Wall } from './walls.ts'
 
@@ -31,7 +40,10 @@ export interface Opening {
 /** Lengths nearer than this, in m, are one length that was written in two ways. */
 export const SAME = 1e-4
 
-const rules = { needed: ['wall', 'opening', 'left', 'sill', 'width', 'height'], optional: ['note'] }
+export const openingColumns: ColumnRules = {
+  needed: ['wall', 'opening', 'left', 'sill', 'width', 'height'],
+  optional: ['note'],
+}
 
 const symbols = {
   left: sym('l', '\\ell', 'length'),
@@ -71,7 +83,7 @@ export function readOpenings(
 }
 
 function rowsOf(block: Block): readonly Result<RowOf>[] {
-  const records = recordsOf(block, rules)
+  const records = recordsOf(block, openingColumns)
   const faults = [...strangeSettings(block, []), ...strangeLines(block), ...(records.ok ? [] : records.because)]
   if (faults.length > 0) return [bad(faults)]
   return records.ok ? records.value.map(record => good(record)) : []

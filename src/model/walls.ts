@@ -11,7 +11,7 @@ import { texAbout } from '../base/work.ts'
 import type { Block } from '../read/block.ts'
 import { diagnose, type Text } from '../read/text.ts'
 import { aboveZero, exprDiagnostic, quantity, stated, workExpr } from './cell.ts'
-import { filled, type RowOf, readRows } from './columns.ts'
+import { type ColumnRules, filled, type RowOf, readRows } from './columns.ts'
 import { type Corner, type Grid, readPoint } from './grid.ts'
 import type { Scope } from './scope.ts'
 
@@ -45,14 +45,14 @@ export type Wall = BuiltWall | StatedWall
 const height = sym('h', 'h', 'length')
 export const stiffness = sym('k', 'k', 'stiffness')
 
-const rules = {
+export const wallColumns: ColumnRules = {
   needed: ['wall', 'from', 'to'],
   optional: ['height', 'construction', 'k', 'note'],
   oneOf: [['height', 'construction'], ['k']],
 }
 
 export const readWalls = (blocks: readonly Block[], level: string, grid: Grid, scope: Scope): Result<readonly Wall[]> =>
-  readRows(blocks, 'wall', rules, (record, name) => readWall(record, name.text, level, grid, scope))
+  readRows(blocks, 'wall', wallColumns, (record, name) => readWall(record, name.text, level, grid, scope))
 
 function readWall(record: RowOf, name: string, level: string, grid: Grid, scope: Scope): Result<Wall> {
   const placed = readPlace(record, name, level, grid, scope)

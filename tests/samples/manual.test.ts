@@ -99,7 +99,9 @@ describe('the manual tells of', () => {
 
   test('every column and setting that a block may have', () => {
     const building = filesIn('src/model', '.ts').map(read).join('\n')
-    const lists = [...building.matchAll(/(?:needed|optional): \[([^\]]*)\]|strangeSettings\(\w+, \[([^\]]*)\]/g)]
+    const lists = [
+      ...building.matchAll(/(?:needed|optional): \[([^\]]*)\]|Settings(?:: readonly string\[\])? = \[([^\]]*)\]/g),
+    ]
     const names = lists.flatMap(([, columns, settings]) =>
       [...(columns ?? settings ?? '').matchAll(/'([^']+)'|"([^"]+)"/g)].map(([, one, other]) => one ?? other ?? ''),
     )

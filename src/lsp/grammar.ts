@@ -1,0 +1,221 @@
+/**
+ * What stands where in a block, and one sentence about each, for an editor that asks. Which columns and settings there are
+ * is the model's to say; `tests/lsp/grammar.test.ts` holds this table to its lists.
+ */
+import type { Kind } from '../base/kind.ts'
+import { casesOf } from '../compute/cases.ts'
+import { type AnyWant, details, type WHOLE } from '../explain/request.ts'
+import { endsWords, materials } from '../model/construction.ts'
+import { levelWalls } from '../model/levels.ts'
+import type { Topic } from '../read/topics.ts'
+
+/** What a cell, or the text behind a setting, is. */
+export type Holds =
+  /** The name of what its row states. */
+  | { readonly kind: 'own' }
+  | { readonly kind: 'level' | 'wall' | 'construction' | 'point' | 'points' | 'text' }
+  /** Names of grid lines with their positions. */
+  | { readonly kind: 'lines' }
+  /** Names of walls, separated by commas. */
+  | { readonly kind: 'walls' }
+  | { readonly kind: 'words'; readonly words: readonly string[] }
+  /**
+   * An expression. `id` is that of its value, where LEVEL, NAME and WALL stand for the block's level, the name that
+   * the row or the block gives, and its cell `wall`. `words` may stand in its place.
+   */
+  | { readonly kind: 'value'; readonly of: Kind; readonly id: string; readonly words?: readonly string[] }
+
+export interface Field {
+  readonly says: string
+  readonly holds: Holds
+}
+
+type Fields = Readonly<Record<string, Field>>
+
+export interface TopicFields {
+  readonly says: string
+  readonly columns: Fields
+  readonly settings: Fields
+}
+
+const field = (holds: Holds, says: string): Field => ({ says, holds })
+const value = (of: Kind, id: string, says: string): Field => ({ says, holds: { kind: 'value', of, id } })
+const words = (list: readonly string[], says: string): Field => ({ says, holds: { kind: 'words', words: list } })
+
+const note = field({ kind: 'text' }, 'Yours: a note, printed with the row.')
+const none: Fields = {}
+
+export const grammar: Readonly<Record<Topic, TopicFields>> = {
+  grid: {
+    says: 'The grid lines, by which points of the plan are named.',
+    columns: none,
+    settings: {
+      x: field({ kind: 'lines' }, 'Lines across the plan: name and position, separated by commas.'),
+      y: field({ kind: 'lines' }, 'Lines along the plan: name and position, separated by commas.'),
+      north: value('angle', 'grid.north', 'Direction of north as an angle from x, for the north point of the sketch.'),
+    },
+  },
+  levels: {
+    says: 'The levels and their elevations; needed only where there are several.',
+    columns: {
+      level: field({ kind: 'own' }, 'Name of the level.'),
+      elevation: value('length', 'NAME.elevation', 'Elevation of its diaphragm above the base, which is 0.'),
+    },
+    settings: { walls: words(levelWalls, 'How walls of one name on successive levels are worked.') },
+  },
+  areas: {
+    says: 'The plan of a level and its loads, and its openings.',
+    columns: {
+      area: field({ kind: 'own' }, 'Name of the area.'),
+      from: field({ kind: 'point' }, 'A corner of a rectangle.'),
+      to: field({ kind: 'point' }, 'The corner opposite to from.'),
+      outline: field(
+        { kind: 'points' },
+        'Instead of two corners: three points or more, in either direction of turning.',
+      ),
+      load: {
+        says: 'Weight per area; or the word opening, which takes away whatever plan it covers.',
+        holds: { kind: 'value', of: 'areaLoad', id: 'LEVEL.areas.NAME.w', words: ['opening'] },
+      },
+      note,
+    },
+    settings: none,
+  },
+  'line-loads': {
+    says: 'Loads along lines of a level, such as walls and parapets.',
+    columns: {
+      line: field({ kind: 'own' }, 'Name of the line load.'),
+      from: field({ kind: 'point' }, 'One end of the line.'),
+      to: field({ kind: 'point' }, 'The other end of the line.'),
+      load: value('lineLoad', 'LEVEL.lines.NAME.w', 'Weight per length.'),
+      note,
+    },
+    settings: none,
+  },
+  'point-loads': {
+    says: 'Loads at points of a level.',
+    columns: {
+      point: field({ kind: 'own' }, 'Name of the point load.'),
+      at: field({ kind: 'point' }, 'Where it acts.'),
+      load: value('force', 'LEVEL.points.NAME.W', 'A weight.'),
+      note,
+    },
+    settings: none,
+  },
+  construction: {
+    says: 'What walls are made of; its own name stands after the topic.',
+    columns: none,
+    settings: {
+      material: words(Object.keys(materials), 'The material, which settles what else is needed.'),
+      ends: words(endsWords, 'How its walls are held: cantilever, or fixed for both ends held.'),
+      t: value('thickness', 'constructions.NAME.t', 'Thickness.'),
+      E: value(
+        'modulus',
+        'constructions.NAME.E',
+        'Modulus of elasticity; worked from the strength where it is left out.',
+      ),
+      G: value('modulus', 'constructions.NAME.G', 'Shear modulus; it comes before nu.'),
+      nu: value('number', 'constructions.NAME.nu', "Poisson's ratio, from 0 to below 0.5."),
+      "f'c": value('strength', "constructions.NAME.f'c", 'Strength of the concrete.'),
+      "f'm": value('strength', "constructions.NAME.f'm", 'Strength of the masonry.'),
+    },
+  },
+  walls: {
+    says: 'The walls below a level: where they stand, how high they are and what gives them their stiffness.',
+    columns: {
+      wall: field({ kind: 'own' }, 'Name of the wall.'),
+      from: field({ kind: 'point' }, 'The start of the wall; it may lie at any angle.'),
+      to: field({ kind: 'point' }, 'The other end of the wall.'),
+      height: value('length', 'LEVEL.wall.NAME.h', 'Clear height; needed with a construction.'),
+      construction: field({ kind: 'construction' }, 'Name of its construction.'),
+      k: value(
+        'stiffness',
+        'LEVEL.wall.NAME.k',
+        'Instead of a construction: the stated stiffness of the wall, frame or brace along its own line.',
+      ),
+      note,
+    },
+    settings: none,
+  },
+  openings: {
+    says: 'Doors and windows in the walls of a level.',
+    columns: {
+      wall: field({ kind: 'wall' }, 'A wall of the level; it must have a height.'),
+      opening: field({ kind: 'own' }, 'Name of the opening; two walls may each have a D1.'),
+      left: value('length', 'LEVEL.wall.WALL.opening.NAME.left', "From the wall's start to its nearer jamb."),
+      sill: value(
+        'length',
+        'LEVEL.wall.WALL.opening.NAME.sill',
+        'From the foot of the wall to its lower edge; 0 for a door.',
+      ),
+      width: value('length', 'LEVEL.wall.WALL.opening.NAME.width', 'Its width along the wall.'),
+      height: value('length', 'LEVEL.wall.WALL.opening.NAME.height', 'From its sill to its head.'),
+      note,
+    },
+    settings: none,
+  },
+  forces: {
+    says: 'The force that acts at a level, or a table of the forces of all levels.',
+    columns: {
+      level: field({ kind: 'level' }, 'A level.'),
+      x: value('force', 'ROW.force.x', 'Force along x at the level.'),
+      y: value('force', 'ROW.force.y', 'Force along y at the level.'),
+    },
+    settings: {
+      x: value('force', 'LEVEL.force.x', 'Force along x at the level.'),
+      y: value('force', 'LEVEL.force.y', 'Force along y at the level.'),
+      accidental: value(
+        'share',
+        'LEVEL.accidental',
+        'Share of the plan across the force by which the mass may be off, to either side.',
+      ),
+    },
+  },
+  equations: {
+    says: 'Your own formulas, each printed in letters, with values put in, and with its result.',
+    columns: none,
+    settings: none,
+  },
+  working: {
+    says: 'Asks for a part of the calculation and is replaced by it.',
+    columns: none,
+    settings: {
+      detail: words(details, 'How much is worked: full, table or result.'),
+      walls: field({ kind: 'walls' }, 'The walls to work in full, separated by commas.'),
+      case: words(
+        [...casesOf(['x', 'y']).map(({ name }) => name), 'all'],
+        'The load case to show; where it is left out, the one that governs.',
+      ),
+    },
+  },
+}
+
+/** What stands in a column or behind a setting; undefined where the topic has none of that name. */
+export const columnOf = (topic: Topic, name: string): Field | undefined => own(grammar[topic].columns, name)
+export const settingFieldOf = (topic: Topic, name: string): Field | undefined => own(grammar[topic].settings, name)
+
+const own = (fields: Fields, name: string): Field | undefined =>
+  Object.hasOwn(fields, name) ? fields[name] : undefined
+
+/** What each part of the calculation is that a working may ask for. */
+export const wantSays: Readonly<Record<AnyWant | typeof WHOLE, string>> = {
+  'whole calculation': 'all parts of one level in order',
+  plan: 'sketch of the level to scale',
+  'centre of mass': 'weight, and where it acts',
+  'polar moment': 'polar moment of the weight about the centre of mass',
+  'wall stiffness': 'how the stiffness of each wall follows',
+  'centre of rigidity': 'stiffness along x and y, its centre, and J',
+  eccentricity: 'centre of mass less centre of rigidity',
+  torsion: 'moment about the centre of rigidity in each case',
+  'wall shears': 'direct and torsional shear of one case',
+  'design shears': 'the largest shear of each wall over all cases',
+  elevations: 'walls as they are seen, with openings and piers',
+  displacement: 'displacement and rotation, and the largest at a corner',
+  'displaced shape': 'sketch of the level as it moves',
+  equilibrium: 'what acts against what resists, in each case',
+  'storey shears': 'forces and shears of all levels',
+  criteria: 'what the calculation starts from',
+  checks: 'every check, the largest ratio first',
+  assumptions: 'what was taken because the document does not say',
+  references: 'sources of the formulas that are printed',
+}
