@@ -42,7 +42,8 @@ const packagesApart = {
     const filter = new RegExp(`^(?:${Object.keys(apart).join('|')})$`)
     build.onResolve({ filter }, ({ path }) => ({ path, namespace: 'apart' }))
     build.onResolve({ filter: /^\.\/\w+\.cjs$/, namespace: 'apart' }, ({ path }) => ({ path, external: true }))
-    build.onResolve({ filter: /^\.\/pdf\/press\.ts$/ }, () => ({ path: './pdf.cjs', external: true }))
+    build.onResolve({ filter: /^\.\.?\/pdf\/press\.ts$/ }, () => ({ path: './pdf.cjs', external: true }))
+    build.onResolve({ filter: /^\.\/serve\/command\.ts$/ }, () => ({ path: './serve.cjs', external: true }))
     build.onLoad({ filter: /.*/, namespace: 'apart' }, ({ path }) => ({
       contents: (apart[path] ?? [])
         .map(name => `exports.${name} = (...args) => require('./${path}.cjs').${name}(...args)`)
@@ -65,6 +66,12 @@ const loaded = {
 await Promise.all([
   build({ ...loaded, entryPoints: [`${root}src/cli.ts`], outfile: `${dist}/command.cjs`, plugins: [packagesApart] }),
   build({ ...loaded, entryPoints: [`${root}src/pdf/press.ts`], outfile: `${dist}/pdf.cjs` }),
+  build({
+    ...loaded,
+    entryPoints: [`${root}src/serve/command.ts`],
+    outfile: `${dist}/serve.cjs`,
+    plugins: [packagesApart],
+  }),
   ...Object.keys(apart).map(name =>
     build({
       ...loaded,
@@ -92,7 +99,7 @@ await Promise.all([
   copyFile(`${root}src/build/launcher.cjs`, `${dist}/platemark.cjs`),
   copyFile(`${root}src/render/results.schema.json`, `${dist}/results.schema.json`),
 ])
-await Promise.all(['command', 'pdf', ...Object.keys(apart)].map(name => spellOut(`${dist}/${name}.cjs`)))
+await Promise.all(['command', 'pdf', 'serve', ...Object.keys(apart)].map(name => spellOut(`${dist}/${name}.cjs`)))
 await chmod(`${dist}/platemark.cjs`, 0o755)
 await writeFile(`${dist}/assets/shapes.txt`, await packedShapes())
 await rm(`${dist}/pack.mjs`)
