@@ -1,5 +1,6 @@
 /** The blocks of the page, each an element between two marks, and the numbers that stand in each. */
 import type { Change } from '../serve/message.ts'
+import { MANY_BLOCKS, marksAround, type Run, turnAround } from './live-around.ts'
 import { turnInto } from './live-morph.ts'
 import { idOf, MARK } from './places.ts'
 
@@ -32,16 +33,15 @@ export function findBlocks(page: HTMLElement, prepare: (part: ParentNode) => voi
   const elements: Element[] = []
   for (let node = start.nextSibling; node && node !== end; node = node.nextSibling)
     if (node instanceof Element) elements.push(node)
-  if (elements.length > MANY) start.parentElement?.classList.add('live-many')
+  if (elements.length > MANY) start.parentElement?.classList.add(MANY_BLOCKS)
   const marks = createMarks()
   // What stands around the blocks is one part more.
   const within = (part: Element): readonly HTMLElement[] => [
     ...(part.matches(MARK) ? [part as HTMLElement] : []),
     ...part.querySelectorAll<HTMLElement>(MARK),
   ]
-  const aroundOnly = () => within(page).filter(mark => !isBetween(mark, start, end))
   for (const element of elements) marks.set(element, within(element))
-  marks.set(page, aroundOnly())
+  marks.set(page, marksAround(page, found))
 
   const make = (html: string): Element => {
     const template = document.createElement('template')
@@ -110,18 +110,13 @@ export function findBlocks(page: HTMLElement, prepare: (part: ParentNode) => voi
     },
     surround: around => {
       const made = page.cloneNode(false) as HTMLElement
-      const way = page.querySelector(':scope > .live-back')
       made.innerHTML = around
+      const way = page.querySelector(':scope > .live-back')
       if (way) made.prepend(way.cloneNode(true))
       const place = commentIn(made, START)
-      const [holder, next] = [start.parentElement, place?.parentElement]
-      if (!place || !holder || !next || (holder === page) !== (next === made)) return false
-      if (holder.classList.contains('live-many')) next.classList.add('live-many')
       prepare(made)
-      turnInto(page, made, [holder, next])
-      if (!page.contains(start)) return false
-      standBeside(holder, start, end, place)
-      marks.set(page, aroundOnly())
+      if (!place || !turnAround(page, found, made, place)) return false
+      marks.set(page, marksAround(page, found))
       return true
     },
     marksOf: marks.of,
@@ -131,7 +126,7 @@ export function findBlocks(page: HTMLElement, prepare: (part: ParentNode) => voi
 /** A page of more blocks lays out only those that are near the window. */
 const MANY = 300
 
-function marksIn(page: HTMLElement): { readonly start: Comment; readonly end: Comment } | undefined {
+function marksIn(page: HTMLElement): Run | undefined {
   const [start, end] = [commentIn(page, START), commentIn(page, END)]
   return start && end ? { start, end } : undefined
 }
@@ -141,36 +136,6 @@ function commentIn(root: Node, text: string): Comment | undefined {
   for (let node = walk.nextNode(); node; node = walk.nextNode())
     if (node instanceof Comment && node.data === text) return node
   return undefined
-}
-
-const isBetween = (node: Node, start: Node, end: Node): boolean =>
-  (start.compareDocumentPosition(node) & Node.DOCUMENT_POSITION_FOLLOWING) !== 0 &&
-  (end.compareDocumentPosition(node) & Node.DOCUMENT_POSITION_PRECEDING) !== 0
-
-/** Puts what stands beside the blocks, in the element that holds them, in the place of what stood there. */
-function standBeside(holder: Element, start: Node, end: Node, place: Node): void {
-  const beside = (around: Element | null, first: Node, last: Node) => {
-    const nodes = [...(around?.childNodes ?? [])]
-    return [
-      nodes.slice(0, nodes.indexOf(first as ChildNode)),
-      nodes.slice(nodes.indexOf(last as ChildNode) + 1),
-    ] as const
-  }
-  const [before, after] = beside(holder, start, end)
-  const [newBefore, newAfter] = beside(place.parentElement, place, place)
-  replaceNodes(holder, before, newBefore, start)
-  replaceNodes(holder, after, newAfter, null)
-}
-
-function replaceNodes(
-  holder: Element,
-  old: readonly ChildNode[],
-  made: readonly ChildNode[],
-  before: Node | null,
-): void {
-  if (old.length === made.length && old.every((node, i) => node.isEqualNode(made[i] ?? null))) return
-  for (const node of old) node.remove()
-  for (const node of made) holder.insertBefore(node, before)
 }
 
 /** Numbers by their value, kept part by part, so that a change costs what it changes. */

@@ -3,7 +3,8 @@ import type { Hello, Update } from '../serve/message.ts'
 
 export interface Heard {
   readonly hello: (hello: Hello) => void
-  readonly update: (update: Update | string) => void
+  /** @param heard when it came, by the system's clock in milliseconds, for the bench */
+  readonly update: (update: Update | string, heard: number) => void
   readonly lost: () => void
 }
 
@@ -17,8 +18,9 @@ export function connect(of: string, at: string, heard: Heard): void {
     // What the server says is its own JSON.
     events.addEventListener('hello', ({ data }) => heard.hello(JSON.parse(data) as Hello))
     events.addEventListener('message', ({ data, lastEventId }) => {
+      const now = performance.timeOrigin + performance.now()
       has = lastEventId
-      heard.update(JSON.parse(data) as Update | string)
+      heard.update(JSON.parse(data) as Update | string, now)
     })
     events.addEventListener('error', () => {
       heard.lost()

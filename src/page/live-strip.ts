@@ -52,6 +52,7 @@ export function createStrip(acts: Acts): Strip {
   const source = button('.live-source', acts.openSource, 'Open source line')
   strip.append(panel, bar)
   document.body.append(strip)
+  let height = 0
   let open: Panel | undefined
   let shown: Shown | undefined
 
@@ -66,7 +67,11 @@ export function createStrip(acts: Acts): Strip {
     panel.scrollTop = scrollTop
     // What had the focus was made anew.
     if (key) strip.querySelector<HTMLElement>(`[data-key="${CSS.escape(key)}"]`)?.focus({ preventScroll: true })
-    document.documentElement.style.setProperty('--live-strip', `${bar.offsetHeight}px`)
+    // The whole page takes its style anew when this changes.
+    if (bar.offsetHeight !== height) {
+      height = bar.offsetHeight
+      document.documentElement.style.setProperty('--live-strip', `${height}px`)
+    }
   }
   const toggle = (which: Panel): void => {
     open = open === which ? undefined : which

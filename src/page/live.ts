@@ -73,10 +73,10 @@ function run(page: HTMLElement, blocks: Blocks, trace: Trace, noteFrom: (note: M
       // The page is as it was built; what it says of itself comes with the first report.
       show()
     },
-    update: update => {
+    update: (update, heard) => {
       if (typeof update === 'string') return
       take(update)
-      document.dispatchEvent(new CustomEvent('platemark-updated', { detail: update.version }))
+      document.dispatchEvent(new CustomEvent('platemark-updated', { detail: { version: update.version, heard } }))
     },
     lost,
   })
@@ -129,15 +129,15 @@ function run(page: HTMLElement, blocks: Blocks, trace: Trace, noteFrom: (note: M
   }
 
   function take(update: Update): void {
-    const { version, title, style, around, changes, whole, moves, edited } = update
+    const { version, title, style, paper, around, changes, whole, moves, edited } = update
     let changed: readonly Element[] = []
     save = version
     report = update.report
     if (moves) comparison.saved(version, moves)
     if (title !== undefined) document.title = plain(title)
     holdStill(page, () => {
-      const rules = document.getElementById('live-style')
-      if (style !== undefined && rules && rules.textContent !== style) rules.textContent = style
+      rule('live-style', style)
+      rule('live-paper', paper)
       if (around !== undefined && !blocks.surround(around)) {
         // A sheet of another build: the page is fetched as a whole.
         location.reload()
@@ -214,6 +214,12 @@ function boxOf(page: Element, { rule, message, line }: Message): Element | undef
       box.querySelector('.rule span')?.textContent === rule && box.querySelector('.message')?.textContent === message,
   )
   return boxes.find(box => box.querySelector('.place')?.textContent === `line ${line}`) ?? boxes[0]
+}
+
+/** Gives a style element other rules, where there are any. */
+function rule(id: string, css: string | undefined): void {
+  const element = document.getElementById(id)
+  if (css !== undefined && element && element.textContent !== css) element.textContent = css
 }
 
 /** A title is sent as it stands in the page's markup. */

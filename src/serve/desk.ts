@@ -97,8 +97,8 @@ function remembered(): (from: State | undefined, to: State) => string {
 export function updateBetween(from: State | undefined, to: State): Update {
   const { version, report } = to
   const after = to.page()
-  const { title, style, around, blocks } = after
-  if (!from) return { version, report, title, style, around, whole: blocks }
+  const { title, style, paper, around, blocks } = after
+  if (!from) return { version, report, title, style, paper, around, whole: blocks }
   const before = from.page()
   const edited = to.edited()
   return {
@@ -106,6 +106,7 @@ export function updateBetween(from: State | undefined, to: State): Update {
     report,
     ...(before.title === title ? {} : { title }),
     ...(before.style === style ? {} : { style }),
+    ...(before.paper === paper ? {} : { paper }),
     ...(before.around === around ? {} : { around }),
     changes: changesBetween(before.blocks, blocks),
     moves: movesBetween(from.figures, to.figures),

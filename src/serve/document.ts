@@ -25,7 +25,11 @@ export interface State {
   readonly title: string
 }
 
-export type PageParts = Pick<LivePage, 'title' | 'style' | 'around' | 'blocks' | 'island'>
+export interface PageParts extends LivePage {
+  /** The rules for paper, apart from `style`: they name the state of the source, and a browser that is given new
+   * rules for the screen sets the whole page anew. */
+  readonly paper: string
+}
 
 export interface Built {
   readonly state: State
@@ -109,7 +113,7 @@ export class WatchedDocument {
       const compiled = this.rebuilder.compile(text, nearbyNaming(this.path, this.around.watch))
       const { source, diagnostics, checks, choices } = compiled
       const errors = diagnostics.filter(({ severity }) => severity === 'error').length
-      const page = once(() => this.rebuilder.page(compiled, errors > 0))
+      const page = once(() => withPaperApart(this.rebuilder.page(compiled, errors > 0)))
       this.fault = ''
       this.compiled = compiled
       this.settle(began, {
@@ -184,7 +188,7 @@ export class WatchedDocument {
   private bare(rule: string, message: string, help: string): PageParts {
     const source = sourceOf(this.shown, '')
     const compiled = createRebuilder(this.shown, this.around.host)
-    const { style } = compiled.page(compiled.compile('', nothingNearby), false)
+    const { style, paper } = withPaperApart(compiled.page(compiled.compile('', nothingNearby), false))
     const at = { span: { start: 0, end: 1 }, text: '' }
     const box = faultHtml(
       { kind: 'fault', diagnostics: [{ rule, severity: 'error', message, help, at, also: [] }] },
@@ -199,11 +203,17 @@ export class WatchedDocument {
     return {
       title: this.shown,
       style,
+      paper,
       around: `<div class="sheet"><main>\n${CALCULATION}\n</main></div>`,
       blocks: [box],
       island: () => ({ values: [], formulas: [], pieces: [], lines: {} }),
     }
   }
+}
+
+function withPaperApart(page: LivePage): PageParts {
+  const at = page.style.lastIndexOf('@page{size:')
+  return at === -1 ? { ...page, paper: '' } : { ...page, style: page.style.slice(0, at), paper: page.style.slice(at) }
 }
 
 const HELP = 'Please report it with the document. The next save is tried afresh.'

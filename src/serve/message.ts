@@ -89,6 +89,8 @@ export interface Update {
   /** Left out where they are as they were. */
   readonly title?: string
   readonly style?: string
+  /** The rules for paper, which name the state of the source and so change with every save. */
+  readonly paper?: string
   readonly around?: string
   /** From the blocks that the page has; a page that is told everything gets `whole` in place of it. */
   readonly changes?: readonly Change[]

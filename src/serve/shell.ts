@@ -11,12 +11,13 @@ export const END = '<!--/calculation-->'
 
 /** @param back true where a list of documents stands above this one */
 export function documentPage({ page, version }: State, run: string, host: Host, of: string, back: boolean): string {
-  const { title, style, around, blocks } = page()
+  const { title, style, paper, around, blocks } = page()
   const [before = '', after = ''] = around.split(CALCULATION)
   const way = back ? '<p class="live-back"><a href="/">All documents</a></p>\n' : ''
   return shell(host, {
     title,
     style,
+    paper,
     kind: 'document',
     at: `${run}.${version}`,
     of,
@@ -26,7 +27,7 @@ export function documentPage({ page, version }: State, run: string, host: Host, 
 
 /** @param style of a page of ours, so that the list is set in the same faces */
 export const listPage = (list: string, style: string, run: string, host: Host): string =>
-  shell(host, { title: 'Documents', style, kind: 'list', at: run, of: '/', page: list })
+  shell(host, { title: 'Documents', style, paper: '', kind: 'list', at: run, of: '/', page: list })
 
 export function listOf(documents: ReadonlyMap<string, WatchedDocument>): string {
   const rows = [...documents].map(([key, document]) => rowOf(key, document))
@@ -59,6 +60,7 @@ function rowOf(key: string, { shown, state, compiled }: WatchedDocument): string
 interface Parts {
   readonly title: string
   readonly style: string
+  readonly paper: string
   readonly kind: 'document' | 'list'
   readonly at: string
   /** Where the page is told of. */
@@ -66,12 +68,13 @@ interface Parts {
   readonly page: string
 }
 
-function shell(host: Host, { title, style, kind, at, of, page }: Parts): string {
+function shell(host: Host, { title, style, paper, kind, at, of, page }: Parts): string {
   const parts: Readonly<Record<string, string>> = {
     language: 'en',
     generator: escapeHtml(`Platemark ${host.version}`),
     title,
     style,
+    paper,
     kind,
     at,
     of,
