@@ -2,7 +2,6 @@
 import type { RootContent } from 'mdast'
 import { positionOf, type Source, type Span } from '../base/span.ts'
 import type { Value } from '../base/value.ts'
-import { spansOf } from '../base/value.ts'
 import type { Compiled } from '../compile.ts'
 import type { Piece } from '../explain/sheet.ts'
 import { everyValue } from '../explain/trace.ts'
@@ -36,8 +35,25 @@ function valueById({ context, scope }: Compiled, id: string): Value | undefined 
   return everyValue([...context.besides.values(), ...context.roots.values()]).find(value => value.id === id)
 }
 
-/** Where the engineer wrote it, or the first place that it rests on directly. */
-const spanOf = (value: Value | undefined): Span | undefined => value && (ownSpans(value.origin)[0] ?? spansOf(value)[0])
+/** Where the engineer wrote it, or else the nearest value that it rests on. */
+function spanOf(value: Value | undefined): Span | undefined {
+  const seen = new Set<Value>()
+  let ring = value ? [value] : []
+  while (ring.length > 0) {
+    const next: Value[] = []
+    for (const { origin } of ring) {
+      const [own] = ownSpans(origin)
+      if (own) return own
+      if (origin.kind !== 'worked') continue
+      for (const input of origin.step.inputs.values()) {
+        if (!seen.has(input)) next.push(input)
+        seen.add(input)
+      }
+    }
+    ring = next
+  }
+  return undefined
+}
 
 /** The block of the page that a line of the source became: the last that begins at or before it. */
 export function blockAt(compiled: Compiled, line: number, blocks: number): number | undefined {

@@ -1,7 +1,7 @@
 /** Tells when files may have changed. It may tell too often, and in the end it misses nothing. */
 import { statSync } from 'node:fs'
 import { basename, resolve } from 'node:path'
-import { watch } from 'chokidar'
+import { type FSWatcher, watch } from 'chokidar'
 
 export interface Watching {
   /** Watches a file from now on, whether or not it is there. */
@@ -31,12 +31,6 @@ export function startWatching(folders: readonly string[], leftOut: readonly stri
   const files = new Map<string, string>()
   const later = new Set<NodeJS.Timeout>()
   const watcher = watch([], { ignoreInitial: true, persistent: true, atomic: false })
-  const within = watch([...folders], {
-    ignoreInitial: true,
-    ignored: (path, stats) =>
-      !folders.includes(path) &&
-      (isHidden(path) || leftOut.includes(resolve(path)) || (stats?.isFile() === true && !path.endsWith('.md'))),
-  })
   const look = (path: string): void => {
     const now = signatureOf(path)
     if (files.get(path) === now) return
@@ -57,15 +51,27 @@ export function startWatching(folders: readonly string[], leftOut: readonly stri
     soon(() => look(file))
   }
   for (const event of ['add', 'change', 'unlink'] as const) watcher.on(event, hear)
-  within.on('change', hear)
-  for (const event of ['add', 'unlink', 'addDir', 'unlinkDir'] as const)
-    within.on(event, path => {
-      hear(path)
-      heard.folder()
-      soon(heard.folder)
-    })
   // A watch that fails, as when a folder goes, is made up for by the sweep.
-  for (const each of [watcher, within]) each.on('error', () => undefined)
+  watcher.on('error', () => undefined)
+  const watchFolder = (folder: string): FSWatcher => {
+    const within = watch(folder, {
+      ignoreInitial: true,
+      ignored: (path, stats) =>
+        path !== folder &&
+        (isHidden(path) || leftOut.includes(resolve(path)) || (stats?.isFile() === true && !path.endsWith('.md'))),
+    })
+    within.on('change', hear)
+    within.on('ready', heard.folder)
+    within.on('error', () => undefined)
+    for (const event of ['add', 'unlink', 'addDir', 'unlinkDir'] as const)
+      within.on(event, path => {
+        hear(path)
+        heard.folder()
+        soon(heard.folder)
+      })
+    return within
+  }
+  const within = new Map(folders.map(folder => [folder, watchFolder(folder)]))
   const standing = new Map(folders.map(folder => [folder, signatureOf(folder) !== '']))
   const sweep = setInterval(() => {
     for (const path of files.keys()) look(path)
@@ -73,7 +79,9 @@ export function startWatching(folders: readonly string[], leftOut: readonly stri
       const stands = signatureOf(folder) !== ''
       standing.set(folder, stands)
       if (stands === stood) continue
-      if (stands) within.unwatch(folder).add(folder)
+      // A watch does not outlive its folder.
+      void within.get(folder)?.close()
+      if (stands) within.set(folder, watchFolder(folder))
       heard.folder()
     }
   }, SWEEP)
@@ -87,7 +95,7 @@ export function startWatching(folders: readonly string[], leftOut: readonly stri
     close: async () => {
       clearInterval(sweep)
       for (const timer of later) clearTimeout(timer)
-      await Promise.all([watcher.close(), within.close()])
+      await Promise.all([watcher, ...within.values()].map(each => each.close()))
     },
   }
 }
