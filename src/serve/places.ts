@@ -79,7 +79,8 @@ const lineEnd = ({ text, lineStarts }: Source, line: number): number => lineStar
 type Start = (part: number) => number | undefined
 
 /** One for each block, as the page sets them: checks that follow each other share one. */
-function startsOf({ parts, context }: Compiled): readonly Start[] {
+function startsOf(compiled: Compiled): readonly Start[] {
+  const { parts } = compiled
   const starts: Start[] = []
   let inChecks = false
   for (const part of parts) {
@@ -92,7 +93,7 @@ function startsOf({ parts, context }: Compiled): readonly Start[] {
     for (const piece of part.pieces) {
       if (piece.kind === 'check' && inChecks) continue
       inChecks = piece.kind === 'check'
-      starts.push(() => startOfPiece(piece, context.roots))
+      starts.push(() => startOfPiece(piece, compiled))
     }
   }
   return starts
@@ -101,10 +102,16 @@ function startsOf({ parts, context }: Compiled): readonly Start[] {
 const isShown = ({ type }: RootContent): boolean =>
   type !== 'definition' && type !== 'footnoteDefinition' && type !== 'yaml' && type !== 'html'
 
-function startOfPiece(piece: Piece, roots: ReadonlyMap<string, Value>): number | undefined {
+function startOfPiece(piece: Piece, { context, source }: Compiled): number | undefined {
   if (piece.kind === 'fault') return piece.diagnostics[0]?.at.span.start
-  if (piece.kind === 'table') return firstPlace(piece.rows.flatMap(({ places }) => places ?? []))
-  const value = 'id' in piece ? roots.get(piece.id) : undefined
+  if (piece.kind === 'table') {
+    // What was given tells the line of its block; any other table tells the lines that it rests on.
+    const [line] = piece.id.startsWith('given.') ? piece.sourceLines : []
+    return line === undefined
+      ? firstPlace(piece.rows.flatMap(({ places }) => places ?? []))
+      : source.lineStarts[line - 1]
+  }
+  const value = 'id' in piece ? context.roots.get(piece.id) : undefined
   return value && ownSpans(value.origin)[0]?.start
 }
 
