@@ -134,7 +134,8 @@ export class WatchedDocument {
         edited: once(() =>
           before === undefined ? undefined : blockAt(compiled, editedLine(before, source), page().blocks.length),
         ),
-        title: choices.titleBlock.title || this.shown,
+        title:
+          [choices.titleBlock.title, choices.titleBlock.project].filter(part => part !== '').join(', ') || this.shown,
       })
     } catch (error) {
       this.text = undefined
