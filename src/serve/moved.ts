@@ -73,7 +73,7 @@ function checkTurns(before: State, after: State): readonly Turn[] {
 }
 
 /** A ratio so small is what rounding leaves: a residual, say. A number with a unit has a space in it. */
-const isSlight = ({ si, printed }: Figure): boolean => Math.abs(si) < 1e-6 && si !== 0 && !printed.includes(' ')
+const isSlight = ({ si, printed }: Figure): boolean => Math.abs(si) < 1e-6 && !printed.includes(' ')
 
 /** Results before what was written; those that were nothing or have another unit first, then the largest change. */
 const byChange = (a: Move, b: Move): number =>
