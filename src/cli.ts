@@ -56,11 +56,20 @@ interface NamedBrowser {
 
 /** @returns the exit code; in a promise only where a PDF is wanted, since all else is quicker done at once */
 export function run(args: readonly string[]): number | Promise<number> {
+  if (args[0] === 'watch') return watch(args.slice(1))
   const settings = readArguments(args)
   if (typeof settings === 'number' || settings instanceof Promise) return settings
   if (settings.to.includes('pdf')) return runWithPress(settings)
   const codes = settings.documents.map(document => guarded(document, settings))
   return Math.max(DONE, ...codes)
+}
+
+/** What watches is loaded when it is asked for. */
+async function watch(args: readonly string[]): Promise<number> {
+  if (args.includes('--help')) return say(helpFor('watch'))
+  const { readWatch, runWatch } = await import('./serve/command.ts')
+  const settings = readWatch(args, process.env)
+  return settings.ok ? runWatch(settings.value, host, __dirname) : misuse(settings.because)
 }
 
 function guarded(document: DocumentFile, settings: Settings): number {
@@ -112,7 +121,8 @@ function readArguments(args: readonly string[]): Settings | number | Promise<num
   if (word === '--help' || word === 'help') return say(help)
   if (word === 'lsp') return serveEditor(rest)
   const command = commands.find(command => command === word)
-  if (!command) return misuse(`There is no command ${word}. ${suggestion(word, [...commands, 'lsp'], 'command')}`)
+  if (!command)
+    return misuse(`There is no command ${word}. ${suggestion(word, [...commands, 'lsp', 'watch'], 'command')}`)
   if (rest.includes('--help')) return say(helpFor(command))
   return readOptions(command, rest)
 }

@@ -4,6 +4,7 @@ export const help = `Platemark compiles a Markdown document into the lateral cal
 shear-wall building, with formulas, values put in, results, tables and sketches.
 
   platemark build FILE…    write the calculation beside each file
+  platemark watch FILE…    show the calculation in a browser, anew at every save
   platemark check FILE…    say what is wrong and how the checks come out
   platemark audit FILE…    show that every printed line holds to its digits
   platemark trace FILE ID  say where a number came from
@@ -39,6 +40,36 @@ Exit code: 0 done, 1 errors, 2 wrong usage. A check that fails is a result, not 
 
   platemark build workshop.md
   platemark build calcs/ --to html,pdf --out out/`,
+  watch: `platemark watch FILE… [--to html,pdf,md,json] [--out DIR] [--draft] [--open] [--port N]
+                     [--editor TEMPLATE] [--list]
+
+Shows each document in a browser, at an address of this machine that is printed, and follows every save:
+only what changed is redrawn, each number that moved is marked with what it was, and the checks that
+turned are listed first. A document with errors shows a box at each. A file that is missing or cannot be
+read is waited for; so are pictures, templates and, in a folder, documents that come later. It runs
+until it is ended with Ctrl+C.
+
+Nothing is written unless --to is given: what is on the disk stays what you last built.
+
+  --to FORMATS   write these too, after each save, as build does: pages of a sound document only
+                 unless --draft is given, JSON always
+  --out DIR      write there instead of beside the source
+  --draft        write the pages in spite of errors, with a box at each and a banner
+  --browser PROGRAM
+                 print the PDF with this Chrome, Chromium or Edge
+  --open         show the page in the system's own browser
+  --port N       the port of the address; any free one without it. With a port of its own a page that is
+                 open finds the program again after it was started anew
+  --editor TEMPLATE
+                 what opens a source line when a number is clicked twice: a program with its arguments, or an
+                 address, with {path}, {line} and {column} in it; PLATEMARK_EDITOR names one too
+  --list         one line for each diagnostic
+
+Exit code: 0 ended, 1 the port is taken, 2 wrong usage.
+
+  platemark watch workshop.md --open
+  platemark watch calcs/ --to html,pdf --out out/
+  platemark watch workshop.md --editor 'myeditor --line {line} {path}'`,
   check: `platemark check FILE… [--submittal] [--list]
 
 Works each document, prints what is wrong with it and how its checks come out, and writes nothing.

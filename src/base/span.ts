@@ -56,6 +56,12 @@ export function offsetOf({ stretches, text }: Source, place: number): number {
   return stretch ? Math.min(text.length, stretch.offset + place - stretch.address) : place
 }
 
+/** A place by its offsets in the text. */
+export function inText(source: Source, { start, end }: Span): Span {
+  const offset = offsetOf(source, start)
+  return { start: offset, end: offset + end - start }
+}
+
 /** Line of a place, from 1. */
 export function lineOf(source: Source, place: number): number {
   const { lineStarts } = source

@@ -23,7 +23,8 @@ const packageFolder = name => dirname(require.resolve(`${name}/package.json`))
  */
 export async function prepareAssets() {
   const katex = await katexAssets()
-  const script = await pageScript()
+  const script = await pageScript('main')
+  const live = await pageScript('live')
   const screen = [
     ...(await textFaces('@fontsource-variable/source-serif-4', variable, 'text', 'Source Serif 4')),
     ...(await textFaces('@fontsource-variable/source-sans-3', variable, 'label', 'Source Sans 3')),
@@ -37,6 +38,9 @@ export async function prepareAssets() {
     ['sheet.html', await readFile(join(root, 'templates/sheet.html'), 'utf8')],
     ['sheet.css', minified(await readFile(join(root, 'templates/sheet.css'), 'utf8'))],
     ['trace.css', minified(await readFile(join(root, 'templates/trace.css'), 'utf8'))],
+    ['live.html', await readFile(join(root, 'templates/live.html'), 'utf8')],
+    ['live.css', minified(await readFile(join(root, 'templates/live.css'), 'utf8'))],
+    ['live.js', live],
     ['trace.js', script],
     // What the page's policy names the script by, so that no other can run.
     ['trace.hash', `sha256-${createHash('sha256').update(script).digest('base64')}`],
@@ -49,10 +53,13 @@ export async function prepareAssets() {
   ])
 }
 
-/** The page's own script, in one piece that nothing within can end. */
-async function pageScript() {
+/**
+ * A script for the browser, in one piece that nothing within can end.
+ * @param {'main' | 'live'} name of the page itself, or of the page that follows the saves
+ */
+async function pageScript(name) {
   const { outputFiles } = await build({
-    entryPoints: [join(root, 'src/page/main.ts')],
+    entryPoints: [join(root, `src/page/${name}.ts`)],
     bundle: true,
     minify: true,
     write: false,

@@ -46,8 +46,11 @@ const packagesApart = {
     const filter = new RegExp(`^(?:${Object.keys(apart).join('|')})$`)
     build.onResolve({ filter }, ({ path }) => ({ path, namespace: 'apart' }))
     build.onResolve({ filter: /^\.\/[\w-]+\.cjs$/, namespace: 'apart' }, ({ path }) => ({ path, external: true }))
-    build.onResolve({ filter: /^\.\/pdf\/press\.ts$/ }, () => ({ path: './pdf.cjs', external: true }))
-    build.onResolve({ filter: /^\.\/lsp\/command\.ts$/ }, () => ({ path: './lsp.cjs', external: true }))
+    build.onResolve({ filter: /^\.\.?\/pdf\/press\.ts$/ }, () => ({ path: './pdf.cjs', external: true }))
+    build.onResolve({ filter: /^\.\/(?:lsp|serve)\/command\.ts$/ }, ({ path }) => ({
+      path: path.replace('/command.ts', '.cjs'),
+      external: true,
+    }))
     build.onLoad({ filter: /.*/, namespace: 'apart' }, ({ path }) => ({
       contents: (apart[path] ?? [])
         .map(name => {
@@ -74,12 +77,14 @@ const loaded = {
 await Promise.all([
   build({ ...loaded, entryPoints: [`${root}src/cli.ts`], outfile: `${dist}/command.cjs`, plugins: [packagesApart] }),
   build({ ...loaded, entryPoints: [`${root}src/pdf/press.ts`], outfile: `${dist}/pdf.cjs` }),
-  build({
-    ...loaded,
-    entryPoints: [`${root}src/lsp/command.ts`],
-    outfile: `${dist}/lsp.cjs`,
-    plugins: [packagesApart],
-  }),
+  ...['lsp', 'serve'].map(name =>
+    build({
+      ...loaded,
+      entryPoints: [`${root}src/${name}/command.ts`],
+      outfile: `${dist}/${name}.cjs`,
+      plugins: [packagesApart],
+    }),
+  ),
   ...Object.keys(apart).map(name =>
     build({
       ...loaded,
@@ -107,7 +112,9 @@ await Promise.all([
   copyFile(`${root}src/build/launcher.cjs`, `${dist}/platemark.cjs`),
   copyFile(`${root}src/render/results.schema.json`, `${dist}/results.schema.json`),
 ])
-await Promise.all(['command', 'pdf', 'lsp', ...Object.keys(apart)].map(name => spellOut(`${dist}/${name}.cjs`)))
+await Promise.all(
+  ['command', 'pdf', 'lsp', 'serve', ...Object.keys(apart)].map(name => spellOut(`${dist}/${name}.cjs`)),
+)
 await chmod(`${dist}/platemark.cjs`, 0o755)
 await writeFile(`${dist}/assets/shapes.txt`, await packedShapes())
 await rm(`${dist}/pack.mjs`)

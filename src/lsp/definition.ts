@@ -1,5 +1,5 @@
 /** Where the thing that stands at a place is given. */
-import type { Span } from '../base/span.ts'
+import { inText, type Span } from '../base/span.ts'
 import { ownSpans } from '../explain/traced.ts'
 import { isWord } from '../model/scope.ts'
 import { within } from './cells.ts'
@@ -13,9 +13,10 @@ export function definitionAt(document: Opened, offset: number): Span | undefined
   if (mention) return givenAt(document, mention)
   const place = names.ids.find(({ span }) => within(span, offset))
   if (!place) return undefined
-  const found = document.compiled().scope.lookup(place.id)
+  const { scope, source } = document.compiled()
+  const found = scope.lookup(place.id)
   const [own] = found?.ok && !isWord(found.value) ? ownSpans(found.value.origin) : []
-  if (own) return own
+  if (own) return inText(source, own)
   // A result has no line of its own: it belongs to the last thing that its id names.
   const parts = names.mentions.filter(({ span }) => span.start >= place.span.start && span.end <= place.span.end)
   const last = parts.at(-1)

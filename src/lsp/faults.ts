@@ -2,7 +2,7 @@
 import { DiagnosticSeverity, type Diagnostic as Shown } from 'vscode-languageserver/node'
 import type { TextDocument } from 'vscode-languageserver-textdocument'
 import type { Diagnostic, Label } from '../base/diagnostic.ts'
-import type { Span } from '../base/span.ts'
+import { inText, type Source, type Span } from '../base/span.ts'
 import { sizeFault } from '../files.ts'
 import { mayBeOurs, type Opened } from './opened.ts'
 import { rangeOf } from './ranges.ts'
@@ -12,10 +12,16 @@ const SOURCE = 'platemark'
 /** @param related true for an editor that shows the other places of a diagnostic itself */
 export function faultsOf(document: TextDocument, read: Opened | undefined, related: boolean): Shown[] {
   if (!read) return [ofWhole(document)]
-  const { diagnostics } = read.compiled()
+  const { diagnostics, source } = read.compiled()
   // Of Markdown without a block of ours only a misspelt topic is our business.
   const ours = mayBeOurs(document.getText()) ? diagnostics : diagnostics.filter(({ rule }) => rule.startsWith('topic-'))
-  return ours.map(each => shownAs(each, document, related))
+  return ours.map(each => shownAs(placed(each, source), document, related))
+}
+
+/** A diagnostic by offsets, which an editor goes by. */
+function placed(diagnostic: Diagnostic, source: Source): Diagnostic {
+  const inPlace = (label: Label): Label => ({ ...label, span: inText(source, label.span) })
+  return { ...diagnostic, at: inPlace(diagnostic.at), also: diagnostic.also.map(inPlace) }
 }
 
 function shownAs(

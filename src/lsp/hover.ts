@@ -1,5 +1,5 @@
 /** What is told of the place that a reader points at. */
-import type { Span } from '../base/span.ts'
+import { inText, type Span } from '../base/span.ts'
 import type { Value } from '../base/value.ts'
 import { everyValue } from '../explain/trace.ts'
 import { ownSpans } from '../explain/traced.ts'
@@ -45,10 +45,10 @@ function valueLines(document: Opened, id: string): readonly string[] | undefined
 /** The value whose own place is the shortest around an offset, among those that are printed and what they rest on. */
 function writtenAt(document: Opened, offset: number): readonly string[] {
   const compiled = document.compiled()
-  const { context } = compiled
+  const { context, source } = compiled
   let best: { readonly value: Value; readonly length: number } | undefined
   for (const value of everyValue([...context.besides.values(), ...context.roots.values()]))
-    for (const span of ownSpans(value.origin))
+    for (const span of ownSpans(value.origin).map(own => inText(source, own)))
       if (within(span, offset) && span.end - span.start < (best?.length ?? Number.POSITIVE_INFINITY))
         best = { value, length: span.end - span.start }
   return best ? inFull(best.value.id, { ok: true, value: best.value }, compiled) : []

@@ -36,14 +36,15 @@ const STEPS = '.eq'
  * Gives each table and list of checks one stop, on its first number, and each step a button in its number.
  * May be called again after the page has changed.
  * @param label what the button of a step is called, by the value that the step works
+ * @param within the part of the page that is meant
  */
-export function giveStops(label: (id: string) => string): void {
-  for (const group of document.querySelectorAll(GROUPS)) {
+export function giveStops(label: (id: string) => string, within: ParentNode): void {
+  for (const group of within.querySelectorAll(GROUPS)) {
     const first = group.querySelector<HTMLElement>(`[data-v][tabindex="0"]`) ?? group.querySelector<HTMLElement>(MARK)
     if (first) stopAt(first)
   }
-  for (const mark of document.querySelectorAll<HTMLElement>(`.prose :not(a) > ${MARK}`)) stopAt(mark)
-  for (const step of document.querySelectorAll(STEPS)) giveButton(step, label)
+  for (const mark of within.querySelectorAll<HTMLElement>(`.prose :not(a) > ${MARK}`)) stopAt(mark)
+  for (const step of within.querySelectorAll(STEPS)) giveButton(step, label)
 }
 
 function giveButton(step: Element, label: (id: string) => string): void {
@@ -122,3 +123,6 @@ function sameColumn(mark: HTMLElement, row: Element): HTMLElement | undefined {
     undefined,
   )
 }
+
+export const pace = (): ScrollBehavior =>
+  matchMedia('(prefers-reduced-motion: reduce)').matches ? 'instant' : 'smooth'

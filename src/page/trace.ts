@@ -4,17 +4,38 @@ import type { Island } from '../render/island.ts'
 import { type Data, type IslandValue, readData } from './data.ts'
 import { make } from './elements.ts'
 import { contents } from './panel.ts'
-import { giveStops, idOf, isIn, MARK, marksOf, moveStop, neighbour, placeOf, stopFor } from './places.ts'
+import { giveStops, idOf, isIn, MARK, marksOf, moveStop, neighbour, pace, placeOf, stopFor } from './places.ts'
 
-/** Tells the trace that the page's island has changed; an open panel shows the new numbers. */
+/** Tells the trace that the page has changed; an open panel shows the new numbers. */
 export type Refresh = () => void
+
+/** A page that changes under the reader, and carries no island. */
+export interface Changing {
+  /** Gets the island of the page as it is now. */
+  readonly load: () => Promise<Island>
+  /** What else is to be heard of a value, such as what it was before; empty where there is nothing. */
+  readonly note: (id: string) => string
+}
+
+/** What a page that changes under the reader gives and is given. */
+export interface Trace {
+  readonly refresh: Refresh
+  /** Gives the numbers of a part of the page their stops for the keyboard, before it is put in. */
+  readonly prepare: (within: ParentNode) => void
+}
 
 const ADDRESS = '#trace='
 
-/** Starts the trace of this page. @returns undefined where the page has no island */
-export function startTrace(): Refresh | undefined {
-  let data = readIsland()
-  if (!data) return undefined
+/**
+ * Starts the trace of this page, from the island that it carries or from one that is got when it is first needed.
+ * @returns undefined where the page has neither
+ */
+export function startTrace(changing?: Changing): Trace | undefined {
+  const load = changing?.load
+  let data = load ? undefined : readIsland()
+  if (!data && !load) return undefined
+  /** Counts the changes of the page, so that an island which was asked for before one is not taken for its own. */
+  let turn = 0
   const root = document.documentElement
   const panel = make('aside.trace')
   panel.setAttribute('aria-label', 'Trace')
@@ -28,7 +49,7 @@ export function startTrace(): Refresh | undefined {
 
   root.classList.add('traceable')
   document.body.append(panel, status)
-  giveStops(label)
+  giveStops(label, document)
   openFromAddress()
 
   document.addEventListener('click', event => {
@@ -37,7 +58,7 @@ export function startTrace(): Refresh | undefined {
     const step = target.closest('.trace-step')
     const mark = step ? (chosen.get(step) ?? resultOf(step)) : markUnder(target)
     const selecting = !step && getSelection()?.isCollapsed === false
-    if (!mark || selecting || !data?.find(idOf(mark))) return
+    if (!mark || selecting || !mayOpen(idOf(mark))) return
     event.preventDefault()
     open(mark, idOf(mark))
   })
@@ -55,18 +76,62 @@ export function startTrace(): Refresh | undefined {
   })
   addEventListener('hashchange', openFromAddress)
 
-  return () => {
-    data = readIsland() ?? data
-    giveStops(label)
-    walk = walk.filter(id => data?.find(id))
+  return {
+    prepare: within => giveStops(label, within),
+    refresh: () => {
+      turn++
+      data = load ? undefined : (readIsland() ?? data)
+      if (!load) giveStops(label, document)
+      if (isOpen()) withData(again)
+    },
+  }
+
+  /** Shows the walk anew, or what is left of it, and leaves the reader where they were in it. */
+  function again(): void {
     if (!isOpen()) return
-    if (walk.length === 0) close()
-    else show(false)
+    walk = walk.filter(id => data?.find(id))
+    if (walk.length === 0) {
+      close()
+      return
+    }
+    const { scrollTop } = panel
+    const stops = () => [...panel.querySelectorAll<HTMLElement>('button, summary, h2')]
+    const held = document.activeElement
+    const at = held instanceof HTMLElement ? stops().indexOf(held) : -1
+    const unfolded = panel.querySelector('details')?.open === true
+    show(false)
+    const details = panel.querySelector('details')
+    if (details) details.open = unfolded
+    stops()[at]?.focus({ preventScroll: true })
+    panel.scrollTop = scrollTop
+  }
+
+  /** Does a thing once the island of the page as it is now is there. */
+  function withData(act: () => void): void {
+    if (data || !load) {
+      act()
+      return
+    }
+    const asked = turn
+    load().then(
+      island => {
+        if (asked !== turn) return
+        data = readData(island)
+        act()
+      },
+      // The server is gone; the page says so elsewhere.
+      () => undefined,
+    )
+  }
+
+  /** A page that has still to get its island knows of no number that it cannot tell of. */
+  function mayOpen(id: string): boolean {
+    return data ? data.find(id) !== undefined : load !== undefined
   }
 
   function label(id: string): string {
     const value = data?.find(id)
-    return value ? inWords(value) : id
+    return (value ? inWords(value) : id) + (changing?.note(id) ?? '')
   }
 
   function isOpen(): boolean {
@@ -74,6 +139,12 @@ export function startTrace(): Refresh | undefined {
   }
 
   function open(from: HTMLElement | undefined, id: string): void {
+    withData(() => {
+      if (data?.find(id)) openNow(from, id)
+    })
+  }
+
+  function openNow(from: HTMLElement | undefined, id: string): void {
     const before = from?.getBoundingClientRect().top ?? 0
     if (!isOpen()) addressBefore = location.hash.startsWith(ADDRESS) ? '' : location.hash
     opener = from
@@ -136,10 +207,12 @@ export function startTrace(): Refresh | undefined {
   function openFromAddress(): void {
     if (!location.hash.startsWith(ADDRESS)) return
     const id = decoded(location.hash.slice(ADDRESS.length))
-    if (!data?.find(id)) return
-    const mark = placeOf(id)
-    open(mark, id)
-    mark?.scrollIntoView({ block: 'center' })
+    withData(() => {
+      if (!data?.find(id)) return
+      const mark = placeOf(id)
+      openNow(mark, id)
+      mark?.scrollIntoView({ block: 'center' })
+    })
   }
 
   /** Enter and space open a number that has the focus; arrow keys move among its neighbours. */
@@ -203,8 +276,6 @@ const inWords = ([, tex, printed]: IslandValue): string =>
   `${runsOf(tex)
     .map(({ text }) => text)
     .join(' ')} = ${printed}`
-
-const pace = (): ScrollBehavior => (matchMedia('(prefers-reduced-motion: reduce)').matches ? 'instant' : 'smooth')
 
 function decoded(text: string): string {
   try {

@@ -238,8 +238,11 @@ function quotesIn(node: TextNode, source: Source): readonly QuoteMark[] {
   let from = startOf(node) - shift
   return [...node.value.matchAll(QUOTE)].map(found => {
     const [whole, id = '', options = ''] = found
-    const at = Math.max(0, source.text.indexOf(whole, from))
-    from = at + whole.length
+    const exact = source.text.indexOf(whole, from)
+    // In a table a bar is written with a backslash, so that the quote does not read as its source.
+    const isExact = exact !== -1 && exact < endOf(node) - shift
+    const at = isExact ? exact : Math.max(from, source.text.indexOf('{{', from))
+    from = at + 2
     return {
       node,
       id: placed(id, shift + at + whole.indexOf(id)),

@@ -1,6 +1,6 @@
 /** The browser that tests measure in: an installed one, or the one that comes along where none is. */
 import { fileURLToPath } from 'node:url'
-import type { Browser } from 'puppeteer-core'
+import puppeteer, { type Browser } from 'puppeteer-core'
 import { PATIENCE, startBrowser } from '../../src/pdf/browser.ts'
 import { installedBrowsers, thisMachine } from '../../src/pdf/places.ts'
 
@@ -18,4 +18,17 @@ export async function launchBrowser(): Promise<Browser> {
   const started = await startBrowser({ named: choice, near: root, patience: PATIENCE })
   if (!started.ok) throw new Error(started.because)
   return started.value
+}
+
+/** The same browser with its network, for pages that a server of ours gives. @throws when no browser starts */
+export async function launchOnline(): Promise<Browser> {
+  const cut = await launchBrowser()
+  const { spawnfile = '', spawnargs = [] } = cut.process() ?? {}
+  await cut.close()
+  const args = spawnargs.filter(word => /^--(?:no-sandbox|disable-gpu|headless)/.test(word))
+  return puppeteer.launch({
+    executablePath: spawnfile,
+    args,
+    headless: spawnargs.includes('--headless') ? 'shell' : true,
+  })
 }
