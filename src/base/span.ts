@@ -63,15 +63,20 @@ export function inText(source: Source, { start, end }: Span): Span {
 }
 
 /** Line of a place, from 1. */
-export function lineOf(source: Source, place: number): number {
-  const { lineStarts } = source
-  return lastUpTo(offsetOf(source, place), lineStarts.length, i => lineStarts[i] ?? 0) + 1
+export const lineOf = (source: Source, place: number): number => positionOf(source, place).line
+
+/** Line and column, both from 1. */
+export interface Position {
+  readonly line: number
+  readonly column: number
 }
 
-/** Line and column of a place, both from 1. */
-export function positionOf(source: Source, place: number): { readonly line: number; readonly column: number } {
-  const line = lineOf(source, place)
-  return { line, column: offsetOf(source, place) - (source.lineStarts[line - 1] ?? 0) + 1 }
+export const positionOf = (source: Source, place: number): Position => positionAt(source, offsetOf(source, place))
+
+/** Line and column of an offset in the text. */
+export function positionAt({ lineStarts }: Source, offset: number): Position {
+  const line = lastUpTo(offset, lineStarts.length, i => lineStarts[i] ?? 0) + 1
+  return { line, column: offset - (lineStarts[line - 1] ?? 0) + 1 }
 }
 
 /** Lines of some places, each once, ascending. */

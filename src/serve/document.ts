@@ -1,5 +1,5 @@
 /** One document that is watched: read, built anew after each change, and told to whoever listens. */
-import { lineOf, positionOf, type Source, sourceOf } from '../base/span.ts'
+import { positionAt, positionOf, type Source, sourceOf } from '../base/span.ts'
 import type { Compiled } from '../compile.ts'
 import type { TextFault } from '../files.ts'
 import { createRebuilder, type LivePage, type Rebuilder } from '../live.ts'
@@ -224,7 +224,7 @@ function editedLine(before: string, source: Source): number {
   const { text } = source
   let at = 0
   while (at < before.length && at < text.length && before.charCodeAt(at) === text.charCodeAt(at)) at++
-  return lineOf(source, Math.min(at, text.length))
+  return positionAt(source, Math.min(at, text.length)).line
 }
 
 /** Makes a thing when it is first asked for, and then lets go of what it is made of. */

@@ -1,6 +1,6 @@
 /** From a number or a block of the page to its place in the source, and back. */
 import type { RootContent } from 'mdast'
-import { positionOf, type Source, type Span } from '../base/span.ts'
+import { offsetOf, type Position, positionAt, positionOf, type Source, type Span } from '../base/span.ts'
 import type { Value } from '../base/value.ts'
 import type { Compiled } from '../compile.ts'
 import type { Piece } from '../explain/sheet.ts'
@@ -8,11 +8,6 @@ import { everyValue } from '../explain/trace.ts'
 import { ownSpans } from '../explain/traced.ts'
 import { isWord } from '../model/scope.ts'
 import type { Place } from './message.ts'
-
-export interface Position {
-  readonly line: number
-  readonly column: number
-}
 
 /** Where the source says what a place of the page shows; undefined where it cannot be told. */
 export function positionFor(compiled: Compiled, { id, line, block, part }: Place): Position | undefined {
@@ -24,7 +19,7 @@ export function positionFor(compiled: Compiled, { id, line, block, part }: Place
   if (line !== undefined && Number.isInteger(line) && line >= 1 && line <= source.lineStarts.length)
     return { line, column: 1 }
   const start = block === undefined ? undefined : startsOf(compiled)[block]?.(part ?? 0)
-  return start === undefined ? undefined : positionOf(source, start)
+  return start === undefined ? undefined : positionAt(source, start)
 }
 
 function valueById({ context, scope }: Compiled, id: string): Value | undefined {
@@ -80,14 +75,17 @@ type Start = (part: number) => number | undefined
 
 /** One for each block, as the page sets them: checks that follow each other share one. */
 function startsOf(compiled: Compiled): readonly Start[] {
-  const { parts } = compiled
+  const { parts, source } = compiled
   const starts: Start[] = []
   let inChecks = false
   for (const part of parts) {
     if (part.kind === 'prose') {
       inChecks = false
       const shown = part.nodes.filter(isShown)
-      starts.push(at => (shown[at] ?? shown[0])?.position?.start.offset)
+      starts.push(at => {
+        const place = (shown[at] ?? shown[0])?.position?.start.offset
+        return place === undefined ? undefined : offsetOf(source, place)
+      })
       continue
     }
     for (const piece of part.pieces) {
@@ -103,17 +101,18 @@ const isShown = ({ type }: RootContent): boolean =>
   type !== 'definition' && type !== 'footnoteDefinition' && type !== 'yaml' && type !== 'html'
 
 function startOfPiece(piece: Piece, { context, source }: Compiled): number | undefined {
-  if (piece.kind === 'fault') return piece.diagnostics[0]?.at.span.start
+  const offset = (span: Span | undefined) => span && offsetOf(source, span.start)
+  if (piece.kind === 'fault') return offset(piece.diagnostics[0]?.at.span)
   if (piece.kind === 'table') {
     // What was given tells the line of its block; any other table tells the lines that it rests on.
     const [line] = piece.id.startsWith('given.') ? piece.sourceLines : []
     return line === undefined
-      ? firstPlace(piece.rows.flatMap(({ places }) => places ?? []))
+      ? firstPlace(piece.rows.flatMap(({ places }) => places?.map(place => offsetOf(source, place.start)) ?? []))
       : source.lineStarts[line - 1]
   }
   const value = 'id' in piece ? context.roots.get(piece.id) : undefined
-  return value && ownSpans(value.origin)[0]?.start
+  return value && offset(ownSpans(value.origin)[0])
 }
 
-const firstPlace = (places: readonly Span[]): number | undefined =>
-  places.length === 0 ? undefined : Math.min(...places.map(({ start }) => start))
+const firstPlace = (offsets: readonly number[]): number | undefined =>
+  offsets.length === 0 ? undefined : Math.min(...offsets)

@@ -222,7 +222,7 @@ describe.skipIf(!hasBrowser)('the live page (skipped where no browser is found)'
     const far = `${starter}\n\n## Late\n\nA last remark.\n`
     const page = await shown(far)
     await save(page, far.replace('A last remark', 'The last remark'))
-    expect(Number(await get(page, 'scrollY'))).toBeGreaterThan(500)
+    await has(page, 'scrollY > 500')
     await page.evaluate(`scrollTo(0, 0)`)
     await press(page, '[data-key="follow"]')
     await save(page, far)
