@@ -143,3 +143,4 @@ export async function until<T>(get: () => T | Promise<T>, is: (value: T) => bool
     await pause(15)
   }
 }
+export const pause = (ms: number): Promise<void> => new Promise(done => setTimeout(done, ms))
