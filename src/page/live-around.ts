@@ -103,10 +103,5 @@ function turnAll(holder: Element, old: readonly Element[], made: readonly Elemen
 }
 
 function takeAttributes(to: Element, from: Element): void {
-  const many = to.classList.contains(MANY_BLOCKS)
   for (const { name, value } of from.attributes) if (to.getAttribute(name) !== value) to.setAttribute(name, value)
-  if (many) to.classList.add(MANY_BLOCKS)
 }
-
-/** Marks what holds very many blocks. */
-export const MANY_BLOCKS = 'live-many'

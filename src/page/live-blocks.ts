@@ -1,6 +1,6 @@
 /** The blocks of the page, each an element between two marks, and the numbers that stand in each. */
 import type { Change } from '../serve/message.ts'
-import { MANY_BLOCKS, marksAround, type Run, turnAround } from './live-around.ts'
+import { marksAround, type Run, turnAround } from './live-around.ts'
 import { turnInto } from './live-morph.ts'
 import { idOf, MARK } from './places.ts'
 
@@ -33,7 +33,7 @@ export function findBlocks(page: HTMLElement, prepare: (part: ParentNode) => voi
   const elements: Element[] = []
   for (let node = start.nextSibling; node && node !== end; node = node.nextSibling)
     if (node instanceof Element) elements.push(node)
-  if (elements.length > MANY) start.parentElement?.classList.add(MANY_BLOCKS)
+  if (elements.length > MANY) partsOf(elements, end)
   const marks = createMarks()
   // What stands around the blocks is one part more.
   const within = (part: Element): readonly HTMLElement[] => [
@@ -51,7 +51,10 @@ export function findBlocks(page: HTMLElement, prepare: (part: ParentNode) => voi
     return template.content.firstElementChild ?? document.createElement('span')
   }
   const add = (at: number, element: Element): void => {
-    ;(start.parentNode ?? page).insertBefore(element, elements[at] ?? end)
+    const [before, after] = [elements[at - 1], elements[at]]
+    if (after) after.before(element)
+    else if (before) before.after(element)
+    else end.before(element)
     elements.splice(at, 0, element)
   }
   const turn = (at: number, html: string): Element => {
@@ -125,6 +128,18 @@ export function findBlocks(page: HTMLElement, prepare: (part: ParentNode) => voi
 
 /** A page of more blocks lays out only those that are near the window. */
 const MANY = 300
+
+/** Blocks that are laid out or left out together: a browser goes over all that stand beside each other. */
+const TOGETHER = 40
+
+function partsOf(elements: readonly Element[], end: Comment): void {
+  for (let at = 0; at < elements.length; at += TOGETHER) {
+    const part = document.createElement('div')
+    part.className = 'live-part'
+    end.before(part)
+    part.append(...elements.slice(at, at + TOGETHER))
+  }
+}
 
 function marksIn(page: HTMLElement): Run | undefined {
   const [start, end] = [commentIn(page, START), commentIn(page, END)]
