@@ -70,7 +70,7 @@ function run(page: HTMLElement, blocks: Blocks, trace: Trace, noteFrom: (note: M
     hello: hello => {
       token = hello.token
       connected = true
-      // The page is as it was built; what it says of itself comes with the first report.
+      report = hello.report ?? report
       show()
     },
     update: (update, heard) => {

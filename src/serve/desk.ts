@@ -58,7 +58,8 @@ export function createDesk(run: string, token: string): Desk {
     },
     listen: (document, has, response) => {
       let held = kept.get(document)?.find(({ version }) => `${run}.${version}` === has)
-      const hello: Hello = { run, token, version: document.state.version }
+      const { version, report } = document.state
+      const hello: Hello = { run, token, version, report }
       const next = () => {
         if (held === document.state) return undefined
         const state = taken(document)

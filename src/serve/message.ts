@@ -109,6 +109,8 @@ export interface Hello {
   /** Lets a page of ours, and no other, ask for the editor. */
   readonly token: string
   readonly version: number
+  /** How the document stands; a page that was just loaded has it from here. */
+  readonly report?: Report
 }
 
 /** What is asked when a source line is to be opened. */

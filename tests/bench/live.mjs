@@ -44,6 +44,8 @@ async function timesOf(sections) {
   })
   const page = await browser.newPage()
   await page.setViewport({ width: 1180, height: 900 })
+  // A page that glides to each edit would still be on its way at the next.
+  await page.emulateMediaFeatures([{ name: 'prefers-reduced-motion', value: 'reduce' }])
   await page.goto(address, { timeout: 120_000 })
   await page.evaluate(`
     window.painted = new Map()

@@ -91,7 +91,7 @@ function edited(text: string, random: Random, past: readonly string[]): string {
   }
 }
 
-/** Edits in a row, each build held to a clean one. A text that has gone to ruins begins afresh. EDITS=10 SEED=7 makes others, and more. */
+/** Edits in a row, each build held to a clean one. A text that has gone to ruins begins afresh. EDITS=5 SEED=7 makes others, and more. */
 function holds(path: string, start: string, edits: number): void {
   const [more, seed] = [Number(process.env.EDITS ?? 1), Number(process.env.SEED ?? 1)]
   const random = randomFrom(seed)
