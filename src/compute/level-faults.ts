@@ -27,6 +27,15 @@ const lengthPrinter =
 export const topicMissing = (level: string, topic: string, at: Span): Diagnostic =>
   diagnose('error', `${topic}-missing`, at, `level ${level} has no ${topic}`, `Give them in a block ${topic} ${level}.`)
 
+export const forcesTwice = (level: string, at: Span): Diagnostic =>
+  diagnose(
+    'error',
+    'forces-and-seismic',
+    at,
+    `the forces of ${level} are stated here, and seismic works them too`,
+    'Keep the one or the other.',
+  )
+
 export function wallOutside(
   { name, from, to, place }: Wall,
   { outline, areas }: Plan,

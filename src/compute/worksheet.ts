@@ -8,17 +8,24 @@ import type { Value, Word } from '../base/value.ts'
 import { duplicates } from '../model/columns.ts'
 import { type Construction, readConstruction } from '../model/construction.ts'
 import { type Equation, readEquations, workEquation } from '../model/equations.ts'
+import { commonShare, type Forces, readShare } from '../model/forces.ts'
 import type { Choices } from '../model/front.ts'
 import type { Givens } from '../model/givens.ts'
 import { type Grid, readGrid } from '../model/grid.ts'
 import { type LevelLine, readLevels } from '../model/levels.ts'
 import { type Limit, limitLines, workLimit } from '../model/limits.ts'
 import type { Assumption, Scope } from '../model/scope.ts'
+import { readSeismic } from '../model/seismic.ts'
 import type { Block } from '../read/block.ts'
 import type { Text } from '../read/text.ts'
+import { profileFor, profileOf } from '../standards/catalogue.ts'
+import { commonSettings } from '../standards/profile.ts'
 import { constructionValue, levelIds, levelValue } from './ids.ts'
 import { type LevelWork, levelWork } from './level.ts'
 import { topicMissing } from './level-faults.ts'
+import { type Seismic, type WeighedLevel, workSeismic } from './seismic.ts'
+import { seismicIds, seismicLevelValue, seismicValue } from './seismic-ids.ts'
+import { shareByWord } from './shares.ts'
 import { type LoadedLevel, type Storeys, workStoreys } from './storeys.ts'
 
 /** A value that a cell works from others, and the place of the cell. */
@@ -34,6 +41,8 @@ export interface Worksheet {
   readonly levelLines: () => Result<readonly LevelLine[]>
   /** Forces and storey shears of every level. */
   readonly storeys: () => Result<Storeys>
+  /** Present where the document has a block `seismic`. */
+  readonly seismic?: () => Result<Seismic>
   readonly constructions: ReadonlyMap<string, () => Result<Construction>>
   /** The value of each line of the equation blocks, by its place. */
   readonly equation: (line: Text) => Result<Value>
@@ -48,7 +57,7 @@ export interface Worksheet {
   readonly readAll: () => readonly Diagnostic[]
 }
 
-export function worksheet(givens: Givens, { system, assumptions: chosen }: Choices): Worksheet {
+export function worksheet(givens: Givens, { system, standard, assumptions: chosen }: Choices): Worksheet {
   const ledger = new Ledger()
   const warnings: Diagnostic[] = []
   const statedCells = new Map<string, StatedCell>()
@@ -57,7 +66,7 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
     ledger,
     display: { system, relative: false },
     lookup: id => lookup(id),
-    ids: () => [...equations.keys(), ...levels.flatMap(levelIds)],
+    ids: () => [...equations.keys(), ...levels.flatMap(levelIds), ...(seismic ? seismicIds : [])],
     warn: fault => warnings.push(fault),
     assume: assumption => assumptions.set(assumption.text, assumption),
     stated: (value, at) => statedCells.set(value.id, { value, at }),
@@ -74,6 +83,37 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
     'construction',
   )
 
+  const accidental = standard && profileOf(standard.text)?.rules.accidental
+  const share = accidental ? { share: accidental.value, clause: accidental.clause } : commonShare
+
+  const [seismicBlock] = givens.seismic
+  const seismic = seismicBlock && ledger.once('seismic', seismicBlock.info, () => workedSeismic(seismicBlock))
+
+  function workedSeismic({ info }: Block): Result<Seismic> {
+    const profile = profileFor(standard, info)
+    if (!profile.ok) return profile
+    const given = readSeismic(givens.seismic, [...profile.value.settings, ...commonSettings], scope)
+    const lines = levelLines()
+    const weighed = lines.ok ? all(lines.value.flatMap(weighedLevel)) : lines
+    if (!given.ok || !weighed.ok)
+      return bad([...(given.ok ? [] : given.because), ...(weighed.ok ? [] : weighed.because)])
+    return workSeismic(profile.value, given.value, weighed.value, scope)
+  }
+
+  function weighedLevel({ name, elevation }: LevelLine): readonly Result<WeighedLevel>[] {
+    const mass = levels.find(other => other.name === name)?.mass()
+    if (!mass) return []
+    return [mass.ok ? good({ level: name, elevation, W: mass.value.W }) : mass]
+  }
+
+  function seismicForces(level: string): Result<Forces> {
+    const made = seismic?.() ?? bad([])
+    if (!made.ok) return made
+    const [x, y] = [made.value.force(level, 'x'), made.value.force(level, 'y')]
+    const off = readShare(made.value.given.text('accidental'), level, share, scope)
+    return off.ok ? good({ ...(x ? { x } : {}), ...(y ? { y } : {}), accidental: off.value }) : off
+  }
+
   const levels: readonly LevelWork[] = givens.levels.map(level =>
     levelWork(level, {
       scope,
@@ -81,6 +121,9 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
       construction: name => constructions.get(name),
       constructionNames: [...constructions.keys()],
       forceTables: givens.forceTables,
+      commonShare: share,
+      shareByWord: shareByWord(standard, scope.display),
+      seismicForces: seismic && seismicForces,
       strays: givens.strays,
       above: () => {
         const lines = levelLines()
@@ -171,9 +214,10 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
     const [first = '', second = ''] = path
     if (level && first === 'elevation' && path.length === 1) return elevationOf(head)
     if (level) {
-      const found = levelValue(level, path)
+      const found = levelValue(level, path) ?? (seismic && seismicLevelValue(seismic, head, path))
       if (found) return found
     }
+    if (head === 'seismic' && seismic) return seismicValue(seismic, id)
     if (head === 'grid' && path.length === 1) return gridValue(first)
     if (head === 'constructions' && path.length === 2) {
       const construction = constructions.get(first)
@@ -203,6 +247,7 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
     levels,
     levelLines,
     storeys,
+    ...(seismic ? { seismic } : {}),
     constructions,
     equationLines: [...lines.keys()],
     equation: line => {
@@ -230,6 +275,7 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
     return [
       grid,
       levelLines,
+      ...(seismic ? [seismic] : []),
       ...constructions.values(),
       ...levels.flatMap(({ givens, areas, mass, walls, openings, springs, forces }) => [
         ...(givens.areas.length > 0 ? [areas, mass] : []),

@@ -27,7 +27,9 @@ export const wants = [
 export type Want = (typeof wants)[number]
 
 /** What tells of all levels at once; a level, where one is named, is worked in full. */
-export const buildingWants = ['storey shears'] as const
+export const seismicWants = ['design spectrum', 'base shear', 'storey forces', 'diaphragm forces'] as const
+export type SeismicWant = (typeof seismicWants)[number]
+export const buildingWants = ['storey shears', ...seismicWants] as const
 export type BuildingWant = (typeof buildingWants)[number]
 
 /** Lists of the whole document rather than of a level. */
@@ -36,6 +38,8 @@ export type DocumentWant = (typeof documentWants)[number]
 
 /** All of a level in order; the displaced shape comes with the displacement. */
 const WHOLE = 'whole calculation'
+/** From hazard to forces, likewise. */
+const WHOLE_SEISMIC = 'seismic design'
 const parts: readonly Want[] = wants.filter(want => want !== 'displaced shape')
 
 export type AnyWant = Want | BuildingWant | DocumentWant
@@ -66,7 +70,7 @@ export function readRequest(block: Block): Result<Request> {
         'working-empty',
         block.info,
         'this working asks for nothing',
-        `Name what it shows: ${[WHOLE, ...every].join(', ')}.`,
+        `Name what it shows: ${[WHOLE, WHOLE_SEISMIC, ...every].join(', ')}.`,
       ),
     )
   if (block.table)
@@ -96,6 +100,7 @@ export function readRequest(block: Block): Result<Request> {
 function wantOf(line: Text, faults: Diagnostic[]): readonly AnyWant[] {
   const words = toBritish(line.text.toLowerCase()).replace(/\s+/g, ' ')
   if (words === WHOLE) return parts
+  if (words === WHOLE_SEISMIC) return seismicWants
   const known = every.find(want => want === words)
   if (known) return [known]
   faults.push(
@@ -104,7 +109,7 @@ function wantOf(line: Text, faults: Diagnostic[]): readonly AnyWant[] {
       'unknown-working',
       line.span,
       `${line.text} is not something that can be shown`,
-      suggestion(words, [WHOLE, ...every], 'working'),
+      suggestion(words, [WHOLE, WHOLE_SEISMIC, ...every], 'working'),
     ),
   )
   return []
