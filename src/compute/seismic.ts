@@ -86,6 +86,7 @@ export function workSeismic(
     warn: scope.warn,
   })
   if (!made.ok) return made
+  for (const caution of profile.cautions ?? []) scope.warn(inPart(profile, caution, given))
   const along = (direction: Direction): DirectionWork => {
     const design = made.value.directions[direction]
     const shares = workVertical(levels, design, direction, height, display)
@@ -112,6 +113,9 @@ export function workSeismic(
     values: valuesOf([total, height], [made.value.ground, both.x.said, both.y.said]),
   })
 }
+
+const inPart = ({ name }: Profile, caution: string, { at }: SeismicGiven) =>
+  diagnose('warning', 'standard-in-part', at, `${name} is worked in part`, `${caution} See to it yourself.`)
 
 /** Elevations as stated; a level that is alone stands at the height that is stated for the structure. */
 function placedLevels(
@@ -176,7 +180,7 @@ function tellsOf(said: Said | undefined): string {
     case 'note':
       return said.text.replace(/^Along [xy]/, '')
     case 'criteria':
-      return said.criteria.rows.map(({ value, says }) => `${value.si} ${says}`).join()
+      return said.criteria.rows.map(({ value, says = '' }) => `${value.si} ${says}`).join()
     case 'check':
       return `${said.check.what} ${said.check.demand.si} ${said.check.capacity.si}`
   }
@@ -196,6 +200,7 @@ function partsOf(said: Said): readonly (Value | Word)[] {
     case 'check':
       return [said.check.capacity]
     case 'criteria':
+      return said.criteria.rows.map(({ value }) => value)
     case 'note':
       return []
   }

@@ -29,7 +29,7 @@ export function explainBuilding(
   const made = sheet.seismic?.()
   if (!made) return [...head, { kind: 'fault', diagnostics: [noSeismic(request)] }]
   if (!made.ok) return [...head, { kind: 'fault', diagnostics: made.because }]
-  return [...head, ...explainSeismic(want, made.value, request.detail, context)]
+  return [...head, ...explainSeismic(want, made.value, request, context)]
 }
 
 const noSeismic = ({ at }: Request) =>

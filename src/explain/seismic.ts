@@ -1,6 +1,7 @@
 /** The seismic design in pieces: ground motion, base shear, forces of the levels, forces of the diaphragms. */
 import { sym } from '../base/formula.ts'
 import { numeralOnPage, rounded } from '../base/numeral.ts'
+import type { Span } from '../base/span.ts'
 import { Tabulation } from '../base/tabulation.ts'
 import { unitText } from '../base/unit.ts'
 import { printed, shown, spansOf } from '../base/value.ts'
@@ -10,7 +11,7 @@ import type { Direction } from '../model/seismic.ts'
 import { notCovered, type Said } from '../standards/profile.ts'
 import type { Context } from './context.ts'
 import { explainValue } from './equation.ts'
-import type { Detail, SeismicWant } from './request.ts'
+import type { Detail, Request, SeismicWant } from './request.ts'
 import { shownCheck } from './shears.ts'
 import type { Check, Piece } from './sheet.ts'
 import { explainTable } from './table.ts'
@@ -34,7 +35,10 @@ export function explainSeismic(
     case 'storey forces':
       return eachWay(seismic, (direction, work) => storeyForces(direction, work, detail, context))
     case 'diaphragm forces':
-      return eachWay(seismic, (direction, work) => diaphragmForces(seismic, direction, work, detail, context))
+      if (!seismic.directions.x.diaphragms) return [withoutRule(seismic, whole, at)]
+      return eachWay(seismic, (direction, { diaphragms }) =>
+        diaphragms ? diaphragmForces(direction, diaphragms, detail, context) : [],
+      )
   }
 }
 
@@ -70,7 +74,7 @@ function pieceOf(said: Said, context: Context): Piece {
 const measure = sym('value', '\\text{value}', 'number')
 
 function criteriaTable(
-  { id, caption, rows, head, governs }: (Said & { kind: 'criteria' })['criteria'],
+  { id, caption, head, rows, decides }: (Said & { kind: 'criteria' })['criteria'],
   context: Context,
 ): Piece {
   const table = new Tabulation(
@@ -82,10 +86,11 @@ function criteriaTable(
     rows.map(({ value }) => value),
   )
   const words = [
-    { head, cells: rows.map(({ says }) => says) },
+    ...(decides ? [{ head: decides.head, cells: rows.map(({ says }) => says ?? '') }] : []),
     { head: 'Clause', cells: rows.map(({ clause }) => clause) },
   ]
-  return explainTable(table, { id, caption, rowHead: 'Criterion', columns: [measure.name], governs, words }, context)
+  const governs = decides ? { governs: decides.row } : {}
+  return explainTable(table, { id, caption, rowHead: head, columns: [measure.name], ...governs, words }, context)
 }
 
 function checkOf(
@@ -146,15 +151,18 @@ function storeyForces(direction: Direction, work: DirectionWork, detail: Detail,
   ]
 }
 
+/** What a standard has no rule for is a fault where it is asked for by name, and a remark among all the rest. */
+function withoutRule({ profile }: Seismic, whole: boolean, at: Span): Piece {
+  const fault = notCovered(profile, 'the design force of diaphragms', at)
+  return whole ? { kind: 'note', text: `${fault.message}.` } : { kind: 'fault', diagnostics: [fault] }
+}
+
 function diaphragmForces(
-  { profile, given }: Seismic,
   direction: Direction,
-  { diaphragms }: DirectionWork,
+  diaphragms: Tabulation,
   detail: Detail,
   context: Context,
 ): readonly Piece[] {
-  if (!diaphragms)
-    return [{ kind: 'fault', diagnostics: [notCovered(profile, 'the design force of diaphragms', given.at)] }]
   if (detail === 'result') return diaphragms.rows.map((_, i) => explainValue(diaphragms.column('F_p').cell(i), context))
   return [
     explainTable(

@@ -209,9 +209,9 @@ function categoryOf(
     criteria: {
       id: 'seismic.criteria',
       caption: `Seismic design category by each criterion, risk category ${risk}.`,
-      head: 'Category',
+      head: 'Criterion',
       rows: rows.map((row, i) => ({ ...row, name: names[i] ?? '' })),
-      governs: at,
+      decides: { head: 'Category', row: at },
     },
     word: {
       id: 'seismic.category',

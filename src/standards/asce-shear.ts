@@ -1,5 +1,5 @@
 /** ASCE 7, chapter 12: system, period and base shear of one direction. */
-import { type Formula, formula, type Sym, sym } from '../base/formula.ts'
+import { formula, type Sym, sym } from '../base/formula.ts'
 import type { Result } from '../base/ledger.ts'
 import { suggestion } from '../base/near.ts'
 import { bad, good } from '../base/outcome.ts'
@@ -8,9 +8,10 @@ import { work } from '../base/work.ts'
 import { type Direction, settingMissing } from '../model/seismic.ts'
 import { diagnose } from '../read/text.ts'
 import type { Ground } from './asce-ground.ts'
-import { Cd, Cs, Cu, hn, Ie, k, Omega0, R, rho, S1, SD1, SDS, T, Ta, TL, Tmost, Tstated, V, W } from './asce-letters.ts'
+import { Cd, Cs, Cu, hn, Ie, Omega0, R, rho, S1, SD1, SDS, T, Ta, TL, Tmost, Tstated, V, W } from './asce-letters.ts'
 import { type System, systemsOf } from './asce-systems.ts'
-import { type Desk, type DirectionDesign, type Said, step } from './profile.ts'
+import { exponentByPeriod } from './needed.ts'
+import { type Criteria, type Desk, type DirectionDesign, type Said, step } from './profile.ts'
 import { interpolated, tabled } from './tabled.ts'
 
 /** Equation numbers of 12.8 that differ between the editions. */
@@ -152,7 +153,7 @@ export function directionOf(
   }
   const C = work(id('Cs'), Cnear ? f.close : f.far, bounds, display, about)
   const v = work(id('V'), f.V, { C_s: C, W: desk.W }, display, about)
-  const exponent = exponentOf(edition, desk, period.T, direction)
+  const exponent = exponentByPeriod(`${edition} 12.8.3`, period.T, desk, direction)
   return good({
     V: v,
     vertical: { k: exponent, source: `${edition} 12.8.3` },
@@ -233,8 +234,24 @@ function systemOf(edition: string, desk: Desk, ground: Ground, direction: Direct
   ]
   const permitted = system && named ? permittedIn(edition, desk, ground, direction, system, named.span) : good([])
   if (!permitted.ok) return permitted
-  return good({ R: r, said: [...permitted.value, ...factors.map(step)] })
+  return good({ R: r, said: [...permitted.value, { kind: 'criteria', criteria: factorTable(direction, factors) }] })
 }
+
+const factorTable = (direction: Direction, factors: readonly Value[]): Criteria => ({
+  id: `seismic.${direction}.factors`,
+  caption: `Factors of the system along ${direction}.`,
+  head: 'Factor',
+  rows: factors.map(value => ({
+    name: factorNames[value.id.split('.').at(-1) ?? ''] ?? '',
+    value,
+    clause: clauseOf(value),
+  })),
+})
+
+const factorNames: Readonly<Record<string, string>> = { R: 'R', Omega0: 'Ω_0', Cd: 'C_d', rho: 'ρ' }
+
+const clauseOf = ({ origin }: Value): string =>
+  origin.kind === 'worked' && origin.span === undefined ? origin.step.formula.source : 'given'
 
 function redundancyOf(edition: string, { given, display }: Desk, { category }: Ground, direction: Direction): Value {
   const stated = given.number('rho', direction)
@@ -344,24 +361,6 @@ function periodOf(
     ? work(id('T'), f.calc, { [Tstated.name]: stated, [Tmost.name]: longest }, display, about)
     : work(id('T'), f.own, { T_a: ta }, display, about)
   return { T: own, said: [ta, cu, longest, ...(stated ? [stated] : []), own].map(step) }
-}
-
-const between: (edition: string) => Formula = edition =>
-  formula({
-    gives: k,
-    body: '1 + (T - (0.5 s))/(2 s)',
-    of: [T],
-    source: `${edition} 12.8.3, between T = 0.5 s and 2.5 s (2.5 s unchecked)`,
-  })
-
-function exponentOf(edition: string, { given, display }: Desk, period: Value, direction: Direction): Value {
-  const stated = given.number('k', direction)
-  if (stated) return stated
-  const id = `seismic.${direction}.k`
-  const clause = `${edition} 12.8.3`
-  if (period.si <= 0.5) return work(id, tabled(k, 1, `${clause}, T ≤ 0.5 s`), {}, display, [direction])
-  if (period.si >= 2.5) return work(id, tabled(k, 2, `${clause}, T ≥ 2.5 s (unchecked)`), {}, display, [direction])
-  return work(id, between(edition), { T: period }, display, [direction])
 }
 
 const Fleast = sym('F_least', 'F_{p,\\text{min}}', 'force')

@@ -4,11 +4,16 @@ import { suggestion } from '../base/near.ts'
 import { bad, good } from '../base/outcome.ts'
 import type { Span } from '../base/span.ts'
 import { diagnose, type Text } from '../read/text.ts'
+import { as1170 } from './as1170.ts'
 import { asce716 } from './asce7-16.ts'
 import { asce722 } from './asce7-22.ts'
+import { en1998 } from './en1998.ts'
+import { is1893 } from './is1893.ts'
+import { nbcc2020 } from './nbcc2020.ts'
+import { nzs1170 } from './nzs1170.ts'
 import type { Profile } from './profile.ts'
 
-export const profiles: readonly Profile[] = [asce722, asce716]
+export const profiles: readonly Profile[] = [asce722, asce716, en1998, nzs1170, nbcc2020, is1893, as1170]
 
 /** Capitals, spaces and the length of dashes tell no standards apart. */
 const plain = (name: string): string =>

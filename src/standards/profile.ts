@@ -32,22 +32,22 @@ export type Said =
   /** A choice that the standard makes, in whole sentences; `word` can be quoted. */
   | { readonly kind: 'choice'; readonly word: Word }
   | { readonly kind: 'note'; readonly text: string }
-  /** Several criteria side by side, of which one decides. */
   | { readonly kind: 'criteria'; readonly criteria: Criteria }
   | { readonly kind: 'check'; readonly check: Limited }
 
+/** Values side by side with their clauses, and where they are criteria, what each says and which decides. */
 export interface Criteria {
   readonly id: string
   readonly caption: string
+  /** Head of the column of names. */
+  readonly head: string
   readonly rows: readonly {
     readonly name: string
     readonly value: Value
-    readonly says: string
+    readonly says?: string
     readonly clause: string
   }[]
-  /** Head of the column of what each says. */
-  readonly head: string
-  readonly governs: number
+  readonly decides?: { readonly head: string; readonly row: number }
 }
 
 export interface Limited {
@@ -130,6 +130,8 @@ export interface Profile {
   readonly settings: readonly SettingRule[]
   readonly design: (desk: Desk) => Result<Design>
   readonly rules: Rules
+  /** What the standard asks of the forces that is not worked here, each in a sentence. */
+  readonly cautions?: readonly string[]
 }
 
 /** Says that a standard's own rule for a thing is not among those that are worked. */
