@@ -19,7 +19,7 @@ import { explainTable } from './table.ts'
 export function explainSeismic(
   want: SeismicWant,
   seismic: Seismic,
-  detail: Detail,
+  { detail, whole, at }: Request,
   context: Context,
 ): readonly Piece[] {
   switch (want) {
@@ -71,7 +71,7 @@ function pieceOf(said: Said, context: Context): Piece {
   }
 }
 
-const measure = sym('value', '\\text{value}', 'number')
+const measure = sym('value', '\\text{Value}', 'number')
 
 function criteriaTable(
   { id, caption, head, rows, decides }: (Said & { kind: 'criteria' })['criteria'],

@@ -192,15 +192,20 @@ function categoryOf(
       name: 'Table 11.6-1',
       value: sds,
       says: byTable('SDS', sds.si, risk),
-      clause: `${edition} Table 11.6-1 (as in 7-10)`,
+      clause: `${edition} Table 11.6-1 (as in 7-10; this edition unchecked)`,
     },
     {
       name: 'Table 11.6-2',
       value: sd1,
       says: byTable('SD1', sd1.si, risk),
-      clause: `${edition} Table 11.6-2 (as in 7-10)`,
+      clause: `${edition} Table 11.6-2 (as in 7-10; this edition unchecked)`,
     },
-    { name: '11.6', value: s1, says: near || '–', clause: `${edition} 11.6, E or F from 0.75 (as in 7-10)` },
+    {
+      name: '11.6',
+      value: s1,
+      says: near || '–',
+      clause: `${edition} 11.6, E or F from 0.75 (as in 7-10; this edition unchecked)`,
+    },
   ]
   const worst = rows.reduce((a, b) => (b.says !== '–' && b.says > a.says ? b : a))
   const names = ['S_DS', 'S_D1', 'S_1']
