@@ -106,7 +106,19 @@ function areaValue(level: LevelWork, name: string | undefined, key: string | und
     const found = parts.find(part => part.name === name)
     return key === 'A' || key === 'x' || key === 'y' ? found?.[key] : key === 'I_p' ? found?.Ip : undefined
   })
-  return part ?? from(level.mass(), mass => cellOf(mass.areas, name, [key ?? '']) ?? momentOf(mass.parts, name, key))
+  return (
+    part ??
+    from(level.mass(), mass => {
+      const load = cellOf(mass.areas, name, ['w'])
+      return cellOf(mass.areas, name, [key ?? '']) ?? momentOf(mass.parts, name, key) ?? partOfLoad(load, key)
+    })
+  )
+}
+
+/** What a load is worked from where part of it is variable. */
+function partOfLoad(load: Value | undefined, key: string | undefined): Value | undefined {
+  if (load?.origin.kind !== 'worked' || load.origin.span || !key) return undefined
+  return [...load.origin.step.inputs.values()].find(({ id }) => id.endsWith(`.${key}`))
 }
 
 const momentOf = (parts: Tabulation, row: string | undefined, key: string | undefined): Value | undefined =>
