@@ -1,5 +1,6 @@
 /** From hazard to the forces of every level: the standard's own steps, then its vertical distribution. */
 
+import type { Diagnostic } from '../base/diagnostic.ts'
 import { formula, sym } from '../base/formula.ts'
 import type { Display } from '../base/kind.ts'
 import type { Result } from '../base/ledger.ts'
@@ -85,7 +86,7 @@ export function workSeismic(
     assume: scope.assume,
     warn: scope.warn,
   })
-  if (!made.ok) return made
+  if (!made.ok) return bad(distinct(made.because))
   for (const caution of profile.cautions ?? []) scope.warn(inPart(profile, caution, given))
   const along = (direction: Direction): DirectionWork => {
     const design = made.value.directions[direction]
@@ -112,6 +113,12 @@ export function workSeismic(
     diaphragm: (level, direction) => cell(both[direction].diaphragms, diaphragmColumn, level),
     values: valuesOf([total, height], [made.value.ground, both.x.said, both.y.said]),
   })
+}
+
+/** Where both directions have one setting at fault it is told once. */
+function distinct(faults: readonly Diagnostic[]): readonly Diagnostic[] {
+  const keyOf = ({ rule, message, at }: Diagnostic) => `${rule} ${at.span.start} ${message}`
+  return [...new Map(faults.map(fault => [keyOf(fault), fault])).values()]
 }
 
 const inPart = ({ name }: Profile, caution: string, { at }: SeismicGiven) =>

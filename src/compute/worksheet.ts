@@ -100,9 +100,11 @@ export function worksheet(givens: Givens, { system, standard, assumptions: chose
     return workSeismic(profile.value, given.value, weighed.value, scope)
   }
 
-  function weighedLevel({ name, elevation }: LevelLine): readonly Result<WeighedLevel>[] {
-    const mass = levels.find(other => other.name === name)?.mass()
-    if (!mass) return []
+  function weighedLevel({ name, elevation, span }: LevelLine): readonly Result<WeighedLevel>[] {
+    const level = levels.find(other => other.name === name)
+    if (!level) return []
+    const nothing = level.givens.areas.length === 0 && elevation && givens.strays('areas').length === 0
+    const mass = nothing ? bad([topicMissing(name, 'areas', span)]) : level.mass()
     return [mass.ok ? good({ level: name, elevation, W: mass.value.W }) : mass]
   }
 

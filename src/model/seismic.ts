@@ -70,7 +70,9 @@ export function readSeismic(
         if (!cell || !rule.sym) return []
         const value = readNumber(cell, rule, rule.sym, direction, scope)
         if (value.ok) numbers.set(keyOf(rule.name, direction), value.value)
-        return [value]
+        // A cell that holds for both directions is told once where it is at fault.
+        const told = direction === 'y' && cell === text(rule.name, 'x')
+        return value.ok || !told ? [value] : []
       })
     }),
   )

@@ -1,6 +1,7 @@
 /** ASCE 7, chapter 11: design ground motion, importance factor and seismic design category. */
 import { type Formula, formula } from '../base/formula.ts'
 import type { Result } from '../base/ledger.ts'
+import { numeralPlain, rounded } from '../base/numeral.ts'
 import { bad, good } from '../base/outcome.ts'
 import type { Value, Word } from '../base/value.ts'
 import { work } from '../base/work.ts'
@@ -151,12 +152,14 @@ export function statedMapped({ given }: Desk): Result<Mapped | undefined> {
   return bad([settingMissing(given, lacks, `It goes with ${has}.`)])
 }
 
+const plain = ({ si }: Value): string => numeralPlain(rounded(si))
+
 const inverted = ({ given }: Desk, sds: Value, sd1: Value) =>
   diagnose(
     'warning',
     'spectrum-inverted',
     (given.text('S_D1') ?? given.text('S_M1') ?? given.text('S_1'))?.span ?? given.at,
-    `the design acceleration at 1 s, ${sd1.si}, is larger than that at short periods, ${sds.si}`,
+    `the design acceleration at 1 s, ${plain(sd1)}, is larger than that at short periods, ${plain(sds)}`,
     'The two may have changed places. Only very soft ground has such a spectrum.',
   )
 

@@ -307,7 +307,7 @@ function permittedIn(
         'error',
         'system-not-permitted',
         at,
-        `${system.name} are not permitted in design category ${category}`,
+        `${system.words} are not permitted in design category ${category}`,
         help,
       ),
     ])
@@ -315,7 +315,7 @@ function permittedIn(
     return good([
       {
         kind: 'note',
-        text: `Along ${direction}: ${system.name}. The system has no height limit in design category ${category} (${reference}).`,
+        text: `Along ${direction}: ${system.words}. It has no height limit in design category ${category} (${reference}).`,
       },
     ])
   const formulaOf = formula({ gives: limit, body: `${found} ft`, of: [], source: reference })
@@ -326,11 +326,11 @@ function permittedIn(
         'error',
         'system-not-permitted',
         at,
-        `${system.name} are limited to ${found} ft in design category ${category}, and the structure is ${feet(desk.height)} ft high`,
+        `${system.words} are limited to ${found} ft in design category ${category}, and the structure is ${feet(desk.height)} ft high`,
         help,
       ),
     ])
-  const what = `Height of the structure for ${system.name}, design category ${category}`
+  const what = `Height of the structure for ${system.words}, design category ${category}`
   return good([
     { kind: 'check', check: { id: `seismic.${direction}.height`, what, demand: desk.height, capacity, reference } },
   ])

@@ -69,6 +69,8 @@ export interface System {
   /** `bearing wall, special reinforced masonry shear walls` */
   readonly name: string
   readonly part: 'A' | 'B'
+  /** In a sentence: `special reinforced masonry shear walls of a bearing wall system`. */
+  readonly words: string
   readonly R: number
   readonly Omega0: number
   readonly Cd: number
@@ -85,6 +87,7 @@ const systemOf =
   ([name, R, Omega0, Cd, limits, seen]: Row): System => ({
     name: `${PARTS[part]}, ${name}`,
     part,
+    words: `${name} of a ${PARTS[part]} system`,
     R,
     Omega0,
     Cd,
