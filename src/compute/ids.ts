@@ -44,7 +44,10 @@ export function levelValue(level: LevelWork, path: readonly string[]): Found {
       return areaValue(level, a, b)
     case 'lines':
     case 'points':
-      return from(level.mass(), mass => cellOf(mass[head], a, [b ?? '']) ?? momentOf(mass.parts, a, b))
+      return from(
+        level.mass(),
+        mass => cellOf(mass[head], a, [b ?? '']) ?? momentOf(mass.parts, `${level.name}.${head}.${a}.${b}`),
+      )
     case 'W':
       return rest.length === 0 ? from(level.mass(), ({ W }) => W) : undefined
     case 'I_p':
@@ -110,7 +113,11 @@ function areaValue(level: LevelWork, name: string | undefined, key: string | und
     part ??
     from(level.mass(), mass => {
       const load = cellOf(mass.areas, name, ['w'])
-      return cellOf(mass.areas, name, [key ?? '']) ?? momentOf(mass.parts, name, key) ?? partOfLoad(load, key)
+      return (
+        cellOf(mass.areas, name, [key ?? '']) ??
+        momentOf(mass.parts, `${level.name}.areas.${name}.${key}`) ??
+        partOfLoad(load, key)
+      )
     })
   )
 }
@@ -121,12 +128,14 @@ function partOfLoad(load: Value | undefined, key: string | undefined): Value | u
   return [...load.origin.step.inputs.values()].find(({ id }) => id.endsWith(`.${key}`))
 }
 
-const momentOf = (parts: Tabulation, row: string | undefined, key: string | undefined): Value | undefined =>
-  key === 'Wx' || key === 'Wy'
-    ? cellOf(parts, row, [key.replace('W', 'W_')])
-    : key === 'I'
-      ? cellOf(parts, row, ['I'])
-      : undefined
+/** A moment of one of the parts, by its whole id: an area and a line may have one name. */
+function momentOf(parts: Tabulation, id: string): Value | undefined {
+  for (const { idOf, cell } of ['W_x', 'W_y', 'I'].map(name => parts.column(name))) {
+    const at = parts.rows.findIndex((_, rowIdx) => idOf(rowIdx) === id)
+    if (at !== -1) return cell(at)
+  }
+  return undefined
+}
 
 function caseValue(level: LevelWork, what: 'T' | 'u' | 'v' | 'phi', name: string | undefined): Found {
   return from(level.distribution(), ({ cases }) => {

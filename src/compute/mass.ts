@@ -190,9 +190,10 @@ function workCentre(level: string, tables: Tables, display: Display): Mass {
   ] as const
   const gathered = (key: string): readonly Value[] =>
     found.flatMap(([, table]) => (table ? table.rows.map((_, i) => table.column(key).cell(i)) : []))
-  const idOf = new Map(found.flatMap(([kind, table]) => table?.rows.map(row => [row, kind] as const) ?? []))
+  // An area and a line may have one name.
+  const kinds = found.flatMap(([kind, table]) => table?.rows.map(() => kind) ?? [])
   const rows = found.flatMap(([, table]) => table?.rows ?? [])
-  const parts = new Tabulation(rows, (row, key) => `${level}.${idOf.get(row)}.${row}.${key}`, display)
+  const parts = new Tabulation(rows, (row, key, i) => `${level}.${kinds[i]}.${row}.${key}`, display)
     .take(W, gathered('W'))
     .take(x, gathered('x'))
     .take(y, gathered('y'))
