@@ -6,12 +6,15 @@ import { explainCriteria } from './criteria.ts'
 import type { DocumentWant } from './request.ts'
 import { shownCheck } from './shears.ts'
 import type { Check, Piece } from './sheet.ts'
+import { explainStandard } from './standard.ts'
 
 /** Worked after everything else, since they list what the rest did. */
 export function explainRegister(want: DocumentWant, sheet: Worksheet, context: Context): readonly Piece[] {
   switch (want) {
     case 'criteria':
       return [explainCriteria(sheet, context)]
+    case 'standard':
+      return [explainStandard(context)]
     case 'assumptions':
       return [register('assumptions', 'Assumptions', assumptionItems(sheet.assumptions(), context), context)]
     case 'references':

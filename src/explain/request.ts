@@ -33,7 +33,7 @@ export const buildingWants = ['storey shears', ...seismicWants] as const
 export type BuildingWant = (typeof buildingWants)[number]
 
 /** Lists of the whole document rather than of a level. */
-export const documentWants = ['criteria', 'checks', 'assumptions', 'references'] as const
+export const documentWants = ['criteria', 'standard', 'checks', 'assumptions', 'references'] as const
 export type DocumentWant = (typeof documentWants)[number]
 
 /** All of a level in order; the displaced shape comes with the displacement. */

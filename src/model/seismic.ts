@@ -7,7 +7,7 @@ import { bad, good } from '../base/outcome.ts'
 import type { Span } from '../base/span.ts'
 import type { Value } from '../base/value.ts'
 import { texAbout } from '../base/work.ts'
-import type { Block } from '../read/block.ts'
+import type { Block, Setting } from '../read/block.ts'
 import { diagnose, type Text } from '../read/text.ts'
 import { quantity } from './cell.ts'
 import { settingOf, strangeLines, strangeSettings } from './columns.ts'
@@ -35,6 +35,8 @@ export interface SettingRule {
 export interface SeismicGiven {
   /** The first line of the block. */
   readonly at: Span
+  /** All settings as they stand. */
+  readonly settings: readonly Setting[]
   /** What is written behind a setting. */
   readonly text: (name: string, direction?: Direction) => Text | undefined
   /** The value of a setting that is a number; undefined where it is left out. */
@@ -77,7 +79,12 @@ export function readSeismic(
     }),
   )
   if (!read.ok) return read
-  return good({ at: block.info, text, number: (name, direction) => numbers.get(keyOf(name, direction)) })
+  return good({
+    at: block.info,
+    settings: [...block.settings, ...block.options],
+    text,
+    number: (name, direction) => numbers.get(keyOf(name, direction)),
+  })
 }
 
 const keyOf = (name: string, direction: Direction | undefined): string => `${name} ${direction ?? ''}`

@@ -69,9 +69,11 @@ function rock(): readonly Branch[] {
 
 /** The spectral shape factor of a soil at a period, as the formula of its branch. */
 export function shapeFactor(soil: Soil, period: number): Formula {
-  const branch = shapes[soil].filter(({ from }) => period >= from).at(-1)
+  const at = shapes[soil].findLastIndex(({ from }) => period >= from)
+  const [branch, next] = shapes[soil].slice(at, at + 2)
   if (!branch) throw new Error('a period is above zero')
-  const source = `${NAME} Table 3.1, soil class ${soil}, T_1 from ${branch.from} s (from memory, unchecked)`
+  const range = branch.from === 0 ? `T_1 < ${next?.from} s` : `T_1 ≥ ${branch.from} s`
+  const source = `${NAME} Table 3.1, soil class ${soil}, ${range} (from memory, unchecked)`
   return formula({ gives: Ch, body: branch.body, of: branch.from === 0 ? [] : [T1], source })
 }
 

@@ -6,7 +6,6 @@ import type { Diagnostic } from '../base/diagnostic.ts'
 import { type Formula, sym } from '../base/formula.ts'
 import type { Display } from '../base/kind.ts'
 import type { Result } from '../base/ledger.ts'
-import { bad, good } from '../base/outcome.ts'
 import type { Span } from '../base/span.ts'
 import type { Value, Word } from '../base/value.ts'
 import type { Assumption } from '../model/scope.ts'
@@ -143,12 +142,6 @@ export const notCovered = ({ name }: Pick<Profile, 'name'>, thing: string, at: S
     `${name} has no rule here for ${thing}`,
     'This version does not cover it. State what follows from the standard yourself.',
   )
-
-/** A rule of a standard, or the message that the profile does not cover it. */
-export function covered<K extends keyof Rules>(profile: Profile, rule: K, at: Span): Result<NonNullable<Rules[K]>> {
-  const found = profile.rules[rule]
-  return found === undefined ? bad([notCovered(profile, ruleNames[rule], at)]) : good(found)
-}
 
 /** Settings that stand beside those of any standard. */
 export const commonSettings: readonly SettingRule[] = [
