@@ -140,6 +140,11 @@ export function readShare(cell: Text | undefined, level: string, common: CommonS
     { id: `${level}.accidental`, what: 'accidental', sym: share, tex: texAbout('\\alpha', level) },
     scope,
   )
+  return sharePlausible(value, cell)
+}
+
+/** Refuses a share of the plan beyond which the mass would be off it. */
+export function sharePlausible(value: Result<Value>, cell: Text): Result<Value> {
   if (!value.ok || (value.value.si >= 0 && value.value.si <= 0.5)) return value
   return bad([
     diagnose(

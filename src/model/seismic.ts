@@ -11,6 +11,7 @@ import type { Block, Setting } from '../read/block.ts'
 import { diagnose, type Text } from '../read/text.ts'
 import { quantity } from './cell.ts'
 import { settingOf, strangeLines, strangeSettings } from './columns.ts'
+import { sharePlausible } from './forces.ts'
 import type { Scope } from './scope.ts'
 
 export type Direction = 'x' | 'y'
@@ -28,8 +29,8 @@ export interface SettingRule {
   readonly sym?: Sym
   /** True where it may be given for one direction, as `R y`. */
   readonly each?: boolean
-  /** True where it may be zero. */
-  readonly zero?: boolean
+  /** True for a share of the plan, which lies between none and half. */
+  readonly share?: boolean
 }
 
 export interface SeismicGiven {
@@ -58,7 +59,7 @@ export function readSeismic(
     ...(block.table ? [holdsTable(block.table.headerLine)] : []),
     ...strangeSettings(block, known),
     ...strangeLines(block),
-    ...rules.flatMap(rule => givenBothWays(block, rule)),
+    ...rules.flatMap(rule => [...givenBothWays(block, rule), ...withoutWord(block, rule)]),
   ]
   if (faults.length > 0) return bad(faults)
   const text = (name: string, direction?: Direction) =>
@@ -91,7 +92,7 @@ const keyOf = (name: string, direction: Direction | undefined): string => `${nam
 
 function readNumber(
   cell: Text,
-  { name, key, what, zero }: SettingRule,
+  { name, key, what, share }: SettingRule,
   sym: Sym,
   direction: Direction | undefined,
   scope: Scope,
@@ -99,7 +100,8 @@ function readNumber(
   const about = direction ? [direction] : []
   const id = ['seismic', ...about, key].join('.')
   const value = quantity(cell, { id, what: name, sym, tex: texAbout(sym.tex, ...about) }, scope)
-  if (!value.ok || value.value.si > 0 || (zero && value.value.si === 0)) return value
+  if (share) return sharePlausible(value, cell)
+  if (!value.ok || value.value.si > 0) return value
   const size = value.value.si === 0 ? 'zero' : 'below zero'
   return bad([
     diagnose('error', 'size-not-positive', cell.span, `${name}, ${what}, is ${size}`, 'Give a value above zero.'),
@@ -122,6 +124,16 @@ const aboutLevel = ({ text, span }: Text): Diagnostic =>
 
 const holdsTable = ({ span }: Text): Diagnostic =>
   diagnose('error', 'seismic-table', span, 'seismic holds no table', 'Write its settings as name: value.')
+
+/** A word that is left empty says nothing; a number tells so itself. */
+function withoutWord({ settings, options }: Block, { name, what, sym }: SettingRule): readonly Diagnostic[] {
+  const mine = [name, `${name} x`, `${name} y`]
+  return [...settings, ...options]
+    .filter(setting => !sym && setting.value.text === '' && mine.includes(setting.name.text))
+    .map(setting =>
+      diagnose('error', 'setting-missing', setting.name.span, `${setting.name.text} has no value`, `It is ${what}.`),
+    )
+}
 
 /** `R` beside both `R x` and `R y` would be passed over. */
 function givenBothWays(block: Block, { name, each }: SettingRule): readonly Diagnostic[] {

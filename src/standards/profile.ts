@@ -150,7 +150,7 @@ export const commonSettings: readonly SettingRule[] = [
     key: 'accidental',
     what: 'the share of the plan by which the mass may be off',
     sym: sym('alpha', '\\alpha', 'share'),
-    zero: true,
+    share: true,
   },
 ]
 
