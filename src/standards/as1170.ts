@@ -5,6 +5,7 @@ import { bad, good } from '../base/outcome.ts'
 import type { Value } from '../base/value.ts'
 import { work } from '../base/work.ts'
 import { chosenWord, type Direction, settingMissing } from '../model/seismic.ts'
+import { lazily } from './lazily.ts'
 import { exponentByPeriod, k, needed } from './needed.ts'
 import { type Desk, type DirectionDesign, type Profile, step } from './profile.ts'
 import { tabled } from './tabled.ts'
@@ -42,7 +43,7 @@ export function shapeFactor(soil: string, period: number): Formula {
   return formula({ gives: Ch, body: `min(${first}*(1 s)/T_1, ${plateau})`, of: [T1], source: source('T_1 ≤ 1.5 s') })
 }
 
-const f = {
+const f = lazily(() => ({
   T1: formula({
     gives: T1,
     body: '1.25*k_t*(h_n/(1 m))^0.75*(1 s)',
@@ -55,7 +56,7 @@ const f = {
     of: [kp, Z, Ch, Sp, mu, W],
     source: `${NAME} 6.2.1 (unchecked)`,
   }),
-}
+}))
 
 interface Ground {
   readonly soil: string
@@ -99,10 +100,10 @@ function directionOf(desk: Desk, { soil, k_p, Z: z }: Ground, direction: Directi
   const factor =
     given.number('k_t', direction) ??
     work(id('kt'), tabled(kt, 0.05, `${NAME} 6.2.3, all other structures (unchecked)`), {}, display, about)
-  const T_1 = stated ?? work(id('T1'), f.T1, { k_t: factor, h_n: height }, display, about)
+  const T_1 = stated ?? work(id('T1'), f().T1, { k_t: factor, h_n: height }, display, about)
   const ch = given.number('C_h', direction) ?? work(id('Ch'), shapeFactor(soil, T_1.si), { T_1 }, display, about)
   const { mu: ductility, S_p } = read.value
-  const v = work(id('V'), f.V, { k_p, Z: z, C_h: ch, S_p, mu: ductility, W_t: desk.W }, display, about)
+  const v = work(id('V'), f().V, { k_p, Z: z, C_h: ch, S_p, mu: ductility, W_t: desk.W }, display, about)
   const exponent = exponentByPeriod(`${NAME} 6.3 (unchecked)`, T_1, desk, direction)
   return good({
     V: v,

@@ -10,6 +10,7 @@ import { asceProfile } from './asce.ts'
 import { type Mapped, statedMapped } from './asce-ground.ts'
 import { asceSettings, Fa, Fv, S1, SM1, SMS, SS } from './asce-letters.ts'
 import { asceRules } from './asce-rules.ts'
+import { lazily } from './lazily.ts'
 import { type Desk, step } from './profile.ts'
 import { interpolated } from './tabled.ts'
 
@@ -39,10 +40,10 @@ export const siteCoefficients: Readonly<Record<'Fa' | 'Fv', Readonly<Record<Tabl
 }
 
 const AMPLIFIED = `${NAME} 11.4.4 (unchecked)`
-const amplified = {
+const amplified = lazily(() => ({
   SMS: formula({ gives: SMS, body: 'F_a*S_S', of: [Fa, SS], source: AMPLIFIED }),
   SM1: formula({ gives: SM1, body: 'F_v*S_1', of: [Fv, S1], source: AMPLIFIED }),
-}
+}))
 
 const coefficient = (gives: Sym, by: Sym, which: 'Fa' | 'Fv', site: Tabled, at: number): Formula => {
   const row = siteCoefficients[which][site]
@@ -75,8 +76,8 @@ function fromMap(desk: Desk, written: string, ss: Value, s1: Value): Result<Mapp
   if (!site || (site === 'E' && (ss.si >= 1 || s1.si >= 0.2))) return bad([studyNeeded(desk, written)])
   const fa = work('seismic.Fa', coefficientFa(site, ss.si, written === 'default'), { S_S: ss }, display)
   const fv = work('seismic.Fv', coefficient(Fv, S1, 'Fv', site, s1.si), { S_1: s1 }, display)
-  const sms = work('seismic.SMS', amplified.SMS, { F_a: fa, S_S: ss }, display)
-  const sm1 = work('seismic.SM1', amplified.SM1, { F_v: fv, S_1: s1 }, display)
+  const sms = work('seismic.SMS', amplified().SMS, { F_a: fa, S_S: ss }, display)
+  const sm1 = work('seismic.SM1', amplified().SM1, { F_v: fv, S_1: s1 }, display)
   const raised = site === 'D' && s1.si >= 0.2
   if (raised)
     assume({

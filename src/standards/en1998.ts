@@ -6,6 +6,7 @@ import type { Value } from '../base/value.ts'
 import { work } from '../base/work.ts'
 import { chosenWord, type Direction, settingMissing } from '../model/seismic.ts'
 import { diagnose } from '../read/text.ts'
+import { lazily } from './lazily.ts'
 import { fixedExponent, needed } from './needed.ts'
 import { type Desk, type DirectionDesign, type Profile, type Said, step } from './profile.ts'
 import { tabled } from './tabled.ts'
@@ -54,7 +55,7 @@ const importance: Readonly<Record<string, number>> = { I: 0.8, II: 1, III: 1.2, 
 const SPECTRUM = `${NAME} 3.2.2.5 (unchecked), in g`
 const METHOD = `${NAME} 4.3.3.2.2 (unchecked)`
 
-const f = {
+const f = lazily(() => ({
   ag: formula({ gives: ag, body: 'gamma_I*a_gR', of: [gammaI, agR], source: `${NAME} 3.2.1 (unchecked)` }),
   Ct: formula({ gives: Ct, body: '0.075/sqrt(A_c/(1 m^2))', of: [Ac], source: `${METHOD}, walls` }),
   T1: formula({ gives: T1, body: 'C_t*(H/(1 m))^0.75*(1 s)', of: [Ct, H], source: `${METHOD}, H up to 40 m` }),
@@ -83,7 +84,7 @@ const f = {
     of: [Sd, lambda, W],
     source: `${METHOD}, S_d in g, so that m g is W`,
   }),
-}
+}))
 
 interface Ground {
   readonly values: Readonly<Record<'a_g' | 'S' | 'T_B' | 'T_C' | 'T_D' | 'beta', Value>>
@@ -110,7 +111,7 @@ function groundOf(desk: Desk): Result<Ground> {
     ),
   ]
   if (!s || !tb || !tc || !td) throw new Error('a row of the table has four numbers')
-  const a = work('seismic.ag', f.ag, { gamma_I: gamma, a_gR: reference.a_gR }, display)
+  const a = work('seismic.ag', f().ag, { gamma_I: gamma, a_gR: reference.a_gR }, display)
   const low =
     given.number('beta') ??
     work('seismic.beta', tabled(beta, 0.2, `${NAME} 3.2.2.5, recommended (unchecked)`), {}, display)
@@ -155,7 +156,7 @@ function directionOf(desk: Desk, ground: Ground, direction: Direction): Result<D
   const factor =
     given.number('lambda', direction) ??
     work(id('lambda'), tabled(lambda, tall ? 0.85 : 1, lambdaSource), {}, display, about)
-  const v = work(id('V'), f.Fb, { S_d: sd, lambda: factor, W: desk.W }, display, about)
+  const v = work(id('V'), f().Fb, { S_d: sd, lambda: factor, W: desk.W }, display, about)
   const exponent = fixedExponent(
     1,
     `${NAME} 4.3.3.2.3, masses displaced in proportion to height (unchecked)`,
@@ -174,9 +175,9 @@ function directionOf(desk: Desk, ground: Ground, direction: Direction): Result<D
 }
 
 function branchOf({ values: { T_B, T_C, T_D } }: Ground, period: Value): Formula {
-  if (period.si < T_B.si) return f.rising
-  if (period.si <= T_C.si) return f.flat
-  return period.si <= T_D.si ? f.falling : f.far
+  if (period.si < T_B.si) return f().rising
+  if (period.si <= T_C.si) return f().flat
+  return period.si <= T_D.si ? f().falling : f().far
 }
 
 /** T_1 as stated, or from the height; the method holds for short periods only. */
@@ -190,7 +191,7 @@ function periodOf(
   const factor = given.number('C_t', direction) ?? factorOf(desk, direction)
   if (!stated && height.si > 40)
     return bad([settingMissing(given, 'T_1', `The formula of ${METHOD} holds for heights up to 40 m.`)])
-  const T_1 = stated ?? work(`seismic.${direction}.T1`, f.T1, { C_t: factor, H: height }, display, [direction])
+  const T_1 = stated ?? work(`seismic.${direction}.T1`, f().T1, { C_t: factor, H: height }, display, [direction])
   if (T_1.si > Math.min(4 * T_C.si, 2))
     return bad([
       diagnose(
@@ -208,7 +209,7 @@ function periodOf(
 function factorOf({ given, display }: Desk, direction: Direction): Value {
   const id = `seismic.${direction}.Ct`
   const area = given.number('A_c', direction)
-  if (area) return work(id, f.Ct, { A_c: area }, display, [direction])
+  if (area) return work(id, f().Ct, { A_c: area }, display, [direction])
   return work(id, tabled(Ct, 0.05, `${METHOD}, all other structures`), {}, display, [direction])
 }
 

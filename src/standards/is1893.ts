@@ -5,6 +5,7 @@ import { bad, good } from '../base/outcome.ts'
 import type { Value } from '../base/value.ts'
 import { work } from '../base/work.ts'
 import { chosenWord, type Direction, settingMissing } from '../model/seismic.ts'
+import { lazily } from './lazily.ts'
 import { fixedExponent, needed } from './needed.ts'
 import { type Desk, type DirectionDesign, type Profile, step } from './profile.ts'
 import { tabled } from './tabled.ts'
@@ -55,7 +56,7 @@ export function spectrum(soil: string, period: number): Formula {
 }
 
 const PERIOD = `${NAME} 7.6.2 (unchecked)`
-const f = {
+const f = lazily(() => ({
   plain: formula({
     gives: T,
     body: '0.09*(h/(1 m))/sqrt(d/(1 m))*(1 s)',
@@ -75,7 +76,7 @@ const f = {
     source: `${NAME} 6.4.2 and 7.2.2 (unchecked)`,
   }),
   V: formula({ gives: V, body: 'A_h*W', of: [Ah, W], source: `${NAME} 7.2.1 (unchecked)` }),
-}
+}))
 
 interface Ground {
   readonly soil: string
@@ -121,8 +122,8 @@ function directionOf(desk: Desk, ground: Ground, direction: Direction): Result<D
   const { R: r } = read.value.system
   const { T_a, said } = read.value.period
   const sa = work(id('Sa'), spectrum(ground.soil, T_a.si), { T_a }, display, about)
-  const ah = work(id('Ah'), f.Ah, { Z: ground.Z, S_a: sa, R: r, I: ground.I, A_least: ground.least }, display, about)
-  const v = work(id('V'), f.V, { A_h: ah, W: desk.W }, display, about)
+  const ah = work(id('Ah'), f().Ah, { Z: ground.Z, S_a: sa, R: r, I: ground.I, A_least: ground.least }, display, about)
+  const v = work(id('V'), f().V, { A_h: ah, W: desk.W }, display, about)
   const clause = `${NAME} 7.6.3 (unchecked)`
   return good({
     V: v,
@@ -139,7 +140,7 @@ function periodOf(desk: Desk, direction: Direction): Result<{ readonly T_a: Valu
   if (!read.ok) return read
   const area = given.number('A_w', direction)
   const inputs = { h: height, d: read.value.d, ...(area ? { A_w: area } : {}) }
-  const T_a = work(`seismic.${direction}.Ta`, area ? f.walls : f.plain, inputs, display, [direction])
+  const T_a = work(`seismic.${direction}.Ta`, area ? f().walls : f().plain, inputs, display, [direction])
   return good({ T_a, said: [read.value.d, ...(area ? [area] : []), T_a] })
 }
 

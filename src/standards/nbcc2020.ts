@@ -5,6 +5,7 @@ import { bad, good } from '../base/outcome.ts'
 import type { Value } from '../base/value.ts'
 import { work } from '../base/work.ts'
 import { chosenWord, type Direction, settingMissing } from '../model/seismic.ts'
+import { lazily } from './lazily.ts'
 import { fixedExponent, needed } from './needed.ts'
 import { type Desk, type DirectionDesign, type Profile, type Said, step } from './profile.ts'
 import { tabled } from './tabled.ts'
@@ -32,7 +33,7 @@ const V = sym('V', 'V', 'force')
 const W = sym('W', 'W', 'force')
 const Ft = sym('F_t', 'F_t', 'force')
 
-const f = {
+const f = lazily(() => ({
   wall: formula({
     gives: Tempirical,
     body: '0.05*(h_n/(1 m))^0.75*(1 s)',
@@ -73,7 +74,7 @@ const f = {
     of: [Ta, V],
     source: `${STATIC}(7), T_a > 0.7 s (unchecked)`,
   }),
-}
+}))
 
 const importance: Readonly<Record<string, number>> = { low: 0.8, normal: 1, high: 1.3, 'post-disaster': 1.5 }
 
@@ -106,20 +107,20 @@ function directionOf(desk: Desk, spectrum: Spectrum, I_E: Value, direction: Dire
   )
   if (!read.ok) return read
   const { S_Ta, M_v, R_d, R_o } = read.value
-  const empirical = work(id('Temp'), f.wall, { h_n: height }, display, about)
+  const empirical = work(id('Temp'), f().wall, { h_n: height }, display, about)
   const calculated = given.number('T', direction)
   const ta = calculated
-    ? work(id('Ta'), f.calc, { T: calculated, T_emp: empirical }, display, about)
-    : work(id('Ta'), f.own, { T_emp: empirical }, display, about)
+    ? work(id('Ta'), f().calc, { T: calculated, T_emp: empirical }, display, about)
+    : work(id('Ta'), f().own, { T_emp: empirical }, display, about)
   const factors = { M_v, I_E, R_d, R_o }
-  const c1 = work(id('C.at'), f.atTa, { S_Ta, ...factors }, display, about)
-  const c2 = work(id('C.least'), f.least, { S_4: spectrum.S_4, ...factors }, display, about)
+  const c1 = work(id('C.at'), f().atTa, { S_Ta, ...factors }, display, about)
+  const c2 = work(id('C.least'), f().least, { S_4: spectrum.S_4, ...factors }, display, about)
   const ductile = R_d.si >= 1.5
-  const c3 = work(id('C.most'), f.most, { S_02: spectrum.S_02, S_05: spectrum.S_05, I_E, R_d, R_o }, display, about)
+  const c3 = work(id('C.most'), f().most, { S_02: spectrum.S_02, S_05: spectrum.S_05, I_E, R_d, R_o }, display, about)
   const bounds = { C_Ta: c1, C_least: c2, C_most: c3 }
-  const c = work(id('C'), ductile ? f.capped : f.bare, bounds, display, about)
-  const v = work(id('V'), f.V, { C: c, W: desk.W }, display, about)
-  const top = ta.si > 0.7 ? work(id('Ft'), f.Ft, { T_a: ta, V: v }, display, about) : undefined
+  const c = work(id('C'), ductile ? f().capped : f().bare, bounds, display, about)
+  const v = work(id('V'), f().V, { C: c, W: desk.W }, display, about)
+  const top = ta.si > 0.7 ? work(id('Ft'), f().Ft, { T_a: ta, V: v }, display, about) : undefined
   const clause = `${STATIC}(7) (unchecked)`
   const said: readonly Said[] = [
     ...[R_d, R_o, M_v, empirical, ...(calculated ? [calculated] : []), ta, S_Ta, c1, c2].map(step),

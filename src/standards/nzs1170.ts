@@ -5,6 +5,7 @@ import { bad, good } from '../base/outcome.ts'
 import type { Value } from '../base/value.ts'
 import { work } from '../base/work.ts'
 import { chosenWord, type Direction, settingMissing } from '../model/seismic.ts'
+import { lazily } from './lazily.ts'
 import { fixedExponent, needed } from './needed.ts'
 import { type Desk, type DirectionDesign, type Profile, step } from './profile.ts'
 import { tabled } from './tabled.ts'
@@ -78,7 +79,7 @@ export function shapeFactor(soil: Soil, period: number): Formula {
 }
 
 const STATIC = `${NAME} 5.2.1.1 (unchecked)`
-const f = {
+const f = lazily(() => ({
   C: formula({ gives: C, body: 'C_h*Z*R_u*N', of: [Ch, Z, Ru, N], source: `${NAME} 3.1.1 (unchecked)` }),
   stiff: formula({
     gives: kmu,
@@ -95,7 +96,7 @@ const f = {
   }),
   V: formula({ gives: V, body: 'C_d*W_t', of: [Cd, W], source: STATIC }),
   Ft: formula({ gives: Ft, body: '0.08*V', of: [V], source: `${NAME} 6.2.1.3 (unchecked)` }),
-}
+}))
 
 interface Ground {
   readonly soil: Soil
@@ -144,10 +145,10 @@ function directionOf(desk: Desk, ground: Ground, direction: Direction): Result<D
   const reduction = reductionOf(desk, ground, T_1, ductility, direction)
   if (!reduction.ok) return reduction
   const ch = given.number('C_h', direction) ?? work(id('Ch'), shapeFactor(ground.soil, T_1.si), { T_1 }, display, about)
-  const c = work(id('C'), f.C, { C_h: ch, Z: ground.Z, R_u: ground.R_u, N: ground.N }, display, about)
-  const cd = work(id('Cd'), f.Cd, { C: c, S_p, k_mu: reduction.value, Z: ground.Z, R_u: ground.R_u }, display, about)
-  const v = work(id('V'), f.V, { C_d: cd, W_t: desk.W }, display, about)
-  const top = work(id('Ft'), f.Ft, { V: v }, display, about)
+  const c = work(id('C'), f().C, { C_h: ch, Z: ground.Z, R_u: ground.R_u, N: ground.N }, display, about)
+  const cd = work(id('Cd'), f().Cd, { C: c, S_p, k_mu: reduction.value, Z: ground.Z, R_u: ground.R_u }, display, about)
+  const v = work(id('V'), f().V, { C_d: cd, W_t: desk.W }, display, about)
+  const top = work(id('Ft'), f().Ft, { V: v }, display, about)
   const clause = `${NAME} 6.2.1.3 (unchecked)`
   return good({
     V: v,
@@ -167,7 +168,7 @@ function reductionOf(
   if (stated) return good(stated)
   if (soil === 'E')
     return bad([settingMissing(given, 'k_mu', `This version has no rule of ${NAME} for soil class E: state k_mu.`)])
-  const made = T_1.si < 0.7 ? f.stiff : f.soft
+  const made = T_1.si < 0.7 ? f().stiff : f().soft
   const inputs = T_1.si < 0.7 ? { mu: ductility, T_1 } : { mu: ductility }
   return good(work(`seismic.${direction}.kmu`, made, inputs, display, [direction]))
 }
