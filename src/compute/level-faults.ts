@@ -36,6 +36,10 @@ export const forcesTwice = (level: string, at: Span): Diagnostic =>
     'Keep the one or the other.',
   )
 
+/** Values of the design and of that level would have one name. */
+export const levelCalledSeismic = (at: Span): Diagnostic =>
+  diagnose('error', 'name-taken', at, 'a level of the document is called seismic', 'Give the level another name.')
+
 export function wallOutside(
   { name, from, to, place }: Wall,
   { outline, areas }: Plan,

@@ -22,7 +22,7 @@ import { profileFor, profileOf } from '../standards/catalogue.ts'
 import { commonSettings } from '../standards/profile.ts'
 import { constructionValue, levelIds, levelValue } from './ids.ts'
 import { type LevelWork, levelWork } from './level.ts'
-import { topicMissing } from './level-faults.ts'
+import { levelCalledSeismic, topicMissing } from './level-faults.ts'
 import { type Seismic, type WeighedLevel, workSeismic } from './seismic.ts'
 import { seismicIds, seismicLevelValue, seismicValue } from './seismic-ids.ts'
 import { shareByWord } from './shares.ts'
@@ -90,6 +90,7 @@ export function worksheet(givens: Givens, { system, standard, assumptions: chose
   const seismic = seismicBlock && ledger.once('seismic', seismicBlock.info, () => workedSeismic(seismicBlock))
 
   function workedSeismic({ info }: Block): Result<Seismic> {
+    if (levels.some(({ name }) => name === 'seismic')) return bad([levelCalledSeismic(info)])
     const profile = profileFor(standard, info)
     if (!profile.ok) return profile
     const given = readSeismic(givens.seismic, [...profile.value.settings, ...commonSettings], scope)

@@ -46,6 +46,7 @@ export const asceSettings: readonly SettingRule[] = [
   { name: 'Omega_0', key: 'Omega0', what: 'the overstrength factor', sym: Omega0, each: true },
   { name: 'C_d', key: 'Cd', what: 'the deflection amplification factor', sym: Cd, each: true },
   { name: 'rho', key: 'rho', what: 'the redundancy factor', sym: rho, each: true },
+  { name: 'T_a', key: 'Ta', what: 'the approximate period by another formula of 12.8.2.1', sym: Ta, each: true },
   { name: 'T', key: 'Tcalc', what: 'the period from a substantiated analysis', sym: Tstated, each: true },
   { name: 'k', key: 'k', what: 'the exponent of the vertical distribution', sym: k, each: true },
 ]

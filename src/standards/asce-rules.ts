@@ -16,7 +16,10 @@ export function asceRules(edition: 'ASCE 7-16' | 'ASCE 7-22'): Rules {
   const factors = `${edition} 2.3.6 (numbers of clauses and the factor of S unchecked)`
   const allowable = `${edition} 2.4.5 (numbers of clauses and the factor of S unchecked)`
   return {
-    accidental: { value: 0.05, clause: `${edition} 12.8.4.2` },
+    accidental: {
+      value: 0.05,
+      clause: `${edition} 12.8.4.2; taken in every case, though it may be left out of regular structures (unchecked)`,
+    },
     share: {
       snow: {
         value: late ? snow(45, 0.15) : snow(30, 0.2),

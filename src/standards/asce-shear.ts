@@ -201,7 +201,7 @@ function periodOf(
   const f = periodFormulas(edition)
   const id = (key: string) => `seismic.${direction}.${key}`
   const about = [direction]
-  const ta = work(id('Ta'), f[display.system], { h_n: height }, display, about)
+  const ta = given.number('T_a', direction) ?? work(id('Ta'), f[display.system], { h_n: height }, display, about)
   const cu = work(
     id('Cu'),
     interpolated(Cu, SD1, sd1.si, upper, `${edition} Table 12.8-1 (unchecked)`),

@@ -4,7 +4,7 @@ import { good } from '../base/outcome.ts'
 import type { SettingRule } from '../model/seismic.ts'
 import { type Ground, groundOf, type Motion } from './asce-ground.ts'
 import { directionOf, type Numbering } from './asce-shear.ts'
-import type { Profile, Rules } from './profile.ts'
+import type { Desk, Profile, Rules } from './profile.ts'
 
 interface Edition {
   readonly name: string
@@ -12,10 +12,12 @@ interface Edition {
   readonly numbering: Numbering
   readonly motion: Motion
   readonly settings: readonly SettingRule[]
+  /** What it takes for granted of the procedure in a design category. */
+  readonly procedure?: (desk: Desk, category: string) => void
   readonly rules: Rules
 }
 
-export const asceProfile = ({ name, aliases, numbering, motion, settings, rules }: Edition): Profile => ({
+export const asceProfile = ({ name, aliases, numbering, motion, settings, procedure, rules }: Edition): Profile => ({
   name,
   aliases,
   settings,
@@ -23,6 +25,7 @@ export const asceProfile = ({ name, aliases, numbering, motion, settings, rules 
   design: desk => {
     const ground = groundOf(name, desk, motion)
     if (!ground.ok) return ground
+    procedure?.(desk, ground.value.category)
     const along = (made: Ground) => ({
       x: directionOf(name, numbering, desk, made, 'x'),
       y: directionOf(name, numbering, desk, made, 'y'),

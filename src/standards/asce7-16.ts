@@ -126,6 +126,15 @@ function onStated({ assume, given }: Desk, s1: Value): void {
   })
 }
 
+/** The procedure is not for every structure in the higher categories; 7-22 has no such table. */
+function procedure({ assume }: Desk, category: string): void {
+  if (category < 'D') return
+  assume({
+    text: 'The equivalent lateral force procedure may be used for this building.',
+    because: `design category ${category}; ${NAME} Table 12.6-1 limits it for structures that are irregular, high or of long period (unchecked)`,
+  })
+}
+
 const studyNeeded = ({ given }: Desk, site: string) =>
   diagnose(
     'error',
@@ -141,5 +150,6 @@ export const asce716 = asceProfile({
   numbering: { plateau: '12.8-2', cap: '12.8-3', longCap: '12.8-4', least: '12.8-5', leastNear: '12.8-6' },
   motion: { mapped, onStated },
   settings: asceSettings,
+  procedure,
   rules: asceRules(NAME),
 })
