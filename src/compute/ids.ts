@@ -44,7 +44,10 @@ export function levelValue(level: LevelWork, path: readonly string[]): Found {
       return areaValue(level, a, b)
     case 'lines':
     case 'points':
-      return from(level.mass(), mass => cellOf(mass[head], a, [b ?? '']) ?? momentOf(mass.parts, a, b))
+      return from(
+        level.mass(),
+        mass => cellOf(mass[head], a, [b ?? '']) ?? momentOf(mass.parts, `${level.name}.${head}.${a}.${b}`),
+      )
     case 'W':
       return rest.length === 0 ? from(level.mass(), ({ W }) => W) : undefined
     case 'I_p':
@@ -106,15 +109,33 @@ function areaValue(level: LevelWork, name: string | undefined, key: string | und
     const found = parts.find(part => part.name === name)
     return key === 'A' || key === 'x' || key === 'y' ? found?.[key] : key === 'I_p' ? found?.Ip : undefined
   })
-  return part ?? from(level.mass(), mass => cellOf(mass.areas, name, [key ?? '']) ?? momentOf(mass.parts, name, key))
+  return (
+    part ??
+    from(level.mass(), mass => {
+      const load = cellOf(mass.areas, name, ['w'])
+      return (
+        cellOf(mass.areas, name, [key ?? '']) ??
+        momentOf(mass.parts, `${level.name}.areas.${name}.${key}`) ??
+        partOfLoad(load, key)
+      )
+    })
+  )
 }
 
-const momentOf = (parts: Tabulation, row: string | undefined, key: string | undefined): Value | undefined =>
-  key === 'Wx' || key === 'Wy'
-    ? cellOf(parts, row, [key.replace('W', 'W_')])
-    : key === 'I'
-      ? cellOf(parts, row, ['I'])
-      : undefined
+/** What a load is worked from where part of it is variable. */
+function partOfLoad(load: Value | undefined, key: string | undefined): Value | undefined {
+  if (load?.origin.kind !== 'worked' || load.origin.span || !key) return undefined
+  return [...load.origin.step.inputs.values()].find(({ id }) => id.endsWith(`.${key}`))
+}
+
+/** A moment of one of the parts, by its whole id: an area and a line may have one name. */
+function momentOf(parts: Tabulation, id: string): Value | undefined {
+  for (const { idOf, cell } of ['W_x', 'W_y', 'I'].map(name => parts.column(name))) {
+    const at = parts.rows.findIndex((_, rowIdx) => idOf(rowIdx) === id)
+    if (at !== -1) return cell(at)
+  }
+  return undefined
+}
 
 function caseValue(level: LevelWork, what: 'T' | 'u' | 'v' | 'phi', name: string | undefined): Found {
   return from(level.distribution(), ({ cases }) => {

@@ -27,6 +27,19 @@ const lengthPrinter =
 export const topicMissing = (level: string, topic: string, at: Span): Diagnostic =>
   diagnose('error', `${topic}-missing`, at, `level ${level} has no ${topic}`, `Give them in a block ${topic} ${level}.`)
 
+export const forcesTwice = (level: string, at: Span): Diagnostic =>
+  diagnose(
+    'error',
+    'forces-and-seismic',
+    at,
+    `the forces of ${level} are stated here, and seismic works them too`,
+    'Keep the one or the other.',
+  )
+
+/** Values of the design and of that level would have one name. */
+export const levelCalledSeismic = (at: Span): Diagnostic =>
+  diagnose('error', 'name-taken', at, 'a level of the document is called seismic', 'Give the level another name.')
+
 export function wallOutside(
   { name, from, to, place }: Wall,
   { outline, areas }: Plan,

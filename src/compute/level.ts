@@ -9,9 +9,9 @@ import type { Span } from '../base/span.ts'
 import { NO_UNIT } from '../base/unit.ts'
 import type { Value } from '../base/value.ts'
 import { work } from '../base/work.ts'
-import { type Area, readAreas } from '../model/areas.ts'
+import { type Area, readAreas, type ShareByWord } from '../model/areas.ts'
 import type { Construction } from '../model/construction.ts'
-import { type Forces, readForces } from '../model/forces.ts'
+import { type CommonShare, type Forces, readForces } from '../model/forces.ts'
 import type { LevelGivens } from '../model/givens.ts'
 import type { Grid } from '../model/grid.ts'
 import { type LineLoad, type PointLoad, readLineLoads, readPointLoads } from '../model/loads.ts'
@@ -24,6 +24,7 @@ import { type Displacement, workDisplacement } from './displacement.ts'
 import { type Distribution, workDistribution } from './distribution.ts'
 import {
   driftNotWorked,
+  forcesTwice,
   loadsOutside,
   mixedStiffness,
   rigidAssumptions,
@@ -46,7 +47,13 @@ export interface Surroundings {
   readonly grid: () => Result<Grid>
   readonly construction: (name: string) => (() => Result<Construction>) | undefined
   readonly constructionNames: readonly string[]
-  readonly forceTables: readonly Block[]
+  readonly forceTables: () => readonly Block[]
+  /** Share of a variable load that counts as weight, by a word of the standard. */
+  readonly shareByWord: ShareByWord
+  /** Share of accidental eccentricity where none is stated. */
+  readonly commonShare: CommonShare
+  /** Forces of a level as its standard has them; absent where the document does not ask for them. */
+  readonly seismicForces: ((level: string) => Result<Forces>) | undefined
   /** Faults of blocks of a topic that found no level. */
   readonly strays: (topic: string) => readonly Diagnostic[]
   /** The levels above this one, the nearest first. */
@@ -122,7 +129,7 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     if (!parts.ok) return parts
     const { plan: drawn, lines: along, points: at } = parts.value
     loadsOutside([...along, ...at], drawn, scope.display).forEach(scope.warn)
-    return workMass(drawn, along, at, anchor, scope)
+    return workMass(drawn, along, at, anchor, around.shareByWord, scope)
   })
 
   const walls = once('walls', () => {
@@ -262,7 +269,12 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     return parts.ok ? good(workEccentricity(name, parts.value.mass, parts.value.rigidity, parts.value.display)) : parts
   })
 
-  const forces = once('force', () => readForces(givens.forces, around.forceTables, name, scope))
+  const forces = once('force', (): Result<Forces | undefined> => {
+    const stated = readForces(givens.forces, around.forceTables(), name, around.commonShare, scope)
+    if (!around.seismicForces || !stated.ok) return stated
+    const block = givens.forces[0] ?? around.forceTables()[0]
+    return stated.value && block ? bad([forcesTwice(name, block.info)]) : around.seismicForces(name)
+  })
 
   const acting = once('acting', (): Result<Acting> => {
     const parts = together({ forces: forces(), mass: mass(), plan: plan() })

@@ -6,17 +6,24 @@ import type { Span } from '../base/span.ts'
 import type { Value, Word } from '../base/value.ts'
 import { duplicates } from '../model/columns.ts'
 import { type Construction, readConstruction } from '../model/construction.ts'
+import { commonShare, type Forces, readShare } from '../model/forces.ts'
 import type { Choices } from '../model/front.ts'
 import { type Givens, type LiveGivens, liveGivens } from '../model/givens.ts'
 import { type Grid, readGrid } from '../model/grid.ts'
 import { type LevelLine, readLevels } from '../model/levels.ts'
 import type { Limit } from '../model/limits.ts'
 import type { Assumption, Scope } from '../model/scope.ts'
+import { readSeismic } from '../model/seismic.ts'
 import type { Text } from '../read/text.ts'
+import { profileFor, profileOf } from '../standards/catalogue.ts'
+import { commonSettings } from '../standards/profile.ts'
 import { equationLines } from './equation-lines.ts'
 import { constructionValue, levelIds, levelValue } from './ids.ts'
 import { type LevelWork, levelWork } from './level.ts'
-import { topicMissing } from './level-faults.ts'
+import { levelCalledSeismic, topicMissing } from './level-faults.ts'
+import { type Seismic, type WeighedLevel, workSeismic } from './seismic.ts'
+import { seismicIds, seismicLevelValue, seismicValue } from './seismic-ids.ts'
+import { shareByWord } from './shares.ts'
 import { type LoadedLevel, type Storeys, workStoreys } from './storeys.ts'
 
 /** A value that a cell works from others, and the place of the cell. */
@@ -32,6 +39,8 @@ export interface Worksheet {
   readonly levelLines: () => Result<readonly LevelLine[]>
   /** Forces and storey shears of every level. */
   readonly storeys: () => Result<Storeys>
+  /** Present where the document has a block `seismic`. */
+  readonly seismic?: () => Result<Seismic>
   readonly constructions: ReadonlyMap<string, () => Result<Construction>>
   /** The value of each line of the equation blocks, by its place. */
   readonly equation: (line: Text) => Result<Value>
@@ -52,7 +61,7 @@ export interface Worksheet {
   readonly replace: (next: Givens) => boolean
 }
 
-export function worksheet(first: Givens, { system, assumptions: chosen }: Choices): Worksheet {
+export function worksheet(first: Givens, { system, standard, assumptions: chosen }: Choices): Worksheet {
   const ledger = new Ledger()
   const givens = liveGivens(first, ledger)
   const [warned, assumed, cellsStated, cellsRead] = [
@@ -65,7 +74,7 @@ export function worksheet(first: Givens, { system, assumptions: chosen }: Choice
     ledger,
     display: { system, relative: false },
     lookup: id => lookup(id),
-    ids: () => [...lines.names(), ...levels.flatMap(levelIds)],
+    ids: () => [...lines.names(), ...levels.flatMap(levelIds), ...(seismic ? seismicIds : [])],
     warn: fault => ledger.tell(warned, fault),
     assume: assumption => ledger.tell(assumed, assumption),
     stated: (value, at) => ledger.tell(cellsStated, { value, at }),
@@ -83,13 +92,50 @@ export function worksheet(first: Givens, { system, assumptions: chosen }: Choice
     'construction',
   )
 
+  const accidental = standard && profileOf(standard.text)?.rules.accidental
+  const share = accidental ? { share: accidental.value, clause: accidental.clause } : commonShare
+
+  const [seismicBlock] = first.seismic
+  const seismic = seismicBlock && ledger.once('seismic', seismicBlock.info, () => workedSeismic(seismicBlock.info))
+
+  function workedSeismic(info: Span): Result<Seismic> {
+    if (levels.some(({ name }) => name === 'seismic')) return bad([levelCalledSeismic(info)])
+    const profile = profileFor(standard, info)
+    if (!profile.ok) return profile
+    const given = readSeismic(givens.seismic, [...profile.value.settings, ...commonSettings], scope)
+    const lines = levelLines()
+    const weighed = lines.ok ? all(lines.value.flatMap(weighedLevel)) : lines
+    if (!given.ok || !weighed.ok)
+      return bad([...(given.ok ? [] : given.because), ...(weighed.ok ? [] : weighed.because)])
+    return workSeismic(profile.value, given.value, weighed.value, scope)
+  }
+
+  function weighedLevel({ name, elevation, span }: LevelLine): readonly Result<WeighedLevel>[] {
+    const level = levels.find(other => other.name === name)
+    if (!level) return []
+    const nothing = level.givens.areas.length === 0 && elevation && givens.strays('areas').length === 0
+    const mass = nothing ? bad([topicMissing(name, 'areas', span)]) : level.mass()
+    return [mass.ok ? good({ level: name, elevation, W: mass.value.W }) : mass]
+  }
+
+  function seismicForces(level: string): Result<Forces> {
+    const made = seismic?.() ?? bad([])
+    if (!made.ok) return made
+    const [x, y] = [made.value.force(level, 'x'), made.value.force(level, 'y')]
+    const off = readShare(made.value.given.text('accidental'), level, share, scope)
+    return off.ok ? good({ ...(x ? { x } : {}), ...(y ? { y } : {}), accidental: off.value }) : off
+  }
+
   const levels: readonly LevelWork[] = givens.levels.map(level =>
     levelWork(level, {
       scope,
       grid,
       construction: name => constructions.get(name),
       constructionNames: [...constructions.keys()],
-      forceTables: givens.forceTables,
+      forceTables: () => givens.forceTables,
+      commonShare: share,
+      shareByWord: shareByWord(standard, scope.display),
+      seismicForces: seismic && seismicForces,
       strays: givens.strays,
       above: () => {
         const lines = levelLines()
@@ -133,9 +179,10 @@ export function worksheet(first: Givens, { system, assumptions: chosen }: Choice
     const [first = '', second = ''] = path
     if (level && first === 'elevation' && path.length === 1) return elevationOf(head)
     if (level) {
-      const found = levelValue(level, path)
+      const found = levelValue(level, path) ?? (seismic && seismicLevelValue(seismic, head, path))
       if (found) return found
     }
+    if (head === 'seismic' && seismic) return seismicValue(seismic, id)
     if (head === 'grid' && path.length === 1) return gridValue(first)
     if (head === 'constructions' && path.length === 2) {
       const construction = constructions.get(first)
@@ -165,6 +212,7 @@ export function worksheet(first: Givens, { system, assumptions: chosen }: Choice
     levels,
     levelLines,
     storeys,
+    ...(seismic ? { seismic } : {}),
     constructions,
     equation: line => lines.equation(line),
     limit: line => lines.limit(line),
@@ -188,6 +236,7 @@ export function worksheet(first: Givens, { system, assumptions: chosen }: Choice
     return [
       grid,
       levelLines,
+      ...(seismic ? [seismic] : []),
       ...constructions.values(),
       ...levels.flatMap(({ givens, areas, mass, walls, openings, springs, forces }) => [
         ...(givens.areas.length > 0 ? [areas, mass] : []),

@@ -21,7 +21,8 @@ export function explainCriteria(sheet: Worksheet, context: Context, account: Acc
   const criteria = [
     ...(basis.standard === '' ? [] : [{ name: 'Standard', value: verbatim(basis.standard), spans: [] }]),
     { name: 'Results shown in', value: `${basis.system} units`, spans: [] },
-    ...sheet.levels.flatMap(level => [...loadsOf(level, context), ...forcesOf(level, context)]),
+    ...sheet.levels.flatMap(level => [...loadsOf(level, context), ...(sheet.seismic ? [] : forcesOf(level, context))]),
+    ...seismicOf(sheet),
     ...materialsOf(sheet, context),
   ]
   return {
@@ -97,6 +98,15 @@ function forcesOf(level: LevelWork, { language }: Context): readonly Criterion[]
   ]
   const stated = [x, y, accidental].flatMap(value => (value ? spansOf(value) : []))
   return [{ name: `Force at ${verbatim(level.name)}`, value: parts.join('; '), spans: stated }]
+}
+
+/** What the forces are worked from, in place of the forces themselves. */
+function seismicOf({ seismic }: Worksheet): readonly Criterion[] {
+  const made = seismic?.()
+  if (!made?.ok) return []
+  const { settings } = made.value.given
+  const value = settings.map(({ name, value }) => verbatim(`${name.text} ${value.text}`)).join('; ')
+  return [{ name: 'Seismic', value, spans: settings.map(({ value }) => value.span) }]
 }
 
 function materialsOf({ constructions }: Worksheet, context: Context): readonly Criterion[] {

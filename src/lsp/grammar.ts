@@ -4,10 +4,11 @@
  */
 import type { Kind } from '../base/kind.ts'
 import { casesOf } from '../compute/cases.ts'
-import { type AnyWant, details, type WHOLE } from '../explain/request.ts'
+import { type AnyWant, details, type WHOLE, type WHOLE_SEISMIC } from '../explain/request.ts'
 import { endsWords, materials } from '../model/construction.ts'
 import { levelWalls } from '../model/levels.ts'
 import type { Topic } from '../read/topics.ts'
+import { seismicFields } from './seismic-fields.ts'
 
 /** What a cell, or the text behind a setting, is. */
 export type Holds =
@@ -76,6 +77,15 @@ export const grammar: Readonly<Record<Topic, TopicFields>> = {
       load: {
         says: 'Weight per area; or the word opening, which takes away whatever plan it covers.',
         holds: { kind: 'value', of: 'areaLoad', id: 'LEVEL.areas.NAME.w', words: ['opening'] },
+      },
+      variable: value(
+        'areaLoad',
+        'LEVEL.areas.NAME.variable',
+        'Load per area that counts as weight in part: snow, storage, live load.',
+      ),
+      share: {
+        says: 'How much of the variable load counts as weight: a percentage, or a word of the standard.',
+        holds: { kind: 'value', of: 'share', id: 'LEVEL.areas.NAME.share', words: ['snow', 'storage', 'live'] },
       },
       note,
     },
@@ -171,6 +181,11 @@ export const grammar: Readonly<Record<Topic, TopicFields>> = {
       ),
     },
   },
+  seismic: {
+    says: 'Site, risk and system, from which the forces of every level follow by the standard in the front matter.',
+    columns: none,
+    settings: seismicFields(),
+  },
   equations: {
     says: 'Your own formulas, each printed in letters, with values put in, and with its result.',
     columns: none,
@@ -198,7 +213,7 @@ const own = (fields: Fields, name: string): Field | undefined =>
   Object.hasOwn(fields, name) ? fields[name] : undefined
 
 /** What each part of the calculation is that a working may ask for. */
-export const wantSays: Readonly<Record<AnyWant | typeof WHOLE, string>> = {
+export const wantSays: Readonly<Record<AnyWant | typeof WHOLE | typeof WHOLE_SEISMIC, string>> = {
   'whole calculation': 'all parts of one level in order',
   plan: 'sketch of the level to scale',
   'centre of mass': 'weight, and where it acts',
@@ -214,6 +229,12 @@ export const wantSays: Readonly<Record<AnyWant | typeof WHOLE, string>> = {
   'displaced shape': 'sketch of the level as it moves',
   equilibrium: 'what acts against what resists, in each case',
   'storey shears': 'forces and shears of all levels',
+  'seismic design': 'from ground motion to the forces of levels and diaphragms, in order',
+  'design spectrum': 'ground motion, importance and design category',
+  'base shear': 'period, coefficient and base shear of each direction',
+  'storey forces': 'the base shear shared over the levels',
+  'diaphragm forces': 'what the diaphragm of each level is designed for',
+  standard: 'rules of the standard that are known here, with their clauses',
   criteria: 'what the calculation starts from',
   checks: 'every check, the largest ratio first',
   assumptions: 'what was taken because the document does not say',

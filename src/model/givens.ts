@@ -22,6 +22,7 @@ export interface Givens {
   readonly levelTable: readonly Block[]
   readonly constructions: readonly Block[]
   readonly equations: readonly Block[]
+  readonly seismic: readonly Block[]
   /** `forces` that name no level and hold a table of them. */
   readonly forceTables: readonly Block[]
   readonly faults: readonly Diagnostic[]
@@ -68,6 +69,7 @@ export function gather(blocks: readonly Block[]): Givens {
     levelTable,
     constructions: of('construction'),
     equations: of('equations'),
+    seismic: of('seismic'),
     forceTables: of('forces').filter(isForceTable),
     faults,
     strays: topic => strays.get(topic) ?? [],
@@ -123,7 +125,7 @@ export function liveGivens(first: Givens, ledger: Ledger): LiveGivens {
   return withParts(others, shared)
 }
 
-const sharedParts = ['grid', 'levelTable', 'forceTables'] as const
+const sharedParts = ['grid', 'levelTable', 'forceTables', 'seismic'] as const
 const levelParts = ['areas', 'lineLoads', 'pointLoads', 'walls', 'openings', 'forces'] as const
 
 /** The same object with each part as a property that reads its cell. */

@@ -15,6 +15,7 @@ import { readChoices } from '../../src/model/front.ts'
 import { type Host, publish } from '../../src/publish.ts'
 import { noFrontMatter } from '../../src/read/front.ts'
 import { laterTopics, topics } from '../../src/read/topics.ts'
+import { profiles } from '../../src/standards/catalogue.ts'
 
 const root = fileURLToPath(new URL('../..', import.meta.url))
 const read = (path: string): string => readFileSync(join(root, path), 'utf8')
@@ -35,9 +36,9 @@ const inCode = new Set([...manual.matchAll(/`([^`\n]+)`/g)].map(([, code]) => co
 const untold = (names: readonly string[]): readonly string[] => names.filter(name => !inCode.has(name))
 
 describe('samples', () => {
-  test('there are the three samples and the seven chapters', () => {
+  test('there are the samples and the seven chapters', () => {
     expect(samples.map(path => relative('samples', path))).toEqual(
-      expect.arrayContaining(['boatyard.md', 'observatory.md', 'starter.md']),
+      expect.arrayContaining(['boatyard.md', 'millrace.md', 'observatory.md', 'starter.md']),
     )
     expect(chapters).toHaveLength(7)
   })
@@ -107,6 +108,16 @@ describe('the manual tells of', () => {
     )
     expect(names.length).toBeGreaterThan(20)
     expect(untold([...new Set(names)])).toEqual([])
+  })
+
+  test('every setting of every standard', () => {
+    const settings = profiles.flatMap(({ settings }) => settings.map(({ name }) => name))
+    expect(settings.length).toBeGreaterThan(60)
+    expect(untold([...new Set(settings)])).toEqual([])
+    const told = [...chapter('03-building').matchAll(/^\*\*(.+?)\*\*/gm)].flatMap(([, names]) =>
+      (names ?? '').split(', '),
+    )
+    expect(profiles.map(({ name }) => name).filter(name => !told.includes(name))).toEqual([])
   })
 
   test('every rule of a message', () => {
@@ -196,7 +207,7 @@ describe('value ids', () => {
     expect(unresolved(['roof.weight', 'roof.W'], home)).toEqual(['roof.weight'])
   })
 
-  test.each(['samples/boatyard.md', 'samples/observatory.md', 'samples/manual/03-building.md'])(
+  test.each(['samples/boatyard.md', 'samples/observatory.md', 'samples/millrace.md', 'samples/manual/03-building.md'])(
     'every value in the JSON of %s is told of',
     path => {
       const known = [...patterns, ...idsOfTable(jsonOnly)].map(patternOf)
@@ -209,6 +220,7 @@ describe('value ids', () => {
     const ids = [
       'samples/boatyard.md',
       'samples/observatory.md',
+      'samples/millrace.md',
       'samples/manual/02-expressions.md',
       'samples/manual/03-building.md',
     ].flatMap(path => Object.keys(jsonOf(path).values))
@@ -266,6 +278,7 @@ const homes: readonly Home[] = [
   },
   { text: chapter('04-workings'), names: { LEVEL: 'roof', AREA: 'Porch', WALL: 'P', CASE: 'EY', NAME: 'CMU8' } },
   { text: chapter('03-building'), names: { LEVEL: 'loft' } },
+  { text: read('samples/millrace.md'), names: { LEVEL: 'roof', AREA: 'West', WALL: 'A1', CASE: 'EX' } },
 ]
 
 const filledIn = (pattern: string, names: Names): string => pattern.replace(/[A-Z]{4,}/g, word => names[word] ?? word)
