@@ -18,7 +18,7 @@ const shearPerLength = formula({
 })
 
 /** A case in a name that the formula reader takes: EX+ is EXp. */
-const plainCase = (name: string): string => name.replace('+', 'p').replace('-', 'm')
+const plainCase = (name: string): string => name.replaceAll('+', 'p').replaceAll('-', 'm')
 
 const envelopes = new Map<string, Formula>()
 

@@ -70,7 +70,11 @@ export function levelValue(level: LevelWork, path: readonly string[]): Found {
     case 'accidental':
       return rest.length === 0 ? from(level.forces(), forces => forces?.accidental) : undefined
     case 'storey':
-      return from(level.distribution(), ({ storey }) => axisOf(storey, a))
+      return from(level.distribution(), ({ loads, cases }) =>
+        b === undefined
+          ? axisOf(loads.find(({ loading }) => loading === 'seismic')?.storey ?? {}, a)
+          : axisOf(cases.find(each => each.case.name === b)?.shear ?? {}, a),
+      )
     case 'wall':
       return wallValue(level, a ?? '', b, c, d)
     case 'T':

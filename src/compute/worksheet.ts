@@ -82,6 +82,8 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
       constructionNames: [...constructions.keys()],
       forceTables: givens.forceTables,
       strays: givens.strays,
+      wind: () => good(undefined),
+      forcesStated: () => true,
       above: () => {
         const lines = levelLines()
         if (!lines.ok) return lines
@@ -105,7 +107,7 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
         return [good({ level: name, ...(elevation ? { elevation } : {}), force: forces.value })]
       }),
     )
-    return loaded.ok ? good(workStoreys(loaded.value, scope.display)) : loaded
+    return loaded.ok ? good(workStoreys('seismic', loaded.value, scope.display)) : loaded
   })
 
   /** A block of forces that found no level is the cause of what this one lacks. */

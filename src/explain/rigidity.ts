@@ -6,8 +6,9 @@ import type { Result } from '../base/ledger.ts'
 import { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
 import type { LevelWork } from '../compute/level.ts'
+import type { Movable } from '../compute/loading.ts'
 import type { Rigidity, Spring } from '../compute/rigidity.ts'
-import type { Acting, Eccentricity } from '../compute/storey.ts'
+import type { Eccentricity } from '../compute/storey.ts'
 import { k, L } from '../compute/symbols.ts'
 import type { Wall } from '../model/walls.ts'
 import type { Context } from './context.ts'
@@ -162,7 +163,7 @@ const sumsOf = (sums: Readonly<Record<string, Value | undefined>>): Readonly<Rec
 
 export function explainEccentricity(
   { x, y }: Eccentricity,
-  acting: Acting | undefined,
+  acting: Movable | undefined,
   context: Context,
 ): readonly Piece[] {
   return [x, y, ...(acting ? [acting.arm.x, acting.arm.y] : [])].map(value => explainValue(value, context))

@@ -1,7 +1,8 @@
 /** Storey forces and shears of the building. */
 import { verbatim } from '../base/language.ts'
 import type { LevelWork } from '../compute/level.ts'
-import { elevationOf, lettersOf, type Storeys } from '../compute/storeys.ts'
+import { lettersOf } from '../compute/loading.ts'
+import { elevationOf, type Storeys } from '../compute/storeys.ts'
 import type { Worksheet } from '../compute/worksheet.ts'
 import type { Context } from './context.ts'
 import { explainValue } from './equation.ts'
@@ -19,10 +20,10 @@ export function explainStoreys(
   const head: readonly Piece[] = whole ? [{ kind: 'heading', id: '', text: context.words('Storey shears') }] : []
   const made = sheet.storeys()
   if (!made.ok) return [...head, { kind: 'fault', diagnostics: made.because }]
-  const { axes, table } = made.value
+  const { loading, axes, table } = made.value
   const named = level ? table.rows.indexOf(level.name) : -1
   const at = named === -1 ? table.rows.length - 1 : named
-  const steps = axes.map(axis => explainValue(table.column(lettersOf[axis].V.name).cell(at), context))
+  const steps = axes.map(axis => explainValue(table.column(lettersOf[loading].V[axis].name).cell(at), context))
   if (detail === 'result') return [...head, ...steps]
   const rows = tableOf(made.value, context)
   if (detail === 'table') return [...head, rows]
@@ -40,11 +41,10 @@ export function explainStoreys(
 }
 
 /** One row a level from the top down, the forces summed below: their sum is the shear of the lowest storey. */
-function tableOf({ axes, table, stated }: Storeys, context: Context): Piece {
+function tableOf({ loading, axes, table, stated }: Storeys, context: Context): Piece {
+  const { F, V } = lettersOf[loading]
   const last = table.rows.length - 1
-  const sums = Object.fromEntries(
-    axes.map(axis => [lettersOf[axis].F.name, table.column(lettersOf[axis].V.name).cell(last)]),
-  )
+  const sums = Object.fromEntries(axes.map(axis => [F[axis].name, table.column(V[axis].name).cell(last)]))
   const lowest = verbatim(table.rows[last] ?? '')
   return explainTable(
     table,
@@ -55,10 +55,7 @@ function tableOf({ axes, table, stated }: Storeys, context: Context): Piece {
           ? `Force at ${lowest} and shear of the storey below it.`
           : `Force at each level, and shear of the storey below it: the sum of the forces at that level and above. The sum of all is the shear of the storey below ${lowest}.`,
       rowHead: 'Level',
-      columns: [
-        ...(stated ? [elevationOf.name] : []),
-        ...axes.flatMap(axis => [lettersOf[axis].F.name, lettersOf[axis].V.name]),
-      ],
+      columns: [...(stated ? [elevationOf.name] : []), ...axes.flatMap(axis => [F[axis].name, V[axis].name])],
       ...(table.rows.length > 1 ? { sums } : {}),
     },
     context,
