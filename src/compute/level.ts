@@ -42,6 +42,7 @@ import { type Rigidity, type Spring, workRigidity } from './rigidity.ts'
 import { type Moduli, type WallLine, workLine, workModuli, workStiffness } from './stiffness.ts'
 import { accidentalArm, type Eccentricity, workEccentricity } from './storey.ts'
 import { type Wind, windLoads } from './wind.ts'
+import { levelWindValue } from './wind-building.ts'
 
 /** What a level needs from the rest of the building. */
 export interface Surroundings {
@@ -81,6 +82,8 @@ export interface LevelWork {
   readonly eccentricity: () => Result<Eccentricity>
   readonly forces: () => Result<Forces | undefined>
   readonly acting: () => Result<Movable>
+  /** A value of the wind on the level, by the rest of its id. */
+  readonly windValue: (path: readonly string[]) => Result<Value> | undefined
   /** True where any force acts on the level. */
   readonly isLoaded: () => boolean
   readonly distribution: () => Result<Distribution>
@@ -362,6 +365,7 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     eccentricity,
     forces,
     acting,
+    windValue: path => levelWindValue(around.wind, name, path),
     isLoaded,
     distribution,
     displacements,

@@ -14,12 +14,15 @@ import { type Grid, readGrid } from '../model/grid.ts'
 import { type LevelLine, readLevels } from '../model/levels.ts'
 import { type Limit, limitLines, workLimit } from '../model/limits.ts'
 import type { Assumption, Scope } from '../model/scope.ts'
+import { readWind } from '../model/wind.ts'
 import type { Block } from '../read/block.ts'
 import type { Text } from '../read/text.ts'
 import { constructionValue, levelIds, levelValue } from './ids.ts'
 import { type LevelWork, levelWork } from './level.ts'
 import { topicMissing } from './level-faults.ts'
 import { type LoadedLevel, type Storeys, workStoreys } from './storeys.ts'
+import type { Wind } from './wind.ts'
+import { windStoreys, windValue, workWindOn } from './wind-building.ts'
 
 /** A value that a cell works from others, and the place of the cell. */
 export interface StatedCell {
@@ -32,7 +35,9 @@ export interface Worksheet {
   readonly grid: () => Result<Grid>
   readonly levels: readonly LevelWork[]
   readonly levelLines: () => Result<readonly LevelLine[]>
-  /** Forces and storey shears of every level. */
+  /** Wind on the building; a value of undefined where the document has none. */
+  readonly wind: () => Result<Wind | undefined>
+  /** Forces and storey shears of every level: those stated, or those of wind where there are no others. */
   readonly storeys: () => Result<Storeys>
   readonly constructions: ReadonlyMap<string, () => Result<Construction>>
   /** The value of each line of the equation blocks, by its place. */
@@ -48,7 +53,7 @@ export interface Worksheet {
   readonly readAll: () => readonly Diagnostic[]
 }
 
-export function worksheet(givens: Givens, { system, assumptions: chosen }: Choices): Worksheet {
+export function worksheet(givens: Givens, { system, assumptions: chosen, titleBlock }: Choices): Worksheet {
   const ledger = new Ledger()
   const warnings: Diagnostic[] = []
   const statedCells = new Map<string, StatedCell>()
@@ -82,8 +87,8 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
       constructionNames: [...constructions.keys()],
       forceTables: givens.forceTables,
       strays: givens.strays,
-      wind: () => good(undefined),
-      forcesStated: () => true,
+      wind: () => wind(),
+      forcesStated: () => forcesStated(),
       above: () => {
         const lines = levelLines()
         if (!lines.ok) return lines
@@ -94,9 +99,27 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
     }),
   )
 
+  /** True where any level has forces, or what states them has faults. */
+  const forcesStated = (): boolean =>
+    levels.some(({ forces }) => {
+      const stated = forces()
+      return !stated.ok || stated.value !== undefined
+    })
+
+  const windGiven = ledger.once('wind', givens.wind[0]?.info ?? nowhere, () =>
+    readWind(givens.wind, { standard: titleBlock.standard, levels: givens.levels.map(({ name }) => name) }, scope),
+  )
+  const wind = ledger.once('wind.force', givens.wind[0]?.info ?? nowhere, (): Result<Wind | undefined> => {
+    const given = windGiven()
+    if (!given.ok) return given
+    return given.value ? workWindOn(given.value, levels, levelLines(), scope) : good(undefined)
+  })
+
   const storeys = ledger.once('storeys', levels[0]?.anchor ?? nowhere, (): Result<Storeys> => {
     const stated = levelLines()
     if (!stated.ok) return stated
+    const blown = wind()
+    if (blown.ok && blown.value && !forcesStated()) return good(windStoreys(blown.value, 'wind', scope.display))
     const loaded = all(
       stated.value.flatMap(({ name, elevation }): readonly Result<LoadedLevel>[] => {
         const level = levels.find(other => other.name === name)
@@ -176,6 +199,7 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
       const found = levelValue(level, path)
       if (found) return found
     }
+    if (head === 'wind') return windValue(wind, windGiven, path)
     if (head === 'grid' && path.length === 1) return gridValue(first)
     if (head === 'constructions' && path.length === 2) {
       const construction = constructions.get(first)
@@ -204,6 +228,7 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
     grid,
     levels,
     levelLines,
+    wind,
     storeys,
     constructions,
     equationLines: [...lines.keys()],
@@ -232,6 +257,7 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
     return [
       grid,
       levelLines,
+      wind,
       ...constructions.values(),
       ...levels.flatMap(({ givens, areas, mass, walls, openings, springs, forces }) => [
         ...(givens.areas.length > 0 ? [areas, mass] : []),

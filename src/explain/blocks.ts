@@ -16,8 +16,7 @@ import { explainQuote } from './quote.ts'
 import { explainRegister } from './registers.ts'
 import { type DocumentWant, isBuildingWant, isDocumentWant, type Request, readRequest } from './request.ts'
 import type { Piece, Quote, Register } from './sheet.ts'
-import { explainStoreys } from './storeys.ts'
-import { explainWant } from './workings.ts'
+import { explainBuilding, explainWant } from './workings.ts'
 
 export interface Explained {
   /** The pieces of every block. */
@@ -57,7 +56,7 @@ function workingPieces(block: Block, request: Request, sheet: Worksheet, context
   return request.wants.flatMap((want): readonly Piece[] => {
     if (isDocumentWant(want)) return explainRegister(want, sheet, context)
     if (isBuildingWant(want) && (level || !block.about))
-      return explainStoreys(sheet, block.about && level, request, context)
+      return explainBuilding(want, sheet, block.about && level, request, context)
     return level && !isBuildingWant(want)
       ? explainWant(want, level, request, context)
       : [{ kind: 'fault', diagnostics: [noLevel(block, names)] }]

@@ -7,12 +7,13 @@ import type { Displacement } from '../compute/displacement.ts'
 import type { CaseResult, Distribution } from '../compute/distribution.ts'
 import type { LevelWork } from '../compute/level.ts'
 import { pierShearsOf } from '../compute/pier-shears.ts'
+import type { Worksheet } from '../compute/worksheet.ts'
 import { casesShown, wallsShown } from './chosen.ts'
 import type { Context } from './context.ts'
 import { displacedFigure, elevations, figure, flatAll, plan } from './figures.ts'
 import { explainMass, explainPolarMoment } from './mass.ts'
 import { explainPierShears } from './piers.ts'
-import type { Request, Want } from './request.ts'
+import type { BuildingWant, Request, Want } from './request.ts'
 import { explainEccentricity, explainRigidity, explainStiffness } from './rigidity.ts'
 import {
   equilibriumCheck,
@@ -23,6 +24,8 @@ import {
   explainWallShears,
 } from './shears.ts'
 import type { Piece } from './sheet.ts'
+import { explainStoreys } from './storeys.ts'
+import { explainWindForces, explainWindPressures } from './wind.ts'
 
 const headings: Readonly<Record<Want, string>> = {
   plan: 'Plan',
@@ -48,6 +51,24 @@ export function explainWant(want: Want, level: LevelWork, request: Request, cont
   return request.whole && pieces.length > 0
     ? [{ kind: 'heading', id: '', text: context.words(headings[want]) }, ...pieces]
     : pieces
+}
+
+/** The pieces of what tells of all levels; `level` is the one to work in full, where one is named. */
+export function explainBuilding(
+  want: BuildingWant,
+  sheet: Worksheet,
+  level: LevelWork | undefined,
+  request: Request,
+  context: Context,
+): readonly Piece[] {
+  switch (want) {
+    case 'storey shears':
+      return explainStoreys(sheet, level, request, context)
+    case 'wind pressures':
+      return explainWindPressures(sheet, level, request, context)
+    case 'wind forces':
+      return explainWindForces(sheet, level, request, context)
+  }
 }
 
 function answer(want: Want, level: LevelWork, request: Request, context: Context): Result<readonly Piece[]> {

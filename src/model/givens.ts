@@ -20,6 +20,7 @@ export interface Givens {
   readonly grid: readonly Block[]
   readonly levelTable: readonly Block[]
   readonly constructions: readonly Block[]
+  readonly wind: readonly Block[]
   readonly equations: readonly Block[]
   /** `forces` that name no level and hold a table of them. */
   readonly forceTables: readonly Block[]
@@ -65,6 +66,7 @@ export function gather(blocks: readonly Block[]): Givens {
     grid: of('grid'),
     levelTable,
     constructions: of('construction'),
+    wind: of('wind'),
     equations: of('equations'),
     forceTables: of('forces').filter(isForceTable),
     faults,

@@ -1,0 +1,215 @@
+/**
+ * External pressure coefficients of ASCE 7 Fig. 27.3-1 for walls and for the slopes of a gable roof, with the
+ * interpolation that the figure asks for as a step of its own.
+ */
+import { type Formula, formula, type Sym, sym } from '../base/formula.ts'
+import type { Display } from '../base/kind.ts'
+import type { Value } from '../base/value.ts'
+import { work } from '../base/work.ts'
+import type { Edition } from '../model/wind-directional.ts'
+
+/** A coefficient against what it depends on, rising. */
+type Curve = readonly (readonly [at: number, value: number])[]
+
+// Fig. 27.4-1 of ASCE 7-10, p. 263, read from a scan; that Fig. 27.3-1 of 7-16 and 7-22 has the same is from memory.
+const leewardWall: Curve = [
+  [1, -0.5],
+  [2, -0.3],
+  [4, -0.2],
+]
+
+/** Coefficients over the slope in degrees, for the ratios h/L of the figure. From 45 deg on the windward one is 0.01 θ at 60 deg. */
+interface Slopes {
+  readonly ratio: number
+  /** The value that pushes along the wind: the upper of the two listed. */
+  readonly windward: Curve
+  readonly leeward: Curve
+}
+
+const roofs: readonly [Slopes, Slopes, Slopes] = [
+  {
+    ratio: 0.25,
+    windward: [
+      [10, -0.18],
+      [15, 0],
+      [20, 0.2],
+      [25, 0.3],
+      [30, 0.3],
+      [35, 0.4],
+      [45, 0.4],
+      [60, 0.6],
+    ],
+    leeward: [
+      [10, -0.3],
+      [15, -0.5],
+      [20, -0.6],
+    ],
+  },
+  {
+    ratio: 0.5,
+    windward: [
+      [10, -0.18],
+      [15, -0.18],
+      [20, 0],
+      [25, 0.2],
+      [30, 0.2],
+      [35, 0.3],
+      [45, 0.4],
+      [60, 0.6],
+    ],
+    leeward: [
+      [10, -0.5],
+      [15, -0.5],
+      [20, -0.6],
+    ],
+  },
+  {
+    ratio: 1,
+    windward: [
+      [10, -0.18],
+      [15, -0.18],
+      [20, -0.18],
+      [25, 0],
+      [30, 0.2],
+      [35, 0.2],
+      [45, 0.3],
+      [60, 0.6],
+    ],
+    leeward: [
+      [10, -0.7],
+      [15, -0.6],
+      [20, -0.6],
+    ],
+  },
+]
+
+export const figure = (edition: Edition): string => `ASCE ${edition} Fig. 27.3-1`
+const MARK = '(as in ASCE 7-10 Fig. 27.4-1; this edition unchecked)'
+
+export const Cw = sym('C_pw', 'C_{p,w}', 'number')
+export const Cl = sym('C_pl', 'C_{p,l}', 'number')
+export const ratio = sym('r', 'L/B', 'number')
+export const slenderness = sym('s', 'h/L', 'number')
+const theta = sym('theta', '\\theta', 'angle')
+
+const rules = new Map<string, Formula>()
+
+function rule(key: string, make: () => Formula): Formula {
+  const known = rules.get(key) ?? make()
+  rules.set(key, known)
+  return known
+}
+
+export function windwardWall(edition: Edition, display: Display): Value {
+  const source = `${figure(edition)}, windward wall ${MARK}`
+  return work(
+    'wind.C_pw',
+    rule(source, () => formula({ gives: Cw, body: '0.8', of: [], source })),
+    {},
+    display,
+  )
+}
+
+/** @param r L/B: the plan along the wind over the plan across it */
+export function leewardWallOf(id: string, edition: Edition, r: Value, display: Display): Value {
+  const source = `${figure(edition)}, leeward wall ${MARK}`
+  return along(id, Cl, leewardWall, { sym: ratio, value: r, number: r.si, written: 'r' }, source, display)
+}
+
+/**
+ * The coefficients of the slopes of a gable with wind across the ridge, and the interpolations that lead to them.
+ * @param angle from 10 deg on
+ * @param s h/L
+ */
+export function gableSlopes(
+  edition: Edition,
+  angle: Value,
+  s: Value,
+  id: string,
+  display: Display,
+): { readonly windward: Value; readonly leeward: Value; readonly between: readonly Value[] } {
+  const [low, high] = nearest(s.si)
+  const between: Value[] = []
+  const of = (side: 'windward' | 'leeward', gives: Sym): Value => {
+    const name = `${id}.${gives.name}`
+    const source = (ratio: number) =>
+      `${figure(edition)}, ${side} slope, h/L ${ratio === 0.25 ? 'up to 0.25' : ratio === 1 ? 'from 1.0 on' : ratio} ${MARK}`
+    const degrees = { sym: theta, value: angle, number: (angle.si * 180) / Math.PI, written: 'theta/(1 deg)' }
+    const at = ({ ratio, ...curves }: Slopes, key: string, letter: Sym) =>
+      along(key, letter, curves[side], degrees, source(ratio), display)
+    if (low === high) return at(low, name, gives)
+    const letters = [
+      sym(`${gives.name}1`, `${gives.tex.slice(0, -1)},1}`, 'number'),
+      sym(`${gives.name}2`, `${gives.tex.slice(0, -1)},2}`, 'number'),
+    ] as const
+    const ends = [at(low, `${name}.1`, letters[0]), at(high, `${name}.2`, letters[1])] as const
+    between.push(...ends)
+    const body = `${letters[0].name} + (${letters[1].name} - ${letters[0].name})*(s - ${low.ratio})/${high.ratio - low.ratio}`
+    const mixed = rule(`${edition} ${side} ${body}`, () =>
+      formula({
+        gives,
+        body,
+        of: [...letters, slenderness],
+        source: `${figure(edition)}, interpolated between h/L of ${low.ratio} and ${high.ratio}`,
+      }),
+    )
+    return work(name, mixed, { [letters[0].name]: ends[0], [letters[1].name]: ends[1], s }, display)
+  }
+  return { windward: of('windward', Cw), leeward: of('leeward', Cl), between }
+}
+
+/** The listed ratios on either side of one; one and the same where it is listed or lies beyond them. */
+function nearest(s: number): readonly [Slopes, Slopes] {
+  const [flat, middle, tall] = roofs
+  if (s <= flat.ratio) return [flat, flat]
+  if (s >= tall.ratio) return [tall, tall]
+  if (s === middle.ratio) return [middle, middle]
+  return s < middle.ratio ? [flat, middle] : [middle, tall]
+}
+
+interface Against {
+  readonly sym: Sym
+  readonly value: Value
+  /** In the unit of the curve, and how a formula has it there. */
+  readonly number: number
+  readonly written: string
+}
+
+/** The value of a curve: listed, the end where it lies beyond, or on the straight line between two. */
+function along(
+  id: string,
+  gives: Sym,
+  curve: Curve,
+  { sym: of, value, number, written }: Against,
+  source: string,
+  display: Display,
+): Value {
+  const [first] = curve
+  const last = curve.at(-1)
+  if (!first || !last) throw new Error('a curve has points')
+  const listed =
+    number <= first[0] ? first : number >= last[0] ? last : curve.find(([at]) => Math.abs(at - number) < 1e-9)
+  const next = curve.findIndex(([at]) => at > number)
+  const [from, to] = [curve[next - 1], curve[next]]
+  if (listed || !from || !to || from[1] === to[1]) {
+    const constant = listed ?? from ?? last
+    const where = `${source}`
+    return work(
+      id,
+      rule(`${gives.name} ${where} ${constant[1]}`, () =>
+        formula({ gives, body: `${constant[1]}`, of: [], source: where }),
+      ),
+      {},
+      display,
+    )
+  }
+  const rise = Number((to[1] - from[1]).toFixed(6))
+  const body = `${from[1]} ${rise < 0 ? '-' : '+'} ${Math.abs(rise)}*(${written} - ${from[0]})/${to[0] - from[0]}`
+  const where = `${source}, interpolated from ${from[0]} to ${to[0]}`
+  return work(
+    id,
+    rule(`${gives.name} ${where} ${body}`, () => formula({ gives, body, of: [of], source: where })),
+    { [of.name]: value },
+    display,
+  )
+}
