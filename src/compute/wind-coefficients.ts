@@ -88,8 +88,8 @@ const MARK = '(as in ASCE 7-10 Fig. 27.4-1; this edition unchecked)'
 
 export const Cw = sym('C_pw', 'C_{p,w}', 'number')
 export const Cl = sym('C_pl', 'C_{p,l}', 'number')
-export const ratio = sym('r', 'L/B', 'number')
-export const slenderness = sym('s', 'h/L', 'number')
+export const ratio = sym('r', '(L/B)', 'number')
+export const slenderness = sym('s', '(h/L)', 'number')
 const theta = sym('theta', '\\theta', 'angle')
 
 const rules = new Map<string, Formula>()
@@ -132,31 +132,34 @@ export function gableSlopes(
   const between: Value[] = []
   const of = (side: 'windward' | 'leeward', gives: Sym): Value => {
     const name = `${id}.${gives.name}`
-    const source = (ratio: number) =>
-      `${figure(edition)}, ${side} slope, h/L ${ratio === 0.25 ? 'up to 0.25' : ratio === 1 ? 'from 1.0 on' : ratio} ${MARK}`
+    const what = side === 'windward' ? 'windward slope, the upper of two values' : 'leeward slope'
+    const source = (ratio: string) => `${figure(edition)}, ${what}, h/L ${ratio} ${MARK}`
     const degrees = { sym: theta, value: angle, number: (angle.si * 180) / Math.PI, written: 'theta/(1 deg)' }
-    const at = ({ ratio, ...curves }: Slopes, key: string, letter: Sym) =>
-      along(key, letter, curves[side], degrees, source(ratio), display)
+    const at = (slopes: Slopes, key: string, letter: Sym, ratio = inWords(slopes.ratio)) =>
+      along(key, letter, slopes[side], degrees, source(ratio), display)
     if (low === high) return at(low, name, gives)
-    const letters = [
-      sym(`${gives.name}1`, `${gives.tex.slice(0, -1)},1}`, 'number'),
-      sym(`${gives.name}2`, `${gives.tex.slice(0, -1)},2}`, 'number'),
-    ] as const
-    const ends = [at(low, `${name}.1`, letters[0]), at(high, `${name}.2`, letters[1])] as const
+    const letters = [1, 2].map(end => sym(`${gives.name}${end}`, `${gives.tex.slice(0, -1)},${end}}`, 'number'))
+    const [one, two] = letters
+    if (!one || !two) throw new Error('there are two ends')
+    const ends = [at(low, `${name}.1`, one), at(high, `${name}.2`, two)] as const
+    // Where both ratios list the same there is nothing to interpolate.
+    if (ends[0].si === ends[1].si) return at(low, name, gives, `${low.ratio} to ${high.ratio}`)
     between.push(...ends)
-    const body = `${letters[0].name} + (${letters[1].name} - ${letters[0].name})*(s - ${low.ratio})/${high.ratio - low.ratio}`
+    const body = `${one.name} + (${two.name} - ${one.name})*(s - ${low.ratio})/${high.ratio - low.ratio}`
     const mixed = rule(`${edition} ${side} ${body}`, () =>
       formula({
         gives,
         body,
-        of: [...letters, slenderness],
+        of: [one, two, slenderness],
         source: `${figure(edition)}, interpolated between h/L of ${low.ratio} and ${high.ratio}`,
       }),
     )
-    return work(name, mixed, { [letters[0].name]: ends[0], [letters[1].name]: ends[1], s }, display)
+    return work(name, mixed, { [one.name]: ends[0], [two.name]: ends[1], s }, display)
   }
   return { windward: of('windward', Cw), leeward: of('leeward', Cl), between }
 }
+
+const inWords = (ratio: number): string => (ratio === 0.25 ? 'up to 0.25' : ratio === 1 ? 'from 1.0 on' : `${ratio}`)
 
 /** The listed ratios on either side of one; one and the same where it is listed or lies beyond them. */
 function nearest(s: number): readonly [Slopes, Slopes] {
@@ -193,18 +196,17 @@ function along(
   const [from, to] = [curve[next - 1], curve[next]]
   if (listed || !from || !to || from[1] === to[1]) {
     const constant = listed ?? from ?? last
-    const where = `${source}`
     return work(
       id,
-      rule(`${gives.name} ${where} ${constant[1]}`, () =>
-        formula({ gives, body: `${constant[1]}`, of: [], source: where }),
-      ),
+      rule(`${gives.name} ${source} ${constant[1]}`, () => formula({ gives, body: `${constant[1]}`, of: [], source })),
       {},
       display,
     )
   }
   const rise = Number((to[1] - from[1]).toFixed(6))
-  const body = `${from[1]} ${rise < 0 ? '-' : '+'} ${Math.abs(rise)}*(${written} - ${from[0]})/${to[0] - from[0]}`
+  const slope = `${rise < 0 ? '-' : '+'} ${Math.abs(rise)}`
+  const run = to[0] - from[0]
+  const body = `${from[1]} ${slope}*(${written} - ${from[0]})${run === 1 ? '' : `/${run}`}`
   const where = `${source}, interpolated from ${from[0]} to ${to[0]}`
   return work(
     id,

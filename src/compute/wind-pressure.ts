@@ -17,7 +17,6 @@ const V = sym('V', 'V', 'speed')
 const alpha = sym('alpha', '\\alpha', 'number')
 const zg = sym('z_g', 'z_g', 'length')
 const zMin = sym('z_min', 'z_{\\text{min}}', 'length')
-const z = sym('z', 'z', 'length')
 
 // ASCE 7-16 Table 26.11-1 as a public page quotes the set of 7-05, the same in 7-16 from memory; 7-22 from memory. Both sets
 // give K_z = 1.00 in exposure C at the 33 ft of the wind speed map.
@@ -41,9 +40,17 @@ interface Rules {
 
 const made = new Map<string, Rules>()
 
-/** Made when first asked for: most documents have no wind. */
-function rulesOf(edition: Edition, exposure: Exposure, { system }: Display): Rules {
-  const key = `${edition} ${exposure} ${system}`
+/**
+ * Made when first asked for: most documents have no wind.
+ * @param below what stands below K and q, and the letter of the height that they are at
+ */
+function rulesOf(
+  edition: Edition,
+  exposure: Exposure,
+  { system }: Display,
+  [below, height]: readonly [string, string] = ['z', 'z_2'],
+): Rules {
+  const key = `${edition} ${exposure} ${system} ${below}`
   const known = made.get(key)
   if (known) return known
   const standard = `ASCE ${edition}`
@@ -51,21 +58,23 @@ function rulesOf(edition: Edition, exposure: Exposure, { system }: Display): Rul
   const ofTable = `${standard} Table 26.11-1, exposure ${exposure} (unchecked)`
   // 7-22 has K_d in the pressure instead.
   const early = edition === '7-16'
+  const K = sym('K_z', `K_${below}`, 'number')
+  const at = sym('z', height, 'length')
   const density = system === 'US' ? '(0.00256 psf/mph^2)' : '(0.613 Pa*s^2/m^2)'
   const rules = {
     alpha: formula({ gives: alpha, body: `${constants.alpha}`, of: [], source: ofTable }),
     zg: formula({ gives: zg, body: `${constants.zg} ft`, of: [], source: ofTable }),
     zMin: formula({ gives: zMin, body: '15 ft', of: [], source: `${standard} Table 26.10-1 (unchecked)` }),
     Kz: formula({
-      gives: Kz,
+      gives: K,
       body: `${greatest[edition]}*(min(max(z, z_min), z_g)/z_g)^(2/alpha)`,
-      of: [z, zMin, zg, alpha],
+      of: [at, zMin, zg, alpha],
       source: `${standard} Table 26.10-1 (unchecked)`,
     }),
     q: formula({
-      gives: q,
+      gives: sym('q_z', `q_${below}`, 'areaLoad'),
       body: `${density}*K_z*K_zt*${early ? 'K_d*' : ''}K_e*V^2`,
-      of: [Kz, Kzt, ...(early ? [Kd] : []), Ke, V],
+      of: [K, Kzt, ...(early ? [Kd] : []), Ke, V],
       source: `${standard} Eq. 26.10-1 (unchecked)`,
     }),
   }
@@ -93,7 +102,7 @@ export interface Pressure {
   readonly zg: Value
   readonly zMin: Value
   readonly Ke: Value
-  /** K and q at a height; `below` is what stands below their letters and in their ids. */
+  /** K and q at a height; `below` stands below their letters and in their ids, one for each height. */
   readonly at: (below: string, height: Value) => { readonly K: Value; readonly q: Value }
   /** K_z and q_z of strips, each at its top. */
   readonly along: (strips: readonly Strip[]) => Tabulation
@@ -116,9 +125,9 @@ export function workPressure(wind: DirectionalWind, display: Display): Pressure 
     ...held,
     Ke: factor,
     at: (below, height) => {
-      const K = { ...work(`wind.K_${below}`, rules.Kz, { ...ofHeight, z: height }, display), tex: `K_${below}` }
-      const worked = work(`wind.q_${below}`, rules.q, { ...ofPressure, K_z: K }, display)
-      return { K, q: { ...worked, tex: `q_${below}` } }
+      const { Kz: ruleK, q: ruleQ } = rulesOf(edition, exposure, display, [below, height.tex])
+      const K = work(`wind.K_${below}`, ruleK, { ...ofHeight, z: height }, display)
+      return { K, q: work(`wind.q_${below}`, ruleQ, { ...ofPressure, K_z: K }, display) }
     },
     along: strips =>
       stripTable(strips, display)

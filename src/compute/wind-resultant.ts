@@ -3,7 +3,7 @@ import { type Formula, formula, type Sym, sym } from '../base/formula.ts'
 import type { Display } from '../base/kind.ts'
 import { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
-import { texAbout, work } from '../base/work.ts'
+import { work } from '../base/work.ts'
 import { type Axis, across, type Loading } from './cases.ts'
 import { lettersOf } from './loading.ts'
 import type { Plan } from './plan.ts'
@@ -67,8 +67,7 @@ export function resultantOf(
     F[axis],
     parts.map(({ F }) => F),
   )
-  const sum = table.sum(F[axis].name, F[axis], `${own}force.${axis}`)
-  const force = { ...sum, tex: texAbout(sum.tex, level) }
+  const force = sumOf(`${own}force.${axis}`, F[axis], level, parts, display)
   if (alike(parts, side, faces)) {
     const plan = faces.planOf(level)
     const arm = armOf(`${own}ea.${side}`, loading, side, plan, faces, display)
@@ -79,7 +78,21 @@ export function resultantOf(
       parts: table,
     }
   }
-  return { force, ...weighted(table, loading, axis, own, force, parts, faces, display), parts: table }
+  return { force, ...weighted(table, loading, axis, level, force, parts, faces, display), parts: table }
+}
+
+/** The parts of a level are few, so that their sum is told with each of them. */
+function sumOf(id: string, gives: Sym, level: string, parts: readonly Part[], display: Display): Value {
+  const symbols = parts.map(({ F }, i) => sym(`F_${i + 1}`, F.tex, 'force'))
+  const rule = once(`sum ${gives.name} ${symbols.map(({ tex }) => tex).join()}`, () =>
+    formula({
+      gives,
+      body: symbols.map(({ name }) => name).join(' + '),
+      of: symbols,
+      source: 'statics: the parts that the level takes',
+    }),
+  )
+  return work(id, rule, Object.fromEntries(parts.map(({ F }, i) => [`F_${i + 1}`, F])), display, [level])
 }
 
 /** True when the faces of all parts have one middle and one width. */
@@ -101,16 +114,23 @@ function middleOf(id: string, gives: Sym, side: Axis, plan: Plan, display: Displ
   const rule = once(`middle ${gives.name}`, () =>
     formula({ gives, body: `(${one.name} + ${two.name})/2`, of: [one, two], source: 'middle of the face' }),
   )
-  return work(id, rule, { [one.name]: low, [two.name]: high }, display)
+  return work(id, rule, { [one.name]: low, [two.name]: high }, display, [plan.level])
 }
 
-function armOf(id: string, loading: Loading, side: Axis, { size }: Plan, { share, source }: Faces, display: Display) {
+function armOf(
+  id: string,
+  loading: Loading,
+  side: Axis,
+  { level, size }: Plan,
+  { share, source }: Faces,
+  display: Display,
+) {
   if (!share || loading !== 'wind') return undefined
   const gives = lettersOf[loading].arm[side]
   const rule = once(`arm ${side} ${source}`, () =>
     formula({ gives, body: `alpha_w*${B[side].name}`, of: [alpha, B[side]], source }),
   )
-  return work(id, rule, { alpha_w: share, [B[side].name]: size[side] }, display)
+  return work(id, rule, { alpha_w: share, [B[side].name]: size[side] }, display, [level])
 }
 
 /** Parts of different faces act each in the middle of its own: their resultant by statics. */
@@ -118,7 +138,7 @@ function weighted(
   table: Tabulation,
   loading: Loading,
   axis: Axis,
-  own: string,
+  level: string,
   force: Value,
   parts: readonly Part[],
   faces: Faces,
@@ -126,6 +146,7 @@ function weighted(
 ): Pick<Resultant, 'at' | 'arm'> {
   const side = across(axis)
   const letters = lettersOf[loading]
+  const own = `${level}.${letters.path}`
   const F = letters.F[axis]
   const resultant = (gives: Sym, values: readonly Value[], key: string): Value => {
     const product = sym(`F_${gives.name}`, `${F.tex}\\,${gives.tex}`, 'moment')
@@ -143,7 +164,7 @@ function weighted(
     )
     table.take(gives, values).work(times, { [F.name]: F.name, [gives.name]: gives.name }, `${key}_F.${side}`)
     const total = table.sum(product.name, sum, `${own}sum.${key}.${side}`)
-    return work(`${own}${key}.${side}`, mean, { [sum.name]: total, [F.name]: force }, display)
+    return work(`${own}${key}.${side}`, mean, { [sum.name]: total, [F.name]: force }, display, [level])
   }
   const plans = parts.map(({ plan }) => faces.planOf(plan))
   const at = resultant(

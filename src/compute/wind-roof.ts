@@ -219,15 +219,15 @@ function gableEnd(
   )
   const { K, q } = pressure.at('r', peak)
   const w = work(
-    'wind.gable.p_w',
+    'wind.gables.p_w',
     rules.pressure(pw, qr, Cw, ', windward gable, as at the ridge'),
     { q_r: q, ...rules.inputs, C_pw: C },
     display,
-    ['gable'],
+    ['gables'],
   )
   const l = leeward.column('p_l').cell(leeward.rows.indexOf(top.level))
   const area = {
-    name: 'gable',
+    name: 'gables',
     body: 'B*h_r/2',
     of: [B, rise],
     inputs: { B: top.plan.size[across(axis)], h_r: height },
@@ -254,7 +254,7 @@ function slopes(
   display: Display,
 ): Beyond {
   const area = {
-    name: 'roof',
+    name: 'slopes',
     body: 'B*h_r',
     of: [B, rise],
     inputs: { B: top.plan.size[across(axis)], h_r: height },
@@ -263,7 +263,7 @@ function slopes(
   const weight = { sym: pRoofMin, value: least.roof }
   if (flatSlopes) return { ...forcesOn(axis, area, undefined, weight, top, display), steps: [] }
   const s = work(
-    'wind.roof.h_L',
+    'wind.slopes.h_L',
     formula({
       gives: slenderness,
       body: 'h/L',
@@ -273,14 +273,14 @@ function slopes(
     { h: mean, L: top.plan.size[axis] },
     display,
   )
-  const C = gableSlopes(rules.edition, slope, s, 'wind.roof', display)
+  const C = gableSlopes(rules.edition, slope, s, 'wind.slopes', display)
   const on = (side: 'w' | 'l', gives: Sym, of: Sym, value: Value, where: string): Value =>
     work(
-      `wind.roof.p_${side}`,
+      `wind.slopes.p_${side}`,
       rules.pressure(gives, qh, of, `, ${where} slope`),
       { q_h: atRoof, ...rules.inputs, [of.name]: value },
       display,
-      ['roof'],
+      ['slopes'],
     )
   const pressures = { w: on('w', pw, Cw, C.windward, 'windward'), l: on('l', pl, Cl, C.leeward, 'leeward') }
   const forces = forcesOn(axis, area, pressures, weight, top, display)
