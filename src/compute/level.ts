@@ -84,7 +84,8 @@ export interface LevelWork {
   readonly acting: () => Result<Movable>
   /** A value of the wind on the level, by the rest of its id. */
   readonly windValue: (path: readonly string[]) => Result<Value> | undefined
-  /** True where any force acts on the level. */
+  /** True where wind acts on the level, and where any force does. */
+  readonly hasWind: () => boolean
   readonly isLoaded: () => boolean
   readonly distribution: () => Result<Distribution>
   readonly displacements: () => Result<readonly Displacement[]>
@@ -319,8 +320,13 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
 
   /** Where nothing is stated of the forces and of wind, there is nothing to share out; a fault in them is told where it shows. */
   const isLoaded = (): boolean => {
-    const [given, wind] = [forces(), around.wind()]
-    return (given.ok && given.value !== undefined) || (wind.ok && wind.value !== undefined)
+    const given = forces()
+    return hasWind() || (given.ok && given.value !== undefined)
+  }
+
+  const hasWind = (): boolean => {
+    const wind = around.wind()
+    return wind.ok && wind.value !== undefined
   }
 
   const displacements = once('displacement', (): Result<readonly Displacement[]> => {
@@ -366,6 +372,7 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     forces,
     acting,
     windValue: path => levelWindValue(around.wind, name, path),
+    hasWind,
     isLoaded,
     distribution,
     displacements,

@@ -6,7 +6,7 @@ import { type Formula, formula, type Sym, sym } from '../base/formula.ts'
 import type { Display } from '../base/kind.ts'
 import type { Value } from '../base/value.ts'
 import { work } from '../base/work.ts'
-import type { Edition } from '../model/wind-directional.ts'
+import type { Edition } from '../model/wind-cases.ts'
 
 /** A coefficient against what it depends on, rising. */
 type Curve = readonly (readonly [at: number, value: number])[]

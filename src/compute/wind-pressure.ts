@@ -4,7 +4,8 @@ import type { Display } from '../base/kind.ts'
 import { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
 import { work } from '../base/work.ts'
-import type { DirectionalWind, Edition, Exposure } from '../model/wind-directional.ts'
+import type { Edition } from '../model/wind-cases.ts'
+import type { DirectionalWind, Exposure } from '../model/wind-directional.ts'
 import { type Strip, z1, z2 } from './wind-strips.ts'
 
 export const q = sym('q_z', 'q_z', 'areaLoad')

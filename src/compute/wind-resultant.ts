@@ -68,17 +68,22 @@ export function resultantOf(
     parts.map(({ F }) => F),
   )
   const force = sumOf(`${own}force.${axis}`, F[axis], level, parts, display)
-  if (alike(parts, side, faces)) {
-    const plan = faces.planOf(level)
-    const arm = armOf(`${own}ea.${side}`, loading, side, plan, faces, display)
-    return {
-      force,
-      at: middleOf(`${own}at.${side}`, lettersOf[loading].at[side], side, plan, display),
-      ...(arm ? { arm } : {}),
-      parts: table,
-    }
-  }
+  if (alike(parts, side, faces)) return { force, ...faceOf(loading, side, level, faces, display), parts: table }
   return { force, ...weighted(table, loading, axis, level, force, parts, faces, display), parts: table }
+}
+
+/** The middle of a level's own face across a force, and the arm of its width. */
+export function faceOf(
+  loading: Loading,
+  side: Axis,
+  level: string,
+  faces: Faces,
+  display: Display,
+): Pick<Resultant, 'at' | 'arm'> {
+  const { path, at } = lettersOf[loading]
+  const plan = faces.planOf(level)
+  const arm = armOf(`${level}.${path}ea.${side}`, loading, side, plan, faces, display)
+  return { at: middleOf(`${level}.${path}at.${side}`, at[side], side, plan, display), ...(arm ? { arm } : {}) }
 }
 
 /** The parts of a level are few, so that their sum is told with each of them. */

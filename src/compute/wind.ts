@@ -5,14 +5,14 @@ import type { Display } from '../base/kind.ts'
 import type { Value } from '../base/value.ts'
 import { work } from '../base/work.ts'
 import type { WindGiven } from '../model/wind.ts'
+import type { Edition, FigureCase } from '../model/wind-cases.ts'
 import type { Axis, Case } from './cases.ts'
 import type { Load } from './distribution.ts'
 import type { Acting } from './loading.ts'
 import type { Plan } from './plan.ts'
 import { figureCases, leastCases, plainCases } from './wind-cases.ts'
-import { figure } from './wind-coefficients.ts'
 import { type DirectionalWork, workDirectionalWind } from './wind-directional.ts'
-import { type Faces, type Part, type Resultant, resultantOf } from './wind-resultant.ts'
+import { type Faces, faceOf, type Part, type Resultant, resultantOf } from './wind-resultant.ts'
 import { type StatedWork, workStatedWind } from './wind-stated.ts'
 
 /** A level of the building as wind finds it. */
@@ -44,8 +44,6 @@ export interface Wind {
   readonly loads: readonly WindLoad[]
   readonly acting: (loading: WindLoading, level: string) => Acting
 }
-
-const FIFTEEN = '0.15'
 
 /** @param levels from the top down, at least one */
 export function workWind(given: WindGiven, levels: readonly WindLevel[], display: Display): Wind {
@@ -86,8 +84,14 @@ export function workWind(given: WindGiven, levels: readonly WindLevel[], display
     worked,
     ...(faces.share ? { share: faces.share } : {}),
     loads,
-    acting: (loading, level) => actingOn(loads, loading, level, planOf),
+    acting: (loading, level) => actingOn(loads, loading, level, faces, display),
   }
+}
+
+/** The cases of the figure that a document works, and the edition that they are of. */
+function figureOf(given: WindGiven): { readonly listed: readonly FigureCase[]; readonly edition: Edition } | undefined {
+  if (given.kind === 'directional') return { listed: given.cases, edition: given.edition }
+  return 'figure' in given.cases ? { listed: given.cases.figure, edition: given.cases.edition } : undefined
 }
 
 function casesAndFaces(
@@ -95,18 +99,13 @@ function casesAndFaces(
   planOf: Faces['planOf'],
   display: Display,
 ): { readonly cases: readonly Case[]; readonly faces: Faces } {
-  const listed = given.kind === 'directional' ? given.cases : 'figure' in given.cases ? given.cases.figure : undefined
-  if (listed) {
-    const name =
-      given.kind === 'directional' ? figure(given.edition).replace('27.3-1', '27.3-8') : 'ASCE 7-22 Fig. 27.3-8'
+  const figure = figureOf(given)
+  if (figure) {
+    const name = `ASCE ${figure.edition} Fig. 27.3-8`
     const source = `${name}, eccentricity of cases 2 and 4 (as in ASCE 7-10 Fig. 27.4-8; this edition unchecked)`
-    const share = work(
-      'wind.eccentricity',
-      formula({ gives: sym('alpha_w', '\\alpha_w', 'share'), body: FIFTEEN, of: [], source }),
-      {},
-      display,
-    )
-    return { cases: figureCases(listed, name), faces: { planOf, share, source } }
+    const rule = formula({ gives: sym('alpha_w', '\\alpha_w', 'share'), body: '0.15', of: [], source })
+    const share = work('wind.eccentricity', rule, {}, display)
+    return { cases: figureCases(figure.listed, name), faces: { planOf, share, source } }
   }
   const share = given.kind === 'stated' && 'eccentricity' in given.cases ? given.cases.eccentricity : undefined
   const axes = given.kind === 'stated' ? given.axes : (['x', 'y'] as const)
@@ -116,20 +115,23 @@ function casesAndFaces(
   }
 }
 
-function actingOn(loads: readonly WindLoad[], loading: WindLoading, level: string, planOf: Faces['planOf']): Acting {
+function actingOn(
+  loads: readonly WindLoad[],
+  loading: WindLoading,
+  level: string,
+  faces: Faces,
+  display: Display,
+): Acting {
   const along = loads.find(load => load.loading === loading)?.along ?? {}
   const [ofX, ofY] = [along.x?.get(level), along.y?.get(level)]
-  const { size } = planOf(level)
-  // Along an axis without wind no case asks where it would act.
-  const [one] = [ofX, ofY].flatMap(share => share ?? [])
-  if (!one) throw new Error(`nothing of ${loading} acts on ${level}`)
-  const at = { x: ofY?.at ?? size.x, y: ofX?.at ?? size.y }
-  const [armX, armY] = [ofY?.arm, ofX?.arm]
+  // Along an axis without wind its force would act in the middle of the face.
+  const { at: x, arm: armX } = ofY ?? faceOf(loading, 'x', level, faces, display)
+  const { at: y, arm: armY } = ofX ?? faceOf(loading, 'y', level, faces, display)
   return {
     level,
-    at,
+    at: { x, y },
     force: { ...(ofX ? { x: ofX.force } : {}), ...(ofY ? { y: ofY.force } : {}) },
-    ...(armX || armY ? { arm: { x: armX ?? size.x, y: armY ?? size.y } } : {}),
+    ...(armX && armY ? { arm: { x: armX, y: armY } } : {}),
   }
 }
 

@@ -22,6 +22,7 @@ export function explainCriteria(sheet: Worksheet, context: Context): Table {
     ...(basis.standard === '' ? [] : [{ name: 'Standard', value: verbatim(basis.standard), spans: [] }]),
     { name: 'Results shown in', value: `${basis.system} units`, spans: [] },
     ...sheet.levels.flatMap(level => [...loadsOf(level, context), ...forcesOf(level, context)]),
+    ...windOf(sheet, context),
     ...materialsOf(sheet, context),
   ]
   return {
@@ -97,6 +98,28 @@ function forcesOf(level: LevelWork, { language }: Context): readonly Criterion[]
   ]
   const stated = [x, y, accidental].flatMap(value => (value ? spansOf(value) : []))
   return [{ name: `Force at ${verbatim(level.name)}`, value: parts.join('; '), spans: stated }]
+}
+
+function windOf(sheet: Worksheet, { language }: Context): readonly Criterion[] {
+  const wind = sheet.wind()
+  if (!wind.ok || !wind.value) return []
+  const { given } = wind.value
+  if (given.kind === 'stated') return [{ name: 'Wind', value: 'pressures as stated', spans: [given.span] }]
+  const { V, exposure, Kd, Kzt, G, enclosure, roof, edition } = given
+  const factors = [
+    ['K_d', Kd],
+    ['K_zt', Kzt],
+    ['G', G],
+  ] as const
+  const value = [
+    `ASCE ${edition}, directional procedure`,
+    `V ${printed(V, language)}`,
+    `exposure ${exposure}`,
+    ...factors.map(([letter, value]) => `${letter} ${printed(value, language)}`),
+    enclosure,
+    roof.kind === 'gable' ? `gable roof of ${printed(roof.slope, language)} along ${roof.ridge}` : 'flat roof',
+  ]
+  return [{ name: 'Wind', value: value.join('; '), spans: [given.span] }]
 }
 
 function materialsOf({ constructions }: Worksheet, context: Context): readonly Criterion[] {

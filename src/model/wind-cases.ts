@@ -6,6 +6,7 @@ import { diagnose, splitAt } from '../read/text.ts'
 import { settingOf } from './columns.ts'
 import type { Scope } from './scope.ts'
 
+export type Edition = '7-16' | '7-22'
 export type FigureCase = 1 | 2 | 3 | 4
 
 export const figureCases: readonly FigureCase[] = [1, 2, 3, 4]

@@ -13,9 +13,8 @@ import { aboveZero, quantity } from './cell.ts'
 import { settingOf, strangeLines, strangeSettings } from './columns.ts'
 import type { Scope } from './scope.ts'
 import type { WindAround } from './wind.ts'
-import { type FigureCase, readFigureCases } from './wind-cases.ts'
+import { type Edition, type FigureCase, readFigureCases } from './wind-cases.ts'
 
-export type Edition = '7-16' | '7-22'
 export type Exposure = 'B' | 'C' | 'D'
 export type Enclosure = 'enclosed' | 'partially enclosed'
 export type Roof =

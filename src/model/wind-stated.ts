@@ -21,7 +21,7 @@ import {
 } from './columns.ts'
 import type { Scope } from './scope.ts'
 import type { WindAround } from './wind.ts'
-import { type FigureCase, readFigureCases } from './wind-cases.ts'
+import { type Edition, type FigureCase, readFigureCases } from './wind-cases.ts'
 
 type Axis = 'x' | 'y'
 const axes: readonly Axis[] = ['x', 'y']
@@ -39,7 +39,9 @@ export interface StatedWind {
   readonly axes: readonly Axis[]
   readonly parapet?: Value
   /** The cases of the figure of ASCE 7 where the document asks for them, or the force moved aside by a share of the width. */
-  readonly cases: { readonly figure: readonly FigureCase[] } | { readonly eccentricity: Value | undefined }
+  readonly cases:
+    | { readonly figure: readonly FigureCase[]; readonly edition: Edition }
+    | { readonly eccentricity: Value | undefined }
   readonly span: Text['span']
 }
 
@@ -47,7 +49,7 @@ const p = { windward: sym('p_w', 'p_w', 'areaLoad'), leeward: sym('p_l', 'p_l', 
 const sides = ['windward', 'leeward'] as const
 type Side = (typeof sides)[number]
 
-export function readStatedWind(block: Block, { levels }: WindAround, scope: Scope): Result<StatedWind> {
+export function readStatedWind(block: Block, { levels, standard }: WindAround, scope: Scope): Result<StatedWind> {
   const faults = [
     ...strangeSettings(block, [
       'windward',
@@ -64,10 +66,20 @@ export function readStatedWind(block: Block, { levels }: WindAround, scope: Scop
   ]
   const read = block.table ? fromTable(block, levels, scope) : fromSettings(block, scope)
   const parapet = readParapet(block, scope)
-  const cases = readCases(block, scope)
+  const cases = readCases(block, standard, scope)
   const parts = all<unknown>([read, parapet, cases])
   if (faults.length > 0 || !parts.ok || !read.ok || !parapet.ok || !cases.ok)
     return bad([...faults, ...(parts.ok ? [] : parts.because)])
+  if ('figure' in cases.value && read.value.axes.length < axes.length)
+    return bad([
+      diagnose(
+        'error',
+        'wind-cases',
+        settingOf(block, 'cases')?.span ?? block.info,
+        'cases 3 and 4 have wind along both axes, and pressures are stated along one',
+        'State pressures along x and y, or leave the cases out.',
+      ),
+    ])
   return good({
     kind: 'stated',
     ...read.value,
@@ -231,7 +243,7 @@ function readParapet(block: Block, scope: Scope): Result<Value | undefined> {
   return aboveZero(quantity(cell, { id: 'wind.parapet', what: 'parapet', sym: of }, scope), cell.span, 'parapet')
 }
 
-function readCases(block: Block, scope: Scope): Result<StatedWind['cases']> {
+function readCases(block: Block, standard: string, scope: Scope): Result<StatedWind['cases']> {
   const [share, listed] = [settingOf(block, 'eccentricity'), settingOf(block, 'cases')]
   if (share && listed)
     return bad([
@@ -245,7 +257,7 @@ function readCases(block: Block, scope: Scope): Result<StatedWind['cases']> {
     ])
   if (listed) {
     const figure = readFigureCases(block, scope)
-    return figure.ok ? good({ figure: figure.value }) : figure
+    return figure.ok ? good({ figure: figure.value, edition: /\b7-16\b/.test(standard) ? '7-16' : '7-22' }) : figure
   }
   if (!share) {
     scope.assume({
