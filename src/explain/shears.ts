@@ -27,7 +27,12 @@ const caseTable = (cases: readonly CaseResult[], display: Display): Tabulation =
   )
 
 /** Takes the storey shears into a table of cases: one column where every case is along one axis, else one along each. */
-function takeShears(table: Tabulation, cases: readonly CaseResult[], display: Display): readonly string[] {
+function takeShears(
+  level: string,
+  table: Tabulation,
+  cases: readonly CaseResult[],
+  display: Display,
+): readonly string[] {
   if (cases.every(each => each.case.parts.length === 1)) {
     table.take(
       V,
@@ -37,7 +42,7 @@ function takeShears(table: Tabulation, cases: readonly CaseResult[], display: Di
   }
   const letters = { x: Vx, y: Vy }
   const none = (axis: Axis, name: string): Value => ({
-    id: `none.${axis}.${name}`,
+    id: `${level}.storey.${axis}.${name}`,
     tex: letters[axis].tex,
     si: 0,
     ...shownAs(letters[axis], display),
@@ -65,7 +70,7 @@ export function explainTorsion(
   ])
   if (detail === 'result') return results
   const table = caseTable(cases, display)
-  const shears = takeShears(table, cases, display)
+  const shears = takeShears(level, table, cases, display)
   table.take(
     T,
     cases.map(({ moment }) => moment),
@@ -267,7 +272,7 @@ export function explainEquilibrium(
 ): readonly Piece[] {
   const { level, cases } = distribution
   const table = caseTable(cases, display)
-  const shears = takeShears(table, cases, display)
+  const shears = takeShears(level, table, cases, display)
   table
     .take(
       resisted.x,

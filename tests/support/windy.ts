@@ -14,7 +14,7 @@ export function windy(storeys: readonly Storey[], wind: string, standard = 'ASCE
   const blocks = storeys.flatMap(({ name, size: [b, d], from = 0 }) => {
     const point = (x: number, y: number) => `${x} ${unit}, ${y} ${unit}`
     const wall = (wall: string, x1: number, y1: number, x2: number, y2: number, k: number) =>
-      `| ${wall} | ${point(x1, y1)} | ${point(x2, y2)} | ${k} |`
+      `| ${wall} | ${point(x1, y1)} | ${point(x2, y2)} | ${k} kip/in |`
     const [low, high] = [from, from + b]
     return [
       `\`\`\`areas ${name}\n| area | from | to | load |\n|---|---|---|---|\n| All | ${point(low, 0)} | ${point(high, d)} | 50 psf |\n\`\`\``,
