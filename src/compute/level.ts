@@ -24,6 +24,7 @@ import { casesOf } from './cases.ts'
 import { type Displacement, workDisplacement } from './displacement.ts'
 import { type Distribution, type Load, workDistribution } from './distribution.ts'
 import {
+  atOneLevel,
   driftNotWorked,
   loadsOutside,
   mixedStiffness,
@@ -307,6 +308,7 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     if (wind && !around.forcesStated()) return good(ofWind)
     const acts = all([...above.map(level => level.acting()), acting()])
     if (!acts.ok) return acts
+    if (wind) scope.assume(atOneLevel)
     const axes = (['x', 'y'] as const).filter(axis => acts.value.some(({ force }) => force[axis]))
     return good([{ loading: 'seismic', cases: casesOf(axes), acting: acts.value }, ...ofWind])
   })

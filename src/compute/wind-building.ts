@@ -1,4 +1,6 @@
 /** Wind among the rest of the building: what it needs of the levels, its storey shears, and its values by their ids. */
+
+import type { Diagnostic } from '../base/diagnostic.ts'
 import type { Display } from '../base/kind.ts'
 import { all, type Result } from '../base/ledger.ts'
 import { bad, good } from '../base/outcome.ts'
@@ -39,10 +41,29 @@ export function workWindOn(
   )
   if (!parts.ok) return parts
   for (const { text, because } of taken(given)) scope.assume({ text, because })
+  const low = roofTooLow(given, parts.value)
+  if (low) scope.warn(low)
   const wind = workWind(given, parts.value, scope.display)
   const strange = flatGable(wind)
   if (strange) scope.assume(strange)
   return good(wind)
+}
+
+/** A mean roof height below the highest level would make the pressure on leeward walls too small. */
+function roofTooLow(given: WindGiven, [highest]: readonly WindLevel[]): Diagnostic | undefined {
+  if (given.kind !== 'directional' || !given.h || !highest || given.h.si >= highest.elevation.si - 1e-6)
+    return undefined
+  const { origin } = given.h
+  return diagnose(
+    'warning',
+    'wind-roof-height',
+    origin.kind === 'given' ? origin.span : given.span,
+    `the mean roof height is stated below the highest level, ${highest.level}`,
+    'It counts as stated. Leave it out to have it follow from the levels and the slope.',
+    highest.elevation.origin.kind === 'given'
+      ? { also: [{ span: highest.elevation.origin.span, text: `${highest.level} is here` }] }
+      : {},
+  )
 }
 
 /** What the strips take for granted. */

@@ -119,7 +119,10 @@ export function worksheet(givens: Givens, { system, assumptions: chosen, titleBl
     const stated = levelLines()
     if (!stated.ok) return stated
     const blown = wind()
-    if (blown.ok && blown.value && !forcesStated()) return good(windStoreys(blown.value, 'wind', scope.display))
+    if (!forcesStated()) {
+      if (!blown.ok) return blown
+      if (blown.value) return good(windStoreys(blown.value, 'wind', scope.display))
+    }
     const loaded = all(
       stated.value.flatMap(({ name, elevation }): readonly Result<LoadedLevel>[] => {
         const level = levels.find(other => other.name === name)

@@ -260,6 +260,11 @@ describe('load cases of Fig. 27.3-8', () => {
     }
   })
 
+  test('a case of two signs is a name within an expression too', () => {
+    const more = '\n\n```equations\nM = floor.T.WXY4-+ - floor.T.WX2+\n```\n'
+    closeTo(reading(windy(two, flat('C')) + more).in('M', 'kip*ft'), T('WXY4-+') - T('WX2+'), 1000)
+  })
+
   test('with their mirrors they are the 24 signed cases', () => {
     const made = sheet.levels[0]?.distribution()
     if (!made?.ok) throw new Error('the shears are worked')
