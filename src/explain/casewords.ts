@@ -16,7 +16,7 @@ export function casesInWords(cases: readonly Case[]): string {
       ? ['In WXY cases wind acts along both axes, and the first sign is the sense of its force along y.']
       : []),
     ...(wind.some(each => each.parts.length > 1 && movedAside(each))
-      ? ['A second sign is that in which both forces, moved aside, turn the building.']
+      ? ['A second sign is the sense in which both forces, moved aside, turn the building: + is counter-clockwise.']
       : []),
     ...(has(({ loading }) => loading === 'least wind') ? ['WXm and WYm have the least forces of wind.'] : []),
   ].join(' ')

@@ -62,11 +62,11 @@ export function explainWindPressures(
       ...say(...site.filter(value => value?.origin.kind !== 'default')),
       ...say(Cw),
       windward,
-      ...worked.facing.flatMap((each, i) => {
-        const { leeward } = each
+      ...worked.facing.flatMap(({ leeward }, i) => {
         const steps = ['r', 'C_pl', 'p_l'].map(name => leeward.column(name).cell(at))
-        return [...sides.slice(i, i + 1), ...say(...steps, ...each.steps.filter(isPressure))]
+        return [...sides.slice(i, i + 1), ...say(...steps)]
       }),
+      ...say(...roofPressures(worked)),
       ...say(internal.GCpi, internal.p, least.wall, least.roof),
     ]
   })
@@ -79,7 +79,13 @@ const sayIn =
 
 /** The forces of a parapet or roof are told with the forces. */
 const isForce = ({ id }: Value): boolean => /\.F_[xy]$/.test(id)
-const isPressure = (value: Value): boolean => !isForce(value)
+
+/** Steps of the roof up to its pressures; those of a parapet are alike along both axes, and are told once. */
+const roofPressures = ({ facing }: DirectionalWork): readonly Value[] => [
+  ...new Map(
+    facing.flatMap(({ steps }) => steps.filter(value => !isForce(value)).map(value => [value.id, value])),
+  ).values(),
+]
 
 function windwardTable({ windward, strips }: DirectionalWork, context: Context): Piece {
   return explainTable(

@@ -10,6 +10,7 @@ import { pierShearsOf } from '../compute/pier-shears.ts'
 import type { Worksheet } from '../compute/worksheet.ts'
 import { casesShown, wallsShown } from './chosen.ts'
 import type { Context } from './context.ts'
+import { explainDesignShears } from './design.ts'
 import { displacedFigure, elevations, figure, flatAll, plan } from './figures.ts'
 import { explainMass, explainPolarMoment } from './mass.ts'
 import { explainPierShears } from './piers.ts'
@@ -17,7 +18,6 @@ import type { BuildingWant, Request, Want } from './request.ts'
 import { explainEccentricity, explainRigidity, explainStiffness, explainWindEccentricity } from './rigidity.ts'
 import {
   equilibriumCheck,
-  explainDesignShears,
   explainDisplacement,
   explainEquilibrium,
   explainTorsion,
