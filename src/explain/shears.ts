@@ -64,7 +64,7 @@ export function explainTorsion(
   context: Context,
 ): readonly Piece[] {
   const results = shown.flatMap(each => [
-    ...(detail === 'full' ? momentTable(level, each, context) : []),
+    ...(detail === 'full' ? [...shareSteps(each, context), ...momentTable(level, each, context)] : []),
     explainValue(each.moment, context),
   ])
   if (detail === 'result') return results
@@ -83,6 +83,10 @@ export function explainTorsion(
   const all = explainTable(table, want, context)
   return detail === 'table' ? [all] : [...results, all]
 }
+
+/** What a case takes of the storey shears, where it does not take them whole. */
+const shareSteps = ({ case: { name }, shear: { x, y } }: CaseResult, context: Context): readonly Piece[] =>
+  [x, y].flatMap(shear => (shear?.id.endsWith(`.${name}`) ? [explainValue(shear, context)] : []))
 
 /** How the moment comes together where the forces of several levels act. */
 function momentTable(

@@ -1,8 +1,9 @@
 /** Wind against tabled values of the standard, published examples, physics and closed forms. */
 import { describe, expect, test } from 'vitest'
 import { agrees, closeTo, disagrees } from '../support/agrees.ts'
+import { broken } from '../support/audit.ts'
 import { type Storey, windy } from '../support/windy.ts'
-import { type Reading, reading } from '../support/worked.ts'
+import { type Reading, reading, resultsOf } from '../support/worked.ts'
 
 const shed: readonly Storey[] = [{ name: 'roof', at: 30, size: [60, 40] }]
 const flat = (exposure: string, more = '') => `V: 115 mph\nexposure: ${exposure}\nroof: flat\n${more}`
@@ -313,4 +314,44 @@ test('kip and kN describe the same building, but for the rounding of 0.00256 and
     (0.00256 * (47.880258980336 / 0.44704 ** 2)) / 0.613,
     1,
   )
+})
+
+describe('every printed line holds to its digits, and every case is in equilibrium', () => {
+  const two: readonly Storey[] = [
+    { name: 'floor', at: 11, size: [48, 30] },
+    { name: 'roof', at: 21, size: [30, 30] },
+  ]
+  const skewed = (text: string) => text.replace(/\| E \| (\S+ \w+), 0 (\w+) \|/g, '| E | 7 $2, 0 $2 |')
+  const workings = (level: string) =>
+    `\n\n\`\`\`working\nwind pressures\nwind forces\n\`\`\`\n\n\`\`\`working ${level}\nwhole calculation\ncase: all\n\`\`\`\n`
+  test.each([
+    [
+      'a gable',
+      windy(
+        two,
+        'V: 123 mph\nexposure: B\nroof: gable\nridge: along y\nslope: 23 deg\nground elevation: 2100 ft',
+        'ASCE 7-16',
+      ),
+    ],
+    [
+      'a parapet, in SI',
+      windy(
+        [{ name: 'floor', at: 3.7, size: [15, 9] }],
+        'V: 47 m/s\nexposure: D\nroof: flat\nparapet: 1.1 m',
+        'ASCE 7-22',
+        'm',
+      ),
+    ],
+    ['stated pressures', windy(two, 'windward x: 21 psf\nleeward x: 9 psf\neccentricity: 20%', 'AS/NZS 1170.2')],
+    ['a skewed wall', skewed(windy(two, flat('C', 'parapet: 2.5 ft')))],
+  ])('%s', (name, text) => {
+    const { steps, values, diagnostics } = resultsOf(text + workings('floor'))
+    expect(diagnostics.filter(({ severity }) => severity === 'error')).toEqual([])
+    expect(steps.length).toBeGreaterThan(150)
+    expect('floor.K.xy' in values).toBe(name === 'a skewed wall')
+    expect(steps.flatMap(step => broken(step) ?? [])).toEqual([])
+    const ratios = Object.entries(values).filter(([id]) => id.startsWith('floor.residual.ratio.'))
+    expect(ratios.length).toBeGreaterThan(2)
+    for (const [id, { value }] of ratios) expect(value, id).toBeLessThan(1e-12)
+  })
 })
