@@ -112,8 +112,15 @@ export function windwardWall(edition: Edition, display: Display): Value {
 
 /** @param r L/B: the plan along the wind over the plan across it */
 export function leewardWallOf(id: string, edition: Edition, r: Value, display: Display): Value {
-  const source = `${figure(edition)}, leeward wall ${MARK}`
-  return along(id, Cl, leewardWall, { sym: ratio, value: r, number: r.si, written: 'r' }, source, display)
+  const source = `${figure(edition)}, leeward wall`
+  return along(
+    id,
+    Cl,
+    leewardWall,
+    { sym: ratio, value: r, number: r.si, written: 'r', told: range => `L/B ${range}` },
+    source,
+    display,
+  )
 }
 
 /**
@@ -133,8 +140,14 @@ export function gableSlopes(
   const of = (side: 'windward' | 'leeward', gives: Sym): Value => {
     const name = `${id}.${gives.name}`
     const what = side === 'windward' ? 'windward slope, the upper of two values' : 'leeward slope'
-    const source = (ratio: string) => `${figure(edition)}, ${what}, h/L ${ratio} ${MARK}`
-    const degrees = { sym: theta, value: angle, number: (angle.si * 180) / Math.PI, written: 'theta/(1 deg)' }
+    const source = (ratio: string) => `${figure(edition)}, ${what}, h/L ${ratio}`
+    const degrees = {
+      sym: theta,
+      value: angle,
+      number: (angle.si * 180) / Math.PI,
+      written: 'theta/(1 deg)',
+      told: (range: string) => `slope in degrees ${range}`,
+    }
     const at = (slopes: Slopes, key: string, letter: Sym, ratio = inWords(slopes.ratio)) =>
       along(key, letter, slopes[side], degrees, source(ratio), display)
     if (low === high) return at(low, name, gives)
@@ -176,38 +189,38 @@ interface Against {
   /** In the unit of the curve, and how a formula has it there. */
   readonly number: number
   readonly written: string
+  /** A range of it in words. */
+  readonly told: (range: string) => string
 }
 
 /** The value of a curve: listed, the end where it lies beyond, or on the straight line between two. */
-function along(
-  id: string,
-  gives: Sym,
-  curve: Curve,
-  { sym: of, value, number, written }: Against,
-  source: string,
-  display: Display,
-): Value {
+function along(id: string, gives: Sym, curve: Curve, against: Against, source: string, display: Display): Value {
+  const { sym: of, value, written, told } = against
+  // An angle that was typed in degrees comes back from radians within a few bits of what is listed.
+  const number = curve.find(([at]) => Math.abs(at - against.number) < 1e-9)?.[0] ?? against.number
   const [first] = curve
   const last = curve.at(-1)
   if (!first || !last) throw new Error('a curve has points')
-  const listed =
-    number <= first[0] ? first : number >= last[0] ? last : curve.find(([at]) => Math.abs(at - number) < 1e-9)
-  const next = curve.findIndex(([at]) => at > number)
-  const [from, to] = [curve[next - 1], curve[next]]
-  if (listed || !from || !to || from[1] === to[1]) {
-    const constant = listed ?? from ?? last
+  const constant = (C: number, where: string): Value => {
+    const full = `${source}, ${told(where)} ${MARK}`
     return work(
       id,
-      rule(`${gives.name} ${source} ${constant[1]}`, () => formula({ gives, body: `${constant[1]}`, of: [], source })),
+      rule(`${gives.name} ${full} ${C}`, () => formula({ gives, body: `${C}`, of: [], source: full })),
       {},
       display,
     )
   }
+  if (number <= first[0]) return constant(first[1], number === first[0] ? `${first[0]}` : `up to ${first[0]}`)
+  if (number >= last[0]) return constant(last[1], `${last[0]} or more`)
+  const next = curve.findIndex(([at]) => at > number)
+  const [from, to] = [curve[next - 1], curve[next]]
+  if (!from || !to) throw new Error('a number within a curve lies between two of its points')
+  if (number === from[0]) return constant(from[1], `${from[0]}`)
+  if (from[1] === to[1]) return constant(from[1], `${from[0]} to ${to[0]}`)
   const rise = Number((to[1] - from[1]).toFixed(6))
-  const slope = `${rise < 0 ? '-' : '+'} ${Math.abs(rise)}`
   const run = to[0] - from[0]
-  const body = `${from[1]} ${slope}*(${written} - ${from[0]})${run === 1 ? '' : `/${run}`}`
-  const where = `${source}, interpolated from ${from[0]} to ${to[0]}`
+  const body = `${from[1]} ${rise < 0 ? '-' : '+'} ${Math.abs(rise)}*(${written} - ${from[0]})${run === 1 ? '' : `/${run}`}`
+  const where = `${source}, interpolated: ${told(`${from[0]} to ${to[0]}`)} ${MARK}`
   return work(
     id,
     rule(`${gives.name} ${where} ${body}`, () => formula({ gives, body, of: [of], source: where })),
