@@ -35,6 +35,7 @@ const kinds = {
   area: units('ft^2', 'm^2'),
   firstMoment: units('ft^3', 'm^3'),
   secondMoment: units('ft^4', 'm^4'),
+  speed: units('mph', 'm/s'),
   modulus: units('ksi', 'MPa'),
   strength: units('psi', 'MPa'),
   areaLoad: units('psf', 'kPa'),

@@ -31,7 +31,7 @@ function cellOf(table: Tabulation | undefined, row: string | undefined, keys: re
 export function levelValue(level: LevelWork, path: readonly string[]): Found {
   const [head, ...rest] = path
   const [a, b, c, d] = rest
-  if (rest.length > (head === 'wall' ? 4 : 3)) return undefined
+  if (rest.length > (head === 'wall' || head === 'wind' ? 4 : 3)) return undefined
   switch (head) {
     case 'area':
     case 'perimeter':
@@ -72,8 +72,14 @@ export function levelValue(level: LevelWork, path: readonly string[]): Found {
       return from(level.forces(), forces => axisOf(forces ?? {}, a))
     case 'accidental':
       return rest.length === 0 ? from(level.forces(), forces => forces?.accidental) : undefined
+    case 'wind':
+      return windOf(level, rest)
     case 'storey':
-      return from(level.distribution(), ({ storey }) => axisOf(storey, a))
+      return from(level.distribution(), ({ loads, cases }) =>
+        b === undefined
+          ? axisOf(loads.find(({ loading }) => loading === 'seismic')?.storey ?? {}, a)
+          : axisOf(cases.find(each => each.case.name === b)?.shear ?? {}, a),
+      )
     case 'wall':
       return wallValue(level, a ?? '', b, c, d)
     case 'T':
@@ -102,6 +108,18 @@ export function levelValue(level: LevelWork, path: readonly string[]): Found {
     default:
       return undefined
   }
+}
+
+/** Storey shears and eccentricities of wind hang on what stands above and on the walls; the rest on wind alone. */
+function windOf(level: LevelWork, path: readonly string[]): Found {
+  const least = path[0] === 'least'
+  const [head, axis, ...more] = least ? path.slice(1) : path
+  if (more.length === 0 && (head === 'storey' || head === 'e'))
+    return from(level.distribution(), ({ loads }) => {
+      const load = loads.find(({ loading }) => loading === (least ? 'least wind' : 'wind'))
+      return axisOf((head === 'e' ? load?.eccentricity : load?.storey) ?? {}, axis)
+    })
+  return level.windValue(path)
 }
 
 function areaValue(level: LevelWork, name: string | undefined, key: string | undefined): Found {

@@ -126,6 +126,11 @@ export const storeyByStorey: Assumption = {
   because: 'walls are worked storey by storey',
 }
 
+export const atOneLevel: Assumption = {
+  text: 'Stated forces and those of wind are at one level, strength or allowable, and are compared as they are.',
+  because: 'the design shear is the largest over the cases of both',
+}
+
 /** What the model of a floor on springs takes for granted. */
 export const rigidAssumptions = (level: string): readonly Assumption[] => [
   { text: `The diaphragm of ${verbatim(level)} is rigid in its plane.`, because: 'no other behaviour is worked' },

@@ -20,9 +20,11 @@ import type { Scope } from '../model/scope.ts'
 import { type BuiltWall, readStiffness, readWalls, type Wall } from '../model/walls.ts'
 import type { Block } from '../read/block.ts'
 import { diagnose } from '../read/text.ts'
+import { casesOf } from './cases.ts'
 import { type Displacement, workDisplacement } from './displacement.ts'
-import { type Distribution, workDistribution } from './distribution.ts'
+import { type Distribution, type Load, workDistribution } from './distribution.ts'
 import {
+  atOneLevel,
   driftNotWorked,
   forcesTwice,
   loadsOutside,
@@ -33,13 +35,16 @@ import {
   unstable,
   wallOutside,
 } from './level-faults.ts'
+import type { Movable } from './loading.ts'
 import { type Mass, workMass } from './mass.ts'
 import { drawnOnly } from './opening-faults.ts'
 import { type Pierced, workPierced } from './pierced.ts'
 import { type Plan, workPlan } from './plan.ts'
 import { type Rigidity, type Spring, workRigidity } from './rigidity.ts'
 import { type Moduli, type WallLine, workLine, workModuli, workStiffness } from './stiffness.ts'
-import { type Acting, accidentalArm, type Eccentricity, workEccentricity } from './storey.ts'
+import { accidentalArm, type Eccentricity, workEccentricity } from './storey.ts'
+import { type Wind, windLoads } from './wind.ts'
+import { levelWindValue } from './wind-building.ts'
 
 /** What a level needs from the rest of the building. */
 export interface Surroundings {
@@ -56,7 +61,11 @@ export interface Surroundings {
   readonly seismicForces: ((level: string) => Result<Forces>) | undefined
   /** Faults of blocks of a topic that found no level. */
   readonly strays: (topic: string) => readonly Diagnostic[]
-  /** The levels above this one, the nearest first. */
+  /** Wind on the building, where the document has it. */
+  readonly wind: () => Result<Wind | undefined>
+  /** True where forces are stated for any level, or what states them has faults. */
+  readonly forcesStated: () => boolean
+  /** The levels above this one, from the top down. */
   readonly above: () => Result<readonly LevelWork[]>
 }
 
@@ -80,7 +89,12 @@ export interface LevelWork {
   readonly rigidity: () => Result<Rigidity>
   readonly eccentricity: () => Result<Eccentricity>
   readonly forces: () => Result<Forces | undefined>
-  readonly acting: () => Result<Acting>
+  readonly acting: () => Result<Movable>
+  /** A value of the wind on the level, by the rest of its id. */
+  readonly windValue: (path: readonly string[]) => Result<Value> | undefined
+  /** True where wind acts on the level, and where any force does. */
+  readonly hasWind: () => boolean
+  readonly isLoaded: () => boolean
   readonly distribution: () => Result<Distribution>
   readonly displacements: () => Result<readonly Displacement[]>
 }
@@ -266,7 +280,9 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
 
   const eccentricity = once('e', (): Result<Eccentricity> => {
     const parts = together({ mass: mass(), rigidity: rigidity(), display: display() })
-    return parts.ok ? good(workEccentricity(name, parts.value.mass, parts.value.rigidity, parts.value.display)) : parts
+    return parts.ok
+      ? good(workEccentricity(name, 'seismic', parts.value.mass, parts.value.rigidity, parts.value.display))
+      : parts
   })
 
   const forces = once('force', (): Result<Forces | undefined> => {
@@ -276,7 +292,7 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     return stated.value && block ? bad([forcesTwice(name, block.info)]) : around.seismicForces(name)
   })
 
-  const acting = once('acting', (): Result<Acting> => {
+  const acting = once('acting', (): Result<Movable> => {
     const parts = together({ forces: forces(), mass: mass(), plan: plan() })
     if (!parts.ok) return parts
     const { forces: given, mass: m, plan: p } = parts.value
@@ -290,21 +306,43 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
       )
     return good({
       level: name,
-      mass: { x: m.x, y: m.y },
+      at: { x: m.x, y: m.y },
       force: { ...(given.x ? { x: given.x } : {}), ...(given.y ? { y: given.y } : {}) },
       arm: { x: arm('x'), y: arm('y') },
     })
   })
 
+  /** What acts on the storey: the forces of this level and those above it, and wind where the document has it. */
+  const loads = once('loads', (): Result<readonly Load[]> => {
+    const parts = together({ above: around.above(), wind: around.wind() })
+    if (!parts.ok) return parts
+    const { above, wind } = parts.value
+    const ofWind = wind ? windLoads(wind, [...above.map(({ name }) => name), name]) : []
+    if (wind && !around.forcesStated()) return good(ofWind)
+    const acts = all([...above.map(level => level.acting()), acting()])
+    if (!acts.ok) return acts
+    if (wind) scope.assume(atOneLevel)
+    const axes = (['x', 'y'] as const).filter(axis => acts.value.some(({ force }) => force[axis]))
+    return good([{ loading: 'seismic', cases: casesOf(axes), acting: acts.value }, ...ofWind])
+  })
+
   const distribution = once('storey', (): Result<Distribution> => {
     const above = around.above()
-    if (!above.ok) return above
-    if (above.value.length > 0) scope.assume(storeyByStorey)
-    const actings = all([...above.value.map(level => level.acting()), acting()])
-    const parts = together({ rigidity: rigidity(), mass: mass(), display: display(), actings })
-    if (!parts.ok) return parts
-    return good(workDistribution(parts.value.rigidity, parts.value.actings, parts.value.mass, parts.value.display))
+    if (above.ok && above.value.length > 0) scope.assume(storeyByStorey)
+    const parts = together({ rigidity: rigidity(), display: display(), loads: loads() })
+    return parts.ok ? good(workDistribution(parts.value.rigidity, parts.value.loads, parts.value.display)) : parts
   })
+
+  /** Where nothing is stated of the forces and of wind, there is nothing to share out; a fault in them is told where it shows. */
+  const isLoaded = (): boolean => {
+    const given = forces()
+    return hasWind() || (given.ok && given.value !== undefined)
+  }
+
+  const hasWind = (): boolean => {
+    const wind = around.wind()
+    return wind.ok && wind.value !== undefined
+  }
 
   const displacements = once('displacement', (): Result<readonly Displacement[]> => {
     const parts = together({
@@ -348,6 +386,9 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     eccentricity,
     forces,
     acting,
+    windValue: path => levelWindValue(around.wind, name, path),
+    hasWind,
+    isLoaded,
     distribution,
     displacements,
   }

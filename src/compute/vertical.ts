@@ -103,7 +103,7 @@ export function workVertical(
   const forces = levels.map(({ level }, i) => ({ level, force: { [direction]: table.column(F.name).cell(i) } }))
   table.take(
     shearOf[direction],
-    levels.map(({ level }, i) => storeyShear(level, direction, forces.slice(0, i + 1), display)),
+    levels.map(({ level }, i) => storeyShear(level, direction, 'seismic', forces.slice(0, i + 1), display)),
   )
   const sumForce = table.sum(F.name, F, `seismic.${direction}.sum.F`)
   return { table, product: kind.gives.name, sumProduct, sumForce }

@@ -14,6 +14,7 @@ import { type LevelLine, readLevels } from '../model/levels.ts'
 import type { Limit } from '../model/limits.ts'
 import type { Assumption, Scope } from '../model/scope.ts'
 import { readSeismic } from '../model/seismic.ts'
+import { readWind } from '../model/wind.ts'
 import type { Text } from '../read/text.ts'
 import { profileFor, profileOf } from '../standards/catalogue.ts'
 import { commonSettings } from '../standards/profile.ts'
@@ -25,6 +26,8 @@ import { type Seismic, type WeighedLevel, workSeismic } from './seismic.ts'
 import { seismicIds, seismicLevelValue, seismicValue } from './seismic-ids.ts'
 import { shareByWord } from './shares.ts'
 import { type LoadedLevel, type Storeys, workStoreys } from './storeys.ts'
+import type { Wind } from './wind.ts'
+import { windStoreys, windValue, workWindOn } from './wind-building.ts'
 
 /** A value that a cell works from others, and the place of the cell. */
 export interface StatedCell {
@@ -37,7 +40,9 @@ export interface Worksheet {
   readonly grid: () => Result<Grid>
   readonly levels: readonly LevelWork[]
   readonly levelLines: () => Result<readonly LevelLine[]>
-  /** Forces and storey shears of every level. */
+  /** Wind on the building; a value of undefined where the document has none. */
+  readonly wind: () => Result<Wind | undefined>
+  /** Forces and storey shears of every level: those stated, or those of wind where there are no others. */
   readonly storeys: () => Result<Storeys>
   /** Present where the document has a block `seismic`. */
   readonly seismic?: () => Result<Seismic>
@@ -61,7 +66,7 @@ export interface Worksheet {
   readonly replace: (next: Givens) => boolean
 }
 
-export function worksheet(first: Givens, { system, standard, assumptions: chosen }: Choices): Worksheet {
+export function worksheet(first: Givens, { system, standard, titleBlock, assumptions: chosen }: Choices): Worksheet {
   const ledger = new Ledger()
   const givens = liveGivens(first, ledger)
   const [warned, assumed, cellsStated, cellsRead] = [
@@ -137,6 +142,8 @@ export function worksheet(first: Givens, { system, standard, assumptions: chosen
       shareByWord: shareByWord(standard, scope.display),
       seismicForces: seismic && seismicForces,
       strays: givens.strays,
+      wind: () => wind(),
+      forcesStated: () => forcesStated(),
       above: () => {
         const lines = levelLines()
         if (!lines.ok) return lines
@@ -147,9 +154,30 @@ export function worksheet(first: Givens, { system, standard, assumptions: chosen
     }),
   )
 
+  /** True where any level has forces, or what states them has faults. */
+  const forcesStated = (): boolean =>
+    levels.some(({ forces }) => {
+      const stated = forces()
+      return !stated.ok || stated.value !== undefined
+    })
+
+  const windGiven = ledger.once('wind', givens.wind[0]?.info ?? nowhere, () =>
+    readWind(givens.wind, { standard: titleBlock.standard, levels: givens.levels.map(({ name }) => name) }, scope),
+  )
+  const wind = ledger.once('wind.force', givens.wind[0]?.info ?? nowhere, (): Result<Wind | undefined> => {
+    const given = windGiven()
+    if (!given.ok) return given
+    return given.value ? workWindOn(given.value, levels, levelLines(), scope) : good(undefined)
+  })
+
   const storeys = ledger.once('storeys', levels[0]?.anchor ?? nowhere, (): Result<Storeys> => {
     const stated = levelLines()
     if (!stated.ok) return stated
+    const blown = wind()
+    if (!forcesStated()) {
+      if (!blown.ok) return blown
+      if (blown.value) return good(windStoreys(blown.value, 'wind', scope.display))
+    }
     const loaded = all(
       stated.value.flatMap(({ name, elevation }): readonly Result<LoadedLevel>[] => {
         const level = levels.find(other => other.name === name)
@@ -160,7 +188,7 @@ export function worksheet(first: Givens, { system, standard, assumptions: chosen
         return [good({ level: name, ...(elevation ? { elevation } : {}), force: forces.value })]
       }),
     )
-    return loaded.ok ? good(workStoreys(loaded.value, scope.display)) : loaded
+    return loaded.ok ? good(workStoreys('seismic', loaded.value, scope.display)) : loaded
   })
 
   /** A block of forces that found no level is the cause of what this one lacks. */
@@ -183,6 +211,7 @@ export function worksheet(first: Givens, { system, standard, assumptions: chosen
       if (found) return found
     }
     if (head === 'seismic' && seismic) return seismicValue(seismic, id)
+    if (head === 'wind') return windValue(wind, windGiven, path)
     if (head === 'grid' && path.length === 1) return gridValue(first)
     if (head === 'constructions' && path.length === 2) {
       const construction = constructions.get(first)
@@ -211,6 +240,7 @@ export function worksheet(first: Givens, { system, standard, assumptions: chosen
     grid,
     levels,
     levelLines,
+    wind,
     storeys,
     ...(seismic ? { seismic } : {}),
     constructions,
@@ -237,6 +267,7 @@ export function worksheet(first: Givens, { system, standard, assumptions: chosen
       grid,
       levelLines,
       ...(seismic ? [seismic] : []),
+      wind,
       ...constructions.values(),
       ...levels.flatMap(({ givens, areas, mass, walls, openings, springs, forces }) => [
         ...(givens.areas.length > 0 ? [areas, mass] : []),

@@ -7,6 +7,7 @@ import type { BuildingWant, Request } from './request.ts'
 import { explainSeismic } from './seismic.ts'
 import type { Piece } from './sheet.ts'
 import { explainStoreys } from './storeys.ts'
+import { explainWindForces, explainWindPressures } from './wind.ts'
 
 const headings: Readonly<Record<BuildingWant, string>> = {
   'storey shears': 'Storey shears',
@@ -14,6 +15,8 @@ const headings: Readonly<Record<BuildingWant, string>> = {
   'base shear': 'Base shear',
   'storey forces': 'Storey forces',
   'diaphragm forces': 'Diaphragm forces',
+  'wind pressures': 'Wind pressures',
+  'wind forces': 'Wind forces',
 }
 
 /** @param level the level that the working names, if any */
@@ -25,11 +28,34 @@ export function explainBuilding(
   context: Context,
 ): readonly Piece[] {
   const head: readonly Piece[] = request.whole ? [{ kind: 'heading', id: '', text: context.words(headings[want]) }] : []
-  if (want === 'storey shears') return [...head, ...explainStoreys(sheet, level, request, context)]
-  const made = sheet.seismic?.()
-  if (!made) return [...head, { kind: 'fault', diagnostics: [noSeismic(request)] }]
-  if (!made.ok) return [...head, { kind: 'fault', diagnostics: made.because }]
-  return [...head, ...explainSeismic(want, made.value, request, context)]
+  return [...head, ...piecesOf(want, sheet, level, request, context)]
+}
+
+function piecesOf(
+  want: BuildingWant,
+  sheet: Worksheet,
+  level: LevelWork | undefined,
+  request: Request,
+  context: Context,
+): readonly Piece[] {
+  switch (want) {
+    case 'storey shears':
+      return explainStoreys(sheet, level, request, context)
+    case 'wind pressures':
+      return explainWindPressures(sheet, level, request, context)
+    case 'wind forces':
+      return explainWindForces(sheet, level, request, context)
+    case 'design spectrum':
+    case 'base shear':
+    case 'storey forces':
+    case 'diaphragm forces': {
+      const made = sheet.seismic?.()
+      if (!made) return [{ kind: 'fault', diagnostics: [noSeismic(request)] }]
+      return made.ok
+        ? explainSeismic(want, made.value, request, context)
+        : [{ kind: 'fault', diagnostics: made.because }]
+    }
+  }
 }
 
 const noSeismic = ({ at }: Request) =>

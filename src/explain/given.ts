@@ -14,6 +14,7 @@ const titles: Readonly<Record<string, string>> = {
   openings: 'Openings in walls',
   forces: 'Forces',
   seismic: 'Seismic',
+  wind: 'Wind',
 }
 
 export function explainGiven(block: Block, context: Context): readonly Piece[] {

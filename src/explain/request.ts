@@ -29,7 +29,7 @@ export type Want = (typeof wants)[number]
 /** What tells of all levels at once; a level, where one is named, is worked in full. */
 export const seismicWants = ['design spectrum', 'base shear', 'storey forces', 'diaphragm forces'] as const
 export type SeismicWant = (typeof seismicWants)[number]
-export const buildingWants = ['storey shears', ...seismicWants] as const
+export const buildingWants = ['storey shears', ...seismicWants, 'wind pressures', 'wind forces'] as const
 export type BuildingWant = (typeof buildingWants)[number]
 
 /** Lists of the whole document rather than of a level. */

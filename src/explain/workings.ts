@@ -9,14 +9,14 @@ import type { LevelWork } from '../compute/level.ts'
 import { pierShearsOf } from '../compute/pier-shears.ts'
 import { casesShown, wallsShown } from './chosen.ts'
 import type { Context } from './context.ts'
+import { explainDesignShears } from './design.ts'
 import { displacedFigure, elevations, figure, flatAll, plan } from './figures.ts'
 import { explainMass, explainPolarMoment } from './mass.ts'
 import { explainPierShears } from './piers.ts'
 import type { Request, Want } from './request.ts'
-import { explainEccentricity, explainRigidity, explainStiffness } from './rigidity.ts'
+import { explainEccentricity, explainRigidity, explainStiffness, explainWindEccentricity } from './rigidity.ts'
 import {
   equilibriumCheck,
-  explainDesignShears,
   explainDisplacement,
   explainEquilibrium,
   explainTorsion,
@@ -81,7 +81,9 @@ function answer(want: Want, level: LevelWork, request: Request, context: Context
       const forces = level.forces()
       if (!forces.ok) return forces
       const acting = forces.value ? level.acting() : undefined
-      return good(explainEccentricity(eccentricity.value, acting?.ok ? acting.value : undefined, context))
+      const worked = explainEccentricity(eccentricity.value, acting?.ok ? acting.value : undefined, context)
+      const wind = level.hasWind() ? level.distribution() : good(undefined)
+      return wind.ok ? good([...worked, ...explainWindEccentricity(wind.value, context)]) : wind
     }
     case 'elevations':
       return request.whole && level.givens.openings.length === 0 ? good([]) : elevations(level, request, context)

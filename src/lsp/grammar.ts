@@ -7,6 +7,7 @@ import { casesOf } from '../compute/cases.ts'
 import { type AnyWant, details, type WHOLE, type WHOLE_SEISMIC } from '../explain/request.ts'
 import { endsWords, materials } from '../model/construction.ts'
 import { levelWalls } from '../model/levels.ts'
+import { exposures } from '../model/wind-directional.ts'
 import type { Topic } from '../read/topics.ts'
 import { seismicFields } from './seismic-fields.ts'
 
@@ -45,6 +46,21 @@ const words = (list: readonly string[], says: string): Field => ({ says, holds: 
 
 const note = field({ kind: 'text' }, 'Yours: a note, printed with the row.')
 const none: Fields = {}
+
+/** @param of the head of a pressure's id: the level's of a row, or that of the whole building */
+function pressures(of: string): Fields {
+  const sides = ['windward', 'leeward'].flatMap(side => ['', ' x', ' y'].map(axis => ({ side, axis })))
+  return Object.fromEntries(
+    sides.map(({ side, axis }) => [
+      `${side}${axis}`,
+      value(
+        'areaLoad',
+        `${of}.${side}.${axis.trim() || 'x'}`,
+        `Pressure on the ${side} walls${axis && `, wind along${axis}`}.`,
+      ),
+    ]),
+  )
+}
 
 export const grammar: Readonly<Record<Topic, TopicFields>> = {
   grid: {
@@ -186,6 +202,30 @@ export const grammar: Readonly<Record<Topic, TopicFields>> = {
     columns: none,
     settings: seismicFields(),
   },
+  wind: {
+    says: 'Wind on the building: by the directional procedure of ASCE 7, or as pressures that are stated.',
+    columns: { level: field({ kind: 'level' }, 'A level.'), ...pressures('ROW.wind') },
+    settings: {
+      standard: words(['ASCE 7-22', 'ASCE 7-16'], 'The standard, where it is not that of the front matter.'),
+      V: value('speed', 'wind.V', 'Basic wind speed.'),
+      exposure: words(exposures, 'The exposure category.'),
+      K_d: value('number', 'wind.K_d', 'Directionality factor; 0.85 where it is left out.'),
+      K_zt: value('number', 'wind.K_zt', 'Topographic factor; 1 where it is left out.'),
+      K_e: value('number', 'wind.K_e', 'Ground elevation factor; 1 where it is left out.'),
+      'ground elevation': value('length', 'wind.ground', 'Elevation of the ground above sea level, in place of K_e.'),
+      enclosure: words(['enclosed', 'partially enclosed'], 'How the building is enclosed.'),
+      building: words(['rigid'], 'That the building is rigid, as the procedure asks.'),
+      G: value('number', 'wind.G', 'Gust-effect factor; 0.85 where it is left out.'),
+      roof: words(['flat', 'gable'], 'Shape of the roof.'),
+      slope: value('angle', 'wind.slope', 'Slope of a gable roof.'),
+      ridge: words(['x', 'y'], 'The direction along which the ridge of a gable roof runs.'),
+      parapet: value('length', 'wind.parapet', 'Height of the parapet above the roof.'),
+      h: value('length', 'wind.h', 'Mean roof height; left out, it follows from the levels and the slope.'),
+      cases: field({ kind: 'text' }, 'The wind load cases that are worked, as in 1, 2, 3, 4.'),
+      eccentricity: value('share', 'wind.eccentricity', 'Share of the width by which stated wind is moved aside.'),
+      ...pressures('wind'),
+    },
+  },
   equations: {
     says: 'Your own formulas, each printed in letters, with values put in, and with its result.',
     columns: none,
@@ -234,6 +274,8 @@ export const wantSays: Readonly<Record<AnyWant | typeof WHOLE | typeof WHOLE_SEI
   'base shear': 'period, coefficient and base shear of each direction',
   'storey forces': 'the base shear shared over the levels',
   'diaphragm forces': 'what the diaphragm of each level is designed for',
+  'wind pressures': 'how the pressures of wind follow from its speed',
+  'wind forces': 'what each level takes of the wind',
   standard: 'rules of the standard that are known here, with their clauses',
   criteria: 'what the calculation starts from',
   checks: 'every check, the largest ratio first',

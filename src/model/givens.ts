@@ -21,6 +21,7 @@ export interface Givens {
   readonly grid: readonly Block[]
   readonly levelTable: readonly Block[]
   readonly constructions: readonly Block[]
+  readonly wind: readonly Block[]
   readonly equations: readonly Block[]
   readonly seismic: readonly Block[]
   /** `forces` that name no level and hold a table of them. */
@@ -68,6 +69,7 @@ export function gather(blocks: readonly Block[]): Givens {
     grid: of('grid'),
     levelTable,
     constructions: of('construction'),
+    wind: of('wind'),
     equations: of('equations'),
     seismic: of('seismic'),
     forceTables: of('forces').filter(isForceTable),
@@ -125,7 +127,7 @@ export function liveGivens(first: Givens, ledger: Ledger): LiveGivens {
   return withParts(others, shared)
 }
 
-const sharedParts = ['grid', 'levelTable', 'forceTables', 'seismic'] as const
+const sharedParts = ['grid', 'levelTable', 'forceTables', 'seismic', 'wind'] as const
 const levelParts = ['areas', 'lineLoads', 'pointLoads', 'walls', 'openings', 'forces'] as const
 
 /** The same object with each part as a property that reads its cell. */

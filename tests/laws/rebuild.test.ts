@@ -129,6 +129,8 @@ describe('a build that follows others', () => {
     ['tests/golden/two-levels/input.md', 20],
     ['tests/golden/openings/input.md', 12],
     ['tests/golden/seismic/input.md', 12],
+    ['tests/golden/wind-gable/input.md', 4],
+    ['tests/golden/wind-stated/input.md', 8],
     ['samples/millrace.md', 6],
     ['samples/lindenkai.md', 6],
     ['samples/totara.md', 6],

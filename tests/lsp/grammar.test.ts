@@ -12,6 +12,8 @@ import { levelColumns, levelSettings } from '../../src/model/levels.ts'
 import { lineColumns, pointColumns } from '../../src/model/loads.ts'
 import { openingColumns } from '../../src/model/openings.ts'
 import { wallColumns } from '../../src/model/walls.ts'
+import { directionalSettings } from '../../src/model/wind-directional.ts'
+import { statedWindColumns, statedWindSettings } from '../../src/model/wind-stated.ts'
 import { type Topic, topics } from '../../src/read/topics.ts'
 
 const columns: Readonly<Partial<Record<Topic, ColumnRules>>> = {
@@ -22,12 +24,14 @@ const columns: Readonly<Partial<Record<Topic, ColumnRules>>> = {
   walls: wallColumns,
   openings: openingColumns,
   forces: forceColumns,
+  wind: statedWindColumns,
 }
 const settings: Readonly<Partial<Record<Topic, readonly string[]>>> = {
   grid: gridSettings,
   levels: levelSettings,
   construction: [...commonSettings, ...Object.values(materials).flatMap(each => [...each.needed, ...each.optional])],
   seismic: seismicNames,
+  wind: [...directionalSettings, ...statedWindSettings],
   forces: [...forceSettings, ...forceTableSettings],
   working: workingSettings,
 }

@@ -16,6 +16,7 @@ import { type Host, publish } from '../../src/publish.ts'
 import { noFrontMatter } from '../../src/read/front.ts'
 import { laterTopics, topics } from '../../src/read/topics.ts'
 import { profiles } from '../../src/standards/catalogue.ts'
+import { windy } from '../support/windy.ts'
 
 const root = fileURLToPath(new URL('../..', import.meta.url))
 const read = (path: string): string => readFileSync(join(root, path), 'utf8')
@@ -277,8 +278,16 @@ const homes: readonly Home[] = [
     },
   },
   { text: chapter('04-workings'), names: { LEVEL: 'roof', AREA: 'Porch', WALL: 'P', CASE: 'EY', NAME: 'CMU8' } },
-  { text: chapter('03-building'), names: { LEVEL: 'loft' } },
   { text: read('samples/millrace.md'), names: { LEVEL: 'roof', AREA: 'West', WALL: 'A1', CASE: 'EX' } },
+  { text: chapter('03-building'), names: { LEVEL: 'loft', BAND: 'S1', CASE: 'WXY4-+' } },
+  ...[
+    'V: 115 mph\nexposure: C\nroof: flat\nparapet: 3 ft',
+    'windward: 18 psf\nleeward: 12 psf\neccentricity: 10%\nparapet: 3 ft',
+    '| level | windward | leeward |\n|---|---|---|\n| roof | 20 psf | 12 psf |',
+  ].map(wind => ({
+    text: `${windy([{ name: 'roof', at: 20, size: [60, 40] }], wind)}\n\n\`\`\`forces roof\nx: 9 kip\ny: 9 kip\n\`\`\``,
+    names: { LEVEL: 'roof', BAND: 'S1', CASE: 'WX' },
+  })),
 ]
 
 const filledIn = (pattern: string, names: Names): string => pattern.replace(/[A-Z]{4,}/g, word => names[word] ?? word)
