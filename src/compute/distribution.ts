@@ -91,16 +91,20 @@ export function workDistribution(
     readonly [A in Axis]?: Value
   }
   const cases = casesOf(axes).map(each => workCase(each, rigidity, acting, storey[each.axis], e, display))
+  return { level, eccentricity: e, acting, storey, cases, ...designed(rigidity, cases, display) }
+}
+
+/** The design shears that follow from the shears of all cases, and what governs them. */
+export function designed(
+  rigidity: Rigidity,
+  cases: readonly CaseResult[],
+  display: Display,
+): Pick<Distribution, 'design' | 'governingCase' | 'governingWall'> {
   const design = designTable(rigidity, cases, display)
   const largest = design.column('v').numbers
   return {
-    level,
-    eccentricity: e,
-    acting,
-    storey,
-    cases,
     design,
-    governingCase: wallIdx => governingCase(level, cases, design, wallIdx),
+    governingCase: wallIdx => governingCase(rigidity.level, cases, design, wallIdx),
     governingWall: largest.reduce((best, value, i) => (value > (largest[best] ?? 0) * (1 + 1e-12) ? i : best), 0),
   }
 }

@@ -9,6 +9,7 @@ import type { LevelWork } from './level.ts'
 import { pierShearsOf } from './pier-shears.ts'
 import type { Pierced } from './pierced.ts'
 import type { Moduli } from './stiffness.ts'
+import type { TiedDistribution } from './tied.ts'
 
 type Found = Result<Value | Word> | undefined
 
@@ -31,7 +32,7 @@ function cellOf(table: Tabulation | undefined, row: string | undefined, keys: re
 export function levelValue(level: LevelWork, path: readonly string[]): Found {
   const [head, ...rest] = path
   const [a, b, c, d] = rest
-  if (rest.length > (head === 'wall' ? 4 : 3)) return undefined
+  if (rest.length > (head === 'alone' ? 5 : head === 'wall' ? 4 : 3)) return undefined
   switch (head) {
     case 'area':
     case 'perimeter':
@@ -71,6 +72,17 @@ export function levelValue(level: LevelWork, path: readonly string[]): Found {
       return rest.length === 0 ? from(level.forces(), forces => forces?.accidental) : undefined
     case 'storey':
       return from(level.distribution(), ({ storey }) => axisOf(storey, a))
+    case 'alone':
+      return valueAlone(level, rest)
+    case 'height':
+      return rest.length === 0 ? tiedValue(level, ({ height }) => height) : undefined
+    case 'moved':
+      return tiedValue(level, ({ cases }) => {
+        const moved = cases.find(each => each.case.name === b)?.tied.moved
+        return a === 'x' || a === 'y' || a === 'turn' ? moved?.[a] : undefined
+      })
+    case 'meeting':
+      return tiedValue(level, ({ cases }) => cases.find(each => each.case.name === a)?.tied.meeting)
     case 'wall':
       return wallValue(level, a ?? '', b, c, d)
     case 'T':
@@ -123,6 +135,30 @@ function caseValue(level: LevelWork, what: 'T' | 'u' | 'v' | 'phi', name: string
   })
 }
 
+/** A value of the continuous walls; none where storeys are worked on their own. */
+function tiedValue(level: LevelWork, pick: (tied: TiedDistribution) => Value | undefined): Found {
+  const tied = level.tied()
+  return tied && from(tied, pick)
+}
+
+/** The storey on its own, beside the distribution of continuous walls: only what is worked again has a name of its own. */
+function valueAlone(level: LevelWork, path: readonly string[]): Found {
+  if (!level.tied() || path[0] === 'alone') return undefined
+  const id = [level.name, 'alone', ...path].join('.')
+  const found = levelValue({ ...level, distribution: level.alone, tied: () => undefined }, path)
+  return found?.ok && found.value.id !== id ? undefined : found
+}
+
+const tiedColumns: Readonly<Record<string, string>> = { delta: 'delta', theta: 'theta_t', M: 'M_b', Mt: 'M_t' }
+
+function tiedWallValue(level: LevelWork, wall: string, key: string, caseName: string): Found {
+  return tiedValue(level, ({ cases }) => {
+    const tied = cases.find(each => each.case.name === caseName)?.tied
+    const column = tiedColumns[key] ?? ''
+    return cellOf(tied?.beams, wall, [column]) ?? cellOf(tied?.springs, wall, [column])
+  })
+}
+
 function wallValue(
   level: LevelWork,
   wall: string,
@@ -150,6 +186,16 @@ function wallValue(
       const line = level.line(wall)
       return line?.ok ? good(line.value[key]) : line
     }
+    case 'EI':
+    case 'GA': {
+      const section = level.section(wall)
+      return section && from(section, found => found?.[key])
+    }
+    case 'delta':
+    case 'theta':
+    case 'M':
+    case 'Mt':
+      return tiedWallValue(level, wall, key, caseName ?? '')
     case 'rho':
       return from(level.rigidity(), ({ walls }) => cellOf(walls, wall, ['rho']))
     case 'v':

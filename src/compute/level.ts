@@ -37,8 +37,10 @@ import { drawnOnly } from './opening-faults.ts'
 import { type Pierced, workPierced } from './pierced.ts'
 import { type Plan, workPlan } from './plan.ts'
 import { type Rigidity, type Spring, workRigidity } from './rigidity.ts'
+import { type WallSection, workSection } from './section.ts'
 import { type Moduli, type WallLine, workLine, workModuli, workStiffness } from './stiffness.ts'
 import { type Acting, accidentalArm, type Eccentricity, workEccentricity } from './storey.ts'
+import type { TiedDistribution } from './tied.ts'
 
 /** What a level needs from the rest of the building. */
 export interface Surroundings {
@@ -51,6 +53,8 @@ export interface Surroundings {
   readonly strays: (topic: string) => readonly Diagnostic[]
   /** The levels above this one, the nearest first. */
   readonly above: () => Result<readonly LevelWork[]>
+  /** The distribution of a level whose walls run through the levels; absent where each storey is worked on its own. */
+  readonly tied: (level: string) => Result<TiedDistribution> | undefined
 }
 
 export interface LevelWork {
@@ -75,6 +79,14 @@ export interface LevelWork {
   readonly forces: () => Result<Forces | undefined>
   readonly acting: () => Result<Acting>
   readonly distribution: () => Result<Distribution>
+  /** The storey worked on its own, whatever its walls do above and below. */
+  readonly storeyAlone: () => Result<Distribution>
+  /** The same under ids of its own, `L.alone.…`, to stand beside the distribution of continuous walls. */
+  readonly alone: () => Result<Distribution>
+  /** Present where walls run through the levels. */
+  readonly tied: () => Result<TiedDistribution> | undefined
+  /** E I and G A_v of a built wall; a value of undefined for a wall of stated stiffness. */
+  readonly section: (name: string) => Result<WallSection | undefined> | undefined
   readonly displacements: () => Result<readonly Displacement[]>
 }
 
@@ -283,15 +295,44 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     })
   })
 
-  const distribution = once('storey', (): Result<Distribution> => {
+  /** @param as the level's name in the ids */
+  const workAlone = (as: string): Result<Distribution> => {
     const above = around.above()
     if (!above.ok) return above
-    if (above.value.length > 0) scope.assume(storeyByStorey)
     const actings = all([...above.value.map(level => level.acting()), acting()])
     const parts = together({ rigidity: rigidity(), mass: mass(), display: display(), actings })
     if (!parts.ok) return parts
-    return good(workDistribution(parts.value.rigidity, parts.value.actings, parts.value.mass, parts.value.display))
+    const { rigidity: own, mass: m, display: shown } = parts.value
+    return good(workDistribution({ ...own, level: as }, parts.value.actings, m, shown))
+  }
+  const storeyAlone = once('storey', () => workAlone(name))
+  const alone = once('alone', () => workAlone(`${name}.alone`))
+
+  const distribution = once('shears', (): Result<Distribution> => {
+    const tied = around.tied(name)
+    if (tied) return tied
+    const above = around.above()
+    if (above.ok && above.value.length > 0) scope.assume(storeyByStorey)
+    return storeyAlone()
   })
+
+  const sections = new Map<string, () => Result<WallSection | undefined>>()
+  const sectionFor = (wall: Wall): Result<WallSection | undefined> => {
+    let known = sections.get(wall.name)
+    if (!known) {
+      known = once(`wall.${wall.name}.EI`, () => workWallSection(wall), wall.span)
+      sections.set(wall.name, known)
+    }
+    return known()
+  }
+
+  const workWallSection = (wall: Wall): Result<WallSection | undefined> => {
+    if (wall.kind === 'stated') return good(undefined)
+    const parts = together({ made: partsOf(wall), cut: piercedFor(wall) })
+    if (!parts.ok) return parts
+    const { made, cut } = parts.value
+    return good(workSection(wall, lineFor(wall).L, made.construction, made.moduli, cut?.k, name, scope.display))
+  }
 
   const displacements = once('displacement', (): Result<readonly Displacement[]> => {
     const parts = together({
@@ -336,6 +377,13 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     forces,
     acting,
     distribution,
+    storeyAlone,
+    alone,
+    tied: () => around.tied(name),
+    section: wall => {
+      const found = wallOf(wall)
+      return found && sectionFor(found)
+    },
     displacements,
   }
 }

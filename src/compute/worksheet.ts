@@ -11,7 +11,7 @@ import { type Equation, readEquations, workEquation } from '../model/equations.t
 import type { Choices } from '../model/front.ts'
 import type { Givens } from '../model/givens.ts'
 import { type Grid, readGrid } from '../model/grid.ts'
-import { type LevelLine, readLevels } from '../model/levels.ts'
+import { type LevelLine, readLevels, readWallModel } from '../model/levels.ts'
 import { type Limit, limitLines, workLimit } from '../model/limits.ts'
 import type { Assumption, Scope } from '../model/scope.ts'
 import type { Block } from '../read/block.ts'
@@ -20,6 +20,8 @@ import { constructionValue, levelIds, levelValue } from './ids.ts'
 import { type LevelWork, levelWork } from './level.ts'
 import { topicMissing } from './level-faults.ts'
 import { type LoadedLevel, type Storeys, workStoreys } from './storeys.ts'
+import type { TiedDistribution } from './tied.ts'
+import { tieWalls } from './tying.ts'
 
 /** A value that a cell works from others, and the place of the cell. */
 export interface StatedCell {
@@ -89,8 +91,21 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
         const names = lines.value.slice(0, Math.max(0, mine)).map(({ name }) => name)
         return good(names.flatMap(name => levels.find(other => other.name === name) ?? []))
       },
+      tied: name => (readWallModel(givens.levelTable) === 'continuous' ? tiedLevel(name) : undefined),
     }),
   )
+
+  const tied = ledger.once('walls', givens.levelTable[0]?.info ?? nowhere, () => {
+    const lines = levelLines()
+    return lines.ok ? tieWalls(lines.value, levels, scope) : lines
+  })
+
+  function tiedLevel(name: string): Result<TiedDistribution> {
+    const made = tied()
+    if (!made.ok) return made
+    const found = made.value.find(({ level }) => level === name)
+    return found ? good(found) : bad([])
+  }
 
   const storeys = ledger.once('storeys', levels[0]?.anchor ?? nowhere, (): Result<Storeys> => {
     const stated = levelLines()

@@ -7,6 +7,7 @@ import { isLimit } from '../model/limits.ts'
 import type { Block } from '../read/block.ts'
 import type { Document, QuoteMark } from '../read/document.ts'
 import { diagnose } from '../read/text.ts'
+import { explainBuilding } from './building.ts'
 import type { Context } from './context.ts'
 import { explainValue } from './equation.ts'
 import { explainGiven } from './given.ts'
@@ -16,7 +17,6 @@ import { explainQuote } from './quote.ts'
 import { explainRegister } from './registers.ts'
 import { type DocumentWant, isBuildingWant, isDocumentWant, type Request, readRequest } from './request.ts'
 import type { Piece, Quote, Register } from './sheet.ts'
-import { explainStoreys } from './storeys.ts'
 import { explainWant } from './workings.ts'
 
 export interface Explained {
@@ -57,7 +57,7 @@ function workingPieces(block: Block, request: Request, sheet: Worksheet, context
   return request.wants.flatMap((want): readonly Piece[] => {
     if (isDocumentWant(want)) return explainRegister(want, sheet, context)
     if (isBuildingWant(want) && (level || !block.about))
-      return explainStoreys(sheet, block.about && level, request, context)
+      return explainBuilding(want, sheet, block.about && level, request, context)
     return level && !isBuildingWant(want)
       ? explainWant(want, level, request, context)
       : [{ kind: 'fault', diagnostics: [noLevel(block, names)] }]

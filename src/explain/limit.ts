@@ -5,7 +5,7 @@ import { printed, printedNumeral, type Value } from '../base/value.ts'
 import type { Worksheet } from '../compute/worksheet.ts'
 import type { Block } from '../read/block.ts'
 import type { Context } from './context.ts'
-import { shownCheck } from './shears.ts'
+import { shownCheck } from './residual.ts'
 import type { Check, Piece } from './sheet.ts'
 
 /** The comment says what is checked and, after a semicolon, where the limit is from. */

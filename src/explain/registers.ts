@@ -4,7 +4,7 @@ import type { Assumption } from '../model/scope.ts'
 import type { Context } from './context.ts'
 import { explainCriteria } from './criteria.ts'
 import type { DocumentWant } from './request.ts'
-import { shownCheck } from './shears.ts'
+import { shownCheck } from './residual.ts'
 import type { Check, Piece } from './sheet.ts'
 
 /** Worked after everything else, since they list what the rest did. */

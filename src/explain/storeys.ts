@@ -13,19 +13,18 @@ import { explainTable } from './table.ts'
 export function explainStoreys(
   sheet: Worksheet,
   level: LevelWork | undefined,
-  { detail, whole }: Request,
+  { detail }: Request,
   context: Context,
 ): readonly Piece[] {
-  const head: readonly Piece[] = whole ? [{ kind: 'heading', id: '', text: context.words('Storey shears') }] : []
   const made = sheet.storeys()
-  if (!made.ok) return [...head, { kind: 'fault', diagnostics: made.because }]
+  if (!made.ok) return [{ kind: 'fault', diagnostics: made.because }]
   const { axes, table } = made.value
   const named = level ? table.rows.indexOf(level.name) : -1
   const at = named === -1 ? table.rows.length - 1 : named
   const steps = axes.map(axis => explainValue(table.column(lettersOf[axis].V.name).cell(at), context))
-  if (detail === 'result') return [...head, ...steps]
+  if (detail === 'result') return steps
   const rows = tableOf(made.value, context)
-  if (detail === 'table') return [...head, rows]
+  if (detail === 'table') return [rows]
   const drawn = context.sketch.storeys(made.value)
   const figure: Piece = drawn.ok
     ? {
@@ -36,7 +35,7 @@ export function explainStoreys(
         ...drawn.value,
       }
     : { kind: 'fault', diagnostics: drawn.because }
-  return [...head, rows, figure, ...steps]
+  return [rows, figure, ...steps]
 }
 
 /** One row a level from the top down, the forces summed below: their sum is the shear of the lowest storey. */

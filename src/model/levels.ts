@@ -19,6 +19,20 @@ export interface LevelLine {
   readonly span: Span
 }
 
+/** How walls of one name on successive levels stand together. */
+export type WallModel = 'storey by storey' | 'continuous'
+
+const wallModels: ReadonlyMap<string, WallModel> = new Map([
+  ['storey by storey', 'storey by storey'],
+  ['story by story', 'storey by storey'],
+  ['continuous', 'continuous'],
+])
+
+/** The model that the levels ask for; what cannot be read is told with the levels. */
+export function readWallModel([block]: readonly Block[]): WallModel {
+  return (block && wallModels.get(settingOf(block, 'walls')?.text ?? '')) ?? 'storey by storey'
+}
+
 const elevation = sym('z', 'z', 'length')
 
 /** Sorted from the highest down; one level without an elevation when the document states none. */
@@ -33,14 +47,14 @@ export function readLevels(blocks: readonly Block[], onlyName: string, scope: Sc
     ])
   const walls = settingOf(block, 'walls')
   const faults = [...strangeSettings(block, ['walls']), ...strangeLines(block)]
-  if (walls && walls.text !== 'storey by storey' && walls.text !== 'story by story')
+  if (walls && !wallModels.has(walls.text))
     faults.push(
       diagnose(
         'error',
-        'walls-continuous',
+        'unknown-wall-model',
         walls.span,
-        `walls ${walls.text} are not worked by this version`,
-        'Walls are worked storey by storey.',
+        `walls cannot be ${walls.text}`,
+        'Write walls: storey by storey (each storey on its own) or walls: continuous (walls of one name are one cantilever).',
       ),
     )
   const records = recordsOf(block, { needed: ['level', 'elevation'], optional: [] })
