@@ -14,7 +14,7 @@ export interface WallSection {
 }
 
 export const bending = sym('EI', 'E\\,I', 'bendingStiffness')
-export const shearing = sym('GA', 'G\\,A_v', 'force')
+export const shearing = sym('GA', 'G\\,A_v', 'shearStiffness')
 const E = sym('E', 'E', 'modulus')
 const G = sym('G', 'G', 'modulus')
 const t = sym('t', 't', 'thickness')

@@ -5,7 +5,7 @@
  * all walls are solved together (`stack.ts`), and put back: wall shears follow from them by the slope-deflection
  * formulas printed, must balance the storey, and the moments of a wall must meet at each level.
  */
-import { formula, sym } from '../base/formula.ts'
+import type { Formula, Sym } from '../base/formula.ts'
 import type { Display } from '../base/kind.ts'
 import { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
@@ -16,7 +16,8 @@ import { residualOf } from './equilibrium.ts'
 import type { Rigidity } from './rigidity.ts'
 import { bending, shearing, type WallSection } from './section.ts'
 import { drifts, type Stack, stackOf, type Tie, wallForces } from './stack.ts'
-import { c, k, phi, rho, s, u0, V, v0, xm, xr, ym, yr } from './symbols.ts'
+import { c, k, phi, rho, s, u0, V, v0 } from './symbols.ts'
+import { apart, axisMoved, foot, greatest, head, moved, tiedFormulas } from './tied-formulas.ts'
 import { cantilever } from './upright.ts'
 
 /** A level as the continuous model takes it. */
@@ -55,78 +56,6 @@ export interface TiedDistribution extends Distribution {
   readonly cases: readonly TiedResult[]
   /** Height of the storey. */
   readonly height: Value
-}
-
-export const storeyHeight = sym('h_s', 'h_s', 'length')
-const z = sym('z', 'z', 'length')
-const zb = sym('z_b', 'z_b', 'length')
-const shearShape = sym('Phi', '\\Phi', 'number')
-const sway = sym('a', 'a', 'stiffness')
-const along = sym('delta', '\\delta', 'displacement')
-const foot = sym('theta_b', '\\theta_b', 'rotation')
-const head = sym('theta_t', '\\theta_t', 'rotation')
-const Mt = sym('M_t', 'M_t', 'moment')
-const Mb = sym('M_b', 'M_b', 'moment')
-export const moved = {
-  x: sym('d_x', 'd_x', 'displacement'),
-  y: sym('d_y', 'd_y', 'displacement'),
-  turn: sym('Theta', '\\Theta', 'rotation'),
-}
-const axisMoved = { x: sym('D_x', 'D_x', 'displacement'), y: sym('D_y', 'D_y', 'displacement') }
-const below = {
-  x: sym('D_xb', 'D_{x,b}', 'displacement'),
-  y: sym('D_yb', 'D_{y,b}', 'displacement'),
-  turn: sym('Theta_b', '\\Theta_b', 'rotation'),
-}
-const apart = sym('Delta_M', '\\Delta M', 'moment')
-const greatest = sym('M_max', 'M_{\\max}', 'moment')
-const meets = sym('R', 'R', 'residual')
-
-const HEIGHTS = 'elevations of the levels'
-const SLOPES = 'slope deflection of a beam with flexure and shear (derived)'
-const RIGID = 'small rotation of a rigid diaphragm'
-
-export const tiedFormulas = {
-  height: formula({ gives: storeyHeight, body: 'z - z_b', of: [z, zb], source: HEIGHTS }),
-  lowest: formula({ gives: storeyHeight, body: 'z', of: [z], source: `${HEIGHTS}; the foundation is at 0` }),
-  shape: formula({
-    gives: shearShape,
-    body: '12*EI/(GA*h_s^2)',
-    of: [bending, shearing, storeyHeight],
-    source: SLOPES,
-  }),
-  sway: formula({
-    gives: sway,
-    body: '12*EI/(h_s^3*(1 + Phi))',
-    of: [bending, storeyHeight, shearShape],
-    source: SLOPES,
-  }),
-  along: formula({ gives: along, body: 'c*u_0 + s*v_0 + rho*phi', of: [c, u0, s, v0, rho, phi], source: RIGID }),
-  shear: formula({
-    gives: V,
-    body: 'a*(delta - h_s*(theta_b + theta_t)/2)',
-    of: [sway, along, storeyHeight, foot, head],
-    source: SLOPES,
-  }),
-  stated: formula({ gives: V, body: 'k*delta', of: [k, along], source: 'stated stiffness, storey by storey' }),
-  head: formula({
-    gives: Mt,
-    body: 'EI*(theta_t - theta_b)/h_s - V*h_s/2',
-    of: [bending, head, foot, storeyHeight, V],
-    source: SLOPES,
-  }),
-  foot: formula({ gives: Mb, body: 'M_t + V*h_s', of: [Mt, V, storeyHeight], source: 'statics' }),
-  movedX: formula({ gives: axisMoved.x, body: 'D_xb + u_0 + phi*y_r', of: [below.x, u0, phi, yr], source: RIGID }),
-  movedY: formula({ gives: axisMoved.y, body: 'D_yb + v_0 - phi*x_r', of: [below.y, v0, phi, xr], source: RIGID }),
-  turned: formula({ gives: moved.turn, body: 'Theta_b + phi', of: [below.turn, phi], source: RIGID }),
-  massX: formula({ gives: moved.x, body: 'D_x - Theta*y_m', of: [axisMoved.x, moved.turn, ym], source: RIGID }),
-  massY: formula({ gives: moved.y, body: 'D_y + Theta*x_m', of: [axisMoved.y, moved.turn, xm], source: RIGID }),
-  meeting: formula({
-    gives: meets,
-    body: 'Delta_M/M_max',
-    of: [apart, greatest],
-    source: 'moments meet at each level',
-  }),
 }
 
 /** The columns of a table of walls that run through, in the order in which they are worked. */
@@ -229,7 +158,7 @@ function solveCase(
   const about = caseOnPage(each.name)
   const moves = rising.map(({ level, rigidity, display }, i) => {
     const [u = 0, v = 0, turn = 0] = drift.subarray(3 * i, 3 * i + 3)
-    const value = (key: 'u' | 'v' | 'phi', of: typeof u0, si: number) =>
+    const value = (key: 'u' | 'v' | 'phi', of: Sym, si: number) =>
       answer(`${level}.${key}.${each.name}`, of, si, what, display, about)
     return {
       u: value('u', u0, u - turn * (rigidity.y.si - axis.y)),
@@ -264,14 +193,7 @@ function actingOn({ cases, level }: Distribution, { name, axis }: Case): Axis & 
 }
 
 /** A number that the solution of many equations gives. */
-function answer(
-  id: string,
-  of: typeof u0,
-  si: number,
-  what: string,
-  display: Display,
-  ...about: readonly string[]
-): Value {
+function answer(id: string, of: Sym, si: number, what: string, display: Display, ...about: readonly string[]): Value {
   return {
     id,
     tex: texAbout(of.tex, ...about),
@@ -288,7 +210,7 @@ function movements(
   moves: Solved['drifts'],
 ): readonly TiedCase['moved'][] {
   const about = caseOnPage(name)
-  const still = (of: typeof u0, level: string, display: Display): Value =>
+  const still = (of: Sym, level: string, display: Display): Value =>
     answer(`${level}.${of.name}.${name}`, of, 0, 'the foundation stands still', display, about)
   const first = rising[0]
   if (!first) return []
@@ -301,7 +223,7 @@ function movements(
     const move = moves[i]
     if (!move) throw new Error(`${level} does not move`)
     const { u, v, phi: turns } = move
-    const step = (key: string, rule: typeof tiedFormulas.movedX, inputs: Readonly<Record<string, Value>>) =>
+    const step = (key: string, rule: Formula, inputs: Readonly<Record<string, Value>>) =>
       work(`${level}.${key}.${name}`, rule, inputs, display, [level, about])
     X = step('moved.origin.x', tiedFormulas.movedX, { D_xb: X, u_0: u, phi: turns, y_r: rigidity.y })
     Y = step('moved.origin.y', tiedFormulas.movedY, { D_yb: Y, v_0: v, phi: turns, x_r: rigidity.x })
@@ -358,7 +280,7 @@ function beamTable(at: TiedLevel, storey: number, h_s: Value, { case: each, turn
   const name = each.name
   const about = [caseOnPage(name)]
   const held = (row: string): Value =>
-    answer(`${at.level}.wall.${row}.foot`, foot, 0, 'held by the foundation', at.display, row)
+    answer(`${at.level}.wall.${row}.held`, foot, 0, 'held by the foundation', at.display, row)
   return table
     .take(
       bending,
@@ -430,7 +352,7 @@ function meetingOf(at: TiedLevel, storey: number, { case: each, moments }: Solve
     size = Math.max(size, ...(own ?? []).map(Math.abs))
   })
   const about = caseOnPage(each.name)
-  const value = (id: string, of: typeof apart, si: number, what: string) =>
+  const value = (id: string, of: Sym, si: number, what: string) =>
     answer(`${level}.${id}.${each.name}`, of, si, what, display, level, about)
   return work(
     `${level}.meeting.${each.name}`,

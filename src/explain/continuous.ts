@@ -10,7 +10,8 @@ import { caseOnPage } from '../compute/cases.ts'
 import type { Distribution } from '../compute/distribution.ts'
 import type { LevelWork } from '../compute/level.ts'
 import { phi, u0, v0 } from '../compute/symbols.ts'
-import { beamColumns, moved, storeyHeight, type TiedDistribution, type TiedResult } from '../compute/tied.ts'
+import { beamColumns, type TiedDistribution, type TiedResult } from '../compute/tied.ts'
+import { moved, storeyHeight } from '../compute/tied-formulas.ts'
 import type { Worksheet } from '../compute/worksheet.ts'
 import { diagnose } from '../read/text.ts'
 import { casesShown, wallsShown } from './chosen.ts'
@@ -35,7 +36,7 @@ export function explainContinuous(
   request: Request,
   context: Context,
 ): Result<readonly Piece[]> {
-  const storeys = storeysOf(sheet)
+  const storeys = storeysOf(sheet, request)
   if (!storeys.ok) return storeys
   const at = level ?? storeys.value.at(-1)?.level
   if (!at) return good([])
@@ -45,16 +46,16 @@ export function explainContinuous(
   return good(cases.value.flatMap(each => caseOf(storeys.value, each.case.name, walls.value, request.detail, context)))
 }
 
-function storeysOf(sheet: Worksheet): Result<readonly Storey[]> {
+function storeysOf(sheet: Worksheet, { at }: Request): Result<readonly Storey[]> {
   const lines = sheet.levelLines()
   if (!lines.ok) return lines
+  if (!sheet.levels.some(level => level.tied())) return bad([notContinuous(at)])
   return all(
-    lines.value.flatMap(({ name, span }): readonly Result<Storey>[] => {
+    lines.value.flatMap(({ name }): readonly Result<Storey>[] => {
       const level = sheet.levels.find(other => other.name === name)
       if (!level) return []
-      const tied = level.tied()
-      if (!tied) return [bad([notContinuous(span)])]
-      const alone = level.alone()
+      const [tied, alone] = [level.tied(), level.alone()]
+      if (!tied) return []
       if (!tied.ok) return [tied]
       return [alone.ok ? good({ level, tied: tied.value, alone: alone.value.cases }) : alone]
     }),
@@ -146,8 +147,8 @@ function movementTable(
       rowHead: 'Level',
       columns: ['u_0', 'v_0', 'phi', 'd_x', 'd_y', 'Theta'],
       words: [
-        { head: 'Forces', ...residual(results.map(each => each.residual.ratio)) },
-        { head: 'Moments', ...residual(results.map(({ tied }) => tied.meeting)) },
+        { head: 'Residual, shears', ...residual(results.map(each => each.residual.ratio)) },
+        { head: 'Residual, moments', ...residual(results.map(({ tied }) => tied.meeting)) },
       ],
     },
     context,
