@@ -8,6 +8,7 @@ import type { Distribution } from './distribution.ts'
 import type { LevelWork } from './level.ts'
 import { pierShearsOf } from './pier-shears.ts'
 import type { Pierced } from './pierced.ts'
+import type { Redundancy } from './redundancy.ts'
 import type { Moduli } from './stiffness.ts'
 import type { TiedDistribution } from './tied.ts'
 
@@ -32,7 +33,7 @@ function cellOf(table: Tabulation | undefined, row: string | undefined, keys: re
 export function levelValue(level: LevelWork, path: readonly string[]): Found {
   const [head, ...rest] = path
   const [a, b, c, d] = rest
-  if (rest.length > (head === 'alone' ? 5 : head === 'wall' ? 4 : 3)) return undefined
+  if (rest.length > (head === 'alone' ? 5 : head === 'wall' || head === 'without' ? 4 : 3)) return undefined
   switch (head) {
     case 'area':
     case 'perimeter':
@@ -72,6 +73,13 @@ export function levelValue(level: LevelWork, path: readonly string[]): Found {
       return rest.length === 0 ? from(level.forces(), forces => forces?.accidental) : undefined
     case 'storey':
       return from(level.distribution(), ({ storey }) => axisOf(storey, a))
+    case 'strength':
+    case 'lengths':
+      return from(level.redundancy(), ({ sums, strengthStated }) =>
+        strengthStated === (head === 'strength') ? axisOf(sums, a) : undefined,
+      )
+    case 'without':
+      return from(level.redundancy(), found => valueWithout(found, rest.join('.'), level.name))
     case 'alone':
       return valueAlone(level, rest)
     case 'height':
@@ -135,6 +143,16 @@ function caseValue(level: LevelWork, what: 'T' | 'u' | 'v' | 'phi', name: string
   })
 }
 
+/** A value of the storey without a wall or a line of them, by the rest of its id. */
+function valueWithout({ losses, turning }: Redundancy, path: string, level: string): Value | undefined {
+  for (const { rows, columns } of [losses, turning])
+    for (const { idOf, cell } of columns) {
+      const at = rows.findIndex((_, i) => idOf(i) === `${level}.without.${path}`)
+      if (at !== -1) return cell(at)
+    }
+  return undefined
+}
+
 /** A value of the continuous walls; none where storeys are worked on their own. */
 function tiedValue(level: LevelWork, pick: (tied: TiedDistribution) => Value | undefined): Found {
   const tied = level.tied()
@@ -177,7 +195,10 @@ function wallValue(
     case 'k':
       return level.stiffness(wall)
     case 'h':
-      return given.height && good(given.height)
+    case 'strength': {
+      const stated = key === 'h' ? given.height : given.strength
+      return stated && good(stated)
+    }
     case 'L':
     case 'x':
     case 'y':
@@ -186,6 +207,8 @@ function wallValue(
       const line = level.line(wall)
       return line?.ok ? good(line.value[key]) : line
     }
+    case 'slenderness':
+      return from(level.redundancy(), ({ walls }) => cellOf(walls, wall, ['h_L']))
     case 'EI':
     case 'GA': {
       const section = level.section(wall)

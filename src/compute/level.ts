@@ -28,6 +28,7 @@ import {
   mixedStiffness,
   rigidAssumptions,
   storeyByStorey,
+  strengthByLength,
   topicMissing,
   unstable,
   wallOutside,
@@ -36,6 +37,7 @@ import { type Mass, workMass } from './mass.ts'
 import { drawnOnly } from './opening-faults.ts'
 import { type Pierced, workPierced } from './pierced.ts'
 import { type Plan, workPlan } from './plan.ts'
+import { type Redundancy, workRedundancy } from './redundancy.ts'
 import { type Rigidity, type Spring, workRigidity } from './rigidity.ts'
 import { type WallSection, workSection } from './section.ts'
 import { type Moduli, type WallLine, workLine, workModuli, workStiffness } from './stiffness.ts'
@@ -88,6 +90,8 @@ export interface LevelWork {
   /** E I and G A_v of a built wall; a value of undefined for a wall of stated stiffness. */
   readonly section: (name: string) => Result<WallSection | undefined> | undefined
   readonly displacements: () => Result<readonly Displacement[]>
+  /** The storey without each of its walls. */
+  readonly redundancy: () => Result<Redundancy>
 }
 
 export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork {
@@ -177,15 +181,16 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     return known()
   }
 
-  const stiffnesses = new Map<string, () => Result<Value>>()
-  const stiffnessFor = (wall: Wall): Result<Value> => {
-    let known = stiffnesses.get(wall.name)
-    if (!known) {
-      known = once(`wall.${wall.name}.k`, () => workWallStiffness(wall), wall.span)
-      stiffnesses.set(wall.name, known)
+  /** Work on one wall, once for each. */
+  const forEachWall = <T>(what: string, work: (wall: Wall) => Result<T>): ((wall: Wall) => Result<T>) => {
+    const known = new Map<string, () => Result<T>>()
+    return wall => {
+      const own = known.get(wall.name) ?? once(`wall.${wall.name}.${what}`, () => work(wall), wall.span)
+      known.set(wall.name, own)
+      return own()
     }
-    return known()
   }
+  const stiffnessFor = forEachWall('k', wall => workWallStiffness(wall))
 
   const workWallStiffness = (wall: Wall): Result<Value> => {
     const cut = piercedFor(wall)
@@ -197,15 +202,7 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     return good(workStiffness(wall, lineFor(wall).L, parts.value.construction, parts.value.moduli, name, scope.display))
   }
 
-  const piercings = new Map<string, () => Result<Pierced | undefined>>()
-  const piercedFor = (wall: Wall): Result<Pierced | undefined> => {
-    let known = piercings.get(wall.name)
-    if (!known) {
-      known = once(`wall.${wall.name}.openings`, () => workPiercedWall(wall), wall.span)
-      piercings.set(wall.name, known)
-    }
-    return known()
-  }
+  const piercedFor = forEachWall('openings', wall => workPiercedWall(wall))
 
   const workPiercedWall = (wall: Wall): Result<Pierced | undefined> => {
     const given = openings()
@@ -316,23 +313,13 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     return storeyAlone()
   })
 
-  const sections = new Map<string, () => Result<WallSection | undefined>>()
-  const sectionFor = (wall: Wall): Result<WallSection | undefined> => {
-    let known = sections.get(wall.name)
-    if (!known) {
-      known = once(`wall.${wall.name}.EI`, () => workWallSection(wall), wall.span)
-      sections.set(wall.name, known)
-    }
-    return known()
-  }
-
-  const workWallSection = (wall: Wall): Result<WallSection | undefined> => {
+  const sectionFor = forEachWall('EI', (wall): Result<WallSection | undefined> => {
     if (wall.kind === 'stated') return good(undefined)
     const parts = together({ made: partsOf(wall), cut: piercedFor(wall) })
     if (!parts.ok) return parts
     const { made, cut } = parts.value
     return good(workSection(wall, lineFor(wall).L, made.construction, made.moduli, cut?.k, name, scope.display))
-  }
+  })
 
   const displacements = once('displacement', (): Result<readonly Displacement[]> => {
     const parts = together({
@@ -346,6 +333,20 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     const { plan: p, mass: m, rigidity: r, distribution: d, display: shown } = parts.value
     if (shown.relative) return bad([driftNotWorked(name, givens.walls[0]?.info ?? anchor)])
     return good(d.cases.map(each => workDisplacement(p, m, r, each, shown)))
+  })
+
+  const redundancy = once('redundancy', (): Result<Redundancy> => {
+    const parts = together({
+      rigidity: rigidity(),
+      walls: walls(),
+      alone: storeyAlone(),
+      plan: plan(),
+      display: display(),
+    })
+    if (!parts.ok) return parts
+    const { rigidity: r, walls: given, alone: storey, plan: p, display: shown } = parts.value
+    if (given.some(({ strength }) => !strength)) scope.assume(strengthByLength(name))
+    return good(workRedundancy(r, given, storey, p, shown))
   })
 
   return {
@@ -385,5 +386,6 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
       return found && sectionFor(found)
     },
     displacements,
+    redundancy,
   }
 }

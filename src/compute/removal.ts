@@ -43,8 +43,17 @@ export interface Remainder {
   readonly without: readonly number[]
   /** Along each axis, what is left of the storey's strength, as a share of the whole. */
   readonly strength: { readonly x: number; readonly y: number }
-  /** Largest ratio, over the cases of an axis, of the larger edge drift to the mean of the two. */
-  readonly ratio: { readonly x: number; readonly y: number }
+  /** How the storey turns in the case of an axis that turns it most; absent where no case has that axis. */
+  readonly turning: { readonly x?: Turning; readonly y?: Turning }
+}
+
+export interface Turning {
+  /** The larger of the two edge drifts over the mean of both: 1 for a sway without turning, above 2 where they part ways. */
+  readonly ratio: number
+  /** Drifts of the two edges along the axis, in m. */
+  readonly drifts: readonly [number, number]
+  /** Index of the case. */
+  readonly caseIdx: number
 }
 
 /** The walls that are left cannot hold the storey. */
@@ -123,11 +132,16 @@ function remainderOf(
 ): Remainder | Fallen {
   const strength = strengthLeft(walls, group)
   if (!inverse) return { without: group, strength, unstable: true }
-  const ratio = { x: 1, y: 1 }
-  for (const { axis, Vx, Vy, T } of cases)
-    ratio[axis] = Math.max(ratio[axis], edgeRatio(times(inverse, [Vx, Vy, T]), axis, edges[axis]))
-  return { without: group, strength, ratio }
+  const turning: { x?: Turning; y?: Turning } = {}
+  cases.forEach(({ axis, Vx, Vy, T }, caseIdx) => {
+    const found = turningOf(times(inverse, [Vx, Vy, T]), axis, edges[axis], caseIdx)
+    if (found.ratio > (turning[axis]?.ratio ?? 0) * LARGER) turning[axis] = found
+  })
+  return { without: group, strength, turning }
 }
+
+/** Of two cases that turn the storey alike but for rounding the first counts. */
+const LARGER = 1 + 1e-12
 
 /** A wall counts along an axis with the part of its strength that acts along it. */
 function strengthLeft(walls: readonly RemovableWall[], group: readonly number[]): Remainder['strength'] {
@@ -141,12 +155,11 @@ function strengthLeft(walls: readonly RemovableWall[], group: readonly number[])
   return { x: left(({ strength, c }) => strength * Math.abs(c)), y: left(({ strength, s }) => strength * Math.abs(s)) }
 }
 
-/** The larger drift of two edges over the mean of both: 1 for a sway without turning, above 2 where they part ways. */
-function edgeRatio([u, v, turn]: Vector3, axis: Axis, [a, b]: readonly [number, number]): number {
+function turningOf([u, v, turn]: Vector3, axis: Axis, [a, b]: readonly [number, number], caseIdx: number): Turning {
   const along = (across: number) => (axis === 'x' ? u - turn * across : v + turn * across)
-  const [one, other] = [along(a), along(b)]
-  const larger = Math.max(Math.abs(one), Math.abs(other))
-  return larger === 0 ? 1 : larger / Math.abs((one + other) / 2)
+  const drifts = [along(a), along(b)] as const
+  const larger = Math.max(...drifts.map(Math.abs))
+  return { ratio: larger === 0 ? 1 : larger / Math.abs((drifts[0] + drifts[1]) / 2), drifts, caseIdx }
 }
 
 type Vector3 = readonly [number, number, number]

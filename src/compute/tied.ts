@@ -10,6 +10,7 @@ import type { Display } from '../base/kind.ts'
 import { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
 import { shownAs, texAbout, work } from '../base/work.ts'
+import { shearIn } from './case-shear.ts'
 import { type Case, caseOnPage } from './cases.ts'
 import { type CaseResult, type Distribution, designed } from './distribution.ts'
 import { residualOf } from './equilibrium.ts'
@@ -184,12 +185,10 @@ function solveCase(
 }
 
 /** Shears of a storey in N and their moment about the origin in N·m. */
-function actingOn({ cases, level }: Distribution, { name, axis }: Case): Axis & { readonly origin: number } {
+function actingOn({ cases, level }: Distribution, { name }: Case): Axis & { readonly origin: number } {
   const found = cases.find(each => each.case.name === name)
   if (!found) throw new Error(`${level} has no case ${name}`)
-  const { shear, residual } = found
-  const [Vx, Vy] = axis === 'x' ? [shear.si, 0] : [0, shear.si]
-  return { x: Vx, y: Vy, origin: residual.appliedMoment.si }
+  return { ...shearIn(found), origin: found.residual.appliedMoment.si }
 }
 
 /** A number that the solution of many equations gives. */

@@ -22,6 +22,7 @@ export const wants = [
   'displacement',
   'displaced shape',
   'equilibrium',
+  'redundancy',
 ] as const
 
 export type Want = (typeof wants)[number]
@@ -34,9 +35,9 @@ export type BuildingWant = (typeof buildingWants)[number]
 export const documentWants = ['criteria', 'checks', 'assumptions', 'references'] as const
 export type DocumentWant = (typeof documentWants)[number]
 
-/** All of a level in order; the displaced shape comes with the displacement. */
+/** All of a level in order; the displaced shape comes with the displacement, and redundancy is asked for by itself. */
 const WHOLE = 'whole calculation'
-const parts: readonly Want[] = wants.filter(want => want !== 'displaced shape')
+const parts: readonly Want[] = wants.filter(want => want !== 'displaced shape' && want !== 'redundancy')
 
 export type AnyWant = Want | BuildingWant | DocumentWant
 const every: readonly AnyWant[] = [...wants, ...buildingWants, ...documentWants]

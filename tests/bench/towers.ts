@@ -95,7 +95,7 @@ export function removeWallsAnew(levels: number, walls: number): number {
   let count = 0
   for (let level = 0; level < levels; level++) {
     const storey = storeyOf(walls, level)
-    for (let w = 0; w < walls; w++) if ('ratio' in solvedAgain(storey, [w])) count++
+    for (let w = 0; w < walls; w++) if ('turning' in solvedAgain(storey, [w])) count++
   }
   return count
 }
