@@ -28,6 +28,7 @@ const kinds = {
   share: both('%'),
   angle: both('deg'),
   rotation: { ...both('rad'), relative: units('kip/ft', 'kN/m') },
+  period: both('s'),
   length: units('ft', 'm'),
   thickness: units('in', 'mm'),
   displacement: { ...units('in', 'mm'), relative: units('kip', 'kN') },

@@ -16,10 +16,10 @@ import { type CaseResult, type Distribution, designed } from './distribution.ts'
 import { residualOf } from './equilibrium.ts'
 import type { Rigidity } from './rigidity.ts'
 import { bending, shearing, type WallSection } from './section.ts'
-import { drifts, type Stack, stackOf, type Tie, wallForces } from './stack.ts'
+import { drifts, type Stack, stackOf, wallForces } from './stack.ts'
 import { c, k, phi, rho, s, u0, V, v0 } from './symbols.ts'
 import { apart, axisMoved, foot, greatest, head, moved, tiedFormulas } from './tied-formulas.ts'
-import { cantilever } from './upright.ts'
+import { axisOf, type NamedTie, type StackAxis, tiesOf } from './ties.ts'
 
 /** A level as the continuous model takes it. */
 export interface TiedLevel {
@@ -66,8 +66,8 @@ export const beamColumns = ['EI', 'GA', 'a', 'delta', 'theta_b', 'theta_t', 'V',
 export function tieLevels(levels: readonly TiedLevel[]): readonly TiedDistribution[] {
   const rising = [...levels].reverse()
   const heights = rising.map((each, i) => heightOf(each, rising[i - 1]))
-  const axis = { x: rising[0]?.rigidity.x.si ?? 0, y: rising[0]?.rigidity.y.si ?? 0 }
-  const ties = tiesOf(rising, heights, axis)
+  const axis = axisOf(rising)
+  const ties = tiesOf(rising, axis)
   const made = stackOf(
     rising.length,
     ties.map(({ tie }) => tie),
@@ -92,45 +92,6 @@ function heightOf({ level, elevation, display }: TiedLevel, under: TiedLevel | u
     : work(id, tiedFormulas.lowest, { z: elevation }, display, [level])
 }
 
-/** A tie of the stack with the wall that it stands for. */
-interface NamedTie {
-  readonly name: string
-  readonly tie: Tie
-}
-
-interface Axis {
-  readonly x: number
-  readonly y: number
-}
-
-function tiesOf(rising: readonly TiedLevel[], heights: readonly Value[], axis: Axis): readonly NamedTie[] {
-  const found: NamedTie[] = []
-  rising.forEach(({ rigidity, sections }, storey) => {
-    for (const { name, k, ...wall } of rigidity.springs) {
-      const line = {
-        c: wall.c.si,
-        s: wall.s.si,
-        r: (wall.x.si - axis.x) * wall.s.si - (wall.y.si - axis.y) * wall.c.si,
-      }
-      if (!sections.has(name)) found.push({ name, tie: { kind: 'storey', storey, k: k.si, ...line } })
-      else if (storey === 0) {
-        const run = rising.slice(0, heightInStoreys(rising, name)).map((level, i) => {
-          const section = level.sections.get(name)
-          return { h: heights[i]?.si ?? Number.NaN, EI: section?.EI.si ?? Number.NaN, GA: section?.GA.si ?? Number.NaN }
-        })
-        found.push({ name, tie: { kind: 'continuous', wall: cantilever(run), ...line } })
-      }
-    }
-  })
-  return found
-}
-
-/** The number of storeys through which a wall runs from the foundation. */
-function heightInStoreys(rising: readonly TiedLevel[], name: string): number {
-  const end = rising.findIndex(({ sections }) => !sections.has(name))
-  return end === -1 ? rising.length : end
-}
-
 /** The answer to one case: drifts of each storey at its centre of rigidity, and rotations of each wall, from the lowest up. */
 interface Solved {
   readonly case: Case
@@ -147,7 +108,7 @@ function solveCase(
   rising: readonly TiedLevel[],
   stack: Stack,
   ties: readonly NamedTie[],
-  axis: Axis,
+  axis: StackAxis,
 ): Solved {
   const shears = new Float64Array(3 * rising.length)
   rising.forEach(({ alone }, i) => {
@@ -185,7 +146,7 @@ function solveCase(
 }
 
 /** Shears of a storey in N and their moment about the origin in N·m. */
-function actingOn({ cases, level }: Distribution, { name }: Case): Axis & { readonly origin: number } {
+function actingOn({ cases, level }: Distribution, { name }: Case): StackAxis & { readonly origin: number } {
   const found = cases.find(each => each.case.name === name)
   if (!found) throw new Error(`${level} has no case ${name}`)
   return { ...shearIn(found), origin: found.residual.appliedMoment.si }

@@ -40,7 +40,7 @@ function tiedLevelOf({ name, elevation }: LevelLine, levels: readonly LevelWork[
   return [good({ level: name, elevation, mass: { x: mass.x, y: mass.y }, ...rest })]
 }
 
-function sectionsOf(level: LevelWork): Result<ReadonlyMap<string, WallSection>> {
+export function sectionsOf(level: LevelWork): Result<ReadonlyMap<string, WallSection>> {
   const walls = level.walls()
   if (!walls.ok) return walls
   const found = all(walls.value.map(({ name }) => level.section(name) ?? good(undefined)))

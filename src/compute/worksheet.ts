@@ -22,6 +22,8 @@ import { topicMissing } from './level-faults.ts'
 import { type LoadedLevel, type Storeys, workStoreys } from './storeys.ts'
 import type { TiedDistribution } from './tied.ts'
 import { tieWalls } from './tying.ts'
+import { vibrate } from './vibrating.ts'
+import { modeValue, shapeValue, type Vibration } from './vibration.ts'
 
 /** A value that a cell works from others, and the place of the cell. */
 export interface StatedCell {
@@ -36,6 +38,8 @@ export interface Worksheet {
   readonly levelLines: () => Result<readonly LevelLine[]>
   /** Forces and storey shears of every level. */
   readonly storeys: () => Result<Storeys>
+  /** Modes of vibration of the building. */
+  readonly vibration: () => Result<Vibration>
   readonly constructions: ReadonlyMap<string, () => Result<Construction>>
   /** The value of each line of the equation blocks, by its place. */
   readonly equation: (line: Text) => Result<Value>
@@ -98,6 +102,11 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
   const tied = ledger.once('walls', givens.levelTable[0]?.info ?? nowhere, () => {
     const lines = levelLines()
     return lines.ok ? tieWalls(lines.value, levels, scope) : lines
+  })
+
+  const vibration = ledger.once('modes', levels[0]?.anchor ?? nowhere, () => {
+    const lines = levelLines()
+    return lines.ok ? vibrate(lines.value, levels, scope) : lines
   })
 
   function tiedLevel(name: string): Result<TiedDistribution> {
@@ -184,6 +193,8 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
     if (path.length === 0) return equations.has(id) ? workInOrder(id) : undefined
     const level = levels.find(({ name }) => name === head)
     const [first = '', second = ''] = path
+    if (head === 'mode' && !level) return ofModes(made => modeValue(made, path))
+    if (level && first === 'mode') return ofModes(made => shapeValue(made, head, path.slice(1)))
     if (level && first === 'elevation' && path.length === 1) return elevationOf(head)
     if (level) {
       const found = levelValue(level, path)
@@ -196,6 +207,13 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
       return construction && user ? constructionValue(construction, user.moduli(first), second) : undefined
     }
     return undefined
+  }
+
+  function ofModes(pick: (made: Vibration) => Value | undefined): Result<Value> | undefined {
+    const made = vibration()
+    if (!made.ok) return made
+    const value = pick(made.value)
+    return value && good(value)
   }
 
   function elevationOf(level: string): Result<Value> | undefined {
@@ -218,6 +236,7 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
     levels,
     levelLines,
     storeys,
+    vibration,
     constructions,
     equationLines: [...lines.keys()],
     equation: line => {

@@ -3,6 +3,7 @@ import type { LevelWork } from '../compute/level.ts'
 import type { Worksheet } from '../compute/worksheet.ts'
 import type { Context } from './context.ts'
 import { explainContinuous } from './continuous.ts'
+import { explainModes } from './modes.ts'
 import type { BuildingWant, Request } from './request.ts'
 import type { Piece } from './sheet.ts'
 import { explainStoreys } from './storeys.ts'
@@ -10,6 +11,7 @@ import { explainStoreys } from './storeys.ts'
 const headings: Readonly<Record<BuildingWant, string>> = {
   'storey shears': 'Storey shears',
   'continuous walls': 'Continuous walls',
+  'modes of vibration': 'Modes of vibration',
 }
 
 /** @param level the level that the working names, if any */
@@ -27,6 +29,15 @@ export function explainBuilding(
     case 'continuous walls': {
       const made = explainContinuous(sheet, level, request, context)
       return [...head, ...(made.ok ? made.value : [{ kind: 'fault', diagnostics: made.because } as const])]
+    }
+    case 'modes of vibration': {
+      const made = sheet.vibration()
+      return [
+        ...head,
+        ...(made.ok
+          ? explainModes(made.value, request.detail, context)
+          : [{ kind: 'fault', diagnostics: made.because } as const]),
+      ]
     }
   }
 }

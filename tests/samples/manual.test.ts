@@ -269,7 +269,7 @@ const homes: readonly Home[] = [
   { text: chapter('03-building'), names: { LEVEL: 'loft' } },
   {
     text: read('samples/quay-hostel.md').replace('units: SI', 'units: US'),
-    names: { LEVEL: 'second', WALL: 'L1', CASE: 'EY+', NAME: 'RC200' },
+    names: { LEVEL: 'second', WALL: 'L1', CASE: 'EY+', NAME: 'RC200', MODE: '2' },
   },
 ]
 
