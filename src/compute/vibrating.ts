@@ -12,15 +12,23 @@ import { type VibratingLevel, type Vibration, workVibration } from './vibration.
 
 /** @param lines from the top down */
 export function vibrate(lines: readonly LevelLine[], levels: readonly LevelWork[], scope: Scope): Result<Vibration> {
-  const ready = all(
+  const ready = vibratingLevels(lines, levels)
+  if (!ready.ok) return ready
+  scope.assume(masses)
+  return good(workVibration(ready.value, scope.display))
+}
+
+/** The levels from the top down, as their modes are worked from. */
+export function vibratingLevels(
+  lines: readonly LevelLine[],
+  levels: readonly LevelWork[],
+): Result<readonly VibratingLevel[]> {
+  return all(
     lines.flatMap(line => {
       const level = levels.find(({ name }) => name === line.name)
       return level ? [vibratingLevel(line, level)] : []
     }),
   )
-  if (!ready.ok) return ready
-  scope.assume(masses)
-  return good(workVibration(ready.value, scope.display))
 }
 
 function vibratingLevel({ name, elevation }: LevelLine, level: LevelWork): Result<VibratingLevel> {

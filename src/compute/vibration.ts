@@ -8,7 +8,7 @@ import type { Axis } from './cases.ts'
 import type { Mass } from './mass.ts'
 import { type FloorMass, type Mode, modesFor, modesOf } from './modal.ts'
 import { stackOf } from './stack.ts'
-import { axisOf, tiesOf, type WalledLevel } from './ties.ts'
+import { axisOf, type StackAxis, tiesOf, type WalledLevel } from './ties.ts'
 
 /** A level with its walls and its weight. */
 export interface VibratingLevel extends WalledLevel {
@@ -19,12 +19,17 @@ export interface VibratingLevel extends WalledLevel {
 export interface Vibration {
   /** T, Γ along x and y, the shares of the mass along x and y and their sums: the modes that are shown. */
   readonly modes: Tabulation
+  /** The same of every mode. */
+  readonly every: Tabulation
   /** u, v and turn times radius of gyration of each level, from the top down, one table a mode. */
   readonly shapes: readonly Tabulation[]
+  /** Of every mode. */
   readonly residuals: readonly Value[]
   /** The number of modes whose masses reach the share below along both axes, and of all modes. */
   readonly enough: number
   readonly all: number
+  /** What the responses are worked from: all modes, the floors from the lowest up, and the axis of the stack. */
+  readonly raw: { readonly modes: readonly Mode[]; readonly floors: readonly FloorMass[]; readonly axis: StackAxis }
 }
 
 /** Share of the mass along each axis that the modes shown take along, as ASCE 7 12.9.1.1 and EN 1998-1 4.3.3.3.1 ask (unchecked). */
@@ -72,14 +77,17 @@ export function workVibration(levels: readonly VibratingLevel[], display: Displa
   )
   const modes = modesOf(made.value, floors)
   const enough = modesFor(ENOUGH, modes)
-  const shown = modes.slice(0, Math.max(enough, AT_LEAST)).map((mode, m) => ({ mode, name: String(m + 1) }))
+  const named = modes.map((mode, m) => ({ mode, name: String(m + 1) }))
+  const shown = named.slice(0, Math.max(enough, AT_LEAST))
   const whole = floors.reduce((total, { mass }) => total + mass, 0)
   return {
     modes: modeTable(shown, floors, whole, display),
+    every: modeTable(named, floors, whole, display),
     shapes: shown.map(each => shapeTable(each, levels, floors, display)),
-    residuals: shown.map(({ mode, name }) => solved(`mode.${name}.residual`, residual, mode.residual, name, display)),
+    residuals: named.map(({ mode, name }) => solved(`mode.${name}.residual`, residual, mode.residual, name, display)),
     enough,
     all: modes.length,
+    raw: { modes, floors, axis },
   }
 }
 
@@ -191,11 +199,11 @@ const keysOfShape: ReadonlyMap<string, string> = new Map([
 ])
 
 /** A value of a mode by the rest of its id, such as `1.T`. */
-export function modeValue({ modes, residuals }: Vibration, [name = '', ...key]: readonly string[]): Value | undefined {
-  const at = modes.rows.indexOf(name)
+export function modeValue({ every, residuals }: Vibration, [name = '', ...key]: readonly string[]): Value | undefined {
+  const at = every.rows.indexOf(name)
   if (key.join('.') === 'residual') return residuals[at]
   const column = keysOfMode.get(key.join('.'))
-  return at === -1 || column === undefined ? undefined : modes.column(column).cell(at)
+  return at === -1 || column === undefined ? undefined : every.column(column).cell(at)
 }
 
 /** A value of a mode's shape at a level. */

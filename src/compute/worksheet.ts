@@ -1,7 +1,7 @@
 /** The whole building at work: every value by its id, each worked when it is first asked for. */
 import type { Diagnostic } from '../base/diagnostic.ts'
 import { namesIn } from '../base/expr.ts'
-import { all, Ledger, type Result } from '../base/ledger.ts'
+import { all, Ledger, type Result, together } from '../base/ledger.ts'
 import { bad, good } from '../base/outcome.ts'
 import type { Span } from '../base/span.ts'
 import type { Value, Word } from '../base/value.ts'
@@ -14,15 +14,17 @@ import { type Grid, readGrid } from '../model/grid.ts'
 import { type LevelLine, readLevels, readWallModel } from '../model/levels.ts'
 import { type Limit, limitLines, workLimit } from '../model/limits.ts'
 import type { Assumption, Scope } from '../model/scope.ts'
+import { readSpectrum } from '../model/spectrum.ts'
 import type { Block } from '../read/block.ts'
 import type { Text } from '../read/text.ts'
 import { constructionValue, levelIds, levelValue } from './ids.ts'
 import { type LevelWork, levelWork } from './level.ts'
 import { topicMissing } from './level-faults.ts'
+import { type Spectral, spectralValue, workSpectral } from './spectral.ts'
 import { type LoadedLevel, type Storeys, workStoreys } from './storeys.ts'
 import type { TiedDistribution } from './tied.ts'
 import { tieWalls } from './tying.ts'
-import { vibrate } from './vibrating.ts'
+import { vibrate, vibratingLevels } from './vibrating.ts'
 import { modeValue, shapeValue, type Vibration } from './vibration.ts'
 
 /** A value that a cell works from others, and the place of the cell. */
@@ -40,6 +42,8 @@ export interface Worksheet {
   readonly storeys: () => Result<Storeys>
   /** Modes of vibration of the building. */
   readonly vibration: () => Result<Vibration>
+  /** Response to the stated spectrum; absent where there is none. */
+  readonly spectral?: () => Result<Spectral>
   readonly constructions: ReadonlyMap<string, () => Result<Construction>>
   /** The value of each line of the equation blocks, by its place. */
   readonly equation: (line: Text) => Result<Value>
@@ -108,6 +112,23 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
     const lines = levelLines()
     return lines.ok ? vibrate(lines.value, levels, scope) : lines
   })
+
+  const [spectrumBlock] = givens.spectrum
+  const spectrum = ledger.once('spectrum', spectrumBlock?.info ?? nowhere, () => readSpectrum(givens.spectrum, scope))
+  const spectral = spectrumBlock && ledger.once('modal', spectrumBlock.info, workedSpectral)
+
+  function workedSpectral(): Result<Spectral> {
+    const lines = levelLines()
+    if (!lines.ok) return lines
+    const parts = together({
+      given: spectrum(),
+      vibration: vibration(),
+      ready: vibratingLevels(lines.value, levels),
+    })
+    if (!parts.ok) return parts
+    const { given, vibration: made, ready } = parts.value
+    return given ? workSpectral(given, made, ready, scope.display) : bad([])
+  }
 
   function tiedLevel(name: string): Result<TiedDistribution> {
     const made = tied()
@@ -193,6 +214,13 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
     if (path.length === 0) return equations.has(id) ? workInOrder(id) : undefined
     const level = levels.find(({ name }) => name === head)
     const [first = '', second = ''] = path
+    const responds = (head === 'modal' || head === 'mode') && !level ? true : level !== undefined && first === 'modal'
+    if (responds && spectral) {
+      const made = spectral()
+      const value = made.ok ? spectralValue(made.value, id) : undefined
+      if (value) return good(value)
+      if (!made.ok && head !== 'mode') return made
+    }
     if (head === 'mode' && !level) return ofModes(made => modeValue(made, path))
     if (level && first === 'mode') return ofModes(made => shapeValue(made, head, path.slice(1)))
     if (level && first === 'elevation' && path.length === 1) return elevationOf(head)
@@ -237,6 +265,7 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
     levelLines,
     storeys,
     vibration,
+    ...(spectral ? { spectral } : {}),
     constructions,
     equationLines: [...lines.keys()],
     equation: line => {
@@ -264,6 +293,7 @@ export function worksheet(givens: Givens, { system, assumptions: chosen }: Choic
     return [
       grid,
       levelLines,
+      spectrum,
       ...constructions.values(),
       ...levels.flatMap(({ givens, areas, mass, walls, openings, springs, forces }) => [
         ...(givens.areas.length > 0 ? [areas, mass] : []),

@@ -13,6 +13,7 @@ const titles: Readonly<Record<string, string>> = {
   walls: 'Walls',
   openings: 'Openings in walls',
   forces: 'Forces',
+  spectrum: 'Spectrum',
 }
 
 export function explainGiven(block: Block, context: Context): readonly Piece[] {

@@ -8,10 +8,11 @@ import type { Piece } from './sheet.ts'
 import { explainTable } from './table.ts'
 
 export function explainModes(
-  { modes, shapes, residuals, enough, all }: Vibration,
+  { modes, shapes, residuals: every, enough, all }: Vibration,
   detail: Detail,
   context: Context,
 ): readonly Piece[] {
+  const residuals = every.slice(0, modes.rows.length)
   const check = residualCheck('mode.balance', 'Modes of vibration put back, largest residual', residuals, 'M', context)
   context.check(check)
   const first = explainValue(modes.column('T').cell(0), context)

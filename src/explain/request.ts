@@ -28,7 +28,7 @@ export const wants = [
 export type Want = (typeof wants)[number]
 
 /** What tells of all levels at once; a level, where one is named, is worked in full. */
-export const buildingWants = ['storey shears', 'continuous walls', 'modes of vibration'] as const
+export const buildingWants = ['storey shears', 'continuous walls', 'modes of vibration', 'modal response'] as const
 export type BuildingWant = (typeof buildingWants)[number]
 
 /** Lists of the whole document rather than of a level. */

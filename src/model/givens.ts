@@ -21,6 +21,7 @@ export interface Givens {
   readonly levelTable: readonly Block[]
   readonly constructions: readonly Block[]
   readonly equations: readonly Block[]
+  readonly spectrum: readonly Block[]
   /** `forces` that name no level and hold a table of them. */
   readonly forceTables: readonly Block[]
   readonly faults: readonly Diagnostic[]
@@ -66,6 +67,7 @@ export function gather(blocks: readonly Block[]): Givens {
     levelTable,
     constructions: of('construction'),
     equations: of('equations'),
+    spectrum: of('spectrum'),
     forceTables: of('forces').filter(isForceTable),
     faults,
     strays: topic => strays.get(topic) ?? [],

@@ -9,6 +9,7 @@ export const topics = [
   'walls',
   'openings',
   'forces',
+  'spectrum',
   'equations',
   'working',
 ] as const
