@@ -96,11 +96,4 @@ export function combine(responses: readonly Readonly<Float64Array>[], { modes, r
   return combined.map(square => Math.sqrt(Math.max(0, square)))
 }
 
-/**
- * The factor by which a combined response is raised where its base shear is below a share of the static one.
- * @param share 1 in ASCE 7-16 and 7-22 12.9.1.4, 0.85 in 7-10 (unchecked)
- */
-export const raisedTo = (share: number, staticShear: number, modalShear: number): number =>
-  Math.max(1, (share * staticShear) / modalShear)
-
 const at = (numbers: Readonly<Float64Array>, i: number): number => numbers[i] ?? Number.NaN

@@ -72,7 +72,7 @@ const formulas = {
       gives: raise,
       body: `max(1, p*${staticOf[axis].name}/${along[axis].name})`,
       of: [shareOf, staticOf[axis], along[axis]],
-      source: 'raised to the share of the static base shear',
+      source: 'raised to its share of the static base shear',
     }),
   ),
   Vx: formula({ gives: raised.Vx, body: 'f*V_x', of: [raise, Vx], source: SPECTRAL }),

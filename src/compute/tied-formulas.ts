@@ -25,7 +25,7 @@ const below = {
   turn: sym('Theta_b', '\\Theta_b', 'rotation'),
 }
 export const apart = sym('Delta_M', '\\Delta M', 'moment')
-export const greatest = sym('M_max', 'M_{\\max}', 'moment')
+export const greatest = sym('M_max', 'M_{\\text{max}}', 'moment')
 const meets = sym('R', 'R', 'residual')
 
 const HEIGHTS = 'elevations of the levels'

@@ -51,6 +51,9 @@ export function readSpectrum([block, second]: readonly Block[], scope: Scope): R
   const records = recordsOf(block, { needed: ['period', 'acceleration'], optional: [] })
   if (!records.ok || strange.length > 0) return bad([...strange, ...(records.ok ? [] : records.because)])
   const points = all(records.value.map((record, i) => readPoint(record, i, scope)))
+  const statics = all((['x', 'y'] as const).flatMap(axis => readStatic(block, axis, scope)))
+  // Without a static base shear no share of it is taken, and nothing is to be said of it.
+  const quiet: Scope = statics.ok && statics.value.length > 0 ? scope : { ...scope, assume: () => {} }
   const shares = all([
     readShare(block, 'damping', 'spectrum.damping', 0.05, 'a damping of 5%, as most standards have it', scope),
     readShare(
@@ -59,10 +62,9 @@ export function readSpectrum([block, second]: readonly Block[], scope: Scope): R
       'spectrum.share',
       1,
       'all of the static base shear, as ASCE 7-16 12.9.1.4 asks (unchecked)',
-      scope,
+      quiet,
     ),
   ])
-  const statics = all((['x', 'y'] as const).flatMap(axis => readStatic(block, axis, scope)))
   const combination = readCombination(settingOf(block, 'combination'))
   const order = points.ok ? risingFault(points.value, block) : []
   const faults = [points, shares, statics, combination].flatMap(part => (part.ok ? [] : part.because))

@@ -2,7 +2,7 @@
 import { EigenvalueDecomposition, Matrix } from 'ml-matrix'
 import { describe, expect, test } from 'vitest'
 import { type FloorMass, type Mode, modesFor, modesOf } from '../../src/compute/modal.ts'
-import { combine, correlation, quadratic, raisedTo, responseOf, sumOfSquares } from '../../src/compute/response.ts'
+import { combine, correlation, quadratic, responseOf, sumOfSquares } from '../../src/compute/response.ts'
 import { stackOf, storeyShears, type Tie, wallForces } from '../../src/compute/stack.ts'
 import { cantilever } from '../../src/compute/upright.ts'
 import { closeTo, halfUnitOf } from '../support/agrees.ts'
@@ -380,12 +380,6 @@ describe('putting modes together', () => {
     expect(of(shears, 0)).toBeLessThan(0.95 * of(forces, 0))
     const root = Math.sqrt(responses.reduce((sum, { shears: own }) => sum + of(own, 0) ** 2, 0))
     closeTo(of(shears, 0), root, root)
-  })
-
-  test('a response is raised to its share of the static base shear, and never lowered', () => {
-    expect(raisedTo(1, 1000, 800)).toBe(1.25)
-    expect(raisedTo(0.85, 1000, 800)).toBe(1.0625)
-    expect(raisedTo(0.85, 1000, 900)).toBe(1)
   })
 })
 
