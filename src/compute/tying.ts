@@ -18,7 +18,7 @@ export function tieWalls(
 ): Result<readonly TiedDistribution[]> {
   const ready = all(lines.flatMap(line => tiedLevelOf(line, levels)))
   if (!ready.ok) return ready
-  const faults = [...unlike(ready.value, levels), ...unfounded(ready.value, levels)]
+  const faults = [...unlike(ready.value, levels), ...unloaded(ready.value, levels), ...unfounded(ready.value, levels)]
   if (faults.length > 0) return bad(faults)
   if (ready.value.some(({ sections }) => sections.size > 0)) asCantilevers.forEach(scope.assume)
   if (ready.value.some(({ sections, rigidity }) => sections.size < rigidity.springs.length)) scope.assume(asStated)
@@ -62,6 +62,25 @@ function unlike(tied: readonly TiedLevel[], levels: readonly LevelWork[]): reado
       'Continuous walls are solved together: give every k a unit, or none.',
     ),
   ]
+}
+
+/** A case of one storey moves the walls of all, so that every storey has a part in it. */
+function unloaded(tied: readonly TiedLevel[], levels: readonly LevelWork[]): readonly Diagnostic[] {
+  const lowest = tied.at(-1)
+  if (!lowest) return []
+  return tied.flatMap(({ level, alone }) => {
+    const missing = lowest.alone.cases.find(({ case: { name } }) => !alone.cases.some(each => each.case.name === name))
+    if (!missing) return []
+    return [
+      diagnose(
+        'error',
+        'forces-not-alike',
+        levels.find(({ name }) => name === level)?.givens.forces[0]?.info ?? placeOf(level, undefined, levels),
+        `nothing acts on ${level} or above it in case ${missing.case.name}, in which a force acts on ${lowest.level}`,
+        'Continuous walls are solved with all storeys together. State forces along the same axes at the highest level too.',
+      ),
+    ]
+  })
 }
 
 /** How far a wall may stand off the line of the wall below it, in m, and how far it may turn from it, as a sine. */
