@@ -112,14 +112,20 @@ export function workDistribution(rigidity: Rigidity, loads: readonly Load[], dis
   const { level } = rigidity
   const acting = loads.map(load => actOnStorey(load, rigidity, display))
   const cases = acting.flatMap(load => load.cases.map(each => workCase(each, rigidity, load, display)))
+  return { level, loads: acting, cases, ...designed(rigidity, cases, display) }
+}
+
+/** The design shears that follow from the shears of all cases, and what governs them. */
+export function designed(
+  rigidity: Rigidity,
+  cases: readonly CaseResult[],
+  display: Display,
+): Pick<Distribution, 'design' | 'governingCase' | 'governingWall'> {
   const design = designTable(rigidity, cases, display)
   const largest = design.column('v').numbers
   return {
-    level,
-    loads: acting,
-    cases,
     design,
-    governingCase: wallIdx => governingCase(level, cases, design, wallIdx),
+    governingCase: wallIdx => governingCase(rigidity.level, cases, design, wallIdx),
     governingWall: largest.reduce((best, value, i) => (value > (largest[best] ?? 0) * (1 + 1e-12) ? i : best), 0),
   }
 }

@@ -131,6 +131,11 @@ export const atOneLevel: Assumption = {
   because: 'the design shear is the largest over the cases of both',
 }
 
+export const strengthByLength = (level: string): Assumption => ({
+  text: `The strength of the walls of ${verbatim(level)} is in proportion to their length.`,
+  because: 'strength is not stated for all of them',
+})
+
 /** What the model of a floor on springs takes for granted. */
 export const rigidAssumptions = (level: string): readonly Assumption[] => [
   { text: `The diaphragm of ${verbatim(level)} is rigid in its plane.`, because: 'no other behaviour is worked' },

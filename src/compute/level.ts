@@ -3,7 +3,6 @@
 import type { Diagnostic } from '../base/diagnostic.ts'
 import type { Display } from '../base/kind.ts'
 import { all, type Result, together } from '../base/ledger.ts'
-import { suggestion } from '../base/near.ts'
 import { bad, good } from '../base/outcome.ts'
 import type { Span } from '../base/span.ts'
 import { NO_UNIT } from '../base/unit.ts'
@@ -17,9 +16,8 @@ import type { Grid } from '../model/grid.ts'
 import { type LineLoad, type PointLoad, readLineLoads, readPointLoads } from '../model/loads.ts'
 import { type Opening, readOpenings } from '../model/openings.ts'
 import type { Scope } from '../model/scope.ts'
-import { type BuiltWall, readStiffness, readWalls, type Wall } from '../model/walls.ts'
+import { readWalls, type Wall } from '../model/walls.ts'
 import type { Block } from '../read/block.ts'
-import { diagnose } from '../read/text.ts'
 import { casesOf } from './cases.ts'
 import { type Displacement, workDisplacement } from './displacement.ts'
 import { type Distribution, type Load, workDistribution } from './distribution.ts'
@@ -31,18 +29,22 @@ import {
   mixedStiffness,
   rigidAssumptions,
   storeyByStorey,
+  strengthByLength,
   topicMissing,
   unstable,
   wallOutside,
 } from './level-faults.ts'
 import type { Movable } from './loading.ts'
 import { type Mass, workMass } from './mass.ts'
-import { drawnOnly } from './opening-faults.ts'
-import { type Pierced, workPierced } from './pierced.ts'
+import type { Pierced } from './pierced.ts'
 import { type Plan, workPlan } from './plan.ts'
+import { type Redundancy, workRedundancy } from './redundancy.ts'
 import { type Rigidity, type Spring, workRigidity } from './rigidity.ts'
-import { type Moduli, type WallLine, workLine, workModuli, workStiffness } from './stiffness.ts'
+import type { WallSection } from './section.ts'
+import type { Moduli, WallLine } from './stiffness.ts'
 import { accidentalArm, type Eccentricity, workEccentricity } from './storey.ts'
+import type { TiedDistribution } from './tied.ts'
+import { wallsWork } from './walls-work.ts'
 import { type Wind, windLoads } from './wind.ts'
 import { levelWindValue } from './wind-building.ts'
 
@@ -67,6 +69,8 @@ export interface Surroundings {
   readonly forcesStated: () => boolean
   /** The levels above this one, from the top down. */
   readonly above: () => Result<readonly LevelWork[]>
+  /** The distribution of a level whose walls run through the levels; absent where each storey is worked on its own. */
+  readonly tied: (level: string) => Result<TiedDistribution> | undefined
 }
 
 export interface LevelWork {
@@ -96,7 +100,17 @@ export interface LevelWork {
   readonly hasWind: () => boolean
   readonly isLoaded: () => boolean
   readonly distribution: () => Result<Distribution>
+  /** The storey worked on its own, whatever its walls do above and below. */
+  readonly storeyAlone: () => Result<Distribution>
+  /** The same under ids of its own, `L.alone.…`, to stand beside the distribution of continuous walls. */
+  readonly alone: () => Result<Distribution>
+  /** Present where walls run through the levels. */
+  readonly tied: () => Result<TiedDistribution> | undefined
+  /** E I and G A_v of a built wall; a value of undefined for a wall of stated stiffness. */
+  readonly section: (name: string) => Result<WallSection | undefined> | undefined
   readonly displacements: () => Result<readonly Displacement[]>
+  /** The storey without each of its walls. */
+  readonly redundancy: () => Result<Redundancy>
 }
 
 export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork {
@@ -164,89 +178,7 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     return all.ok ? all.value.find(({ name }) => name === wall) : undefined
   }
 
-  // What is known of a wall is known of it as it was read: read again, it is another.
-  const lineOf = new WeakMap<Wall, WallLine>()
-  const lineFor = (wall: Wall): WallLine => {
-    const known = lineOf.get(wall) ?? workLine(wall, name, scope.display)
-    lineOf.set(wall, known)
-    return known
-  }
-
-  const built = new Map<string, () => Result<Moduli>>()
-  const moduli = (construction: string): Result<Moduli> => {
-    const read = around.construction(construction)
-    if (!read) return bad([])
-    let known = built.get(construction)
-    if (!known) {
-      known = scope.ledger.once(`constructions.${construction}`, anchor, () => {
-        const made = read()
-        return made.ok ? good(workModuli(made.value, scope.display, scope.assume)) : made
-      })
-      built.set(construction, known)
-    }
-    return known()
-  }
-
-  const stiffnesses = new WeakMap<Wall, () => Result<Value>>()
-  const stiffnessFor = (wall: Wall): Result<Value> => {
-    let known = stiffnesses.get(wall)
-    if (!known) {
-      known = once(`wall.${wall.name}.k`, () => workWallStiffness(wall), wall.span)
-      stiffnesses.set(wall, known)
-    }
-    return known()
-  }
-
-  const workWallStiffness = (wall: Wall): Result<Value> => {
-    const cut = piercedFor(wall)
-    if (!cut.ok) return cut
-    if (cut.value) return good(cut.value.k)
-    if (wall.kind === 'stated') return readStiffness(wall, name, scope)
-    const parts = partsOf(wall)
-    if (!parts.ok) return parts
-    return good(workStiffness(wall, lineFor(wall).L, parts.value.construction, parts.value.moduli, name, scope.display))
-  }
-
-  const piercings = new WeakMap<Wall, () => Result<Pierced | undefined>>()
-  const piercedFor = (wall: Wall): Result<Pierced | undefined> => {
-    let known = piercings.get(wall)
-    if (!known) {
-      known = once(`wall.${wall.name}.openings`, () => workPiercedWall(wall), wall.span)
-      piercings.set(wall, known)
-    }
-    return known()
-  }
-
-  const workPiercedWall = (wall: Wall): Result<Pierced | undefined> => {
-    const given = openings()
-    if (!given.ok) return given
-    const mine = given.value.filter(opening => opening.wall === wall.name)
-    if (mine.length === 0) return good(undefined)
-    if (wall.kind === 'stated') {
-      scope.assume(drawnOnly(wall.name))
-      return good(undefined)
-    }
-    const parts = partsOf(wall)
-    if (!parts.ok) return parts
-    const { construction, moduli } = parts.value
-    return workPierced(wall, lineFor(wall).L, mine, construction, moduli, name, scope.display)
-  }
-
-  const partsOf = (wall: BuiltWall) => {
-    const { text, span } = wall.construction
-    const read = around.construction(text)
-    if (!read)
-      return bad([
-        diagnose(
-          'error',
-          'unknown-construction',
-          span,
-          `there is no construction ${text}`,
-          suggestion(text, around.constructionNames, 'construction'),
-        ),
-      ])
-    return together({ construction: read(), moduli: moduli(text) })
-  }
+  const { lineFor, moduli, stiffnessFor, piercedFor, sectionFor } = wallsWork(name, openings, around, once, anchor)
 
   const springs = once('walls.k', (): Result<readonly Spring[]> => {
     const given = walls()
@@ -326,11 +258,22 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     return good([{ loading: 'seismic', cases: casesOf(axes), acting: acts.value }, ...ofWind])
   })
 
-  const distribution = once('storey', (): Result<Distribution> => {
+  /** @param as the level's name in the ids */
+  const workAlone = (as: string): Result<Distribution> => {
+    const parts = together({ rigidity: rigidity(), display: display(), loads: loads() })
+    if (!parts.ok) return parts
+    const { rigidity: own, display: shown } = parts.value
+    return good(workDistribution({ ...own, level: as }, parts.value.loads, shown))
+  }
+  const storeyAlone = once('storey', () => workAlone(name))
+  const alone = once('alone', () => workAlone(`${name}.alone`))
+
+  const distribution = once('shears', (): Result<Distribution> => {
+    const tied = around.tied(name)
+    if (tied) return tied
     const above = around.above()
     if (above.ok && above.value.length > 0) scope.assume(storeyByStorey)
-    const parts = together({ rigidity: rigidity(), display: display(), loads: loads() })
-    return parts.ok ? good(workDistribution(parts.value.rigidity, parts.value.loads, parts.value.display)) : parts
+    return storeyAlone()
   })
 
   /** Where nothing is stated of the forces and of wind, there is nothing to share out; a fault in them is told where it shows. */
@@ -356,6 +299,20 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     const { plan: p, mass: m, rigidity: r, distribution: d, display: shown } = parts.value
     if (shown.relative) return bad([driftNotWorked(name, givens.walls[0]?.info ?? anchor)])
     return good(d.cases.map(each => workDisplacement(p, m, r, each, shown)))
+  })
+
+  const redundancy = once('redundancy', (): Result<Redundancy> => {
+    const parts = together({
+      rigidity: rigidity(),
+      walls: walls(),
+      alone: storeyAlone(),
+      plan: plan(),
+      display: display(),
+    })
+    if (!parts.ok) return parts
+    const { rigidity: r, walls: given, alone: storey, plan: p, display: shown } = parts.value
+    if (given.some(({ strength }) => !strength)) scope.assume(strengthByLength(name))
+    return good(workRedundancy(r, given, storey, p, shown))
   })
 
   return {
@@ -390,6 +347,14 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     hasWind,
     isLoaded,
     distribution,
+    storeyAlone,
+    alone,
+    tied: () => around.tied(name),
+    section: wall => {
+      const found = wallOf(wall)
+      return found && sectionFor(found)
+    },
     displacements,
+    redundancy,
   }
 }

@@ -1,6 +1,6 @@
 /** The whole building at work: every value by its id, each worked when it is first asked for. */
 import type { Diagnostic } from '../base/diagnostic.ts'
-import { all, channel, Ledger, type Result } from '../base/ledger.ts'
+import { all, channel, Ledger, type Result, together } from '../base/ledger.ts'
 import { bad, good } from '../base/outcome.ts'
 import type { Span } from '../base/span.ts'
 import type { Value, Word } from '../base/value.ts'
@@ -10,10 +10,11 @@ import { commonShare, type Forces, readShare } from '../model/forces.ts'
 import type { Choices } from '../model/front.ts'
 import { type Givens, type LiveGivens, liveGivens } from '../model/givens.ts'
 import { type Grid, readGrid } from '../model/grid.ts'
-import { type LevelLine, readLevels } from '../model/levels.ts'
+import { type LevelLine, readLevels, readWallModel } from '../model/levels.ts'
 import type { Limit } from '../model/limits.ts'
 import type { Assumption, Scope } from '../model/scope.ts'
 import { readSeismic } from '../model/seismic.ts'
+import { readSpectrum } from '../model/spectrum.ts'
 import { readWind } from '../model/wind.ts'
 import type { Text } from '../read/text.ts'
 import { profileFor, profileOf } from '../standards/catalogue.ts'
@@ -25,7 +26,12 @@ import { levelCalledSeismic, topicMissing } from './level-faults.ts'
 import { type Seismic, type WeighedLevel, workSeismic } from './seismic.ts'
 import { seismicIds, seismicLevelValue, seismicValue } from './seismic-ids.ts'
 import { shareByWord } from './shares.ts'
+import { type Spectral, spectralValue, workSpectral } from './spectral.ts'
 import { type LoadedLevel, type Storeys, workStoreys } from './storeys.ts'
+import type { TiedDistribution } from './tied.ts'
+import { tieWalls } from './tying.ts'
+import { vibrate, vibratingLevels } from './vibrating.ts'
+import { modeValue, shapeValue, type Vibration } from './vibration.ts'
 import type { Wind } from './wind.ts'
 import { windStoreys, windValue, workWindOn } from './wind-building.ts'
 
@@ -46,6 +52,10 @@ export interface Worksheet {
   readonly storeys: () => Result<Storeys>
   /** Present where the document has a block `seismic`. */
   readonly seismic?: () => Result<Seismic>
+  /** Modes of vibration of the building. */
+  readonly vibration: () => Result<Vibration>
+  /** Response to the stated spectrum; absent where there is none. */
+  readonly spectral?: () => Result<Spectral>
   readonly constructions: ReadonlyMap<string, () => Result<Construction>>
   /** The value of each line of the equation blocks, by its place. */
   readonly equation: (line: Text) => Result<Value>
@@ -151,6 +161,10 @@ export function worksheet(first: Givens, { system, standard, titleBlock, assumpt
         const names = lines.value.slice(0, Math.max(0, mine)).map(({ name }) => name)
         return good(names.flatMap(name => levels.find(other => other.name === name) ?? []))
       },
+      tied: name => {
+        const model = wallModel()
+        return model.ok && model.value === 'continuous' ? tiedLevel(name) : undefined
+      },
     }),
   )
 
@@ -169,6 +183,43 @@ export function worksheet(first: Givens, { system, standard, titleBlock, assumpt
     if (!given.ok) return given
     return given.value ? workWindOn(given.value, levels, levelLines(), scope) : good(undefined)
   })
+
+  const wallModel = ledger.once('walls.model', givens.levelTable[0]?.info ?? nowhere, () =>
+    good(readWallModel(givens.levelTable)),
+  )
+  const tied = ledger.once('walls', givens.levelTable[0]?.info ?? nowhere, () => {
+    const lines = levelLines()
+    return lines.ok ? tieWalls(lines.value, levels, scope) : lines
+  })
+
+  const vibration = ledger.once('modes', levels[0]?.anchor ?? nowhere, () => {
+    const lines = levelLines()
+    return lines.ok ? vibrate(lines.value, levels, scope) : lines
+  })
+
+  const [spectrumBlock] = first.spectrum
+  const spectrum = ledger.once('spectrum', spectrumBlock?.info ?? nowhere, () => readSpectrum(givens.spectrum, scope))
+  const spectral = spectrumBlock && ledger.once('modal', spectrumBlock.info, workedSpectral)
+
+  function workedSpectral(): Result<Spectral> {
+    const lines = levelLines()
+    if (!lines.ok) return lines
+    const parts = together({
+      given: spectrum(),
+      vibration: vibration(),
+      ready: vibratingLevels(lines.value, levels),
+    })
+    if (!parts.ok) return parts
+    const { given, vibration: made, ready } = parts.value
+    return given ? workSpectral(given, made, ready, scope.display) : bad([])
+  }
+
+  function tiedLevel(name: string): Result<TiedDistribution> {
+    const made = tied()
+    if (!made.ok) return made
+    const found = made.value.find(({ level }) => level === name)
+    return found ? good(found) : bad([])
+  }
 
   const storeys = ledger.once('storeys', levels[0]?.anchor ?? nowhere, (): Result<Storeys> => {
     const stated = levelLines()
@@ -205,6 +256,15 @@ export function worksheet(first: Givens, { system, standard, titleBlock, assumpt
     if (path.length === 0) return lines.value(id)
     const level = levels.find(({ name }) => name === head)
     const [first = '', second = ''] = path
+    const responds = (head === 'modal' || head === 'mode') && !level ? true : level !== undefined && first === 'modal'
+    if (responds && spectral) {
+      const made = spectral()
+      const value = made.ok ? spectralValue(made.value, id) : undefined
+      if (value) return good(value)
+      if (!made.ok && head !== 'mode') return made
+    }
+    if (head === 'mode' && !level) return ofModes(made => modeValue(made, path))
+    if (level && first === 'mode') return ofModes(made => shapeValue(made, head, path.slice(1)))
     if (level && first === 'elevation' && path.length === 1) return elevationOf(head)
     if (level) {
       const found = levelValue(level, path) ?? (seismic && seismicLevelValue(seismic, head, path))
@@ -219,6 +279,13 @@ export function worksheet(first: Givens, { system, standard, titleBlock, assumpt
       return construction && user ? constructionValue(construction, user.moduli(first), second) : undefined
     }
     return undefined
+  }
+
+  function ofModes(pick: (made: Vibration) => Value | undefined): Result<Value> | undefined {
+    const made = vibration()
+    if (!made.ok) return made
+    const value = pick(made.value)
+    return value && good(value)
   }
 
   function elevationOf(level: string): Result<Value> | undefined {
@@ -243,6 +310,8 @@ export function worksheet(first: Givens, { system, standard, titleBlock, assumpt
     wind,
     storeys,
     ...(seismic ? { seismic } : {}),
+    vibration,
+    ...(spectral ? { spectral } : {}),
     constructions,
     equation: line => lines.equation(line),
     limit: line => lines.limit(line),
@@ -268,6 +337,7 @@ export function worksheet(first: Givens, { system, standard, titleBlock, assumpt
       levelLines,
       ...(seismic ? [seismic] : []),
       wind,
+      spectrum,
       ...constructions.values(),
       ...levels.flatMap(({ givens, areas, mass, walls, openings, springs, forces }) => [
         ...(givens.areas.length > 0 ? [areas, mass] : []),

@@ -1,11 +1,15 @@
 /** Workings that tell of the whole building rather than of one level. */
+import type { Diagnostic } from '../base/diagnostic.ts'
 import type { LevelWork } from '../compute/level.ts'
 import type { Worksheet } from '../compute/worksheet.ts'
 import { diagnose } from '../read/text.ts'
 import type { Context } from './context.ts'
+import { explainContinuous } from './continuous.ts'
+import { explainModes } from './modes.ts'
 import type { BuildingWant, Request } from './request.ts'
 import { explainSeismic } from './seismic.ts'
 import type { Piece } from './sheet.ts'
+import { explainSpectral } from './spectral.ts'
 import { explainStoreys } from './storeys.ts'
 import { explainWindForces, explainWindPressures } from './wind.ts'
 
@@ -17,6 +21,9 @@ const headings: Readonly<Record<BuildingWant, string>> = {
   'diaphragm forces': 'Diaphragm forces',
   'wind pressures': 'Wind pressures',
   'wind forces': 'Wind forces',
+  'continuous walls': 'Continuous walls',
+  'modes of vibration': 'Modes of vibration',
+  'modal response': 'Modal response',
 }
 
 /** @param level the level that the working names, if any */
@@ -50,13 +57,35 @@ function piecesOf(
     case 'storey forces':
     case 'diaphragm forces': {
       const made = sheet.seismic?.()
-      if (!made) return [{ kind: 'fault', diagnostics: [noSeismic(request)] }]
-      return made.ok
-        ? explainSeismic(want, made.value, request, context)
-        : [{ kind: 'fault', diagnostics: made.because }]
+      if (!made) return faultBox([noSeismic(request)])
+      return made.ok ? explainSeismic(want, made.value, request, context) : faultBox(made.because)
+    }
+    case 'continuous walls': {
+      const made = explainContinuous(sheet, level, request, context)
+      return made.ok ? made.value : faultBox(made.because)
+    }
+    case 'modes of vibration': {
+      const made = sheet.vibration()
+      return made.ok ? explainModes(made.value, request.detail, context) : faultBox(made.because)
+    }
+    case 'modal response': {
+      const made = sheet.spectral?.()
+      if (!made) return faultBox([noSpectrum(request)])
+      return made.ok ? explainSpectral(made.value, request.detail, context) : faultBox(made.because)
     }
   }
 }
+
+const faultBox = (diagnostics: readonly Diagnostic[]): readonly Piece[] => [{ kind: 'fault', diagnostics }]
+
+const noSpectrum = ({ at }: Request): Diagnostic =>
+  diagnose(
+    'error',
+    'spectrum-missing',
+    at,
+    'this document has no block spectrum',
+    'Give periods and accelerations in a block spectrum.',
+  )
 
 const noSeismic = ({ at }: Request) =>
   diagnose(

@@ -15,6 +15,7 @@ const titles: Readonly<Record<string, string>> = {
   forces: 'Forces',
   seismic: 'Seismic',
   wind: 'Wind',
+  spectrum: 'Spectrum',
 }
 
 export function explainGiven(block: Block, context: Context): readonly Piece[] {

@@ -22,6 +22,7 @@ export const wants = [
   'displacement',
   'displaced shape',
   'equilibrium',
+  'redundancy',
 ] as const
 
 export type Want = (typeof wants)[number]
@@ -29,18 +30,26 @@ export type Want = (typeof wants)[number]
 /** What tells of all levels at once; a level, where one is named, is worked in full. */
 export const seismicWants = ['design spectrum', 'base shear', 'storey forces', 'diaphragm forces'] as const
 export type SeismicWant = (typeof seismicWants)[number]
-export const buildingWants = ['storey shears', ...seismicWants, 'wind pressures', 'wind forces'] as const
+export const buildingWants = [
+  'storey shears',
+  ...seismicWants,
+  'wind pressures',
+  'wind forces',
+  'continuous walls',
+  'modes of vibration',
+  'modal response',
+] as const
 export type BuildingWant = (typeof buildingWants)[number]
 
 /** Lists of the whole document rather than of a level. */
 export const documentWants = ['criteria', 'standard', 'checks', 'assumptions', 'references'] as const
 export type DocumentWant = (typeof documentWants)[number]
 
-/** All of a level in order; the displaced shape comes with the displacement. */
+/** All of a level in order; the displaced shape comes with the displacement, and redundancy is asked for by itself. */
 export const WHOLE = 'whole calculation' as const
 /** From hazard to forces, likewise. */
 export const WHOLE_SEISMIC = 'seismic design' as const
-const parts: readonly Want[] = wants.filter(want => want !== 'displaced shape')
+const parts: readonly Want[] = wants.filter(want => want !== 'displaced shape' && want !== 'redundancy')
 
 export type AnyWant = Want | BuildingWant | DocumentWant
 export const everyWant: readonly AnyWant[] = [...wants, ...buildingWants, ...documentWants]

@@ -1,20 +1,22 @@
 /** Torsion, wall shears, design shears, displacement and equilibrium. */
 
-import { formula, sym } from '../base/formula.ts'
+import { sym } from '../base/formula.ts'
 import type { Display } from '../base/kind.ts'
 import { verbatim } from '../base/language.ts'
-import { numeralOnPage, rounded } from '../base/numeral.ts'
 import { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
-import { shownAs, texAbout, work } from '../base/work.ts'
+import { shownAs } from '../base/work.ts'
 import { type Axis, caseOnPage } from '../compute/cases.ts'
 import type { Displacement } from '../compute/displacement.ts'
 import type { CaseResult, Distribution } from '../compute/distribution.ts'
 import { T, V, Vx, Vy } from '../compute/symbols.ts'
+import { isTied } from '../compute/tied.ts'
 import { casesInWords } from './casewords.ts'
 import type { Context } from './context.ts'
+import { explainTiedShears } from './continuous.ts'
 import { explainValue } from './equation.ts'
 import type { Detail } from './request.ts'
+import { residualCheck, residualOnPage } from './residual.ts'
 import type { Check, Piece } from './sheet.ts'
 import { explainTable } from './table.ts'
 
@@ -112,6 +114,7 @@ export function explainWallShears(
   detail: Detail,
   context: Context,
 ): readonly Piece[] {
+  if (isTied(shown)) return explainTiedShears(level, shown, walls, detail, context)
   const steps = walls.flatMap(wall => shearSteps(shown, wall, detail).map(value => explainValue(value, context)))
   if (detail === 'result') return steps
   const { name } = shown.case
@@ -191,20 +194,6 @@ function displacedPoints(
   return detail === 'table' ? [table] : [...steps, table]
 }
 
-/** The residual that the arithmetic may leave, of the storey shear. */
-const ALLOWED = 1e-9
-
-const share = {
-  of: sym('R', 'R', 'residual'),
-  limit: sym('R_lim', 'R_{\\text{lim}}', 'residual'),
-}
-const residualRatio = formula({
-  gives: sym('r', 'r', 'number'),
-  body: 'R/R_lim',
-  of: [share.of, share.limit],
-  source: 'demand over limit',
-})
-
 const resisted = {
   x: sym('R_x', '\\sum V\\,c', 'force'),
   y: sym('R_y', '\\sum V\\,s', 'force'),
@@ -258,40 +247,12 @@ export function explainEquilibrium(
   ]
 }
 
-/** Two digits tell what a residual has to tell: how small it is. */
-const residualOnPage = ({ si }: Value, { language }: Context): string => numeralOnPage(rounded(si, -2), language)
-
-const LIMIT = 'limit of the arithmetic'
-
 /** The check of the case with the largest residual. */
-export function equilibriumCheck({ level, cases }: Distribution, context: Context): Check {
-  const ratios = cases.map(({ residual }) => residual.ratio)
-  const worst = ratios.reduce((a, b) => (b.si > a.si ? b : a))
-  const limit: Value = {
-    id: `${level}.equilibrium.limit`,
-    tex: texAbout(share.limit.tex, level),
-    si: ALLOWED,
-    unit: worst.unit,
-    rounding: 0,
-    origin: { kind: 'default', assumption: LIMIT },
-  }
-  // A pure number prints alike in every system.
-  const display: Display = { system: 'US', relative: false }
-  const worked = work(`${level}.equilibrium.ratio`, residualRatio, { R: worst, R_lim: limit }, display, [level])
-  const ratio = worked.si
-  for (const value of [worst, limit, worked]) context.beside(value)
-  return {
-    kind: 'check',
-    id: `${level}.equilibrium.check`,
-    what: context.words(`Equilibrium of ${verbatim(level)}, largest residual`),
-    demand: residualOnPage(worst, context),
-    capacity: numeralOnPage(rounded(ALLOWED), context.language),
-    numbers: { demand: worst.si, capacity: ALLOWED, unit: '' },
-    ratio,
-    ratioPrinted: numeralOnPage(rounded(ratio, -2), context.language),
-    ids: { demand: worst.id, capacity: limit.id, ratio: worked.id },
-    ok: ratio <= 1,
-    reference: LIMIT,
-    sourceLines: [],
-  }
-}
+export const equilibriumCheck = ({ level, cases }: Distribution, context: Context): Check =>
+  residualCheck(
+    `${level}.equilibrium`,
+    `Equilibrium of ${verbatim(level)}, largest residual`,
+    cases.map(({ residual }) => residual.ratio),
+    level,
+    context,
+  )

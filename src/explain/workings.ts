@@ -13,6 +13,7 @@ import { explainDesignShears } from './design.ts'
 import { displacedFigure, elevations, figure, flatAll, plan } from './figures.ts'
 import { explainMass, explainPolarMoment } from './mass.ts'
 import { explainPierShears } from './piers.ts'
+import { explainRedundancy } from './redundancy.ts'
 import type { Request, Want } from './request.ts'
 import { explainEccentricity, explainRigidity, explainStiffness, explainWindEccentricity } from './rigidity.ts'
 import {
@@ -38,6 +39,7 @@ const headings: Readonly<Record<Want, string>> = {
   displacement: 'Displacement',
   'displaced shape': 'Displaced shape',
   equilibrium: 'Equilibrium',
+  redundancy: 'Redundancy',
 }
 
 /** The pieces of one want; a want that cannot be worked becomes a box with its reasons. */
@@ -84,6 +86,10 @@ function answer(want: Want, level: LevelWork, request: Request, context: Context
       const worked = explainEccentricity(eccentricity.value, acting?.ok ? acting.value : undefined, context)
       const wind = level.hasWind() ? level.distribution() : good(undefined)
       return wind.ok ? good([...worked, ...explainWindEccentricity(wind.value, context)]) : wind
+    }
+    case 'redundancy': {
+      const redundancy = level.redundancy()
+      return redundancy.ok ? good(explainRedundancy(redundancy.value, detail, context)) : redundancy
     }
     case 'elevations':
       return request.whole && level.givens.openings.length === 0 ? good([]) : elevations(level, request, context)

@@ -7,6 +7,7 @@ import { casesOf } from '../compute/cases.ts'
 import { type AnyWant, details, type WHOLE, type WHOLE_SEISMIC } from '../explain/request.ts'
 import { endsWords, materials } from '../model/construction.ts'
 import { levelWalls } from '../model/levels.ts'
+import { combinations } from '../model/spectrum.ts'
 import { exposures } from '../model/wind-directional.ts'
 import type { Topic } from '../read/topics.ts'
 import { seismicFields } from './seismic-fields.ts'
@@ -159,6 +160,7 @@ export const grammar: Readonly<Record<Topic, TopicFields>> = {
         'LEVEL.wall.NAME.k',
         'Instead of a construction: the stated stiffness of the wall, frame or brace along its own line.',
       ),
+      strength: value('force', 'LEVEL.wall.NAME.strength', 'Its nominal strength along its line, for the redundancy.'),
       note,
     },
     settings: none,
@@ -226,6 +228,20 @@ export const grammar: Readonly<Record<Topic, TopicFields>> = {
       ...pressures('wind'),
     },
   },
+  spectrum: {
+    says: 'Accelerations by period, to which the modes of vibration respond.',
+    columns: {
+      period: value('period', 'spectrum.NAME.T', 'Period, rising from row to row.'),
+      acceleration: value('number', 'spectrum.NAME.S', 'Spectral acceleration, as a multiple of g.'),
+    },
+    settings: {
+      damping: value('share', 'spectrum.damping', 'Damping of the modes; 5% where it is left out.'),
+      combination: words(combinations, 'How the responses of the modes are put together.'),
+      'static x': value('force', 'spectrum.static.x', 'Static base shear along x, to which the response is raised.'),
+      'static y': value('force', 'spectrum.static.y', 'Static base shear along y, to which the response is raised.'),
+      share: value('share', 'spectrum.share', 'The share of the static base shear that is asked for.'),
+    },
+  },
   equations: {
     says: 'Your own formulas, each printed in letters, with values put in, and with its result.',
     columns: none,
@@ -276,6 +292,10 @@ export const wantSays: Readonly<Record<AnyWant | typeof WHOLE | typeof WHOLE_SEI
   'diaphragm forces': 'what the diaphragm of each level is designed for',
   'wind pressures': 'how the pressures of wind follow from its speed',
   'wind forces': 'what each level takes of the wind',
+  'continuous walls': 'walls that run through the levels, solved together, down their height',
+  'modes of vibration': 'periods, shapes, and the mass that takes part',
+  'modal response': 'shears of the modes under the stated spectrum',
+  redundancy: 'the storey without each of its walls in turn',
   standard: 'rules of the standard that are known here, with their clauses',
   criteria: 'what the calculation starts from',
   checks: 'every check, the largest ratio first',

@@ -11,6 +11,7 @@ export const topics = [
   'forces',
   'seismic',
   'wind',
+  'spectrum',
   'equations',
   'working',
 ] as const

@@ -28,6 +28,7 @@ export { publish } from '../../src/publish.ts'
 export { readDocument } from '../../src/read/document.ts'
 export { parseMarkdown } from '../../src/read/markdown.ts'
 export { createTypesetter } from '../../src/render/typeset.ts'
+export { removeWalls, removeWallsAnew, solveTower, vibrateTower } from './towers.ts'
 
 /** Drawings that the bench makes again and again, by name. */
 export const drawings: readonly (readonly [string, () => string])[] = [

@@ -129,6 +129,7 @@ describe('a build that follows others', () => {
     ['tests/golden/two-levels/input.md', 20],
     ['tests/golden/openings/input.md', 12],
     ['tests/golden/seismic/input.md', 12],
+    ['samples/quay-hostel.md', 6],
     ['tests/golden/wind-gable/input.md', 4],
     ['tests/golden/wind-stated/input.md', 8],
     ['samples/millrace.md', 6],

@@ -11,6 +11,7 @@ import { gridSettings } from '../../src/model/grid.ts'
 import { levelColumns, levelSettings } from '../../src/model/levels.ts'
 import { lineColumns, pointColumns } from '../../src/model/loads.ts'
 import { openingColumns } from '../../src/model/openings.ts'
+import { spectrumColumns, spectrumSettings } from '../../src/model/spectrum.ts'
 import { wallColumns } from '../../src/model/walls.ts'
 import { directionalSettings } from '../../src/model/wind-directional.ts'
 import { statedWindColumns, statedWindSettings } from '../../src/model/wind-stated.ts'
@@ -25,12 +26,14 @@ const columns: Readonly<Partial<Record<Topic, ColumnRules>>> = {
   openings: openingColumns,
   forces: forceColumns,
   wind: statedWindColumns,
+  spectrum: spectrumColumns,
 }
 const settings: Readonly<Partial<Record<Topic, readonly string[]>>> = {
   grid: gridSettings,
   levels: levelSettings,
   construction: [...commonSettings, ...Object.values(materials).flatMap(each => [...each.needed, ...each.optional])],
   seismic: seismicNames,
+  spectrum: spectrumSettings,
   wind: [...directionalSettings, ...statedWindSettings],
   forces: [...forceSettings, ...forceTableSettings],
   working: workingSettings,
