@@ -8,7 +8,7 @@ import { unified } from 'unified'
 import { type Compiled, sheetOf } from './compile.ts'
 import type { Figure } from './explain/sheet.ts'
 import { traced } from './explain/traced.ts'
-import type { PlacedPicture } from './read/pictures.ts'
+import type { Pictures, PlacedPicture } from './read/pictures.ts'
 import { besideNames } from './render/beside.ts'
 import type { BodyPart } from './render/body.ts'
 import { type LivePage, livePage, type Page, renderHtml } from './render/html.ts'
@@ -103,23 +103,25 @@ function sourceMarkOf({ source }: Compiled, host: Host): string {
 
 function bodyOf({ parts, pictures }: Compiled): readonly BodyPart[] {
   const definitions = definitionsIn(parts)
-  return parts.flatMap((part, i): readonly BodyPart[] => {
-    if (part.kind === 'pieces') return part.pieces
+  const body: BodyPart[] = []
+  for (const [i, part] of parts.entries()) {
+    if (part.kind === 'pieces') body.push(...part.pieces)
     // What leads elsewhere, or holds a picture, tells more than its own nodes do.
-    if (definitions.length > 0 || part.nodes.some(holdsPicture))
-      return [{ kind: 'prose', html: proseHtml(picturesInPage(part.nodes, pictures), definitions, `note-${i}`) }]
-    return [proseAsBefore(part.nodes)]
-  })
+    else if (definitions.length > 0 || (pictures.size > 0 && part.nodes.some(holdsPicture)))
+      body.push({ kind: 'prose', html: proseHtml(picturesInPage(part.nodes, pictures), definitions, `note-${i}`) })
+    else body.push(proseAsBefore(part.nodes, pictures))
+  }
+  return body
 }
 
 /** Each stretch of prose as it was set last, by its first node. */
 const setBefore = new WeakMap<RootContent, { readonly nodes: readonly RootContent[]; readonly prose: BodyPart }>()
 
-function proseAsBefore(nodes: readonly RootContent[]): BodyPart {
+function proseAsBefore(nodes: readonly RootContent[], pictures: Pictures): BodyPart {
   const [first] = nodes
   const before = first && setBefore.get(first)
   if (before?.nodes.length === nodes.length && nodes.every((node, i) => node === before.nodes[i])) return before.prose
-  const prose: BodyPart = { kind: 'prose', html: proseHtml(nodes, [], '') }
+  const prose: BodyPart = { kind: 'prose', html: proseHtml(picturesInPage(nodes, pictures), [], '') }
   if (first) setBefore.set(first, { nodes, prose })
   return prose
 }

@@ -8,6 +8,7 @@ import { printsAlike, type Value } from '../base/value.ts'
 import type { StatedCell, Worksheet } from '../compute/worksheet.ts'
 import { levelNameOf } from '../model/givens.ts'
 import { isLimit } from '../model/limits.ts'
+import { isWord } from '../model/scope.ts'
 import type { Block } from '../read/block.ts'
 import type { Document, QuoteMark } from '../read/document.ts'
 import { diagnose, type Text } from '../read/text.ts'
@@ -203,14 +204,31 @@ export function explainQuotes(
 ): Quotes {
   const found = new Map<TextNode, Quoted[]>()
   for (const mark of quotes) {
-    const quote = explainQuote(mark, sheet.scope, context)
     const { within, node, id } = mark
+    const quote = quoteAsBefore(mark, sheet, context)
     const quoted: Quoted = quote.ok
       ? quotedAsBefore(mark, { within, quote: quote.value, place: placeOf(quote.value.id) })
       : { within, missing: `${id.text}: not worked`, faults: quote.because }
     found.set(node, [...(found.get(node) ?? []), quoted])
   }
   return found
+}
+
+/** What each quote told of last. */
+const toldBefore = new WeakMap<QuoteMark, { readonly value: Value; readonly quote: Result<Quote> }>()
+
+/** A quote of a value that is the same as in the build before says the same. */
+function quoteAsBefore(mark: QuoteMark, { scope }: Worksheet, context: Context): Result<Quote> {
+  const found = scope.lookup(mark.id.text)
+  const value = found?.ok && !isWord(found.value) ? found.value : undefined
+  const before = toldBefore.get(mark)
+  if (value && before?.value === value) {
+    context.root(value)
+    return before.quote
+  }
+  const quote = explainQuote(mark, scope, context)
+  if (value) toldBefore.set(mark, { value, quote })
+  return quote
 }
 
 /** What each quote said last. */
@@ -273,16 +291,19 @@ export function itemsOf(
   worked: ReadonlyMap<Code, readonly Piece[]>,
   diagnostics: readonly Diagnostic[],
 ): readonly Numbered<RootContent>[] {
-  return document.tree.children.flatMap((node): readonly Numbered<RootContent>[] => {
+  const items: Numbered<RootContent>[] = []
+  for (const node of document.tree.children) {
     const pieces = node.type === 'code' ? worked.get(node) : undefined
     const box = boxFor(node, pieces, diagnostics)
-    if (pieces) return [{ kind: 'pieces', pieces: box.length === 0 ? pieces : [...pieces, ...box], key: node }]
-    const item: Numbered<RootContent> =
-      node.type === 'heading'
-        ? { kind: 'heading', depth: node.depth, text: headingText(node), key: node }
-        : { kind: isFigure(node, document) ? 'picture' : 'other', key: node }
-    return box.length === 0 ? [item] : [item, { kind: 'pieces', pieces: box, key: node }]
-  })
+    if (pieces) {
+      items.push({ kind: 'pieces', pieces: box.length === 0 ? pieces : [...pieces, ...box], key: node })
+      continue
+    }
+    if (node.type === 'heading') items.push({ kind: 'heading', depth: node.depth, text: headingText(node), key: node })
+    else items.push({ kind: isFigure(node, document) ? 'picture' : 'other', key: node })
+    if (box.length > 0) items.push({ kind: 'pieces', pieces: box, key: node })
+  }
+  return items
 }
 
 /** What is put at the end: sections like those of the document, or lists alone where it has none. */
@@ -306,6 +327,7 @@ const depths = [1, 2, 3, 4, 5, 6] as const
 
 /** A paragraph of one picture that has a title. */
 function isFigure(node: RootContent, { pictures }: Document): boolean {
+  if (pictures.size === 0) return false
   const [only, ...more] = node.type === 'paragraph' ? node.children : []
   if (only === undefined || more.length > 0) return false
   return (only.type === 'image' || only.type === 'imageReference') && (pictures.get(only)?.title ?? '') !== ''

@@ -86,7 +86,10 @@ export function numberItems<P>(items: readonly Numbered<P>[], source: Source): N
     return made
   }
   const numbered = items.map((item): Numbered<P> => {
-    if (item.kind === 'pieces') return { ...item, pieces: numberPieces(item.pieces) }
+    if (item.kind === 'pieces') {
+      const pieces = numberPieces(item.pieces)
+      return pieces === item.pieces ? item : { ...item, pieces }
+    }
     if (item.kind === 'picture') pictures.set(item.key, numberOf('figure', counts[0] ?? 0, within))
     if (item.kind === 'heading') {
       const id = anchor(slug(item.text))
@@ -104,8 +107,12 @@ export function numberItems<P>(items: readonly Numbered<P>[], source: Source): N
 
 /** Depth of the headings that begin a section, the lone title set aside; undefined where there are none. */
 export function topDepth<P>(items: readonly Numbered<P>[]): number | undefined {
-  const depths = items.flatMap(item => (item.kind === 'heading' ? [item.depth] : []))
-  const parted = items.some(item => item.kind === 'pieces' && item.pieces.some(({ kind }) => kind === 'heading'))
+  const depths: number[] = []
+  let parted = false
+  for (const item of items) {
+    if (item.kind === 'heading') depths.push(item.depth)
+    else if (item.kind === 'pieces') parted ||= item.pieces.some(({ kind }) => kind === 'heading')
+  }
   const sections = loneTitle(depths, parted) ? depths.slice(1) : depths
   return sections.length === 0 ? undefined : Math.min(...sections)
 }

@@ -36,7 +36,7 @@ function run(page: HTMLElement, blocks: Blocks, trace: Trace, noteFrom: (note: M
   let report: Report = { state: 'sound', errors: 0, checks: 0, failed: 0, messages: [] }
   /** The element last pointed at or brought to the focus, whose source line may be asked for. */
   let pointed: Element | undefined
-  let touched = 0
+  let touched = Number.NEGATIVE_INFINITY
 
   const strip = createStrip({
     jump: id => jumpTo(placeOf(id) ?? document.getElementById(id)),

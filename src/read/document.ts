@@ -34,7 +34,7 @@ export interface Document {
 }
 
 export function readDocument(tree: Root, source: Source, nearby: Nearby = nothingNearby): Document {
-  const seen = tree.children.map(node => seenIn(node, source))
+  const seen = tree.children.map(node => seenIn(node, source)).filter(each => each !== nothingSeen)
   const links = seen.flatMap(({ links }) => links)
   const shown = seen.flatMap(({ shown }) => shown)
   // What defines nothing but a picture is no link, and the picture tells of it.
@@ -64,6 +64,9 @@ interface Seen {
   readonly faults: readonly Diagnostic[]
 }
 
+/** Of a part of plain words, as most are. */
+const nothingSeen: Seen = { front: undefined, blocks: [], quotes: [], links: [], shown: [], faults: [] }
+
 /** A part is looked through once, however many builds it stands in. */
 const known = new WeakMap<RootContent, Seen>()
 
@@ -90,6 +93,9 @@ function lookThrough(part: RootContent, source: Source): Seen {
     else if (isPicture(node)) shown.push(node)
     else if (isText(node)) quotes.push(...quotesIn(node, source))
   })
+  const isNothing =
+    front === undefined && [faults, blocks, quotes, links, shown, cut].every(found => found.length === 0)
+  if (isNothing) return nothingSeen
   return { front, blocks, quotes, links, shown, faults: [...faults, ...cut.map(nestedTooDeep)] }
 }
 

@@ -29,7 +29,7 @@ export interface Typesetter {
 
 export function createTypesetter(cache: ShapeCache = createShapeCache()): Typesetter {
   const all = new Set<Shape>()
-  const keptParts = new Set<Kept>()
+  const keptParts: Kept[] = []
   let used = all
   const see = (shape: Shape): void => {
     used.add(shape)
@@ -47,7 +47,7 @@ export function createTypesetter(cache: ShapeCache = createShapeCache()): Typese
       cache.kept.set(object, ways)
       const made = ways.get(how) ?? setAnew(set)
       ways.set(how, made)
-      keptParts.add(made)
+      keptParts.push(made)
       return made.html
     },
     html: (tex, mode) => setFormula(tex, mode, cache, see),

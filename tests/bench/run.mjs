@@ -8,6 +8,8 @@ import { mkdirSync, mkdtempSync, readFileSync, rmSync, writeFileSync } from 'nod
 import { cpus, tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { fileURLToPath, pathToFileURL } from 'node:url'
+import { setFlagsFromString } from 'node:v8'
+import { runInNewContext } from 'node:vm'
 import { build } from 'esbuild'
 import { Bench } from 'tinybench'
 import { longDocument } from './generate.mjs'
@@ -137,14 +139,83 @@ function phases({ parseMarkdown, readDocument, sourceOf, compileTree, publish, w
     worksheet(gather([...document.blocks.values()]), readChoices(document.front)).readAll(),
   )
   const compiled = timed('read, work and explain, from the tree', () => compileTree(tree, sourceOf('long.md', text)))
-  const host = {
-    version: '0',
-    asset: (/** @type {string} */ name) => readFileSync(join(root, 'dist/assets', name), 'utf8'),
-    sha256: (/** @type {string} */ source) => createHash('sha256').update(source).digest('hex'),
-    shapes: () => readFileSync(join(root, 'dist/assets/shapes.txt'), 'latin1'),
-  }
+  const host = hostOf()
   for (const format of /** @type {const} */ (['html', 'md', 'json']))
     timed(`render: ${format}`, () => publish(compiled, 'long', format, false, host))
+}
+
+/** One number changed, again and again, against a build from nothing of the same text. @param {typeof import('./inside.ts')} inside */
+function rebuilds({ createRebuilder, compileText, livePageOf, nothingNearby }) {
+  const host = hostOf()
+  head('One number changed, to the page in the browser, in one process')
+  for (const sections of [10, 50, 200]) {
+    const rebuilder = createRebuilder('long.md', host)
+    const texts = Array.from({ length: 60 }, (_, i) =>
+      numberChanged(longDocument(sections, sections * 10), sections, i),
+    )
+    /** @type {number[]} */
+    const again = []
+    /** @type {number[]} */
+    const anew = []
+    for (const [i, text] of texts.entries()) {
+      again.push(lasting(() => rebuilder.page(rebuilder.compile(text, nothingNearby), true)))
+      if (i % 6 === 5) anew.push(lasting(() => livePageOf(compileText('long.md', text), true, host)))
+    }
+    // The first few warm it up.
+    const ours = again.slice(10)
+    const slow = [...ours].sort((a, b) => a - b)[Math.floor(0.95 * ours.length)] ?? 0
+    const share = median(ours) / median(anew)
+    row(
+      `${sections} sections`,
+      [Math.min(...ours), median(ours)],
+      `95th ${slow.toFixed(1)} ms; ${share.toFixed(3)} of anew`,
+    )
+    row('  anew', [Math.min(...anew), median(anew)], '')
+  }
+}
+
+/** What is in use after many rebuilds, of a document that comes back to its beginning. @param {typeof import('./inside.ts')} inside */
+function memory({ createRebuilder, nothingNearby }) {
+  setFlagsFromString('--expose-gc')
+  const collect = runInNewContext('gc')
+  const inUse = () => {
+    collect()
+    return process.memoryUsage().heapUsed / 1048576
+  }
+  const rebuilder = createRebuilder('long.md', hostOf())
+  const text = longDocument(10, 100)
+  head('In use after rebuilds of 10 sections, MB')
+  let early = 0
+  for (let i = 1; i <= 10_000; i++) {
+    // Numbers, lines that come and go, and names that are new each time.
+    const changed = numberChanged(text, 10, i)
+    const next = i % 5 === 0 ? `${changed}\n\`\`\`equations\nnew_${i} = ${i} ft\n\`\`\`\n` : changed
+    rebuilder.page(rebuilder.compile(next, nothingNearby), true)
+    if (i === 100) early = inUse()
+  }
+  const late = inUse()
+  line(`  after 100: ${early.toFixed(1)}, after 10,000: ${late.toFixed(1)}, ${(late / early).toFixed(2)} ×`)
+}
+
+const hostOf = () => ({
+  version: '0',
+  asset: (/** @type {string} */ name) => readFileSync(join(root, 'dist/assets', name), 'utf8'),
+  sha256: (/** @type {string} */ source) => createHash('sha256').update(source).digest('hex'),
+  shapes: () => readFileSync(join(root, 'dist/assets/shapes.txt'), 'latin1'),
+})
+
+/** A width or a load of one section, which the sums after it rest on. @param {string} text @param {number} sections @param {number} i */
+function numberChanged(text, sections, i) {
+  const letter = 'bwS'[i % 3]
+  const pattern = new RegExp(`^(${letter}_${1 + ((i * 7) % sections)} = )\\d+`, 'm')
+  return text.replace(pattern, (_, start) => `${start}${9 + (i % 40)}`)
+}
+
+/** @param {() => unknown} work */
+function lasting(work) {
+  const start = performance.now()
+  work()
+  return performance.now() - start
 }
 
 function manyWalls() {
@@ -322,6 +393,8 @@ try {
   await towers(inside)
   await drawn(inside)
   phases(inside)
+  rebuilds(inside)
+  memory(inside)
   manyWalls()
   tooLarge()
   await pdf()

@@ -126,16 +126,21 @@ const ask = (
     sent.end(body)
   })
 
-/** Waits until something is so. @throws with what was there instead when it has not come about in time */
+/** Waits until something is so; what cannot be got yet is not so yet. @throws with what was there instead when it has not come about in time */
 export async function until<T>(get: () => T | Promise<T>, is: (value: T) => boolean, ms = 5000): Promise<T> {
   const ends = performance.now() + ms
   for (;;) {
-    const value = await get()
-    if (is(value)) return value
+    let last: unknown
+    try {
+      const value = await get()
+      if (is(value)) return value
+      last = value
+    } catch (error) {
+      last = error
+    }
     if (performance.now() > ends)
-      throw new Error(`it did not come about; at last there was: ${String(value).slice(-1500)}`)
+      throw new Error(`it did not come about; at last there was: ${String(last).slice(-1500)}`)
     await pause(15)
   }
 }
-
 export const pause = (ms: number): Promise<void> => new Promise(done => setTimeout(done, ms))
