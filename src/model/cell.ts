@@ -147,7 +147,10 @@ function unitMissing(span: Span, { what, sym }: Want, wanted: Dimension) {
     'unit-missing',
     span,
     `${what} has no unit; it must be ${dimensionInWords(wanted)}`,
-    `Write ${sample}, or put the unit in the head of the column, as in ${what} (${example.US}).`,
+    // A period is a setting and stands in no table.
+    sym.kind === 'period'
+      ? 'Write it as 0.35 s.'
+      : `Write ${sample}, or put the unit in the head of the column, as in ${what} (${example.US}).`,
   )
 }
 
