@@ -176,7 +176,7 @@ const withShare = formula({
   gives: areaLoad,
   body: 'w_D + psi*q',
   of: [dead, shareOfLoad, variableLoad],
-  source: 'load and the share of the variable load that moves with the building',
+  source: 'statics',
 })
 
 /** The share of a variable load by the word that stands for it, such as `snow`. */

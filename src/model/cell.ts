@@ -150,7 +150,9 @@ function unitMissing(span: Span, { what, sym }: Want, wanted: Dimension) {
     `${what} has no unit; it must be ${dimensionInWords(wanted)}`,
     sym.kind === 'speed'
       ? 'Write 115 mph or 51 m/s.'
-      : `Write ${sample}, or put the unit in the head of the column, as in ${what} (${example.US}).`,
+      : sym.kind === 'period'
+        ? 'Write it as 0.35 s; in a table the head of the column may hold the unit, as in period (s).'
+        : `Write ${sample}, or put the unit in the head of the column, as in ${what} (${example.US}).`,
   )
 }
 

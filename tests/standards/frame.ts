@@ -1,4 +1,4 @@
-/** A building of three levels for the tests of standards: 60 m × 20 m, 10 m × 10 m walls of no matter. */
+/** A building for the tests of standards: a plan of 20 m by 10 m on every level, and no walls. */
 import { reading } from '../support/worked.ts'
 
 export interface Storeys {
