@@ -112,8 +112,8 @@ export function compileTree(tree: Root, source: Source, nearby: Nearby = nothing
 
 /** The works of the build before with the givens of this one, or new ones where the building has other parts now. */
 function worksFor(givens: Givens, choices: Choices, memory: Memory): Works {
-  const { system, language, titleBlock, assumptions } = choices
-  const basis = JSON.stringify([system, language, titleBlock.standard, assumptions])
+  const { system, language, standard, titleBlock, assumptions } = choices
+  const basis = JSON.stringify([system, language, standard, titleBlock.standard, assumptions])
   const { works } = memory
   if (works?.basis === basis && works.sheet.replace(givens)) return works
   const sheet = worksheet(givens, choices)

@@ -11,6 +11,7 @@ const order: readonly (readonly string[])[] = [
   ['base'],
   ['read'],
   ['model'],
+  ['standards'],
   ['compute'],
   ['explain'],
   ['draw'],

@@ -28,12 +28,14 @@ const kinds = {
   share: both('%'),
   angle: both('deg'),
   rotation: { ...both('rad'), relative: units('kip/ft', 'kN/m') },
+  period: both('s'),
   length: units('ft', 'm'),
   thickness: units('in', 'mm'),
   displacement: { ...units('in', 'mm'), relative: units('kip', 'kN') },
   area: units('ft^2', 'm^2'),
   firstMoment: units('ft^3', 'm^3'),
   secondMoment: units('ft^4', 'm^4'),
+  speed: units('mph', 'm/s'),
   modulus: units('ksi', 'MPa'),
   strength: units('psi', 'MPa'),
   areaLoad: units('psf', 'kPa'),
@@ -45,6 +47,10 @@ const kinds = {
   stiffness: { ...units('kip/in', 'kN/mm'), relative: { US: NO_UNIT, SI: NO_UNIT } },
   stiffnessSquared: { ...units('kip^2/in^2', 'kN^2/mm^2'), relative: { US: NO_UNIT, SI: NO_UNIT } },
   stiffnessMoment: { ...units('kip*ft/in', 'MN'), relative: units('ft', 'm') },
+  /** G A_v of a section. */
+  shearStiffness: units('kip', 'MN'),
+  /** E I of a section. */
+  bendingStiffness: units('kip*ft^2', 'MN*m^2'),
   torsionalStiffness: { ...units('kip*ft^2/in', 'MN*m'), relative: units('ft^2', 'm^2') },
 } satisfies Record<string, KindUnits>
 

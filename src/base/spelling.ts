@@ -12,7 +12,7 @@ function spelling(L: string, N: string, flags: string): Spelling {
   const word = `[${L}${N}_]+(?:'[${L}${N}_]+)?`
   const start = `[${L}_][${L}${N}_]*(?:'[${L}${N}_]+)?`
   return {
-    name: new RegExp(`${start}(?:\\.(?:[EW][XY]\\d*[+-](?![${L}${N}(.])|${word}))*`, `${flags}y`),
+    name: new RegExp(`${start}(?:\\.(?:(?:[EW][XY]\\d*[+-]|WXY\\d[+-]{1,2})(?![${L}${N}(.])|${word}))*`, `${flags}y`),
     unit: new RegExp(`[${L}°]+|%`, `${flags}y`),
     unitStart: new RegExp(`[${L}°]`, flags),
   }

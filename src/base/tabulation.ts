@@ -27,11 +27,11 @@ export class Tabulation {
   private readonly held = new Map<string, TableColumn>()
   /** Made when first asked for. */
   private ids: ReadonlySet<string> | undefined
-  private readonly idOf: (row: string, key: string) => string
+  private readonly idOf: (row: string, key: string, rowIdx: number) => string
   private readonly display: Display
 
-  /** @param idOf the value id of a cell, from its row and its column's key */
-  constructor(rows: readonly string[], idOf: (row: string, key: string) => string, display: Display) {
+  /** @param idOf the value id of a cell, from its row, its column's key, and where the row stands among those of one name */
+  constructor(rows: readonly string[], idOf: (row: string, key: string, rowIdx: number) => string, display: Display) {
     this.rows = rows
     this.idOf = idOf
     this.display = display
@@ -83,7 +83,7 @@ export class Tabulation {
       cells[rowIdx] ??= this.worked(formula, inputs, key, column, rowIdx, about)
       return required(cells[rowIdx])
     }
-    const idOf = (rowIdx: number) => this.idOf(required(this.rows[rowIdx]), key)
+    const idOf = (rowIdx: number) => this.idOf(required(this.rows[rowIdx]), key, rowIdx)
     return this.hold({ sym: formula.gives, numbers: column, formula, cell, idOf })
   }
 
@@ -138,7 +138,7 @@ export class Tabulation {
       return [name, value] as const
     })
     return {
-      id: this.idOf(row, key),
+      id: this.idOf(row, key, rowIdx),
       tex: texAbout(formula.gives.tex, row, ...about),
       si: required(numbers[rowIdx]),
       ...shownAs(formula.gives, this.display),

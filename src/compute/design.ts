@@ -18,7 +18,13 @@ const shearPerLength = formula({
 })
 
 /** A case in a name that the formula reader takes: EX+ is EXp. */
-const plainCase = (name: string): string => name.replace('+', 'p').replace('-', 'm')
+const plainCase = (name: string): string => name.replaceAll('+', 'p').replaceAll('-', 'm')
+
+/** More cases than this stand in several tables, and their largest is told in short. */
+export const MOST_CASES = 8
+
+/** The name of the column with the shears of a case. */
+export const shearColumn = (caseName: string): string => `V_${plainCase(caseName)}`
 
 const envelopes = new Map<string, Formula>()
 
@@ -27,13 +33,14 @@ function envelope(cases: readonly Case[]): Formula {
   const key = cases.map(({ name }) => name).join()
   const known = envelopes.get(key)
   if (known) return known
-  const symbols = cases.map(({ name }) => sym(`V_${plainCase(name)}`, texAbout('V', caseOnPage(name)), 'force'))
-  const made = formula({
+  const symbols = cases.map(({ name }) => sym(shearColumn(name), texAbout('V', caseOnPage(name)), 'force'))
+  const whole = formula({
     gives: V,
     body: `max(${symbols.map(({ name }) => `abs(${name})`).join(', ')})`,
     of: symbols,
     source: 'largest over the cases, each with its sign',
   })
+  const made = cases.length > MOST_CASES ? { ...whole, inShort: '\\max\\left\\vert V\\right\\vert' } : whole
   envelopes.set(key, made)
   return made
 }
@@ -49,7 +56,7 @@ export function designTable({ level, springs }: Rigidity, cases: readonly CaseRe
   )
   const inputs: Record<string, string> = {}
   for (const { case: each, walls } of cases) {
-    const symbol = sym(`V_${plainCase(each.name)}`, texAbout('V', caseOnPage(each.name)), 'force')
+    const symbol = sym(shearColumn(each.name), texAbout('V', caseOnPage(each.name)), 'force')
     table.takeColumn(walls.column('V'), symbol)
     inputs[symbol.name] = symbol.name
   }

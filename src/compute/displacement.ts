@@ -3,7 +3,7 @@ import { formula, sym } from '../base/formula.ts'
 import type { Display } from '../base/kind.ts'
 import { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
-import { caseOnPage } from './cases.ts'
+import { type Axis, caseOnPage } from './cases.ts'
 import type { CaseResult } from './distribution.ts'
 import type { Plan } from './plan.ts'
 import type { Rigidity } from './rigidity.ts'
@@ -23,8 +23,8 @@ export interface Displacement {
   readonly result: CaseResult
   /** The centre of mass, then the corners of the plan. */
   readonly points: Tabulation
-  /** The largest displacement along the force, at a corner. */
-  readonly governing: { readonly corner: string; readonly value: Value }
+  /** The largest displacement along a force of the case, at a corner. */
+  readonly governing: { readonly corner: string; readonly axis: Axis; readonly value: Value }
 }
 
 export const CENTRE_OF_MASS = 'CM'
@@ -37,17 +37,33 @@ export function workDisplacement(
   display: Display,
 ): Displacement {
   const { level } = rigidity
-  const { axis, name } = result.case
+  const { parts, name } = result.case
   const id = (row: string, key: string) => `${level}.displacement.${row}.${key}`
   const points = new Tabulation([CENTRE_OF_MASS, ...corners.map(({ name }) => name)], id, display)
     .take(x, [mass.x, ...corners.map(({ x }) => x)])
     .take(y, [mass.y, ...corners.map(({ y }) => y)])
     .work(displacement.x, { u_0: result.u, phi: result.phi, y: 'y', y_r: rigidity.y }, `x.${name}`, [caseOnPage(name)])
     .work(displacement.y, { v_0: result.v, phi: result.phi, x: 'x', x_r: rigidity.x }, `y.${name}`, [caseOnPage(name)])
-  const { numbers, cell } = points.column(`delta_${axis}`)
-  let at = 1
-  numbers.forEach((value, i) => {
-    if (i > 0 && Math.abs(value) > Math.abs(numbers[at] ?? 0) * (1 + 1e-12)) at = i
-  })
-  return { result, points, governing: { corner: points.rows[at] ?? '', value: cell(at) } }
+  return {
+    result,
+    points,
+    governing: largestOf(
+      points,
+      parts.map(({ axis }) => axis),
+    ),
+  }
+}
+
+/** The corner that moves farthest along a force of the case. */
+function largestOf(points: Tabulation, axes: readonly Axis[]): Displacement['governing'] {
+  let best = { axis: axes[0] ?? 'x', at: 1, size: -1 }
+  for (const axis of axes)
+    points.column(`delta_${axis}`).numbers.forEach((value, at) => {
+      if (at > 0 && Math.abs(value) > best.size * (1 + 1e-12)) best = { axis, at, size: Math.abs(value) }
+    })
+  return {
+    corner: points.rows[best.at] ?? '',
+    axis: best.axis,
+    value: points.column(`delta_${best.axis}`).cell(best.at),
+  }
 }

@@ -2,25 +2,46 @@
  * Storey shear to the walls through a rigid diaphragm: direct and torsional
  * shear in every case, the design shear of each wall, and equilibrium.
  *
- * x to the right, y up, moments counter-clockwise; e = CM − CR. A case moves the
- * mass across its force by the accidental arm: in EX+ toward positive y.
+ * x to the right, y up, moments counter-clockwise; e = CM − CR for an earthquake. A case may move
+ * its force across its line: in EX+ the mass is moved toward positive y.
  */
-import { formula, type Sym, sym } from '../base/formula.ts'
+import { type Formula, formula, type Sym, sym } from '../base/formula.ts'
 import type { Display } from '../base/kind.ts'
 import { Tabulation } from '../base/tabulation.ts'
 import type { Value, Word } from '../base/value.ts'
 import { shownAs, texAbout, work } from '../base/work.ts'
-import { type Axis, type Case, caseOnPage, casesOf } from './cases.ts'
+import { type Case, caseOnPage, type Loading } from './cases.ts'
 import { designTable, governingCase } from './design.ts'
 import { type Residual, residualOf } from './equilibrium.ts'
+import type { Acting } from './loading.ts'
 import type { Rigidity } from './rigidity.ts'
-import { type Acting, type Eccentricity, storeyShear, workEccentricity, workMoment } from './storey.ts'
+import { caseShear, type Eccentricity, storeyShear, workEccentricity, workMoment } from './storey.ts'
 import { c, J, Kxx, Kxy, Kyy, k, phi, rho, s, T, u0, V, Vx, Vy, v0 } from './symbols.ts'
+
+/** What acts at and above a storey of one loading, and the cases made of it. */
+export interface Load {
+  readonly loading: Loading
+  readonly cases: readonly Case[]
+  /** From the top down, the storey's own level last. */
+  readonly acting: readonly Acting[]
+}
+
+/** A load with what it comes to at a storey. */
+export interface StoreyLoad extends Load {
+  readonly storey: Along
+  readonly eccentricity: Eccentricity
+}
+
+/** Storey shears along the axes on which any force acts. */
+export interface Along {
+  readonly x?: Value
+  readonly y?: Value
+}
 
 export interface CaseResult {
   readonly case: Case
-  /** The storey shear along the case's axis. */
-  readonly shear: Value
+  /** The storey shear in the case. */
+  readonly shear: Along
   /** Moment of the storey's forces about the centre of rigidity. */
   readonly moment: Value
   /** One row a level, where several act. */
@@ -36,9 +57,7 @@ export interface CaseResult {
 
 export interface Distribution {
   readonly level: string
-  readonly eccentricity: Eccentricity
-  readonly acting: readonly Acting[]
-  readonly storey: { readonly x?: Value; readonly y?: Value }
+  readonly loads: readonly StoreyLoad[]
   readonly cases: readonly CaseResult[]
   /** V in each case, the design shear V and the unit shear v of every wall. */
   readonly design: Tabulation
@@ -66,6 +85,10 @@ export const movement = {
     u: formula({ gives: u0, body: '-K_xy*V_y/D', of: [Kxy, Vy, D], source: DIAPHRAGM }),
     v: formula({ gives: v0, body: 'K_xx*V_y/D', of: [Kxx, Vy, D], source: DIAPHRAGM }),
   },
+  skew: {
+    u: formula({ gives: u0, body: '(K_yy*V_x - K_xy*V_y)/D', of: [Kyy, Vx, Kxy, Vy, D], source: DIAPHRAGM }),
+    v: formula({ gives: v0, body: '(K_xx*V_y - K_xy*V_x)/D', of: [Kxx, Vy, Kxy, Vx, D], source: DIAPHRAGM }),
+  },
   phi: formula({ gives: phi, body: 'T/J', of: [T, J], source: DIAPHRAGM }),
 }
 
@@ -73,49 +96,63 @@ export const movement = {
 export const wallShear = {
   directX: formula({ gives: Vd, body: 'V_x*k*c/K_xx', of: [Vx, k, c, Kxx], source: DIAPHRAGM }),
   directY: formula({ gives: Vd, body: 'V_y*k*s/K_yy', of: [Vy, k, s, Kyy], source: DIAPHRAGM }),
+  directBoth: formula({
+    gives: Vd,
+    body: 'V_x*k*c/K_xx + V_y*k*s/K_yy',
+    of: [Vx, k, c, Kxx, Vy, s, Kyy],
+    source: DIAPHRAGM,
+  }),
   directSkew: formula({ gives: Vd, body: 'k*(c*u_0 + s*v_0)', of: [k, c, u0, s, v0], source: DIAPHRAGM }),
   torsional: formula({ gives: Vt, body: 'T*k*rho/J', of: [T, k, rho, J], source: DIAPHRAGM }),
   total: formula({ gives: V, body: 'V_d + V_t', of: [Vd, Vt], source: 'both act along the wall' }),
 }
 
-export function workDistribution(
-  rigidity: Rigidity,
-  acting: readonly Acting[],
-  mass: Acting['mass'],
-  display: Display,
-): Distribution {
+/** @param loads at least one */
+export function workDistribution(rigidity: Rigidity, loads: readonly Load[], display: Display): Distribution {
   const { level } = rigidity
-  const e = workEccentricity(level, mass, rigidity, display)
-  const axes = (['x', 'y'] as const).filter(axis => acting.some(({ force }) => force[axis]))
-  const storey = Object.fromEntries(axes.map(axis => [axis, storeyShear(level, axis, acting, display)])) as {
-    readonly [A in Axis]?: Value
-  }
-  const cases = casesOf(axes).map(each => workCase(each, rigidity, acting, storey[each.axis], e, display))
+  const acting = loads.map(load => actOnStorey(load, rigidity, display))
+  const cases = acting.flatMap(load => load.cases.map(each => workCase(each, rigidity, load, display)))
+  return { level, loads: acting, cases, ...designed(rigidity, cases, display) }
+}
+
+/** The design shears that follow from the shears of all cases, and what governs them. */
+export function designed(
+  rigidity: Rigidity,
+  cases: readonly CaseResult[],
+  display: Display,
+): Pick<Distribution, 'design' | 'governingCase' | 'governingWall'> {
   const design = designTable(rigidity, cases, display)
   const largest = design.column('v').numbers
   return {
-    level,
-    eccentricity: e,
-    acting,
-    storey,
-    cases,
     design,
-    governingCase: wallIdx => governingCase(level, cases, design, wallIdx),
+    governingCase: wallIdx => governingCase(rigidity.level, cases, design, wallIdx),
     governingWall: largest.reduce((best, value, i) => (value > (largest[best] ?? 0) * (1 + 1e-12) ? i : best), 0),
   }
 }
 
-function workCase(
-  each: Case,
-  rigidity: Rigidity,
-  acting: readonly Acting[],
-  shear: Value | undefined,
-  e: Eccentricity,
-  display: Display,
-): CaseResult {
-  if (!shear) throw new Error(`case ${each.name} has no storey shear`)
+function actOnStorey(load: Load, rigidity: Rigidity, display: Display): StoreyLoad {
   const { level } = rigidity
-  const { moment, moments } = workMoment(each, rigidity, acting, e, display)
+  const { loading, acting } = load
+  const own = acting.at(-1)
+  if (!own) throw new Error(`nothing of ${loading} acts on ${level}`)
+  const axes = (['x', 'y'] as const).filter(axis => acting.some(({ force }) => force[axis]))
+  return {
+    ...load,
+    storey: Object.fromEntries(axes.map(axis => [axis, storeyShear(level, axis, loading, acting, display)])),
+    eccentricity: workEccentricity(level, loading, own.at, rigidity, display),
+  }
+}
+
+function workCase(each: Case, rigidity: Rigidity, load: StoreyLoad, display: Display): CaseResult {
+  const { level } = rigidity
+  const shear: Along = Object.fromEntries(
+    each.parts.map(part => {
+      const whole = load.storey[part.axis]
+      if (!whole) throw new Error(`case ${each.name} has no storey shear along ${part.axis}`)
+      return [part.axis, caseShear(level, each, part, whole, display)]
+    }),
+  )
+  const { moment, moments } = workMoment(each, rigidity, load.acting, load.eccentricity, display)
   const move = moved(each, rigidity, shear, display)
   const walls = wallShears(each, rigidity, { shear, moment, ...move }, display)
   return {
@@ -128,7 +165,7 @@ function workCase(
       caseOnPage(each.name),
     ]),
     walls,
-    residual: residualOf(level, each, walls, acting, shear, display),
+    residual: residualOf(level, each, walls, load.acting, shear, display),
   }
 }
 
@@ -136,7 +173,7 @@ function workCase(
 export function wallShears(
   each: Case,
   rigidity: Rigidity,
-  acts: { readonly shear: Value; readonly moment: Value; readonly u: Value; readonly v: Value },
+  acts: { readonly shear: Along; readonly moment: Value; readonly u: Value; readonly v: Value },
   display: Display,
 ): Tabulation {
   const { level, walls: known, J } = rigidity
@@ -151,51 +188,58 @@ export function wallShears(
 
 function directShear(
   walls: Tabulation,
-  { name, axis }: Case,
+  { name }: Case,
   { K, orthogonal }: Rigidity,
-  shear: Value,
+  { x, y }: Along,
   { u, v }: { readonly u: Value; readonly v: Value },
 ): void {
   const key = `Vd.${name}`
   const about = [caseOnPage(name)]
   if (!orthogonal) walls.work(wallShear.directSkew, { k: 'k', c: 'c', u_0: u, s: 's', v_0: v }, key, about)
-  else if (axis === 'x') walls.work(wallShear.directX, { V_x: shear, k: 'k', c: 'c', K_xx: K.xx }, key, about)
-  else walls.work(wallShear.directY, { V_y: shear, k: 'k', s: 's', K_yy: K.yy }, key, about)
+  else if (x && y)
+    walls.work(wallShear.directBoth, { V_x: x, V_y: y, k: 'k', c: 'c', s: 's', K_xx: K.xx, K_yy: K.yy }, key, about)
+  else if (x) walls.work(wallShear.directX, { V_x: x, k: 'k', c: 'c', K_xx: K.xx }, key, about)
+  else if (y) walls.work(wallShear.directY, { V_y: y, k: 'k', s: 's', K_yy: K.yy }, key, about)
 }
 
+/** The formulas and inputs of u and v where an axis has a force, or is coupled with one that has. */
 function moved(
-  { name, axis }: Case,
+  each: Case,
   { level, K, D, orthogonal }: Rigidity,
-  shear: Value,
+  { x, y }: Along,
   display: Display,
 ): { readonly u: Value; readonly v: Value } {
-  const [idU, idV] = [`${level}.u.${name}`, `${level}.v.${name}`]
-  if (orthogonal || !K.xy || !D) {
-    const still = (id: string, of: Sym): Value => ({
-      id,
-      tex: texAbout(of.tex, caseOnPage(name)),
-      si: 0,
-      ...shownAs(of, display),
-      origin: { kind: 'measured', what: `no part of the force of ${caseOnPage(name)} acts this way`, spans: [] },
-    })
-    if (axis === 'x')
-      return {
-        u: work(idU, movement.along.u, { V_x: shear, K_xx: K.xx }, display, [caseOnPage(name)]),
-        v: still(idV, v0),
-      }
-    return {
-      u: still(idU, u0),
-      v: work(idV, movement.along.v, { V_y: shear, K_yy: K.yy }, display, [caseOnPage(name)]),
-    }
-  }
+  const about = caseOnPage(each.name)
+  const at = { u: `${level}.u.${each.name}`, v: `${level}.v.${each.name}` }
+  const moves = (of: 'u' | 'v', rule: Formula, inputs: Readonly<Record<string, Value>>): Value =>
+    work(at[of], rule, inputs, display, [about])
   const { xx, yy, xy } = K
-  if (axis === 'x')
+  if (orthogonal || !xy || !D) {
+    const still = (of: 'u' | 'v', { tex, ...kind }: Sym): Value => ({
+      id: at[of],
+      tex: texAbout(tex, about),
+      si: 0,
+      ...shownAs({ tex, ...kind }, display),
+      origin: { kind: 'measured', what: `no part of the force of ${about} acts this way`, spans: [] },
+    })
     return {
-      u: work(idU, movement.skewX.u, { K_yy: yy, V_x: shear, D }, display, [caseOnPage(name)]),
-      v: work(idV, movement.skewX.v, { K_xy: xy, V_x: shear, D }, display, [caseOnPage(name)]),
+      u: x ? moves('u', movement.along.u, { V_x: x, K_xx: xx }) : still('u', u0),
+      v: y ? moves('v', movement.along.v, { V_y: y, K_yy: yy }) : still('v', v0),
     }
-  return {
-    u: work(idU, movement.skewY.u, { K_xy: xy, V_y: shear, D }, display, [caseOnPage(name)]),
-    v: work(idV, movement.skewY.v, { K_xx: xx, V_y: shear, D }, display, [caseOnPage(name)]),
   }
+  if (x && y) {
+    const inputs = { K_xx: xx, K_yy: yy, K_xy: xy, V_x: x, V_y: y, D }
+    return { u: moves('u', movement.skew.u, inputs), v: moves('v', movement.skew.v, inputs) }
+  }
+  if (x)
+    return {
+      u: moves('u', movement.skewX.u, { K_yy: yy, V_x: x, D }),
+      v: moves('v', movement.skewX.v, { K_xy: xy, V_x: x, D }),
+    }
+  if (y)
+    return {
+      u: moves('u', movement.skewY.u, { K_xy: xy, V_y: y, D }),
+      v: moves('v', movement.skewY.v, { K_xx: xx, V_y: y, D }),
+    }
+  throw new Error(`case ${each.name} has no force`)
 }

@@ -5,7 +5,9 @@ import type { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
 import { work } from '../base/work.ts'
 import { type Case, caseOnPage } from './cases.ts'
-import { type Acting, appliedMoment } from './storey.ts'
+import type { Along } from './distribution.ts'
+import type { Acting } from './loading.ts'
+import { appliedMoment } from './storey.ts'
 import { c, s, V, Vx, Vy, x, y } from './symbols.ts'
 
 export interface Residual {
@@ -55,6 +57,12 @@ const balance = {
     of: [Rx, Ry, RM, span, Vy],
     source: EQUILIBRIUM,
   }),
+  ratioBoth: formula({
+    gives: ratio,
+    body: 'max(abs(R_x), abs(R_y), abs(R_M)/l)/max(abs(V_x), abs(V_y))',
+    of: [Rx, Ry, RM, span, Vx, Vy],
+    source: EQUILIBRIUM,
+  }),
 }
 
 /**
@@ -65,10 +73,10 @@ export function residualOf(
   each: Case,
   walls: Tabulation,
   acting: readonly Acting[],
-  shear: Value,
+  { x: alongX, y: alongY }: Along,
   display: Display,
 ): Residual {
-  const { axis, name } = each
+  const { name } = each
   walls
     .work(balance.Vc, { V: 'V', c: 'c' }, `Vc.${name}`)
     .work(balance.Vs, { V: 'V', s: 's' }, `Vs.${name}`)
@@ -79,25 +87,23 @@ export function residualOf(
     sum_Vs: walls.sum('V_s', sumVs, `${level}.sum.Vs.${name}`),
     sum_Vr: walls.sum('V_r', sumVr, `${level}.sum.Vr.${name}`),
   }
-  const x =
-    axis === 'x'
-      ? work(`${id}.x.${name}`, balance.alongX, { sum_Vc: sums.sum_Vc, V_x: shear }, display, [caseOnPage(name)])
-      : work(`${id}.x.${name}`, balance.noneX, sums, display, [caseOnPage(name)])
-  const y =
-    axis === 'y'
-      ? work(`${id}.y.${name}`, balance.alongY, { sum_Vs: sums.sum_Vs, V_y: shear }, display, [caseOnPage(name)])
-      : work(`${id}.y.${name}`, balance.noneY, sums, display, [caseOnPage(name)])
+  const about = [caseOnPage(name)]
+  const x = alongX
+    ? work(`${id}.x.${name}`, balance.alongX, { sum_Vc: sums.sum_Vc, V_x: alongX }, display, about)
+    : work(`${id}.x.${name}`, balance.noneX, sums, display, about)
+  const y = alongY
+    ? work(`${id}.y.${name}`, balance.alongY, { sum_Vs: sums.sum_Vs, V_y: alongY }, display, about)
+    : work(`${id}.y.${name}`, balance.noneY, sums, display, about)
   const applied = appliedMoment(level, each, acting, display)
-  const M = work(`${id}.M.${name}`, balance.moment, { sum_Vr: sums.sum_Vr, M_o: applied }, display, [caseOnPage(name)])
+  const M = work(`${id}.M.${name}`, balance.moment, { sum_Vr: sums.sum_Vr, M_o: applied }, display, about)
   const l = longestArm(walls)
-  const inputs = { R_x: x, R_y: y, R_M: M, l, [axis === 'x' ? 'V_x' : 'V_y']: shear }
+  const inputs = { R_x: x, R_y: y, R_M: M, l, ...(alongX ? { V_x: alongX } : {}), ...(alongY ? { V_y: alongY } : {}) }
+  const rule = alongX && alongY ? balance.ratioBoth : alongX ? balance.ratioX : balance.ratioY
   return {
     x,
     y,
     M,
-    ratio: work(`${id}.ratio.${name}`, axis === 'x' ? balance.ratioX : balance.ratioY, inputs, display, [
-      caseOnPage(name),
-    ]),
+    ratio: work(`${id}.ratio.${name}`, rule, inputs, display, about),
     resisted: { x: sums.sum_Vc, y: sums.sum_Vs, M: sums.sum_Vr },
     appliedMoment: applied,
   }

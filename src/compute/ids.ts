@@ -5,33 +5,19 @@ import type { Tabulation } from '../base/tabulation.ts'
 import type { Value, Word } from '../base/value.ts'
 import type { Construction } from '../model/construction.ts'
 import type { Distribution } from './distribution.ts'
+import { axisOf, cellOf, type Found, from } from './found.ts'
 import type { LevelWork } from './level.ts'
 import { pierShearsOf } from './pier-shears.ts'
 import type { Pierced } from './pierced.ts'
+import type { Redundancy } from './redundancy.ts'
 import type { Moduli } from './stiffness.ts'
-
-type Found = Result<Value | Word> | undefined
-
-/** A value out of a stage's result; undefined when the stage has no such value. */
-function from<T>(result: Result<T>, pick: (value: T) => Value | Word | undefined): Found {
-  if (!result.ok) return result
-  const value = pick(result.value)
-  return value && good(value)
-}
-
-const axisOf = <T>(pair: { readonly x?: T; readonly y?: T }, axis: string | undefined): T | undefined =>
-  axis === 'x' || axis === 'y' ? pair[axis] : undefined
-
-function cellOf(table: Tabulation | undefined, row: string | undefined, keys: readonly string[]): Value | undefined {
-  const at = table?.rows.indexOf(row ?? '') ?? -1
-  const column = table?.columns.find(({ sym }) => keys.includes(sym.name))
-  return at === -1 ? undefined : column?.cell(at)
-}
+import type { TiedDistribution } from './tied.ts'
 
 export function levelValue(level: LevelWork, path: readonly string[]): Found {
   const [head, ...rest] = path
   const [a, b, c, d] = rest
-  if (rest.length > (head === 'wall' ? 4 : 3)) return undefined
+  if (rest.length > (head === 'alone' ? 5 : head === 'wall' || head === 'wind' || head === 'without' ? 4 : 3))
+    return undefined
   switch (head) {
     case 'area':
     case 'perimeter':
@@ -44,7 +30,10 @@ export function levelValue(level: LevelWork, path: readonly string[]): Found {
       return areaValue(level, a, b)
     case 'lines':
     case 'points':
-      return from(level.mass(), mass => cellOf(mass[head], a, [b ?? '']) ?? momentOf(mass.parts, a, b))
+      return from(
+        level.mass(),
+        mass => cellOf(mass[head], a, [b ?? '']) ?? momentOf(mass.parts, `${level.name}.${head}.${a}.${b}`),
+      )
     case 'W':
       return rest.length === 0 ? from(level.mass(), ({ W }) => W) : undefined
     case 'I_p':
@@ -69,8 +58,28 @@ export function levelValue(level: LevelWork, path: readonly string[]): Found {
       return from(level.forces(), forces => axisOf(forces ?? {}, a))
     case 'accidental':
       return rest.length === 0 ? from(level.forces(), forces => forces?.accidental) : undefined
+    case 'wind':
+      return windOf(level, rest)
     case 'storey':
-      return from(level.distribution(), ({ storey }) => axisOf(storey, a))
+      return from(level.distribution(), found => storeyShearOf(found, a, b))
+    case 'strength':
+    case 'lengths':
+      return from(level.redundancy(), ({ sums, strengthStated }) =>
+        strengthStated === (head === 'strength') ? axisOf(sums, a) : undefined,
+      )
+    case 'without':
+      return from(level.redundancy(), found => valueWithout(found, rest.join('.'), level.name))
+    case 'alone':
+      return valueAlone(level, rest)
+    case 'height':
+      return rest.length === 0 ? tiedValue(level, ({ height }) => height) : undefined
+    case 'moved':
+      return tiedValue(level, ({ cases }) => {
+        const moved = cases.find(each => each.case.name === b)?.tied.moved
+        return a === 'x' || a === 'y' || a === 'turn' ? moved?.[a] : undefined
+      })
+    case 'meeting':
+      return tiedValue(level, ({ cases }) => cases.find(each => each.case.name === a)?.tied.meeting)
     case 'wall':
       return wallValue(level, a ?? '', b, c, d)
     case 'T':
@@ -101,25 +110,102 @@ export function levelValue(level: LevelWork, path: readonly string[]): Found {
   }
 }
 
+/** The whole storey shear of an earthquake, or what a case takes of that of its loading. */
+function storeyShearOf(
+  { loads, cases }: Distribution,
+  axis: string | undefined,
+  caseName: string | undefined,
+): Value | undefined {
+  const found =
+    caseName === undefined
+      ? loads.find(({ loading }) => loading === 'seismic')?.storey
+      : cases.find(each => each.case.name === caseName)?.shear
+  return axisOf(found ?? {}, axis)
+}
+
+/** Storey shears and eccentricities of wind hang on what stands above and on the walls; the rest on wind alone. */
+function windOf(level: LevelWork, path: readonly string[]): Found {
+  const least = path[0] === 'least'
+  const [head, axis, ...more] = least ? path.slice(1) : path
+  if (more.length === 0 && (head === 'storey' || head === 'e'))
+    return from(level.distribution(), ({ loads }) => {
+      const load = loads.find(({ loading }) => loading === (least ? 'least wind' : 'wind'))
+      return axisOf((head === 'e' ? load?.eccentricity : load?.storey) ?? {}, axis)
+    })
+  return level.windValue(path)
+}
+
 function areaValue(level: LevelWork, name: string | undefined, key: string | undefined): Found {
   const part = from(level.plan(), ({ parts }) => {
     const found = parts.find(part => part.name === name)
     return key === 'A' || key === 'x' || key === 'y' ? found?.[key] : key === 'I_p' ? found?.Ip : undefined
   })
-  return part ?? from(level.mass(), mass => cellOf(mass.areas, name, [key ?? '']) ?? momentOf(mass.parts, name, key))
+  return (
+    part ??
+    from(level.mass(), mass => {
+      const load = cellOf(mass.areas, name, ['w'])
+      return (
+        cellOf(mass.areas, name, [key ?? '']) ??
+        momentOf(mass.parts, `${level.name}.areas.${name}.${key}`) ??
+        partOfLoad(load, key)
+      )
+    })
+  )
 }
 
-const momentOf = (parts: Tabulation, row: string | undefined, key: string | undefined): Value | undefined =>
-  key === 'Wx' || key === 'Wy'
-    ? cellOf(parts, row, [key.replace('W', 'W_')])
-    : key === 'I'
-      ? cellOf(parts, row, ['I'])
-      : undefined
+/** What a load is worked from where part of it is variable. */
+function partOfLoad(load: Value | undefined, key: string | undefined): Value | undefined {
+  if (load?.origin.kind !== 'worked' || load.origin.span || !key) return undefined
+  return [...load.origin.step.inputs.values()].find(({ id }) => id.endsWith(`.${key}`))
+}
+
+/** A moment of one of the parts, by its whole id: an area and a line may have one name. */
+function momentOf(parts: Tabulation, id: string): Value | undefined {
+  for (const { idOf, cell } of ['W_x', 'W_y', 'I'].map(name => parts.column(name))) {
+    const at = parts.rows.findIndex((_, rowIdx) => idOf(rowIdx) === id)
+    if (at !== -1) return cell(at)
+  }
+  return undefined
+}
 
 function caseValue(level: LevelWork, what: 'T' | 'u' | 'v' | 'phi', name: string | undefined): Found {
   return from(level.distribution(), ({ cases }) => {
     const found = cases.find(each => each.case.name === name)
     return what === 'T' ? found?.moment : found?.[what]
+  })
+}
+
+/** A value of the storey without a wall or a line of them, by the rest of its id. */
+function valueWithout({ losses, turning }: Redundancy, path: string, level: string): Value | undefined {
+  for (const { rows, columns } of [losses, turning])
+    for (const { idOf, cell } of columns) {
+      const at = rows.findIndex((_, i) => idOf(i) === `${level}.without.${path}`)
+      if (at !== -1) return cell(at)
+    }
+  return undefined
+}
+
+/** A value of the continuous walls; none where storeys are worked on their own. */
+function tiedValue(level: LevelWork, pick: (tied: TiedDistribution) => Value | undefined): Found {
+  const tied = level.tied()
+  return tied && from(tied, pick)
+}
+
+/** The storey on its own, beside the distribution of continuous walls: only what is worked again has a name of its own. */
+function valueAlone(level: LevelWork, path: readonly string[]): Found {
+  if (!level.tied() || path[0] === 'alone') return undefined
+  const id = [level.name, 'alone', ...path].join('.')
+  const found = levelValue({ ...level, distribution: level.alone, tied: () => undefined }, path)
+  return found?.ok && found.value.id !== id ? undefined : found
+}
+
+const tiedColumns: Readonly<Record<string, string>> = { delta: 'delta', theta: 'theta_t', M: 'M_b', Mt: 'M_t' }
+
+function tiedWallValue(level: LevelWork, wall: string, key: string, caseName: string): Found {
+  return tiedValue(level, ({ cases }) => {
+    const tied = cases.find(each => each.case.name === caseName)?.tied
+    const column = tiedColumns[key] ?? ''
+    return cellOf(tied?.beams, wall, [column]) ?? cellOf(tied?.springs, wall, [column])
   })
 }
 
@@ -141,7 +227,10 @@ function wallValue(
     case 'k':
       return level.stiffness(wall)
     case 'h':
-      return given.height && good(given.height)
+    case 'strength': {
+      const stated = key === 'h' ? given.height : given.strength
+      return stated && good(stated)
+    }
     case 'L':
     case 'x':
     case 'y':
@@ -150,6 +239,18 @@ function wallValue(
       const line = level.line(wall)
       return line?.ok ? good(line.value[key]) : line
     }
+    case 'slenderness':
+      return from(level.redundancy(), ({ walls }) => cellOf(walls, wall, ['h_L']))
+    case 'EI':
+    case 'GA': {
+      const section = level.section(wall)
+      return section && from(section, found => found?.[key])
+    }
+    case 'delta':
+    case 'theta':
+    case 'M':
+    case 'Mt':
+      return tiedWallValue(level, wall, key, caseName ?? '')
     case 'rho':
       return from(level.rigidity(), ({ walls }) => cellOf(walls, wall, ['rho']))
     case 'v':

@@ -27,6 +27,19 @@ const lengthPrinter =
 export const topicMissing = (level: string, topic: string, at: Span): Diagnostic =>
   diagnose('error', `${topic}-missing`, at, `level ${level} has no ${topic}`, `Give them in a block ${topic} ${level}.`)
 
+export const forcesTwice = (level: string, at: Span): Diagnostic =>
+  diagnose(
+    'error',
+    'forces-and-seismic',
+    at,
+    `the forces of ${level} are stated here, and seismic works them too`,
+    'Keep the one or the other.',
+  )
+
+/** Values of the design and of that level would have one name. */
+export const levelCalledSeismic = (at: Span): Diagnostic =>
+  diagnose('error', 'name-taken', at, 'a level of the document is called seismic', 'Give the level another name.')
+
 export function wallOutside(
   { name, from, to, place }: Wall,
   { outline, areas }: Plan,
@@ -112,6 +125,16 @@ export const storeyByStorey: Assumption = {
   text: 'Each storey is worked on its own: its walls stand on what is below as on a foundation.',
   because: 'walls are worked storey by storey',
 }
+
+export const atOneLevel: Assumption = {
+  text: 'Stated forces and those of wind are at one level, strength or allowable, and are compared as they are.',
+  because: 'the design shear is the largest over the cases of both',
+}
+
+export const strengthByLength = (level: string): Assumption => ({
+  text: `The strength of the walls of ${verbatim(level)} is in proportion to their length.`,
+  because: 'strength is not stated for all of them',
+})
 
 /** What the model of a floor on springs takes for granted. */
 export const rigidAssumptions = (level: string): readonly Assumption[] => [

@@ -3,42 +3,50 @@
 import type { Diagnostic } from '../base/diagnostic.ts'
 import type { Display } from '../base/kind.ts'
 import { all, type Result, together } from '../base/ledger.ts'
-import { suggestion } from '../base/near.ts'
 import { bad, good } from '../base/outcome.ts'
 import type { Span } from '../base/span.ts'
 import { NO_UNIT } from '../base/unit.ts'
 import type { Value } from '../base/value.ts'
 import { work } from '../base/work.ts'
-import { type Area, readAreas } from '../model/areas.ts'
+import { type Area, readAreas, type ShareByWord } from '../model/areas.ts'
 import type { Construction } from '../model/construction.ts'
-import { type Forces, readForces } from '../model/forces.ts'
+import { type CommonShare, type Forces, readForces } from '../model/forces.ts'
 import type { LevelGivens } from '../model/givens.ts'
 import type { Grid } from '../model/grid.ts'
 import { type LineLoad, type PointLoad, readLineLoads, readPointLoads } from '../model/loads.ts'
 import { type Opening, readOpenings } from '../model/openings.ts'
 import type { Scope } from '../model/scope.ts'
-import { type BuiltWall, readStiffness, readWalls, type Wall } from '../model/walls.ts'
+import { readWalls, type Wall } from '../model/walls.ts'
 import type { Block } from '../read/block.ts'
-import { diagnose } from '../read/text.ts'
+import { casesOf } from './cases.ts'
 import { type Displacement, workDisplacement } from './displacement.ts'
-import { type Distribution, workDistribution } from './distribution.ts'
+import { type Distribution, type Load, workDistribution } from './distribution.ts'
 import {
+  atOneLevel,
   driftNotWorked,
+  forcesTwice,
   loadsOutside,
   mixedStiffness,
   rigidAssumptions,
   storeyByStorey,
+  strengthByLength,
   topicMissing,
   unstable,
   wallOutside,
 } from './level-faults.ts'
+import type { Movable } from './loading.ts'
 import { type Mass, workMass } from './mass.ts'
-import { drawnOnly } from './opening-faults.ts'
-import { type Pierced, workPierced } from './pierced.ts'
+import type { Pierced } from './pierced.ts'
 import { type Plan, workPlan } from './plan.ts'
+import { type Redundancy, workRedundancy } from './redundancy.ts'
 import { type Rigidity, type Spring, workRigidity } from './rigidity.ts'
-import { type Moduli, type WallLine, workLine, workModuli, workStiffness } from './stiffness.ts'
-import { type Acting, accidentalArm, type Eccentricity, workEccentricity } from './storey.ts'
+import type { WallSection } from './section.ts'
+import type { Moduli, WallLine } from './stiffness.ts'
+import { accidentalArm, type Eccentricity, workEccentricity } from './storey.ts'
+import type { TiedDistribution } from './tied.ts'
+import { wallsWork } from './walls-work.ts'
+import { type Wind, windLoads } from './wind.ts'
+import { levelWindValue } from './wind-building.ts'
 
 /** What a level needs from the rest of the building. */
 export interface Surroundings {
@@ -46,11 +54,23 @@ export interface Surroundings {
   readonly grid: () => Result<Grid>
   readonly construction: (name: string) => (() => Result<Construction>) | undefined
   readonly constructionNames: readonly string[]
-  readonly forceTables: readonly Block[]
+  readonly forceTables: () => readonly Block[]
+  /** Share of a variable load that counts as weight, by a word of the standard. */
+  readonly shareByWord: ShareByWord
+  /** Share of accidental eccentricity where none is stated. */
+  readonly commonShare: CommonShare
+  /** Forces of a level as its standard has them; absent where the document does not ask for them. */
+  readonly seismicForces: ((level: string) => Result<Forces>) | undefined
   /** Faults of blocks of a topic that found no level. */
   readonly strays: (topic: string) => readonly Diagnostic[]
-  /** The levels above this one, the nearest first. */
+  /** Wind on the building, where the document has it. */
+  readonly wind: () => Result<Wind | undefined>
+  /** True where forces are stated for any level, or what states them has faults. */
+  readonly forcesStated: () => boolean
+  /** The levels above this one, from the top down. */
   readonly above: () => Result<readonly LevelWork[]>
+  /** The distribution of a level whose walls run through the levels; absent where each storey is worked on its own. */
+  readonly tied: (level: string) => Result<TiedDistribution> | undefined
 }
 
 export interface LevelWork {
@@ -73,9 +93,24 @@ export interface LevelWork {
   readonly rigidity: () => Result<Rigidity>
   readonly eccentricity: () => Result<Eccentricity>
   readonly forces: () => Result<Forces | undefined>
-  readonly acting: () => Result<Acting>
+  readonly acting: () => Result<Movable>
+  /** A value of the wind on the level, by the rest of its id. */
+  readonly windValue: (path: readonly string[]) => Result<Value> | undefined
+  /** True where wind acts on the level, and where any force does. */
+  readonly hasWind: () => boolean
+  readonly isLoaded: () => boolean
   readonly distribution: () => Result<Distribution>
+  /** The storey worked on its own, whatever its walls do above and below. */
+  readonly storeyAlone: () => Result<Distribution>
+  /** The same under ids of its own, `L.alone.…`, to stand beside the distribution of continuous walls. */
+  readonly alone: () => Result<Distribution>
+  /** Present where walls run through the levels. */
+  readonly tied: () => Result<TiedDistribution> | undefined
+  /** E I and G A_v of a built wall; a value of undefined for a wall of stated stiffness. */
+  readonly section: (name: string) => Result<WallSection | undefined> | undefined
   readonly displacements: () => Result<readonly Displacement[]>
+  /** The storey without each of its walls. */
+  readonly redundancy: () => Result<Redundancy>
 }
 
 export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork {
@@ -122,7 +157,7 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     if (!parts.ok) return parts
     const { plan: drawn, lines: along, points: at } = parts.value
     loadsOutside([...along, ...at], drawn, scope.display).forEach(scope.warn)
-    return workMass(drawn, along, at, anchor, scope)
+    return workMass(drawn, along, at, anchor, around.shareByWord, scope)
   })
 
   const walls = once('walls', () => {
@@ -143,89 +178,7 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     return all.ok ? all.value.find(({ name }) => name === wall) : undefined
   }
 
-  // What is known of a wall is known of it as it was read: read again, it is another.
-  const lineOf = new WeakMap<Wall, WallLine>()
-  const lineFor = (wall: Wall): WallLine => {
-    const known = lineOf.get(wall) ?? workLine(wall, name, scope.display)
-    lineOf.set(wall, known)
-    return known
-  }
-
-  const built = new Map<string, () => Result<Moduli>>()
-  const moduli = (construction: string): Result<Moduli> => {
-    const read = around.construction(construction)
-    if (!read) return bad([])
-    let known = built.get(construction)
-    if (!known) {
-      known = scope.ledger.once(`constructions.${construction}`, anchor, () => {
-        const made = read()
-        return made.ok ? good(workModuli(made.value, scope.display, scope.assume)) : made
-      })
-      built.set(construction, known)
-    }
-    return known()
-  }
-
-  const stiffnesses = new WeakMap<Wall, () => Result<Value>>()
-  const stiffnessFor = (wall: Wall): Result<Value> => {
-    let known = stiffnesses.get(wall)
-    if (!known) {
-      known = once(`wall.${wall.name}.k`, () => workWallStiffness(wall), wall.span)
-      stiffnesses.set(wall, known)
-    }
-    return known()
-  }
-
-  const workWallStiffness = (wall: Wall): Result<Value> => {
-    const cut = piercedFor(wall)
-    if (!cut.ok) return cut
-    if (cut.value) return good(cut.value.k)
-    if (wall.kind === 'stated') return readStiffness(wall, name, scope)
-    const parts = partsOf(wall)
-    if (!parts.ok) return parts
-    return good(workStiffness(wall, lineFor(wall).L, parts.value.construction, parts.value.moduli, name, scope.display))
-  }
-
-  const piercings = new WeakMap<Wall, () => Result<Pierced | undefined>>()
-  const piercedFor = (wall: Wall): Result<Pierced | undefined> => {
-    let known = piercings.get(wall)
-    if (!known) {
-      known = once(`wall.${wall.name}.openings`, () => workPiercedWall(wall), wall.span)
-      piercings.set(wall, known)
-    }
-    return known()
-  }
-
-  const workPiercedWall = (wall: Wall): Result<Pierced | undefined> => {
-    const given = openings()
-    if (!given.ok) return given
-    const mine = given.value.filter(opening => opening.wall === wall.name)
-    if (mine.length === 0) return good(undefined)
-    if (wall.kind === 'stated') {
-      scope.assume(drawnOnly(wall.name))
-      return good(undefined)
-    }
-    const parts = partsOf(wall)
-    if (!parts.ok) return parts
-    const { construction, moduli } = parts.value
-    return workPierced(wall, lineFor(wall).L, mine, construction, moduli, name, scope.display)
-  }
-
-  const partsOf = (wall: BuiltWall) => {
-    const { text, span } = wall.construction
-    const read = around.construction(text)
-    if (!read)
-      return bad([
-        diagnose(
-          'error',
-          'unknown-construction',
-          span,
-          `there is no construction ${text}`,
-          suggestion(text, around.constructionNames, 'construction'),
-        ),
-      ])
-    return together({ construction: read(), moduli: moduli(text) })
-  }
+  const { lineFor, moduli, stiffnessFor, piercedFor, sectionFor } = wallsWork(name, openings, around, once, anchor)
 
   const springs = once('walls.k', (): Result<readonly Spring[]> => {
     const given = walls()
@@ -259,12 +212,19 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
 
   const eccentricity = once('e', (): Result<Eccentricity> => {
     const parts = together({ mass: mass(), rigidity: rigidity(), display: display() })
-    return parts.ok ? good(workEccentricity(name, parts.value.mass, parts.value.rigidity, parts.value.display)) : parts
+    return parts.ok
+      ? good(workEccentricity(name, 'seismic', parts.value.mass, parts.value.rigidity, parts.value.display))
+      : parts
   })
 
-  const forces = once('force', () => readForces(givens.forces, around.forceTables, name, scope))
+  const forces = once('force', (): Result<Forces | undefined> => {
+    const stated = readForces(givens.forces, around.forceTables(), name, around.commonShare, scope)
+    if (!around.seismicForces || !stated.ok) return stated
+    const block = givens.forces[0] ?? around.forceTables()[0]
+    return stated.value && block ? bad([forcesTwice(name, block.info)]) : around.seismicForces(name)
+  })
 
-  const acting = once('acting', (): Result<Acting> => {
+  const acting = once('acting', (): Result<Movable> => {
     const parts = together({ forces: forces(), mass: mass(), plan: plan() })
     if (!parts.ok) return parts
     const { forces: given, mass: m, plan: p } = parts.value
@@ -278,21 +238,54 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
       )
     return good({
       level: name,
-      mass: { x: m.x, y: m.y },
+      at: { x: m.x, y: m.y },
       force: { ...(given.x ? { x: given.x } : {}), ...(given.y ? { y: given.y } : {}) },
       arm: { x: arm('x'), y: arm('y') },
     })
   })
 
-  const distribution = once('storey', (): Result<Distribution> => {
-    const above = around.above()
-    if (!above.ok) return above
-    if (above.value.length > 0) scope.assume(storeyByStorey)
-    const actings = all([...above.value.map(level => level.acting()), acting()])
-    const parts = together({ rigidity: rigidity(), mass: mass(), display: display(), actings })
+  /** What acts on the storey: the forces of this level and those above it, and wind where the document has it. */
+  const loads = once('loads', (): Result<readonly Load[]> => {
+    const parts = together({ above: around.above(), wind: around.wind() })
     if (!parts.ok) return parts
-    return good(workDistribution(parts.value.rigidity, parts.value.actings, parts.value.mass, parts.value.display))
+    const { above, wind } = parts.value
+    const ofWind = wind ? windLoads(wind, [...above.map(({ name }) => name), name]) : []
+    if (wind && !around.forcesStated()) return good(ofWind)
+    const acts = all([...above.map(level => level.acting()), acting()])
+    if (!acts.ok) return acts
+    if (wind) scope.assume(atOneLevel)
+    const axes = (['x', 'y'] as const).filter(axis => acts.value.some(({ force }) => force[axis]))
+    return good([{ loading: 'seismic', cases: casesOf(axes), acting: acts.value }, ...ofWind])
   })
+
+  /** @param as the level's name in the ids */
+  const workAlone = (as: string): Result<Distribution> => {
+    const parts = together({ rigidity: rigidity(), display: display(), loads: loads() })
+    if (!parts.ok) return parts
+    const { rigidity: own, display: shown } = parts.value
+    return good(workDistribution({ ...own, level: as }, parts.value.loads, shown))
+  }
+  const storeyAlone = once('storey', () => workAlone(name))
+  const alone = once('alone', () => workAlone(`${name}.alone`))
+
+  const distribution = once('shears', (): Result<Distribution> => {
+    const tied = around.tied(name)
+    if (tied) return tied
+    const above = around.above()
+    if (above.ok && above.value.length > 0) scope.assume(storeyByStorey)
+    return storeyAlone()
+  })
+
+  /** Where nothing is stated of the forces and of wind, there is nothing to share out; a fault in them is told where it shows. */
+  const isLoaded = (): boolean => {
+    const given = forces()
+    return hasWind() || (given.ok && given.value !== undefined)
+  }
+
+  const hasWind = (): boolean => {
+    const wind = around.wind()
+    return wind.ok && wind.value !== undefined
+  }
 
   const displacements = once('displacement', (): Result<readonly Displacement[]> => {
     const parts = together({
@@ -306,6 +299,20 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     const { plan: p, mass: m, rigidity: r, distribution: d, display: shown } = parts.value
     if (shown.relative) return bad([driftNotWorked(name, givens.walls[0]?.info ?? anchor)])
     return good(d.cases.map(each => workDisplacement(p, m, r, each, shown)))
+  })
+
+  const redundancy = once('redundancy', (): Result<Redundancy> => {
+    const parts = together({
+      rigidity: rigidity(),
+      walls: walls(),
+      alone: storeyAlone(),
+      plan: plan(),
+      display: display(),
+    })
+    if (!parts.ok) return parts
+    const { rigidity: r, walls: given, alone: storey, plan: p, display: shown } = parts.value
+    if (given.some(({ strength }) => !strength)) scope.assume(strengthByLength(name))
+    return good(workRedundancy(r, given, storey, p, shown))
   })
 
   return {
@@ -336,7 +343,18 @@ export function levelWork(givens: LevelGivens, around: Surroundings): LevelWork 
     eccentricity,
     forces,
     acting,
+    windValue: path => levelWindValue(around.wind, name, path),
+    hasWind,
+    isLoaded,
     distribution,
+    storeyAlone,
+    alone,
+    tied: () => around.tied(name),
+    section: wall => {
+      const found = wallOf(wall)
+      return found && sectionFor(found)
+    },
     displacements,
+    redundancy,
   }
 }

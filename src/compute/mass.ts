@@ -7,7 +7,7 @@ import type { Span } from '../base/span.ts'
 import { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
 import { shownAs, work } from '../base/work.ts'
-import { areaLoad, readAreaLoad } from '../model/areas.ts'
+import { areaLoad, readAreaLoad, type ShareByWord } from '../model/areas.ts'
 import { type LineLoad, lineLoad, type PointLoad, pointLoad, readLoad } from '../model/loads.ts'
 import type { Scope } from '../model/scope.ts'
 import { diagnose } from '../read/text.ts'
@@ -83,10 +83,11 @@ export function workMass(
   lines: readonly LineLoad[],
   points: readonly PointLoad[],
   blockSpan: Span,
+  shareByWord: ShareByWord,
   scope: Scope,
 ): Result<Mass> {
   const { level } = plan
-  const loads = new Map(plan.areas.map(area => [area.name, readAreaLoad(area, level, scope)]))
+  const loads = new Map(plan.areas.map(area => [area.name, readAreaLoad(area, level, shareByWord, scope)]))
   const lineLoads = all(lines.map(line => readLoad(line, level, scope)))
   const pointLoads = all(points.map(point => readLoad(point, level, scope)))
   const areaLoads = all(plan.parts.map(({ area }) => loads.get(area.name) ?? bad([])))
@@ -189,9 +190,10 @@ function workCentre(level: string, tables: Tables, display: Display): Mass {
   ] as const
   const gathered = (key: string): readonly Value[] =>
     found.flatMap(([, table]) => (table ? table.rows.map((_, i) => table.column(key).cell(i)) : []))
-  const idOf = new Map(found.flatMap(([kind, table]) => table?.rows.map(row => [row, kind] as const) ?? []))
+  // An area and a line may have one name.
+  const kinds = found.flatMap(([kind, table]) => table?.rows.map(() => kind) ?? [])
   const rows = found.flatMap(([, table]) => table?.rows ?? [])
-  const parts = new Tabulation(rows, (row, key) => `${level}.${idOf.get(row)}.${row}.${key}`, display)
+  const parts = new Tabulation(rows, (row, key, i) => `${level}.${kinds[i]}.${row}.${key}`, display)
     .take(W, gathered('W'))
     .take(x, gathered('x'))
     .take(y, gathered('y'))

@@ -4,19 +4,19 @@ import type { Display } from '../base/kind.ts'
 import { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
 import { shownAs, texAbout } from '../base/work.ts'
-import type { Forces } from '../model/forces.ts'
-import type { Axis } from './cases.ts'
+import type { Axis, Loading } from './cases.ts'
+import { lettersOf } from './loading.ts'
 import { storeyShear } from './storey.ts'
-import { Fx, Fy, Vx, Vy } from './symbols.ts'
 
 /** A level with its forces. */
 export interface LoadedLevel {
   readonly level: string
   readonly elevation?: Value
-  readonly force: Pick<Forces, 'x' | 'y'>
+  readonly force: { readonly x?: Value; readonly y?: Value }
 }
 
 export interface Storeys {
+  readonly loading: Loading
   /** The axes along which any force is stated. */
   readonly axes: readonly Axis[]
   /** From the top down: z where elevations are stated, and F and V of each axis. */
@@ -25,10 +25,10 @@ export interface Storeys {
 }
 
 export const elevationOf = sym('z', 'z', 'length')
-export const lettersOf = { x: { F: Fx, V: Vx }, y: { F: Fy, V: Vy } } as const
 
 /** @param levels from the top down, every one with the forces stated for it */
-export function workStoreys(levels: readonly LoadedLevel[], display: Display): Storeys {
+export function workStoreys(loading: Loading, levels: readonly LoadedLevel[], display: Display): Storeys {
+  const { F, V, path } = lettersOf[loading]
   const axes = (['x', 'y'] as const).filter(axis => levels.some(({ force }) => force[axis]))
   const elevations = levels.flatMap(({ elevation }) => elevation ?? [])
   const stated = elevations.length === levels.length
@@ -39,29 +39,31 @@ export function workStoreys(levels: readonly LoadedLevel[], display: Display): S
   )
   if (stated) table.take(elevationOf, elevations)
   for (const axis of axes) {
-    const { F, V } = lettersOf[axis]
+    const [ofForce, ofShear] = [F[axis], V[axis]]
     const none = (id: string, tex: string): Value => ({
       id,
       tex,
       si: 0,
-      ...shownAs(F, display),
+      ...shownAs(ofForce, display),
       origin: { kind: 'measured', what: `no force along ${axis} is stated`, spans: [] },
     })
     table
       .take(
-        F,
-        levels.map(({ level, force }) => force[axis] ?? none(`${level}.force.${axis}`, texAbout(F.tex, level))),
+        ofForce,
+        levels.map(
+          ({ level, force }) => force[axis] ?? none(`${level}.${path}force.${axis}`, texAbout(ofForce.tex, level)),
+        ),
       )
       .take(
-        V,
+        ofShear,
         levels.map(({ level }, at) => {
           // The levels above this storey and its own, in the order in which its own work has them.
           const acting = levels.slice(0, at + 1)
           return acting.some(({ force }) => force[axis])
-            ? storeyShear(level, axis, acting, display)
-            : none(`${level}.storey.${axis}`, texAbout(V.tex, level))
+            ? storeyShear(level, axis, loading, acting, display)
+            : none(`${level}.${path}storey.${axis}`, texAbout(ofShear.tex, level))
         }),
       )
   }
-  return { axes, table, stated }
+  return { loading, axes, table, stated }
 }

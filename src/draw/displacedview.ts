@@ -1,12 +1,13 @@
 /** The view of a level that moves in a case: what a sketch of its displaced shape shows, already worked and printed. */
 import { inLanguage, verbatim } from '../base/language.ts'
+import { inWords } from '../base/near.ts'
 import { unitOnPage, unitText } from '../base/unit.ts'
 import { printed } from '../base/value.ts'
 import { caseOnPage } from '../compute/cases.ts'
 import { CENTRE_OF_MASS, type Displacement } from '../compute/displacement.ts'
 import type { Rigidity } from '../compute/rigidity.ts'
 import type { FigureUnit } from './arrowkey.ts'
-import { forceOf, type LevelPicture, pair, planPoint } from './level-plan.ts'
+import { forceOf, hasLevelsAbove, type LevelPicture, pair, planPoint } from './level-plan.ts'
 import type { Described } from './svg.ts'
 import type { Outline, PlanPoint, PlanView } from './view.ts'
 
@@ -62,7 +63,7 @@ export function displacedView(picture: DisplacedPicture, displacement: Displacem
   const { unit } = result.u
   const centre = pair({ x: result.u, y: result.v }, language)
   const rotation = printed(result.phi, language)
-  const force = result.shear.si === 0 ? undefined : forceOf(result, rigidity, mass, language)
+  const force = forceOf(result, rigidity, mass, language)
   return {
     title: words(`Displaced shape of ${verbatim(level)} in case ${caseOnPage(result.case.name)}`),
     description: words(
@@ -78,7 +79,7 @@ export function displacedView(picture: DisplacedPicture, displacement: Displacem
     ...(force ? { force } : {}),
     displacementUnit: { si: unit.scale, name: unitOnPage(unitText(unit)) },
     scaleUnit,
-    forceWords: words(distribution && distribution.acting.length > 1 ? 'storey shear' : 'storey force'),
+    forceWords: words(hasLevelsAbove(distribution) ? 'storey shear' : 'storey force'),
   }
 }
 
@@ -92,8 +93,13 @@ interface Told {
 
 /** Every figure of the sketch in words. */
 function describe(level: string, { result }: Displacement, told: Told): string {
-  const { name, axis } = result.case
-  const under = told.force ? ` under ${told.force} along ${axis}` : ''
+  const { name, parts } = result.case
+  const under = told.force
+    ? ` under ${told.force} along ${inWords(
+        parts.map(({ axis }) => axis),
+        'and',
+      )}`
+    : ''
   return [
     `Plan of ${verbatim(level)} at rest and displaced in case ${caseOnPage(name)}${under}.`,
     `The centre of rigidity moves ${told.centre} along x and y, and the slab turns ${told.rotation}, counter-clockwise positive.`,

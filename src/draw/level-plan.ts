@@ -34,6 +34,7 @@ export function planView(picture: LevelPicture): PlanView {
   const { level, language, system, grid, plan, mass, rigidity, distribution, caseName } = picture
   const words = (text: string) => inLanguage(text, language)
   const drawn = distribution?.cases.find(each => each.case.name === caseName)
+  const force = drawn && mass && rigidity ? forceOf(drawn, rigidity, mass, language) : undefined
   const scale = system === 'US' ? unit('ft') : unit('m')
   const forceUnit = distribution?.design.column('V').cell(0).unit
   const unitOfShear = forceUnit ? unitOnPage(unitText(forceUnit)) : ''
@@ -56,7 +57,7 @@ export function planView(picture: LevelPicture): PlanView {
     gridY: grid.y.map(({ name, at }) => ({ name, at: at.si })),
     ...(mass ? { centreOfMass: { at: planPoint(mass), printed: pair(mass, language) } } : {}),
     ...(rigidity ? { centreOfRigidity: { at: planPoint(rigidity), printed: pair(rigidity, language) } } : {}),
-    ...(drawn && mass && rigidity ? { force: forceOf(drawn, rigidity, mass, language) } : {}),
+    ...(force ? { force } : {}),
     ...(grid.north ? { north: grid.north.si } : {}),
     dimension: metres => onPage(asTyped(metres / scale.scale), scale, language),
     scaleUnit: { metres: scale.scale, name: system === 'US' ? 'ft' : 'm' },
@@ -67,10 +68,14 @@ export function planView(picture: LevelPicture): PlanView {
         : `design shear of a wall, ${unitOfShear}`,
       centreOfMass: words('centre of mass'),
       centreOfRigidity: words('centre of rigidity'),
-      force: words(distribution && distribution.acting.length > 1 ? 'storey shear' : 'storey force'),
+      force: words(hasLevelsAbove(distribution) ? 'storey shear' : 'storey force'),
     },
   }
 }
+
+/** A storey below several levels carries more than the force of its own. */
+export const hasLevelsAbove = (distribution: Distribution | undefined): boolean =>
+  distribution?.loads.some(({ acting }) => acting.length > 1) ?? false
 
 function pointLoadsOf(mass: Mass | undefined, language: Language): readonly PlanPointLoad[] {
   const points = mass?.points
@@ -122,19 +127,27 @@ function wallsOf(
  * several levels that is the resultant of their forces. Along its line it is drawn at the centre of mass.
  */
 export function forceOf(
-  { case: { axis }, shear, moment }: CaseResult,
+  { shear, moment }: CaseResult,
   rigidity: Rigidity,
   mass: Mass,
   language: Language,
-) {
-  const off = moment.si / shear.si
-  const at = axis === 'x' ? { x: mass.x.si, y: rigidity.y.si - off } : { x: rigidity.x.si + off, y: mass.y.si }
-  return {
-    at,
-    x: axis === 'x' ? shear.si : 0,
-    y: axis === 'y' ? shear.si : 0,
-    printed: printed(shear, language),
-  }
+): NonNullable<PlanView['force']> | undefined {
+  const { x, y } = shear
+  const [Fx, Fy] = [x?.si ?? 0, y?.si ?? 0]
+  if (Fx === 0 && Fy === 0) return undefined
+  const centre = { x: rigidity.x.si, y: rigidity.y.si }
+  const told = x && y ? pair({ x, y }, language) : x ? printed(x, language) : y ? printed(y, language) : ''
+  return { at: placeOf({ x: Fx, y: Fy }, moment.si, centre, planPoint(mass)), x: Fx, y: Fy, printed: told }
+}
+
+/** The point of the line of a force, with its moment about the centre, that is nearest to a point. */
+function placeOf(force: PlanPoint, moment: number, centre: PlanPoint, near: PlanPoint): PlanPoint {
+  if (force.y === 0) return { x: near.x, y: centre.y - moment / force.x }
+  if (force.x === 0) return { x: centre.x + moment / force.y, y: near.y }
+  const size = force.x ** 2 + force.y ** 2
+  const on = { x: centre.x + (moment * force.y) / size, y: centre.y - (moment * force.x) / size }
+  const along = ((near.x - on.x) * force.x + (near.y - on.y) * force.y) / size
+  return { x: on.x + along * force.x, y: on.y + along * force.y }
 }
 
 function describe({ level, language, plan, walls, mass, rigidity, distribution }: LevelPicture): string {

@@ -69,8 +69,7 @@ function elevationsOf(level: string, levels: Levels): Pick<WallPicture, 'elevati
 }
 
 function shearOf(level: LevelWork, wall: string, caseName: string | undefined): Pick<WallPicture, 'shear'> {
-  const forces = level.forces()
-  const distribution = forces.ok && forces.value ? level.distribution() : undefined
+  const distribution = level.isLoaded() ? level.distribution() : undefined
   if (!distribution?.ok) return {}
   const { design, cases, governingWall } = distribution.value
   const table = caseName === undefined ? design : cases.find(each => each.case.name === caseName)?.walls

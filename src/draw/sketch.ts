@@ -37,8 +37,8 @@ export function sketchPlan(
   const hasWalls = level.givens.walls.length > 0
   const parts = together({ grid: sheet.grid(), plan: level.plan(), walls: hasWalls ? level.walls() : good([]) })
   if (!parts.ok) return parts
-  const [mass, rigidity, forces] = [level.mass(), hasWalls ? level.rigidity() : undefined, level.forces()]
-  const distribution = forces.ok && forces.value ? level.distribution() : undefined
+  const [mass, rigidity] = [level.mass(), hasWalls ? level.rigidity() : undefined]
+  const distribution = level.isLoaded() ? level.distribution() : undefined
   const view = planView({
     level: level.name,
     language,

@@ -4,7 +4,8 @@ import { columnDecimals, fixed, numeralOnPage } from '../base/numeral.ts'
 import { unitOnPage, unitText } from '../base/unit.ts'
 import { printed, shown, type Value } from '../base/value.ts'
 import type { Axis } from '../compute/cases.ts'
-import { elevationOf, lettersOf, type Storeys } from '../compute/storeys.ts'
+import { lettersOf } from '../compute/loading.ts'
+import { elevationOf, type Storeys } from '../compute/storeys.ts'
 import type { FigureUnit } from './arrowkey.ts'
 import type { Described } from './svg.ts'
 
@@ -29,12 +30,12 @@ export interface StoreyView extends Described {
   readonly forceUnit: FigureUnit
 }
 
-export function storeyView({ axes, table, stated }: Storeys, language: Language): StoreyView {
+export function storeyView({ loading, axes, table, stated }: Storeys, language: Language): StoreyView {
   const words = (text: string): string => inLanguage(text, language)
   const columns = axes.map(axis => ({
     axis,
-    F: table.column(lettersOf[axis].F.name),
-    V: table.column(lettersOf[axis].V.name),
+    F: table.column(lettersOf[loading].F[axis].name),
+    V: table.column(lettersOf[loading].V[axis].name),
   }))
   const cells = columns.flatMap(({ F, V }) => table.rows.flatMap((_, i) => [F.cell(i), V.cell(i)]))
   const decimals = columnDecimals(cells.map(shown))

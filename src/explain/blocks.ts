@@ -12,6 +12,7 @@ import { isWord } from '../model/scope.ts'
 import type { Block } from '../read/block.ts'
 import type { Document, QuoteMark } from '../read/document.ts'
 import { diagnose, type Text } from '../read/text.ts'
+import { explainBuilding } from './building.ts'
 import type { Account, Context } from './context.ts'
 import { explainValue, tellValue } from './equation.ts'
 import { explainGiven } from './given.ts'
@@ -21,7 +22,6 @@ import { explainQuote } from './quote.ts'
 import { explainRegister } from './registers.ts'
 import { type DocumentWant, isBuildingWant, isDocumentWant, type Request, readRequest } from './request.ts'
 import type { Equation, Piece, Quote, Register } from './sheet.ts'
-import { explainStoreys } from './storeys.ts'
 import { explainWant } from './workings.ts'
 
 export interface Explained {
@@ -133,7 +133,7 @@ function workingPieces(
   return request.wants.flatMap((want): readonly Piece[] => {
     if (isDocumentWant(want)) return account ? explainRegister(want, sheet, context, account) : []
     if (isBuildingWant(want) && (level || !block.about))
-      return explainStoreys(sheet, block.about && level, request, context)
+      return explainBuilding(want, sheet, block.about && level, request, context)
     return level && !isBuildingWant(want)
       ? explainWant(want, level, request, context)
       : [{ kind: 'fault', diagnostics: [noLevel(block, names)] }]

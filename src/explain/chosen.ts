@@ -8,11 +8,8 @@ import type { LevelWork } from '../compute/level.ts'
 import { diagnose } from '../read/text.ts'
 import type { Request } from './request.ts'
 
-/** True when forces are stated and shared out. */
-export function hasShears(level: LevelWork): boolean {
-  const forces = level.forces()
-  return forces.ok && forces.value !== undefined && level.distribution().ok
-}
+/** True when forces act and are shared out. */
+export const hasShears = (level: LevelWork): boolean => level.isLoaded() && level.distribution().ok
 
 /** The walls to work in full: those asked for, or the one that governs, or the stiffest where no force is known. */
 export function wallsShown(level: LevelWork, { walls }: Request): Result<readonly string[]> {

@@ -21,7 +21,9 @@ export function explainCriteria(sheet: Worksheet, context: Context, account: Acc
   const criteria = [
     ...(basis.standard === '' ? [] : [{ name: 'Standard', value: verbatim(basis.standard), spans: [] }]),
     { name: 'Results shown in', value: `${basis.system} units`, spans: [] },
-    ...sheet.levels.flatMap(level => [...loadsOf(level, context), ...forcesOf(level, context)]),
+    ...sheet.levels.flatMap(level => [...loadsOf(level, context), ...(sheet.seismic ? [] : forcesOf(level, context))]),
+    ...seismicOf(sheet),
+    ...windOf(sheet, context),
     ...materialsOf(sheet, context),
   ]
   return {
@@ -97,6 +99,37 @@ function forcesOf(level: LevelWork, { language }: Context): readonly Criterion[]
   ]
   const stated = [x, y, accidental].flatMap(value => (value ? spansOf(value) : []))
   return [{ name: `Force at ${verbatim(level.name)}`, value: parts.join('; '), spans: stated }]
+}
+
+/** What the forces are worked from, in place of the forces themselves. */
+function seismicOf({ seismic }: Worksheet): readonly Criterion[] {
+  const made = seismic?.()
+  if (!made?.ok) return []
+  const { settings } = made.value.given
+  const value = settings.map(({ name, value }) => verbatim(`${name.text} ${value.text}`)).join('; ')
+  return [{ name: 'Seismic', value, spans: settings.map(({ value }) => value.span) }]
+}
+
+function windOf(sheet: Worksheet, { language }: Context): readonly Criterion[] {
+  const wind = sheet.wind()
+  if (!wind.ok || !wind.value) return []
+  const { given } = wind.value
+  if (given.kind === 'stated') return [{ name: 'Wind', value: 'pressures as stated', spans: [given.span] }]
+  const { V, exposure, Kd, Kzt, G, enclosure, roof, edition } = given
+  const factors = [
+    ['K_d', Kd],
+    ['K_zt', Kzt],
+    ['G', G],
+  ] as const
+  const value = [
+    `ASCE ${edition}, directional procedure`,
+    `V ${printed(V, language)}`,
+    `exposure ${exposure}`,
+    ...factors.map(([letter, value]) => `${letter} ${printed(value, language)}`),
+    enclosure,
+    roof.kind === 'gable' ? `gable roof of ${printed(roof.slope, language)} along ${roof.ridge}` : 'flat roof',
+  ]
+  return [{ name: 'Wind', value: value.join('; '), spans: [given.span] }]
 }
 
 function materialsOf({ constructions }: Worksheet, context: Context): readonly Criterion[] {

@@ -50,7 +50,8 @@ function referenceOf({ origin }: Value): string {
 function linesOf(step: Step, value: Value, { language }: Context): readonly Tex[] {
   const { body, symbols, inShort } = step.formula
   if (inShort !== undefined) return [tex(inShort)]
-  if (body.kind === 'quantity' || body.kind === 'number') return []
+  const size = body.kind === 'negate' ? body.of : body
+  if (size.kind === 'quantity' || size.kind === 'number') return []
   const names = namesIn(body)
   const letters = typeset(body, name => letter(symbols.get(name)?.tex ?? name), language)
   if (names.size === 0) return [letters]

@@ -86,12 +86,11 @@ function pierTable(level: LevelWork, wall: string, display: Display, context: Co
 }
 
 /** Why a sketch lacks a centre or the shears, where what they follow from was given. */
-function notDrawn({ givens, mass, rigidity, forces, distribution }: LevelWork): readonly Diagnostic[] {
-  const stated = forces()
+function notDrawn({ givens, mass, rigidity, isLoaded, distribution }: LevelWork): readonly Diagnostic[] {
   const wanted: readonly Result<unknown>[] = [
     mass(),
     ...(givens.walls.length > 0 ? [rigidity()] : []),
-    ...(givens.walls.length > 0 && stated.ok && stated.value ? [distribution()] : []),
+    ...(givens.walls.length > 0 && isLoaded() ? [distribution()] : []),
   ]
   const all = together(Object.fromEntries(wanted.map((result, i) => [i, result])))
   return all.ok ? [] : all.because

@@ -13,6 +13,9 @@ const titles: Readonly<Record<string, string>> = {
   walls: 'Walls',
   openings: 'Openings in walls',
   forces: 'Forces',
+  seismic: 'Seismic',
+  wind: 'Wind',
+  spectrum: 'Spectrum',
 }
 
 export function explainGiven(block: Block, context: Context): readonly Piece[] {

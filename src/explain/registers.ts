@@ -5,6 +5,7 @@ import type { Account, Context } from './context.ts'
 import { explainCriteria } from './criteria.ts'
 import type { DocumentWant } from './request.ts'
 import type { Check, Piece } from './sheet.ts'
+import { explainStandard } from './standard.ts'
 
 /** Worked after everything else, since they list what the rest did. */
 export function explainRegister(
@@ -16,6 +17,8 @@ export function explainRegister(
   switch (want) {
     case 'criteria':
       return [explainCriteria(sheet, context, account)]
+    case 'standard':
+      return [explainStandard(context)]
     case 'assumptions':
       return [register('assumptions', 'Assumptions', assumptionItems(sheet.assumptions(), account), context)]
     case 'references':

@@ -22,21 +22,34 @@ export const wants = [
   'displacement',
   'displaced shape',
   'equilibrium',
+  'redundancy',
 ] as const
 
 export type Want = (typeof wants)[number]
 
 /** What tells of all levels at once; a level, where one is named, is worked in full. */
-export const buildingWants = ['storey shears'] as const
+export const seismicWants = ['design spectrum', 'base shear', 'storey forces', 'diaphragm forces'] as const
+export type SeismicWant = (typeof seismicWants)[number]
+export const buildingWants = [
+  'storey shears',
+  ...seismicWants,
+  'wind pressures',
+  'wind forces',
+  'continuous walls',
+  'modes of vibration',
+  'modal response',
+] as const
 export type BuildingWant = (typeof buildingWants)[number]
 
 /** Lists of the whole document rather than of a level. */
-export const documentWants = ['criteria', 'checks', 'assumptions', 'references'] as const
+export const documentWants = ['criteria', 'standard', 'checks', 'assumptions', 'references'] as const
 export type DocumentWant = (typeof documentWants)[number]
 
-/** All of a level in order; the displaced shape comes with the displacement. */
+/** All of a level in order; the displaced shape comes with the displacement, and redundancy is asked for by itself. */
 export const WHOLE = 'whole calculation' as const
-const parts: readonly Want[] = wants.filter(want => want !== 'displaced shape')
+/** From hazard to forces, likewise. */
+export const WHOLE_SEISMIC = 'seismic design' as const
+const parts: readonly Want[] = wants.filter(want => want !== 'displaced shape' && want !== 'redundancy')
 
 export type AnyWant = Want | BuildingWant | DocumentWant
 export const everyWant: readonly AnyWant[] = [...wants, ...buildingWants, ...documentWants]
@@ -67,7 +80,7 @@ export function readRequest(block: Block): Result<Request> {
         'working-empty',
         block.info,
         'this working asks for nothing',
-        `Name what it shows: ${[WHOLE, ...everyWant].join(', ')}.`,
+        `Name what it shows: ${[WHOLE, WHOLE_SEISMIC, ...everyWant].join(', ')}.`,
       ),
     )
   if (block.table)
@@ -97,6 +110,7 @@ export function readRequest(block: Block): Result<Request> {
 function wantOf(line: Text, faults: Diagnostic[]): readonly AnyWant[] {
   const words = toBritish(line.text.toLowerCase()).replace(/\s+/g, ' ')
   if (words === WHOLE) return parts
+  if (words === WHOLE_SEISMIC) return seismicWants
   const known = everyWant.find(want => want === words)
   if (known) return [known]
   faults.push(
@@ -105,7 +119,7 @@ function wantOf(line: Text, faults: Diagnostic[]): readonly AnyWant[] {
       'unknown-working',
       line.span,
       `${line.text} is not something that can be shown`,
-      suggestion(words, [WHOLE, ...everyWant], 'working'),
+      suggestion(words, [WHOLE, WHOLE_SEISMIC, ...everyWant], 'working'),
     ),
   )
   return []

@@ -5,9 +5,11 @@ import { verbatim } from '../base/language.ts'
 import type { Result } from '../base/ledger.ts'
 import { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
+import type { Distribution } from '../compute/distribution.ts'
 import type { LevelWork } from '../compute/level.ts'
+import type { Movable } from '../compute/loading.ts'
 import type { Rigidity, Spring } from '../compute/rigidity.ts'
-import type { Acting, Eccentricity } from '../compute/storey.ts'
+import type { Eccentricity } from '../compute/storey.ts'
 import { k, L } from '../compute/symbols.ts'
 import type { Wall } from '../model/walls.ts'
 import type { Context } from './context.ts'
@@ -162,8 +164,17 @@ const sumsOf = (sums: Readonly<Record<string, Value | undefined>>): Readonly<Rec
 
 export function explainEccentricity(
   { x, y }: Eccentricity,
-  acting: Acting | undefined,
+  acting: Movable | undefined,
   context: Context,
 ): readonly Piece[] {
   return [x, y, ...(acting ? [acting.arm.x, acting.arm.y] : [])].map(value => explainValue(value, context))
+}
+
+/** Where the forces of wind act on the level's own diaphragm, off its centre of rigidity. */
+export function explainWindEccentricity(distribution: Distribution | undefined, context: Context): readonly Piece[] {
+  const ofWind = distribution?.loads.filter(({ loading }) => loading !== 'seismic') ?? []
+  return ofWind.flatMap(({ eccentricity, acting }) => {
+    const arm = acting.at(-1)?.arm
+    return [eccentricity.x, eccentricity.y, ...(arm ? [arm.x, arm.y] : [])].map(value => explainValue(value, context))
+  })
 }

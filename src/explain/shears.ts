@@ -1,19 +1,22 @@
 /** Torsion, wall shears, design shears, displacement and equilibrium. */
 
-import { formula, sym } from '../base/formula.ts'
+import { sym } from '../base/formula.ts'
 import type { Display } from '../base/kind.ts'
 import { verbatim } from '../base/language.ts'
-import { numeralOnPage, rounded } from '../base/numeral.ts'
 import { Tabulation } from '../base/tabulation.ts'
 import type { Value } from '../base/value.ts'
-import { texAbout, work } from '../base/work.ts'
-import { caseOnPage } from '../compute/cases.ts'
+import { shownAs } from '../base/work.ts'
+import { type Axis, caseOnPage } from '../compute/cases.ts'
 import type { Displacement } from '../compute/displacement.ts'
 import type { CaseResult, Distribution } from '../compute/distribution.ts'
-import { T, V } from '../compute/symbols.ts'
+import { T, V, Vx, Vy } from '../compute/symbols.ts'
+import { isTied } from '../compute/tied.ts'
+import { casesInWords } from './casewords.ts'
 import type { Context } from './context.ts'
+import { explainTiedShears } from './continuous.ts'
 import { explainValue } from './equation.ts'
 import type { Detail } from './request.ts'
+import { residualCheck, residualOnPage } from './residual.ts'
 import type { Check, Piece } from './sheet.ts'
 import { explainTable } from './table.ts'
 
@@ -24,6 +27,37 @@ const caseTable = (cases: readonly CaseResult[], display: Display): Tabulation =
     display,
   )
 
+/** Takes the storey shears into a table of cases: one column where every case is along one axis, else one along each. */
+function takeShears(
+  level: string,
+  table: Tabulation,
+  cases: readonly CaseResult[],
+  display: Display,
+): readonly string[] {
+  if (cases.every(each => each.case.parts.length === 1)) {
+    table.take(
+      V,
+      cases.flatMap(({ shear: { x, y } }) => x ?? y ?? []),
+    )
+    return [V.name]
+  }
+  const letters = { x: Vx, y: Vy }
+  const none = (axis: Axis, name: string): Value => ({
+    id: `${level}.storey.${axis}.${name}`,
+    tex: letters[axis].tex,
+    si: 0,
+    ...shownAs(letters[axis], display),
+    origin: { kind: 'measured', what: `no force of ${caseOnPage(name)} acts along ${axis}`, spans: [] },
+  })
+  return (['x', 'y'] as const).map(axis => {
+    table.take(
+      letters[axis],
+      cases.map(({ shear, case: { name } }) => shear[axis] ?? none(axis, name)),
+    )
+    return letters[axis].name
+  })
+}
+
 export function explainTorsion(
   { level, cases }: Distribution,
   shown: readonly CaseResult[],
@@ -32,28 +66,29 @@ export function explainTorsion(
   context: Context,
 ): readonly Piece[] {
   const results = shown.flatMap(each => [
-    ...(detail === 'full' ? momentTable(level, each, context) : []),
+    ...(detail === 'full' ? [...shareSteps(each, context), ...momentTable(level, each, context)] : []),
     explainValue(each.moment, context),
   ])
   if (detail === 'result') return results
   const table = caseTable(cases, display)
-    .take(
-      V,
-      cases.map(({ shear }) => shear),
-    )
-    .take(
-      T,
-      cases.map(({ moment }) => moment),
-    )
+  const shears = takeShears(level, table, cases, display)
+  table.take(
+    T,
+    cases.map(({ moment }) => moment),
+  )
   const want = {
     id: `${level}.torsion`,
-    caption: `Storey shear and its moment about the centre of rigidity of ${verbatim(level)}, counter-clockwise positive. In EX+ the mass is moved toward positive y, in EY+ toward positive x.`,
+    caption: `Storey shear and its moment about the centre of rigidity of ${verbatim(level)}, counter-clockwise positive. ${casesInWords(cases.map(each => each.case))}`,
     rowHead: 'Case',
-    columns: ['V', 'T'],
+    columns: [...shears, 'T'],
   }
   const all = explainTable(table, want, context)
   return detail === 'table' ? [all] : [...results, all]
 }
+
+/** What a case takes of the storey shears, where it does not take them whole. */
+const shareSteps = ({ case: { name }, shear: { x, y } }: CaseResult, context: Context): readonly Piece[] =>
+  [x, y].flatMap(shear => (shear?.id.endsWith(`.${name}`) ? [explainValue(shear, context)] : []))
 
 /** How the moment comes together where the forces of several levels act. */
 function momentTable(
@@ -79,6 +114,7 @@ export function explainWallShears(
   detail: Detail,
   context: Context,
 ): readonly Piece[] {
+  if (isTied(shown)) return explainTiedShears(level, shown, walls, detail, context)
   const steps = walls.flatMap(wall => shearSteps(shown, wall, detail).map(value => explainValue(value, context)))
   if (detail === 'result') return steps
   const { name } = shown.case
@@ -104,34 +140,6 @@ function shearSteps({ walls }: CaseResult, wall: string, detail: Detail): readon
   const at = walls.rows.indexOf(wall)
   if (at === -1) return []
   return (detail === 'result' ? ['V'] : ['V_d', 'V_t', 'V']).map(name => walls.column(name).cell(at))
-}
-
-export function explainDesignShears(
-  { level, design, governingCase, governingWall }: Distribution,
-  walls: readonly string[],
-  detail: Detail,
-  context: Context,
-): readonly Piece[] {
-  const steps = walls.flatMap(wall => {
-    const at = design.rows.indexOf(wall)
-    return at === -1 ? [] : ['V', 'v'].map(name => explainValue(design.column(name).cell(at), context))
-  })
-  if (detail === 'result') return steps
-  const columns = design.columns.map(({ sym }) => sym.name).filter(name => name !== 'L' && name !== 'v')
-  const cases = design.rows.map((_, i) => caseOnPage(governingCase(i).text))
-  const table = explainTable(
-    design,
-    {
-      id: `${level}.design`,
-      caption: `Shear of each wall of ${verbatim(level)} in every case, and its design shear. ${verbatim(design.rows[governingWall] ?? '')} has the largest shear per length and governs.`,
-      rowHead: 'Wall',
-      columns: [...columns, 'L', 'v'],
-      governs: governingWall,
-      words: [{ head: 'Case', cells: cases }],
-    },
-    context,
-  )
-  return detail === 'table' ? [table] : [table, ...steps]
 }
 
 export function explainDisplacement(
@@ -168,10 +176,10 @@ function displacedPoints(
   detail: Detail,
   context: Context,
 ): readonly Piece[] {
-  const { name, axis } = result.case
+  const { name } = result.case
   const at = points.rows.indexOf(governing.corner)
   const [dx, dy] = [points.column('delta_x'), points.column('delta_y')]
-  const corner = (axis === 'x' ? dx : dy).cell(at)
+  const corner = governing.value
   const steps = [result.u, result.v, result.phi, dx.cell(0), dy.cell(0), corner].map(value =>
     explainValue(value, context),
   )
@@ -185,20 +193,6 @@ function displacedPoints(
   const table = explainTable(points, want, context)
   return detail === 'table' ? [table] : [...steps, table]
 }
-
-/** The residual that the arithmetic may leave, of the storey shear. */
-const ALLOWED = 1e-9
-
-const share = {
-  of: sym('R', 'R', 'residual'),
-  limit: sym('R_lim', 'R_{\\text{lim}}', 'residual'),
-}
-const residualRatio = formula({
-  gives: sym('r', 'r', 'number'),
-  body: 'R/R_lim',
-  of: [share.of, share.limit],
-  source: 'demand over limit',
-})
 
 const resisted = {
   x: sym('R_x', '\\sum V\\,c', 'force'),
@@ -215,10 +209,8 @@ export function explainEquilibrium(
 ): readonly Piece[] {
   const { level, cases } = distribution
   const table = caseTable(cases, display)
-    .take(
-      V,
-      cases.map(({ shear }) => shear),
-    )
+  const shears = takeShears(level, table, cases, display)
+  table
     .take(
       resisted.x,
       cases.map(({ residual }) => residual.resisted.x),
@@ -246,7 +238,7 @@ export function explainEquilibrium(
         id: `${level}.equilibrium`,
         caption: `What acts on ${verbatim(level)} and what its walls resist, moments about the origin. The residual is the largest difference over the storey shear.`,
         rowHead: 'Case',
-        columns: ['V', 'R_x', 'R_y', 'M_o', 'R_M'],
+        columns: [...shears, 'R_x', 'R_y', 'M_o', 'R_M'],
         words: [{ head: 'Residual', cells: residuals, ids: cases.map(({ residual }) => residual.ratio.id) }],
       },
       context,
@@ -255,40 +247,12 @@ export function explainEquilibrium(
   ]
 }
 
-/** Two digits tell what a residual has to tell: how small it is. */
-const residualOnPage = ({ si }: Value, { language }: Context): string => numeralOnPage(rounded(si, -2), language)
-
-const LIMIT = 'limit of the arithmetic'
-
 /** The check of the case with the largest residual. */
-export function equilibriumCheck({ level, cases }: Distribution, context: Context): Check {
-  const ratios = cases.map(({ residual }) => residual.ratio)
-  const worst = ratios.reduce((a, b) => (b.si > a.si ? b : a))
-  const limit: Value = {
-    id: `${level}.equilibrium.limit`,
-    tex: texAbout(share.limit.tex, level),
-    si: ALLOWED,
-    unit: worst.unit,
-    rounding: 0,
-    origin: { kind: 'default', assumption: LIMIT },
-  }
-  // A pure number prints alike in every system.
-  const display: Display = { system: 'US', relative: false }
-  const worked = work(`${level}.equilibrium.ratio`, residualRatio, { R: worst, R_lim: limit }, display, [level])
-  const ratio = worked.si
-  for (const value of [worst, limit, worked]) context.beside(value)
-  return {
-    kind: 'check',
-    id: `${level}.equilibrium.check`,
-    what: context.words(`Equilibrium of ${verbatim(level)}, largest residual`),
-    demand: residualOnPage(worst, context),
-    capacity: numeralOnPage(rounded(ALLOWED), context.language),
-    numbers: { demand: worst.si, capacity: ALLOWED, unit: '' },
-    ratio,
-    ratioPrinted: numeralOnPage(rounded(ratio, -2), context.language),
-    ids: { demand: worst.id, capacity: limit.id, ratio: worked.id },
-    ok: ratio <= 1,
-    reference: LIMIT,
-    sourceLines: [],
-  }
-}
+export const equilibriumCheck = ({ level, cases }: Distribution, context: Context): Check =>
+  residualCheck(
+    `${level}.equilibrium`,
+    `Equilibrium of ${verbatim(level)}, largest residual`,
+    cases.map(({ residual }) => residual.ratio),
+    level,
+    context,
+  )

@@ -125,7 +125,10 @@ function formulasOf(
     const { sym, formula } = table.column(name)
     if (!formula || knownFormulas.includes(name)) return []
     context.uses(formula)
-    const body = typeset(formula.body, symbol => letter(formula.symbols.get(symbol)?.tex ?? symbol), context.language)
+    const body =
+      formula.inShort === undefined
+        ? typeset(formula.body, symbol => letter(formula.symbols.get(symbol)?.tex ?? symbol), context.language)
+        : tex(formula.inShort)
     // W x is the product that its head says.
     if (texSource(body) === sym.tex) return []
     return [{ symbol: tex(sym.tex), formula: body, reference: context.words(formula.source) }]

@@ -9,14 +9,15 @@ import type { LevelWork } from '../compute/level.ts'
 import { pierShearsOf } from '../compute/pier-shears.ts'
 import { casesShown, wallsShown } from './chosen.ts'
 import type { Context } from './context.ts'
+import { explainDesignShears } from './design.ts'
 import { displacedFigure, elevations, figure, flatAll, plan } from './figures.ts'
 import { explainMass, explainPolarMoment } from './mass.ts'
 import { explainPierShears } from './piers.ts'
+import { explainRedundancy } from './redundancy.ts'
 import type { Request, Want } from './request.ts'
-import { explainEccentricity, explainRigidity, explainStiffness } from './rigidity.ts'
+import { explainEccentricity, explainRigidity, explainStiffness, explainWindEccentricity } from './rigidity.ts'
 import {
   equilibriumCheck,
-  explainDesignShears,
   explainDisplacement,
   explainEquilibrium,
   explainTorsion,
@@ -38,6 +39,7 @@ const headings: Readonly<Record<Want, string>> = {
   displacement: 'Displacement',
   'displaced shape': 'Displaced shape',
   equilibrium: 'Equilibrium',
+  redundancy: 'Redundancy',
 }
 
 /** The pieces of one want; a want that cannot be worked becomes a box with its reasons. */
@@ -81,7 +83,13 @@ function answer(want: Want, level: LevelWork, request: Request, context: Context
       const forces = level.forces()
       if (!forces.ok) return forces
       const acting = forces.value ? level.acting() : undefined
-      return good(explainEccentricity(eccentricity.value, acting?.ok ? acting.value : undefined, context))
+      const worked = explainEccentricity(eccentricity.value, acting?.ok ? acting.value : undefined, context)
+      const wind = level.hasWind() ? level.distribution() : good(undefined)
+      return wind.ok ? good([...worked, ...explainWindEccentricity(wind.value, context)]) : wind
+    }
+    case 'redundancy': {
+      const redundancy = level.redundancy()
+      return redundancy.ok ? good(explainRedundancy(redundancy.value, detail, context)) : redundancy
     }
     case 'elevations':
       return request.whole && level.givens.openings.length === 0 ? good([]) : elevations(level, request, context)

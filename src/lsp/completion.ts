@@ -3,7 +3,7 @@ import { dimensionInWords, sameDimension } from '../base/dimension.ts'
 import { dimensionOfKind, type Kind, unitOfKind } from '../base/kind.ts'
 import type { Span } from '../base/span.ts'
 import { isUnitName, type Unit, unit, unitSpellings, unitText } from '../base/unit.ts'
-import { everyWant, WHOLE } from '../explain/request.ts'
+import { everyWant, WHOLE, WHOLE_SEISMIC } from '../explain/request.ts'
 import { commonSettings, isMaterial, materials } from '../model/construction.ts'
 import { forceTableSettings } from '../model/forces.ts'
 import { perLevel } from '../model/givens.ts'
@@ -148,7 +148,7 @@ function inLine({ inside, typed }: At<'line'>, document: Opened): readonly Offer
   if (inside.topic !== 'working') return /[^\p{L}\p{N}_' -]/u.test(typed.text) ? [] : settings
   const last = /[^,;]*$/.exec(typed.text)?.[0].trimStart() ?? ''
   const replaces = { start: typed.span.end - last.length, end: typed.span.end }
-  const wants = [WHOLE, ...everyWant].map(
+  const wants = [WHOLE, WHOLE_SEISMIC, ...everyWant].map(
     (want): Offer => ({
       kind: 'word',
       text: words(document, want),

@@ -4,10 +4,13 @@
  */
 import type { Kind } from '../base/kind.ts'
 import { casesOf } from '../compute/cases.ts'
-import { type AnyWant, details, type WHOLE } from '../explain/request.ts'
+import { type AnyWant, details, type WHOLE, type WHOLE_SEISMIC } from '../explain/request.ts'
 import { endsWords, materials } from '../model/construction.ts'
 import { levelWalls } from '../model/levels.ts'
+import { combinations } from '../model/spectrum.ts'
+import { exposures } from '../model/wind-directional.ts'
 import type { Topic } from '../read/topics.ts'
+import { seismicFields } from './seismic-fields.ts'
 
 /** What a cell, or the text behind a setting, is. */
 export type Holds =
@@ -45,6 +48,21 @@ const words = (list: readonly string[], says: string): Field => ({ says, holds: 
 const note = field({ kind: 'text' }, 'Yours: a note, printed with the row.')
 const none: Fields = {}
 
+/** @param of the head of a pressure's id: the level's of a row, or that of the whole building */
+function pressures(of: string): Fields {
+  const sides = ['windward', 'leeward'].flatMap(side => ['', ' x', ' y'].map(axis => ({ side, axis })))
+  return Object.fromEntries(
+    sides.map(({ side, axis }) => [
+      `${side}${axis}`,
+      value(
+        'areaLoad',
+        `${of}.${side}.${axis.trim() || 'x'}`,
+        `Pressure on the ${side} walls${axis && `, wind along${axis}`}.`,
+      ),
+    ]),
+  )
+}
+
 export const grammar: Readonly<Record<Topic, TopicFields>> = {
   grid: {
     says: 'The grid lines, by which points of the plan are named.',
@@ -76,6 +94,15 @@ export const grammar: Readonly<Record<Topic, TopicFields>> = {
       load: {
         says: 'Weight per area; or the word opening, which takes away whatever plan it covers.',
         holds: { kind: 'value', of: 'areaLoad', id: 'LEVEL.areas.NAME.w', words: ['opening'] },
+      },
+      variable: value(
+        'areaLoad',
+        'LEVEL.areas.NAME.variable',
+        'Load per area that counts as weight in part: snow, storage, live load.',
+      ),
+      share: {
+        says: 'How much of the variable load counts as weight: a percentage, or a word of the standard.',
+        holds: { kind: 'value', of: 'share', id: 'LEVEL.areas.NAME.share', words: ['snow', 'storage', 'live'] },
       },
       note,
     },
@@ -133,6 +160,7 @@ export const grammar: Readonly<Record<Topic, TopicFields>> = {
         'LEVEL.wall.NAME.k',
         'Instead of a construction: the stated stiffness of the wall, frame or brace along its own line.',
       ),
+      strength: value('force', 'LEVEL.wall.NAME.strength', 'Its nominal strength along its line, for the redundancy.'),
       note,
     },
     settings: none,
@@ -171,6 +199,49 @@ export const grammar: Readonly<Record<Topic, TopicFields>> = {
       ),
     },
   },
+  seismic: {
+    says: 'Site, risk and system, from which the forces of every level follow by the standard in the front matter.',
+    columns: none,
+    settings: seismicFields(),
+  },
+  wind: {
+    says: 'Wind on the building: by the directional procedure of ASCE 7, or as pressures that are stated.',
+    columns: { level: field({ kind: 'level' }, 'A level.'), ...pressures('ROW.wind') },
+    settings: {
+      standard: words(['ASCE 7-22', 'ASCE 7-16'], 'The standard, where it is not that of the front matter.'),
+      V: value('speed', 'wind.V', 'Basic wind speed.'),
+      exposure: words(exposures, 'The exposure category.'),
+      K_d: value('number', 'wind.K_d', 'Directionality factor; 0.85 where it is left out.'),
+      K_zt: value('number', 'wind.K_zt', 'Topographic factor; 1 where it is left out.'),
+      K_e: value('number', 'wind.K_e', 'Ground elevation factor; 1 where it is left out.'),
+      'ground elevation': value('length', 'wind.ground', 'Elevation of the ground above sea level, in place of K_e.'),
+      enclosure: words(['enclosed', 'partially enclosed'], 'How the building is enclosed.'),
+      building: words(['rigid'], 'That the building is rigid, as the procedure asks.'),
+      G: value('number', 'wind.G', 'Gust-effect factor; 0.85 where it is left out.'),
+      roof: words(['flat', 'gable'], 'Shape of the roof.'),
+      slope: value('angle', 'wind.slope', 'Slope of a gable roof.'),
+      ridge: words(['x', 'y'], 'The direction along which the ridge of a gable roof runs.'),
+      parapet: value('length', 'wind.parapet', 'Height of the parapet above the roof.'),
+      h: value('length', 'wind.h', 'Mean roof height; left out, it follows from the levels and the slope.'),
+      cases: field({ kind: 'text' }, 'The wind load cases that are worked, as in 1, 2, 3, 4.'),
+      eccentricity: value('share', 'wind.eccentricity', 'Share of the width by which stated wind is moved aside.'),
+      ...pressures('wind'),
+    },
+  },
+  spectrum: {
+    says: 'Accelerations by period, to which the modes of vibration respond.',
+    columns: {
+      period: value('period', 'spectrum.NAME.T', 'Period, rising from row to row.'),
+      acceleration: value('number', 'spectrum.NAME.S', 'Spectral acceleration, as a multiple of g.'),
+    },
+    settings: {
+      damping: value('share', 'spectrum.damping', 'Damping of the modes; 5% where it is left out.'),
+      combination: words(combinations, 'How the responses of the modes are put together.'),
+      'static x': value('force', 'spectrum.static.x', 'Static base shear along x, to which the response is raised.'),
+      'static y': value('force', 'spectrum.static.y', 'Static base shear along y, to which the response is raised.'),
+      share: value('share', 'spectrum.share', 'The share of the static base shear that is asked for.'),
+    },
+  },
   equations: {
     says: 'Your own formulas, each printed in letters, with values put in, and with its result.',
     columns: none,
@@ -198,7 +269,7 @@ const own = (fields: Fields, name: string): Field | undefined =>
   Object.hasOwn(fields, name) ? fields[name] : undefined
 
 /** What each part of the calculation is that a working may ask for. */
-export const wantSays: Readonly<Record<AnyWant | typeof WHOLE, string>> = {
+export const wantSays: Readonly<Record<AnyWant | typeof WHOLE | typeof WHOLE_SEISMIC, string>> = {
   'whole calculation': 'all parts of one level in order',
   plan: 'sketch of the level to scale',
   'centre of mass': 'weight, and where it acts',
@@ -214,6 +285,18 @@ export const wantSays: Readonly<Record<AnyWant | typeof WHOLE, string>> = {
   'displaced shape': 'sketch of the level as it moves',
   equilibrium: 'what acts against what resists, in each case',
   'storey shears': 'forces and shears of all levels',
+  'seismic design': 'from ground motion to the forces of levels and diaphragms, in order',
+  'design spectrum': 'ground motion, importance and design category',
+  'base shear': 'period, coefficient and base shear of each direction',
+  'storey forces': 'the base shear shared over the levels',
+  'diaphragm forces': 'what the diaphragm of each level is designed for',
+  'wind pressures': 'how the pressures of wind follow from its speed',
+  'wind forces': 'what each level takes of the wind',
+  'continuous walls': 'walls that run through the levels, solved together, down their height',
+  'modes of vibration': 'periods, shapes, and the mass that takes part',
+  'modal response': 'shears of the modes under the stated spectrum',
+  redundancy: 'the storey without each of its walls in turn',
+  standard: 'rules of the standard that are known here, with their clauses',
   criteria: 'what the calculation starts from',
   checks: 'every check, the largest ratio first',
   assumptions: 'what was taken because the document does not say',

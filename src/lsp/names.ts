@@ -238,7 +238,7 @@ class Gatherer {
   /** The names that a dotted name is made of, found as the worksheet looks it up. */
   id({ text, span }: Text, within: 'expression' | 'quote'): void {
     this.ids.push({ id: text, span, within })
-    const [head, second, third, fourth, fifth] = dotted({ text, span })
+    const [head, second, ...rest] = dotted({ text, span })
     const use = (sort: Sort, name: Text | undefined, of = '') => {
       if (name) this.mention({ sort, name: name.text, of, span: name.span, given: false, within })
     }
@@ -249,11 +249,14 @@ class Gatherer {
     if (head && this.given.levels.includes(head.text)) {
       const level = head.text
       use('level', head)
-      if (second.text === 'wall') use('wall', third, level)
-      if (second.text === 'wall' && fourth?.text === 'opening') use('opening', fifth, `${level}.${third?.text ?? ''}`)
-      if (second.text === 'areas') use('area', third, level)
-      if (second.text === 'lines') use('line load', third, level)
-      if (second.text === 'points') use('point load', third, level)
+      // `roof.alone.wall.N.V.EX` is of the same wall as `roof.wall.N.V.EX`.
+      const [kind, name, key, below] = second.text === 'alone' ? rest : [second, ...rest]
+      if (kind?.text === 'wall') use('wall', name, level)
+      if (kind?.text === 'wall' && key?.text === 'opening') use('opening', below, `${level}.${name?.text ?? ''}`)
+      if (kind?.text === 'without' && name) for (const wall of splitAt(name, /\+/)) use('wall', wall, level)
+      if (kind?.text === 'areas') use('area', name, level)
+      if (kind?.text === 'lines') use('line load', name, level)
+      if (kind?.text === 'points') use('point load', name, level)
       return
     }
     if (head?.text === 'grid') use('line', second)

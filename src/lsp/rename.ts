@@ -158,9 +158,9 @@ export function renamedId({ sort, of, name: old }: Named, name: string): (id: st
       case 'equation':
         return swap(0)
       case 'level':
-        return parts.length === 1 ? id : parts[1] === 'from' ? fromLevel(parts, old, name) : swap(0)
+        return parts.length === 1 ? id : levelId(parts, old, name)
       case 'wall':
-        return parts[0] === of && parts[1] === 'wall' ? swap(2) : id
+        return parts[0] === of ? wallId(parts, old, name) : id
       case 'construction':
         return parts[0] === 'constructions' ? swap(1) : id
       case 'line':
@@ -174,9 +174,25 @@ export function renamedId({ sort, of, name: old }: Named, name: string): (id: st
   }
 }
 
-/** `roof.from.loft.T.EX`: what one level's force does to another. */
-const fromLevel = (parts: readonly string[], old: string, name: string): string =>
-  parts.map((part, i) => ((i === 0 || i === 2) && part === old ? name : part)).join('.')
+/** `roof.from.loft.T.EX`: what one level's force does to another; `roof.alone.from.loft.T.EX`, where walls are continuous. */
+function levelId(parts: readonly string[], old: string, name: string): string {
+  const from = afterAlone(parts)
+  const other = parts[from] === 'from' ? from + 1 : 0
+  return parts.map((part, i) => ((i === 0 || i === other) && part === old ? name : part)).join('.')
+}
+
+/** `roof.wall.N.k`, `roof.alone.wall.N.V.EX`, and of the storey without some walls `roof.without.N+S.loss.x`. */
+function wallId(parts: readonly string[], old: string, name: string): string {
+  const at = afterAlone(parts)
+  const head = parts[at]
+  if (head !== 'wall' && head !== 'without') return parts.join('.')
+  const swapped = (part: string) =>
+    (head === 'without' ? part.split('+') : [part]).map(wall => (wall === old ? name : wall)).join('+')
+  return parts.map((part, i) => (i === at + 1 ? swapped(part) : part)).join('.')
+}
+
+/** Where an id goes on after its level. */
+const afterAlone = (parts: readonly string[]): number => (parts[1] === 'alone' ? 2 : 1)
 
 /** The first thing that is not the same in two builds but for some ids; undefined where nothing is. */
 export function firstChange(before: Compiled, after: Compiled, idAfter: (id: string) => string): string | undefined {

@@ -148,7 +148,11 @@ function unitMissing(span: Span, { what, sym }: Want, wanted: Dimension) {
     'unit-missing',
     span,
     `${what} has no unit; it must be ${dimensionInWords(wanted)}`,
-    `Write ${sample}, or put the unit in the head of the column, as in ${what} (${example.US}).`,
+    sym.kind === 'speed'
+      ? 'Write 115 mph or 51 m/s.'
+      : sym.kind === 'period'
+        ? 'Write it as 0.35 s; in a table the head of the column may hold the unit, as in period (s).'
+        : `Write ${sample}, or put the unit in the head of the column, as in ${what} (${example.US}).`,
   )
 }
 

@@ -30,8 +30,14 @@ export const forceTableSettings: readonly string[] = ['accidental']
 const force = { x: sym('F_x', 'F_x', 'force'), y: sym('F_y', 'F_y', 'force') }
 const share = sym('a', '\\alpha', 'share')
 
-/** The share that most standards ask for; ASCE 7-16 12.8.4.2 and EN 1998-1 4.3.2 both have 5 %. */
-const COMMON_SHARE = 0.05
+/** What holds where the accidental eccentricity is not stated. */
+export interface CommonShare {
+  readonly share: number
+  readonly clause: string
+}
+
+/** The share that most standards ask for. */
+export const commonShare: CommonShare = { share: 0.05, clause: '5% as in ASCE 7-16 12.8.4.2 and EN 1998-1 4.3.2' }
 
 interface Stated {
   readonly x?: Text
@@ -45,6 +51,7 @@ export function readForces(
   blocks: readonly Block[],
   tables: readonly Block[],
   level: string,
+  common: CommonShare,
   scope: Scope,
 ): Result<Forces | undefined> {
   const [block, second] = blocks
@@ -57,7 +64,7 @@ export function readForces(
     return bad([
       diagnose('error', 'forces-repeated', again.info, `the forces of ${level} are given twice`, 'Keep one of them.'),
     ])
-  if (row) return readStated(row, level, scope)
+  if (row) return readStated(row, level, common, scope)
   if (!block) return good(undefined)
   const faults = [...block.faults, ...strangeSettings(block, forceSettings), ...strangeLines(block)]
   if (faults.length > 0) return bad(faults)
@@ -72,7 +79,8 @@ export function readForces(
         'Write x: 42 kip, y: 42 kip, or one of them.',
       ),
     ])
-  return readStated({ ...(x ? { x } : {}), ...(y ? { y } : {}), ...(accidental ? { accidental } : {}) }, level, scope)
+  const stated = { ...(x ? { x } : {}), ...(y ? { y } : {}), ...(accidental ? { accidental } : {}) }
+  return readStated(stated, level, common, scope)
 }
 
 function rowFor(table: Block, level: string): Result<Stated | undefined> {
@@ -94,7 +102,12 @@ function rowFor(table: Block, level: string): Result<Stated | undefined> {
   })
 }
 
-function readStated({ x, y, unitX, unitY, accidental }: Stated, level: string, scope: Scope): Result<Forces> {
+function readStated(
+  { x, y, unitX, unitY, accidental }: Stated,
+  level: string,
+  common: CommonShare,
+  scope: Scope,
+): Result<Forces> {
   const along = (axis: 'x' | 'y', cell: Text | undefined, unit: Unit | undefined) =>
     cell &&
     quantity(
@@ -109,7 +122,7 @@ function readStated({ x, y, unitX, unitY, accidental }: Stated, level: string, s
       scope,
     )
   const [inX, inY] = [notZero(along('x', x, unitX), x), notZero(along('y', y, unitY), y)]
-  const off = accidental ? readShare(accidental, level, scope) : good(commonShare(level, scope))
+  const off = readShare(accidental, level, common, scope)
   const read = all<unknown>([...(inX ? [inX] : []), ...(inY ? [inY] : []), off])
   if (!read.ok) return read
   if (!off.ok) return off
@@ -124,12 +137,19 @@ function notZero(value: Result<Value> | undefined, cell: Text | undefined): Resu
   ])
 }
 
-function readShare(cell: Text, level: string, scope: Scope): Result<Value> {
+/** @param cell what is stated; the common share holds where nothing is */
+export function readShare(cell: Text | undefined, level: string, common: CommonShare, scope: Scope): Result<Value> {
+  if (!cell) return good(shareByDefault(level, common, scope))
   const value = quantity(
     cell,
     { id: `${level}.accidental`, what: 'accidental', sym: share, tex: texAbout('\\alpha', level) },
     scope,
   )
+  return sharePlausible(value, cell)
+}
+
+/** Refuses a share of the plan beyond which the mass would be off it. */
+export function sharePlausible(value: Result<Value>, cell: Text): Result<Value> {
   if (!value.ok || (value.value.si >= 0 && value.value.si <= 0.5)) return value
   return bad([
     diagnose(
@@ -142,13 +162,13 @@ function readShare(cell: Text, level: string, scope: Scope): Result<Value> {
   ])
 }
 
-function commonShare(level: string, scope: Scope): Value {
-  const text = `The force at ${verbatim(level)} may act off the centre of mass by 5% of the plan across it, to either side.`
-  scope.assume({ text, because: 'accidental is not stated; 5% as in ASCE 7-16 12.8.4.2 and EN 1998-1 4.3.2' })
+function shareByDefault(level: string, { share: si, clause }: CommonShare, scope: Scope): Value {
+  const text = `The force at ${verbatim(level)} may act off the centre of mass by ${si * 100}% of the plan across it, to either side.`
+  scope.assume({ text, because: `accidental is not stated; ${clause}` })
   return {
     id: `${level}.accidental`,
     tex: texAbout('\\alpha', level),
-    si: COMMON_SHARE,
+    si,
     unit: shareUnit(scope),
     rounding: 0,
     origin: { kind: 'default', assumption: text },

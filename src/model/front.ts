@@ -26,6 +26,8 @@ export type Paper = 'letter' | 'A4'
 
 export interface Choices {
   readonly titleBlock: TitleBlock
+  /** The standard as the front matter states it, whose rules hold where a block asks for them. */
+  readonly standard: Text | undefined
   /** Every issue of the document, as stated. */
   readonly revisions: readonly Revision[]
   readonly system: System
@@ -108,6 +110,7 @@ export function readChoices(front: FrontMatter): Choices {
   }
   return {
     titleBlock,
+    standard: stand(front.entries.get('standard')),
     revisions,
     system,
     language,

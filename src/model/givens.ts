@@ -21,7 +21,10 @@ export interface Givens {
   readonly grid: readonly Block[]
   readonly levelTable: readonly Block[]
   readonly constructions: readonly Block[]
+  readonly wind: readonly Block[]
   readonly equations: readonly Block[]
+  readonly seismic: readonly Block[]
+  readonly spectrum: readonly Block[]
   /** `forces` that name no level and hold a table of them. */
   readonly forceTables: readonly Block[]
   readonly faults: readonly Diagnostic[]
@@ -67,7 +70,10 @@ export function gather(blocks: readonly Block[]): Givens {
     grid: of('grid'),
     levelTable,
     constructions: of('construction'),
+    wind: of('wind'),
     equations: of('equations'),
+    seismic: of('seismic'),
+    spectrum: of('spectrum'),
     forceTables: of('forces').filter(isForceTable),
     faults,
     strays: topic => strays.get(topic) ?? [],
@@ -123,7 +129,7 @@ export function liveGivens(first: Givens, ledger: Ledger): LiveGivens {
   return withParts(others, shared)
 }
 
-const sharedParts = ['grid', 'levelTable', 'forceTables'] as const
+const sharedParts = ['grid', 'levelTable', 'forceTables', 'seismic', 'wind', 'spectrum'] as const
 const levelParts = ['areas', 'lineLoads', 'pointLoads', 'walls', 'openings', 'forces'] as const
 
 /** The same object with each part as a property that reads its cell. */

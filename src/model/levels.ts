@@ -30,8 +30,23 @@ export interface LevelLine {
 
 export const levelColumns: ColumnRules = { needed: ['level', 'elevation'], optional: [] }
 export const levelSettings: readonly string[] = ['walls']
-/** Either spelling; what holds without the setting. */
-export const levelWalls: readonly string[] = ['storey by storey', 'story by story']
+
+/** How walls of one name on successive levels stand together. */
+export type WallModel = 'storey by storey' | 'continuous'
+
+const wallModels: ReadonlyMap<string, WallModel> = new Map([
+  ['storey by storey', 'storey by storey'],
+  ['story by story', 'storey by storey'],
+  ['continuous', 'continuous'],
+])
+
+/** All spellings of the models. */
+export const levelWalls: readonly string[] = [...wallModels.keys()]
+
+/** The model that the levels ask for; what cannot be read is told with the levels. */
+export function readWallModel([block]: readonly Block[]): WallModel {
+  return (block && wallModels.get(settingOf(block, 'walls')?.text ?? '')) ?? 'storey by storey'
+}
 
 const elevation = sym('z', 'z', 'length')
 
@@ -47,14 +62,14 @@ export function readLevels(blocks: readonly Block[], onlyName: string, scope: Sc
     ])
   const walls = settingOf(block, 'walls')
   const faults = [...strangeSettings(block, levelSettings), ...strangeLines(block)]
-  if (walls && !levelWalls.includes(walls.text))
+  if (walls && !wallModels.has(walls.text))
     faults.push(
       diagnose(
         'error',
-        'walls-continuous',
+        'unknown-wall-model',
         walls.span,
-        `walls ${walls.text} are not worked by this version`,
-        'Walls are worked storey by storey.',
+        `walls cannot be ${walls.text}`,
+        'Write walls: storey by storey (each storey on its own) or walls: continuous (walls of one name are one cantilever).',
       ),
     )
   const records = recordsOf(block, levelColumns)

@@ -19,6 +19,8 @@ interface Placed {
   readonly name: string
   readonly from: Corner
   readonly to: Corner
+  /** Strength along the wall, where it is stated. */
+  readonly strength?: Value
   /** True where the end written first, its start, is `to`. */
   readonly reversed: boolean
   /** Its row, and within it the cells of its two ends. */
@@ -44,10 +46,12 @@ export type Wall = BuiltWall | StatedWall
 
 const height = sym('h', 'h', 'length')
 export const stiffness = sym('k', 'k', 'stiffness')
+/** In-plane strength, nominal. */
+export const strength = sym('V_n', 'V_n', 'force')
 
 export const wallColumns: ColumnRules = {
   needed: ['wall', 'from', 'to'],
-  optional: ['height', 'construction', 'k', 'note'],
+  optional: ['height', 'construction', 'k', 'strength', 'note'],
   oneOf: [['height', 'construction'], ['k']],
 }
 
@@ -106,13 +110,29 @@ function readPlace(record: RowOf, name: string, level: string, grid: Grid, scope
     start: Math.min(from.value.span.start, to.value.span.start),
     end: Math.max(from.value.span.end, to.value.span.end),
   }
+  const strong = readStrength(record, name, level, scope)
+  if (strong && !strong.ok) return strong
   const length = Math.hypot(b.value.x.si - a.value.x.si, b.value.y.si - a.value.y.si)
   // A wall shorter than a tenth of a millimetre is two spellings of one point.
   if (length < 1e-4)
     return bad([
       diagnose('error', 'wall-without-length', place, `wall ${name} has no length`, 'Its two ends are the same point.'),
     ])
-  return good({ name, ...directed(a.value, b.value), span: record.line.span, place })
+  const strength = strong ? { strength: strong.value } : {}
+  return good({ name, ...directed(a.value, b.value), ...strength, span: record.line.span, place })
+}
+
+function readStrength(record: RowOf, name: string, level: string, scope: Scope): Result<Value> | undefined {
+  const cell = record.cell('strength')
+  if (!cell) return undefined
+  const unit = record.unit('strength')
+  const id = `${level}.wall.${name}.strength`
+  const value = quantity(
+    cell,
+    { id, what: 'strength', sym: strength, tex: texAbout('V_n', name), ...(unit ? { unit } : {}) },
+    scope,
+  )
+  return aboveZero(value, cell.span, `the strength of wall ${name}`)
 }
 
 /** A wall whose ends lie this near above each other, as a share of its length, is parallel to y. */

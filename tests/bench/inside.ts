@@ -6,7 +6,7 @@ import { joinTex, type Tex } from '../../src/base/tex.ts'
 import type { Value } from '../../src/base/value.ts'
 import { shownAs } from '../../src/base/work.ts'
 import { compileText } from '../../src/compile.ts'
-import type { Case } from '../../src/compute/cases.ts'
+import { whole } from '../../src/compute/cases.ts'
 import { wallShears } from '../../src/compute/distribution.ts'
 import { type Rigidity, type Spring, workRigidity } from '../../src/compute/rigidity.ts'
 import { k, c as letterC, s as letterS, T, u0, V, v0, x, y } from '../../src/compute/symbols.ts'
@@ -30,6 +30,7 @@ export { readDocument } from '../../src/read/document.ts'
 export { parseMarkdown } from '../../src/read/markdown.ts'
 export { nothingNearby } from '../../src/read/nearby.ts'
 export { createTypesetter } from '../../src/render/typeset.ts'
+export { removeWalls, removeWallsAnew, solveTower, vibrateTower } from './towers.ts'
 
 /** Drawings that the bench makes again and again, by name. */
 export const drawings: readonly (readonly [string, () => string])[] = [
@@ -89,9 +90,10 @@ export function manyWalls(count: number): Rigidity {
 export function shearsInCases(rigidity: Rigidity, cases: number): number {
   let sum = 0
   for (let i = 0; i < cases; i++) {
-    const each: Case = { name: `E${i}`, axis: i % 2 === 0 ? 'x' : 'y', moved: 0 }
+    const axis = i % 2 === 0 ? 'x' : 'y'
+    const each = whole('seismic', `E${i}`, axis, 0)
     const acts = {
-      shear: value('V', V, 1e6 + i),
+      shear: { [axis]: value('V', V, 1e6 + i) },
       moment: value('T', T, 1e6 * (i - cases / 2)),
       u: value('u', u0, 1e-4 * i),
       v: value('v', v0, 2e-4),

@@ -97,6 +97,27 @@ async function walls({ manyWalls, shearsInCases }) {
 }
 
 /** @param {typeof import('./inside.ts')} inside */
+async function towers({ solveTower, vibrateTower, removeWalls, removeWallsAnew }) {
+  head('Tall buildings')
+  const residual = timed('60 levels x 200 continuous walls x 6 cases, cold', () => solveTower(60, 200))
+  const bench = new Bench({ time: 1000, warmupTime: 300 })
+  bench.add('solve', () => void solveTower(60, 200))
+  bench.add('modes', () => void vibrateTower(60, 200))
+  bench.add('remove', () => void removeWalls(6, 200))
+  bench.add('anew', () => void removeWallsAnew(6, 200))
+  await bench.run()
+  const show = (/** @type {string} */ task, /** @type {string} */ name, /** @type {number | undefined} */ aim) => {
+    const { min, median } = latency(bench, task)
+    row(name, [min, median], aim === undefined ? '' : `aim ${aim} ms: ${(median / aim).toFixed(3)}`)
+  }
+  show('solve', 'the same, warm, assembled, solved and enveloped', 200)
+  show('modes', '60 levels x 200 walls, all 180 modes and their shears', undefined)
+  show('remove', 'each of 200 walls on 6 levels taken away', 200)
+  show('anew', 'the same, each solved anew', undefined)
+  line(`largest residual of a case: ${residual.toExponential(1)}`)
+}
+
+/** @param {typeof import('./inside.ts')} inside */
 async function drawn({ drawings }) {
   const bench = new Bench({ time: 500, warmupTime: 300 })
   for (const [name, draw] of drawings) bench.add(name, () => void draw())
@@ -369,6 +390,7 @@ try {
   longCold()
   await equations(inside)
   await walls(inside)
+  await towers(inside)
   await drawn(inside)
   phases(inside)
   rebuilds(inside)

@@ -102,6 +102,32 @@ describe('the names of the results contract', () => {
   })
 })
 
+test('an area, a line and a point of one name are told apart', () => {
+  const { in: told } = reading(`
+\`\`\`areas
+| area | from | to | load |
+|---|---|---|---|
+| East | 0 ft, 0 ft | 60 ft, 40 ft | 50 psf |
+\`\`\`
+
+\`\`\`line-loads
+| line | from | to | load |
+|---|---|---|---|
+| East | 60 ft, 0 ft | 60 ft, 40 ft | 100 plf |
+\`\`\`
+
+\`\`\`point-loads
+| point | at | load |
+|---|---|---|
+| East | 58 ft, 20 ft | 3 kip |
+\`\`\`
+`)
+  expect(told('level.areas.East.Wx', 'kip*ft')).toBeCloseTo(120 * 30, 9)
+  expect(told('level.lines.East.Wx', 'kip*ft')).toBeCloseTo(4 * 60, 9)
+  expect(told('level.points.East.Wx', 'kip*ft')).toBeCloseTo(3 * 58, 9)
+  expect(told('level.lines.East.I', 'kip*ft^2')).not.toBe(told('level.areas.East.I', 'kip*ft^2'))
+})
+
 describe('names that are not there', () => {
   test.each([
     'roof.foo',

@@ -34,10 +34,7 @@ test('the storey shear is drawn on the line of the resultant of all forces above
   ] as const) {
     const { force } = planView({ ...picture, caseName })
     const total = acting.reduce((sum, { force }) => sum + (force.y?.si ?? 0), 0)
-    const about = acting.reduce(
-      (sum, { force, mass, arm }) => sum + (force.y?.si ?? 0) * (mass.x.si + moved * arm.x.si),
-      0,
-    )
+    const about = acting.reduce((sum, { force, at, arm }) => sum + (force.y?.si ?? 0) * (at.x.si + moved * arm.x.si), 0)
     expect(force?.y).toBeCloseTo(total, 6)
     expect(force?.at.x, caseName).toBeCloseTo(about / total, 9)
   }

@@ -128,6 +128,13 @@ describe('a build that follows others', () => {
     ['samples/observatory.md', 8],
     ['tests/golden/two-levels/input.md', 20],
     ['tests/golden/openings/input.md', 12],
+    ['tests/golden/seismic/input.md', 12],
+    ['samples/quay-hostel.md', 6],
+    ['tests/golden/wind-gable/input.md', 4],
+    ['tests/golden/wind-stated/input.md', 8],
+    ['samples/millrace.md', 6],
+    ['samples/lindenkai.md', 6],
+    ['samples/totara.md', 6],
   ])('of %s is that made from nothing', (path, edits) => {
     holds(path, read(path), edits)
   })

@@ -54,7 +54,7 @@ describe('in a table', () => {
     const items = await editor.offered(
       written(`${head}\n|------|------|------------|`, `${head} ‸\n|------|------|------------|`),
     )
-    expect(labels(items)).toEqual(['k', 'note'])
+    expect(labels(items)).toEqual(['k', 'strength', 'note'])
     expect(detailOf(items, 'k')).toContain('stated stiffness')
   })
 

@@ -60,6 +60,7 @@ describe.each([...homes.keys()])('in %s', name => {
   if (!home) throw new Error('there is such a document')
   const document = home.open(home.text)
   const before = document.compiled()
+  const isContinuous = /^walls: continuous$/m.test(home.text)
 
   test('every name is where it is said to be, and all can be read', () => {
     const { mentions, unread } = document.names()
@@ -77,6 +78,11 @@ describe.each([...homes.keys()])('in %s', name => {
     )
     for (const thing of things.values()) {
       const spans = rename(document, thing.span.start, NEW, home.compile)
+      // A wall that runs through the levels is named on each of them: on one alone it would stand on nothing.
+      if (thing.sort === 'wall' && isContinuous) {
+        expect(spans.ok ? '' : spans.because).toContain(`${thing.name} is not renamed`)
+        continue
+      }
       if (!spans.ok) throw new Error(`${thing.sort} ${thing.name}: ${spans.because}`)
       const text = withNames(home.text, spans.value, NEW)
       const after = home.open(text)

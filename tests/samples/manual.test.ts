@@ -15,6 +15,8 @@ import { readChoices } from '../../src/model/front.ts'
 import { type Host, publish } from '../../src/publish.ts'
 import { noFrontMatter } from '../../src/read/front.ts'
 import { laterTopics, topics } from '../../src/read/topics.ts'
+import { profiles } from '../../src/standards/catalogue.ts'
+import { windy } from '../support/windy.ts'
 
 const root = fileURLToPath(new URL('../..', import.meta.url))
 const read = (path: string): string => readFileSync(join(root, path), 'utf8')
@@ -35,9 +37,9 @@ const inCode = new Set([...manual.matchAll(/`([^`\n]+)`/g)].map(([, code]) => co
 const untold = (names: readonly string[]): readonly string[] => names.filter(name => !inCode.has(name))
 
 describe('samples', () => {
-  test('there are the three samples and the seven chapters', () => {
+  test('there are the samples and the seven chapters', () => {
     expect(samples.map(path => relative('samples', path))).toEqual(
-      expect.arrayContaining(['boatyard.md', 'observatory.md', 'starter.md']),
+      expect.arrayContaining(['boatyard.md', 'millrace.md', 'observatory.md', 'starter.md']),
     )
     expect(chapters).toHaveLength(7)
   })
@@ -107,6 +109,16 @@ describe('the manual tells of', () => {
     )
     expect(names.length).toBeGreaterThan(20)
     expect(untold([...new Set(names)])).toEqual([])
+  })
+
+  test('every setting of every standard', () => {
+    const settings = profiles.flatMap(({ settings }) => settings.map(({ name }) => name))
+    expect(settings.length).toBeGreaterThan(60)
+    expect(untold([...new Set(settings)])).toEqual([])
+    const told = [...chapter('03-building').matchAll(/^\*\*(.+?)\*\*/gm)].flatMap(([, names]) =>
+      (names ?? '').split(', '),
+    )
+    expect(profiles.map(({ name }) => name).filter(name => !told.includes(name))).toEqual([])
   })
 
   test('every rule of a message', () => {
@@ -196,19 +208,24 @@ describe('value ids', () => {
     expect(unresolved(['roof.weight', 'roof.W'], home)).toEqual(['roof.weight'])
   })
 
-  test.each(['samples/boatyard.md', 'samples/observatory.md', 'samples/manual/03-building.md'])(
-    'every value in the JSON of %s is told of',
-    path => {
-      const known = [...patterns, ...idsOfTable(jsonOnly)].map(patternOf)
-      const strange = Object.keys(jsonOf(path).values).filter(id => !known.some(pattern => pattern.test(id)))
-      expect(strange).toEqual([])
-    },
-  )
+  test.each([
+    'samples/boatyard.md',
+    'samples/observatory.md',
+    'samples/millrace.md',
+    'samples/quay-hostel.md',
+    'samples/manual/03-building.md',
+  ])('every value in the JSON of %s is told of', path => {
+    const known = [...patterns, ...idsOfTable(jsonOnly)].map(patternOf)
+    const strange = Object.keys(jsonOf(path).values).filter(id => !known.some(pattern => pattern.test(id)))
+    expect(strange).toEqual([])
+  })
 
   test('what is listed for the JSON only is in a JSON', () => {
     const ids = [
       'samples/boatyard.md',
       'samples/observatory.md',
+      'samples/millrace.md',
+      'samples/quay-hostel.md',
       'samples/manual/02-expressions.md',
       'samples/manual/03-building.md',
     ].flatMap(path => Object.keys(jsonOf(path).values))
@@ -265,7 +282,20 @@ const homes: readonly Home[] = [
     },
   },
   { text: chapter('04-workings'), names: { LEVEL: 'roof', AREA: 'Porch', WALL: 'P', CASE: 'EY', NAME: 'CMU8' } },
-  { text: chapter('03-building'), names: { LEVEL: 'loft' } },
+  { text: read('samples/millrace.md'), names: { LEVEL: 'roof', AREA: 'West', WALL: 'A1', CASE: 'EX' } },
+  { text: chapter('03-building'), names: { LEVEL: 'loft', BAND: 'S1', CASE: 'WXY4-+' } },
+  ...[
+    'V: 115 mph\nexposure: C\nroof: flat\nparapet: 3 ft',
+    'windward: 18 psf\nleeward: 12 psf\neccentricity: 10%\nparapet: 3 ft',
+    '| level | windward | leeward |\n|---|---|---|\n| roof | 20 psf | 12 psf |',
+  ].map(wind => ({
+    text: `${windy([{ name: 'roof', at: 20, size: [60, 40] }], wind)}\n\n\`\`\`forces roof\nx: 9 kip\ny: 9 kip\n\`\`\``,
+    names: { LEVEL: 'roof', BAND: 'S1', CASE: 'WX' },
+  })),
+  {
+    text: read('samples/quay-hostel.md').replace('units: SI', 'units: US'),
+    names: { LEVEL: 'second', WALL: 'L1', CASE: 'EY+', NAME: 'RC200', MODE: '2' },
+  },
 ]
 
 const filledIn = (pattern: string, names: Names): string => pattern.replace(/[A-Z]{4,}/g, word => names[word] ?? word)
