@@ -127,7 +127,7 @@ export const storeyByStorey: Assumption = {
 }
 
 export const atOneLevel: Assumption = {
-  text: 'Stated forces and those of wind are at one level, strength or allowable, and are compared as they are.',
+  text: 'The forces of wind and all others are at one level, strength or allowable, and are compared as they are.',
   because: 'the design shear is the largest over the cases of both',
 }
 

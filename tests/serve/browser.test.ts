@@ -156,6 +156,9 @@ describe.skipIf(!hasBrowser)('the live page (skipped where no browser is found)'
     await press(page, '[data-key="messages"]')
     await press(page, '.live-row')
     expect(await get(page, `document.activeElement.closest('.fault') !== null`)).toBe('true')
+    // A page that is loaded now is told of the fault too, without a save.
+    await page.reload()
+    await has(page, `/^1 error/.test(document.querySelector('.live-state')?.textContent)`)
     await save(page, starter)
     expect(await get(page, `document.querySelectorAll('.fault, .draft').length`)).toBe('0')
     expect(await get(page, `document.querySelector('.live-state').textContent`)).toMatch(/^sound/)
