@@ -205,8 +205,11 @@ export class Ledger {
 
   /** Begins the next build; what nobody asked for in the last one is let go. */
   next(): void {
-    for (const task of this.loose) if (task.readers.size === 0 && task.asked !== this.build) this.clear(task)
-    this.loose.clear()
+    for (const task of this.loose) {
+      // Taken out first: it comes in again, and to the end, when it loses its last reader after all.
+      this.loose.delete(task)
+      if (task.readers.size === 0 && task.asked !== this.build) this.clear(task)
+    }
     for (const read of this.root) if (isTask(read)) this.loose.add(read)
     this.root = []
     this.gathered = newGathering()

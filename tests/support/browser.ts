@@ -2,6 +2,7 @@
 import { fileURLToPath } from 'node:url'
 import puppeteer, { type Browser } from 'puppeteer-core'
 import { PATIENCE, startBrowser } from '../../src/pdf/browser.ts'
+import { embeddedBrowser } from '../../src/pdf/embedded.ts'
 import { installedBrowsers, thisMachine } from '../../src/pdf/places.ts'
 
 const { platform, arch, environment } = thisMachine
@@ -26,9 +27,13 @@ export async function launchOnline(): Promise<Browser> {
   const { spawnfile = '', spawnargs = [] } = cut.process() ?? {}
   await cut.close()
   const args = spawnargs.filter(word => /^--(?:no-sandbox|disable-gpu|headless)/.test(word))
+  // The embedded browser brings its own libraries and faces, which it has to be told of.
+  const embedded = await embeddedBrowser(root, thisMachine)
+  const own = embedded.ok && embedded.value.program === spawnfile ? embedded.value.environment : {}
   return puppeteer.launch({
     executablePath: spawnfile,
     args,
+    env: { ...process.env, ...own },
     headless: spawnargs.includes('--headless') ? 'shell' : true,
   })
 }
