@@ -241,7 +241,8 @@ function work({ path, within }: DocumentFile, settings: Settings): Worked | unde
   const folder = settings.out === undefined ? dirname(path) : join(settings.out, within)
   const stem = basename(path, extname(path))
   // Beside its source the worked Markdown needs a name of its own.
-  const stemOf = (format: Format) => (format === 'md' && settings.out === undefined ? `${stem}.worked` : stem)
+  const isBeside = resolve(folder) === resolve(dirname(path))
+  const stemOf = (format: Format) => (format === 'md' && isBeside ? `${stem}.worked` : stem)
   const wanted = settings.to.filter(format => format === 'json' || errors === 0 || settings.draft)
   const files = wanted.flatMap(format =>
     format === 'pdf' ? [] : publish(compiled, stemOf(format), format, settings.draft && errors > 0, host),

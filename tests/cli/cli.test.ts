@@ -111,6 +111,8 @@ describe('what a build writes', () => {
     run('build', 'a.md', '--to', 'md')
     expect(read('a.md')).toBe(sound)
     expect(read('a.worked.md')).toContain('x_m')
+    run('build', 'a.md', '--to', 'md', '--out', '.')
+    expect(read('a.md')).toBe(sound)
   })
 
   test('a document with errors leaves its pages as they were, and its results tell the errors', () => {
